@@ -1,0 +1,54 @@
+using PartCheck.Quantities;
+
+namespace PartCheck.Bills;
+
+/// <summary>One line of a bill of materials.</summary>
+public sealed record BillLine
+{
+    /// <summary>Reference designators in the order of the cell, ranges written out.</summary>
+    public required IReadOnlyList<string> References { get; init; }
+
+    /// <summary>The part number; null where the cell is blank.</summary>
+    public string? PartNumber { get; init; }
+
+    /// <summary>Quantity for one board; null where the bill has none.</summary>
+    public double? Quantity { get; init; }
+
+    /// <summary>The value's text.</summary>
+    public string? Value { get; init; }
+
+    /// <summary>The value as a resistance, where it reads as one.</summary>
+    public Resistance? Resistance { get; init; }
+
+    /// <summary>Package name.</summary>
+    public string? Package { get; init; }
+
+    /// <summary>Manufacturer.</summary>
+    public string? Manufacturer { get; init; }
+
+    /// <summary>Description.</summary>
+    public string? Description { get; init; }
+
+    /// <summary>False where a mark says do not fit.</summary>
+    public bool Fitted { get; init; } = true;
+
+    /// <summary>The mark that said so, with its cell.</summary>
+    public Cited<string>? FittedMark { get; init; }
+
+    /// <summary>Further part numbers approved for the line.</summary>
+    public IReadOnlyList<string> Alternates { get; init; } = [];
+
+    /// <summary>Channel column (instead of the reference columns in Channels).</summary>
+    public string? Channel { get; init; }
+
+    /// <summary>Role column.</summary>
+    public string? Role { get; init; }
+
+    /// <summary>File and cell of the references.</summary>
+    public required string Cell { get; init; }
+}
+
+/// <summary>A bill of materials.</summary>
+/// <param name="Name">File name as given.</param>
+/// <param name="Lines">Its lines, in order.</param>
+public sealed record Bill(string Name, IReadOnlyList<BillLine> Lines);

@@ -1,0 +1,9 @@
+using Xunit;
+
+namespace PartCheck.Tests;
+
+public class SmokeTests
+{
+    [Fact]
+    public void ACellAddressCountsInLetters() => Assert.Equal("AB7", PartCheck.Sheets.CellAddress.Of(7, 28));
+}
