@@ -1,0 +1,137 @@
+using System.Globalization;
+using PartCheck.Channels;
+using PartCheck.Parts;
+using PartCheck.Quantities;
+
+namespace PartCheck.OperatingPoints;
+
+/// <summary>One bound channel ready to be put into any corner: devices, resistor ranges, thermal data, what was assumed.</summary>
+public sealed class ChannelModel
+{
+    /// <summary>Share of the hottest leg's RthJA that is assumed to heat the control where no coupling is given (or none).</summary>
+    public const double AssumedCouplingShare = 0.2;
+
+    private readonly List<Assumption> assumed = [];
+
+    /// <summary>Builds the model.</summary>
+    /// <param name="channel">The channel.</param>
+    /// <param name="variants">Devices of a transistor's row (shared between channels).</param>
+    public ChannelModel(BoundChannel channel, Func<Transistor, TransistorVariants> variants)
+    {
+        ArgumentNullException.ThrowIfNull(channel);
+        ArgumentNullException.ThrowIfNull(variants);
+        Channel = channel;
+        Classes = LegClass.Of(channel);
+        Slots = new Slots(channel, Classes);
+        Pass = [.. Classes.Select(c => variants(c.First.PassPart))];
+        Sense = [.. Classes.Select(c => new ResistorRange(c.First.SensePart))];
+        Averaging = [.. Classes.Select(c => c.First.AveragingPart is { } part ? new ResistorRange(part) : null)];
+        Control = variants(channel.ControlPart);
+        Feed = new ResistorRange((ResistorPart)channel.Feed.Part);
+        PullDown = channel.PullDown is null ? null : new ResistorRange((ResistorPart)channel.PullDown.Part);
+        PassRth = [.. Pass.Select(p => Rth(p.Part))];
+        ControlRth = Rth(Control.Part);
+        Heats = ControlRth is not null && PassRth.All(r => r is not null);
+        CouplingGiven = Classes.All(c => c.First.PassPart.Coupling is not null);
+        Load = [LoadAt(channel.Conditions.LoadDrop.Min), LoadAt(channel.Conditions.LoadDrop.Max)];
+        NominalLoad = LoadAt(Voltage.FromVolts(
+            (channel.Conditions.LoadDrop.Min.Volts + channel.Conditions.LoadDrop.Max.Volts) / 2));
+        CollectAssumptions();
+    }
+
+    /// <summary>The channel.</summary>
+    public BoundChannel Channel { get; }
+
+    /// <summary>Its legs, grouped.</summary>
+    public IReadOnlyList<LegClass> Classes { get; }
+
+    /// <summary>What solved points stand for.</summary>
+    public Slots Slots { get; }
+
+    /// <summary>Pass devices, by leg class.</summary>
+    public IReadOnlyList<TransistorVariants> Pass { get; }
+
+    /// <summary>Sense resistors, by leg class.</summary>
+    public IReadOnlyList<ResistorRange> Sense { get; }
+
+    /// <summary>Averaging resistors, by leg class; null: none.</summary>
+    public IReadOnlyList<ResistorRange?> Averaging { get; }
+
+    /// <summary>Control device.</summary>
+    public TransistorVariants Control { get; }
+
+    /// <summary>Feed resistor.</summary>
+    public ResistorRange Feed { get; }
+
+    /// <summary>Pull-down resistor; null: none.</summary>
+    public ResistorRange? PullDown { get; }
+
+    /// <summary>Thermal resistance of the pass transistors [K/W], by leg class; null: not to be had.</summary>
+    public IReadOnlyList<double?> PassRth { get; }
+
+    /// <summary>Thermal resistance of the control [K/W]; null: not to be had.</summary>
+    public double? ControlRth { get; }
+
+    /// <summary>True where every transistor's thermal resistance is known, so that h = 1 can be solved.</summary>
+    public bool Heats { get; }
+
+    /// <summary>True where the table gives the coupling of every pass transistor.</summary>
+    public bool CouplingGiven { get; }
+
+    /// <summary>Load at the smallest and the largest drop.</summary>
+    public IReadOnlyList<LoadElement> Load { get; }
+
+    /// <summary>Load at the centre of the drop.</summary>
+    public LoadElement NominalLoad { get; }
+
+    /// <summary>What was assumed.</summary>
+    public IReadOnlyList<Assumption> Assumed => assumed;
+
+    /// <summary>Junction temperature at which a runaway is held: Tj max + 50 K, or 200 degC where it is missing [K].</summary>
+    public static double RunawayLimit(Transistor part) => (part.TjMax?.Value.Kelvins + 50) ?? 473.15;
+
+    private static double? Rth(Transistor part) =>
+        part.RthJa?.Value.KelvinsPerWatt
+        ?? (part.TjMax is { } t && part.Power is { } p && p.Value.Watts > 0
+            ? (t.Value.Kelvins - part.FlatTo.Kelvins) / p.Value.Watts
+            : null);
+
+    private LoadElement LoadAt(Voltage drop)
+    {
+        ChannelConditions c = Channel.Conditions;
+        return LoadElement.FromDrop(drop.Volts, c.CurrentNominal.Amperes, c.LoadSlope.Ohms, c.Leds);
+    }
+
+    private void CollectAssumptions()
+    {
+        IEnumerable<TransistorVariants> transistors = Pass.Append(Control).Distinct();
+        foreach (TransistorVariants t in transistors)
+        {
+            assumed.AddRange(t.Assumed);
+            if (t.Part.RthJa is null && Rth(t.Part) is { } rth)
+            {
+                assumed.Add(new Assumption("RthJA", t.Part.PartNumber, string.Create(CultureInfo.InvariantCulture, $"{rth:0.#} K/W, from Tj max and Power")));
+            }
+        }
+
+        if (Control.MinPoints.Count > 0)
+        {
+            assumed.Add(new Assumption("hFE of the control far below its points", Control.Part.PartNumber, "the outermost value held"));
+        }
+
+        if (!CouplingGiven && Heats)
+        {
+            assumed.Add(new Assumption("Coupling", Channel.Name, "both 0 and 0.2 RthJA of the hottest leg"));
+        }
+
+        foreach (ResistorRange r in Sense.Concat(Averaging.OfType<ResistorRange>()).Append(Feed).Concat(PullDown is null ? [] : [PullDown]).Where(r => r.Part.Tcr is null && r.Nominal > 0))
+        {
+            assumed.Add(new Assumption("TCR", r.Part.PartNumber, "200 ppm/K"));
+        }
+
+        if (Channel.Conditions.Duty < 1)
+        {
+            assumed.Add(new Assumption("Duty", Channel.Name, "solved and judged as 100 %"));
+        }
+    }
+}

@@ -1,0 +1,87 @@
+using PartCheck.Channels;
+
+namespace PartCheck.OperatingPoints;
+
+/// <summary>Solves corners of a box one after the other, each from the one before. One a thread and chunk.</summary>
+public sealed class CornerSolver
+{
+    private readonly SinkSolver solver = new();
+    private readonly StartPoint start = new();
+    private readonly StartPoint edgeStart = new();
+    private readonly ChannelModel model;
+    private readonly PinSource pin;
+    private readonly double driveFactor;
+    private int edgeOf = -1;
+    private OperatingPoint? edge;
+
+    /// <summary>Makes a solver for a channel.</summary>
+    /// <param name="model">The channel.</param>
+    /// <param name="pin">Its pin.</param>
+    /// <param name="driveFactor">k' = max(drive factor, 1.2) of the edge of regulation.</param>
+    public CornerSolver(ChannelModel model, PinSource pin, double driveFactor)
+    {
+        this.model = model;
+        this.pin = pin;
+        this.driveFactor = driveFactor;
+    }
+
+    /// <summary>The solved state of a corner.</summary>
+    /// <param name="box">The box.</param>
+    /// <param name="index">The corner's index.</param>
+    /// <param name="offset">Added to the index in the state, where a channel has several boxes.</param>
+    public SolvedState Solve(ChannelBox box, int index, int offset = 0)
+    {
+        ArgumentNullException.ThrowIfNull(box);
+        BoxCorner at = box.At(index);
+        OperatingPoint? point = solver.Solve(at.Circuit, start);
+        if (point is null)
+        {
+            return new SolvedState
+            {
+                State = box.State,
+                Corner = at.Corner,
+                Index = offset + index,
+                Solved = false,
+                Transistors = [],
+                Resistors = [],
+            };
+        }
+
+        DriveEdge? drive = null;
+        if (box.State == ChannelState.On && at.Corner.Heat == 0)
+        {
+            if (edgeOf != index / box.InnerCount || edge is null)
+            {
+                edgeOf = index / box.InnerCount;
+                if (!edgeStart.HasSolution)
+                {
+                    edgeStart.CopyFrom(start);
+                }
+
+                edge = solver.SolveEdge(at.Circuit, driveFactor, edgeStart);
+            }
+
+            drive = Edge(at.Circuit);
+        }
+
+        return StateAssembly.Build(model, pin, box.State, at, box.OddClass, point, drive, offset + index);
+    }
+
+    private DriveEdge Edge(SinkCircuit circuit)
+    {
+        if (edge is null)
+        {
+            return new DriveEdge(false, 0, 0, 0, driveFactor);
+        }
+
+        double sum = 0;
+        for (int g = 0; g < circuit.Legs.Count; g++)
+        {
+            sum += circuit.Legs[g].Count * edge.Legs[g].Ib;
+        }
+
+        double available = ((circuit.FeedVoltage - edge.BaseVoltage) / circuit.FeedResistance)
+            - (edge.BaseVoltage * circuit.BaseConductance);
+        return new DriveEdge(edge.BaseVoltage < circuit.PinVoltage, edge.BaseVoltage, sum, available, driveFactor);
+    }
+}

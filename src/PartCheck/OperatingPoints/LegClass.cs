@@ -1,0 +1,86 @@
+using PartCheck.Channels;
+
+namespace PartCheck.OperatingPoints;
+
+/// <summary>Legs with the same parts: what holds for one of them holds for all.</summary>
+/// <param name="Legs">The legs, in channel order.</param>
+public sealed record LegClass(IReadOnlyList<Leg> Legs)
+{
+    /// <summary>One of them.</summary>
+    public Leg First => Legs[0];
+
+    /// <summary>Groups a channel's legs.</summary>
+    public static IReadOnlyList<LegClass> Of(BoundChannel channel)
+    {
+        ArgumentNullException.ThrowIfNull(channel);
+        List<List<Leg>> classes = [];
+        foreach (Leg leg in channel.Legs)
+        {
+            List<Leg>? same = classes.Find(c =>
+                ReferenceEquals(c[0].Pass.Part, leg.Pass.Part)
+                && ReferenceEquals(c[0].Sense.Part, leg.Sense.Part)
+                && ReferenceEquals(c[0].Averaging?.Part, leg.Averaging?.Part)
+                && c[0].Sensed == leg.Sensed);
+            if (same is null)
+            {
+                classes.Add([leg]);
+            }
+            else
+            {
+                same.Add(leg);
+            }
+        }
+
+        return [.. classes.Select(c => new LegClass(c))];
+    }
+}
+
+/// <summary>Slots of a channel: which placements a solved point stands for.</summary>
+public sealed class Slots
+{
+    private readonly List<IReadOnlyList<Placement>> placements = [];
+
+    /// <summary>Lays out the slots of a channel.</summary>
+    public Slots(BoundChannel channel, IReadOnlyList<LegClass> classes)
+    {
+        ArgumentNullException.ThrowIfNull(channel);
+        ArgumentNullException.ThrowIfNull(classes);
+        foreach (LegClass c in classes)
+        {
+            placements.Add([.. c.Legs.Select(l => l.Pass)]);
+            placements.Add([.. c.Legs.Select(l => l.Sense)]);
+            placements.Add([.. c.Legs.Where(l => l.Averaging is not null).Select(l => l.Averaging!)]);
+        }
+
+        Control = placements.Count;
+        placements.Add([channel.Control]);
+        Feed = placements.Count;
+        placements.Add([channel.Feed]);
+        PullDown = placements.Count;
+        placements.Add(channel.PullDown is null ? [] : [channel.PullDown]);
+    }
+
+    /// <summary>Number of slots.</summary>
+    public int Count => placements.Count;
+
+    /// <summary>Slot of the control transistor.</summary>
+    public int Control { get; }
+
+    /// <summary>Slot of the feed resistor.</summary>
+    public int Feed { get; }
+
+    /// <summary>Slot of the pull-down resistor.</summary>
+    public int PullDown { get; }
+
+    /// <summary>Slot of a leg class's pass transistor.</summary>
+    public static int Pass(int legClass) => 3 * legClass;
+
+    /// <summary>Slot of a leg class's sense resistor.</summary>
+    public static int Sense(int legClass) => (3 * legClass) + 1;
+
+    /// <summary>Slot of a leg class's averaging resistor.</summary>
+    public static int Averaging(int legClass) => (3 * legClass) + 2;
+
+    /// <summary>The placements of a slot.</summary>
+    public IReadOnlyList<Placement> Of(int slot) => placements[slot];
+}

@@ -1,0 +1,58 @@
+using PartCheck.Parts;
+
+namespace PartCheck.OperatingPoints;
+
+/// <summary>
+/// A logic pin as the box sees it: weak (lowest level, highest resistance) or strong (highest level, resistance 0).
+/// <para><c>cmos</c>: source resistance up to (Supply min - High min)/High current, valid up to High current; of two High
+/// pairs the smaller resistance, valid to the larger current. <c>ttl</c>: the lowest High min at any current up to the
+/// largest High current.</para>
+/// </summary>
+public sealed record PinSource
+{
+    /// <summary>The pin's row as source voltages [V], resistances [ohm] and the current up to which the weak level holds [A].</summary>
+    /// <param name="pin">The row.</param>
+    /// <param name="others">Highest current that other feeds draw from the same pin [A].</param>
+    public PinSource(LogicPin pin, double others = 0)
+    {
+        ArgumentNullException.ThrowIfNull(pin);
+        Others = others;
+        double supplyMin = pin.Supply.Min.Volts;
+        double supplyMax = pin.Supply.Max.Volts;
+        GuaranteedCurrent = pin.High.Max(h => h.Current.Amperes);
+        StrongVoltage = supplyMax;
+        if (pin.Output == PinOutput.Cmos)
+        {
+            WeakResistance = pin.High.Min(h => Math.Max(0, supplyMin - h.Min.Volts) / h.Current.Amperes);
+            WeakVoltage = supplyMin - (WeakResistance * others);
+            NominalVoltage = (supplyMin + supplyMax) / 2;
+            NominalResistance = WeakResistance / 2;
+        }
+        else
+        {
+            WeakVoltage = pin.High.Min(h => h.Min.Volts);
+            NominalVoltage = (WeakVoltage + supplyMax) / 2;
+        }
+    }
+
+    /// <summary>Lowest source voltage [V].</summary>
+    public double WeakVoltage { get; }
+
+    /// <summary>Highest source resistance [ohm].</summary>
+    public double WeakResistance { get; }
+
+    /// <summary>Highest source voltage, at resistance 0 [V].</summary>
+    public double StrongVoltage { get; }
+
+    /// <summary>Source voltage of the nominal state [V].</summary>
+    public double NominalVoltage { get; }
+
+    /// <summary>Source resistance of the nominal state [ohm].</summary>
+    public double NominalResistance { get; }
+
+    /// <summary>Current up to which the weak level is guaranteed, all feeds together [A].</summary>
+    public double GuaranteedCurrent { get; }
+
+    /// <summary>Highest current that other feeds draw from the same pin [A].</summary>
+    public double Others { get; }
+}

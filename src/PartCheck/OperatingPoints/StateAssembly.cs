@@ -1,0 +1,105 @@
+using PartCheck.Channels;
+using PartCheck.Parts;
+
+namespace PartCheck.OperatingPoints;
+
+/// <summary>Turns a solved circuit into the state that rules read.</summary>
+internal static class StateAssembly
+{
+    public static SolvedState Build(
+        ChannelModel model, PinSource pin, ChannelState state, in BoxCorner at, int oddClass, OperatingPoint point, DriveEdge? drive, int index)
+    {
+        SinkCircuit circuit = at.Circuit;
+        TransistorPoint[] transistors = new TransistorPoint[circuit.Legs.Count + 1];
+        List<ResistorPoint> resistors = new((2 * circuit.Legs.Count) + 2);
+        bool gain = true;
+        int g = 0;
+        for (int c = 0; c < model.Classes.Count; c++)
+        {
+            int groups = c == oddClass && model.Classes[c].Legs.Count > 1 ? 2 : 1;
+            for (int k = 0; k < groups; k++, g++)
+            {
+                bool odd = c == oddClass && k == 0;
+                SolvedTransistor q = point.Legs[g];
+                transistors[g] = Transistor(Slots.Pass(c), Role.Pass, model.Pass[c].Part, q);
+                gain &= model.Pass[c].GainHolds(q.Ic, odd ? at.Corner.OddPass.Hfe : at.Corner.Pass.Hfe);
+                AddLeg(resistors, model, c, circuit.Legs[g], q, point, g);
+            }
+        }
+
+        transistors[g] = Transistor(model.Slots.Control, Role.Control, model.Control.Part, point.Control);
+        AddShared(resistors, model, circuit, point);
+        return new SolvedState
+        {
+            State = state,
+            Corner = at.Corner,
+            Index = index,
+            BaseVoltage = point.BaseVoltage,
+            ControlBaseVoltage = point.ControlBaseVoltage,
+            CollectorVoltage = point.CollectorVoltage,
+            LoadCurrent = point.LoadCurrent,
+            PinCurrent = point.PinCurrent,
+            PinGuaranteed = at.Strong || point.PinCurrent + pin.Others <= pin.GuaranteedCurrent,
+            GainGuaranteed = gain,
+            LowestHeadroom = at.LowestHeadroom && state == ChannelState.On,
+            Transistors = transistors,
+            Resistors = resistors,
+            Drive = drive,
+        };
+    }
+
+    /// <summary>A state with one transistor point a leg, in leg order: nominal and off.</summary>
+    public static SolvedState BuildByLeg(ChannelModel model, ChannelState state, Corner corner, SinkCircuit circuit, OperatingPoint point)
+    {
+        TransistorPoint[] transistors = new TransistorPoint[circuit.Legs.Count + 1];
+        List<ResistorPoint> resistors = [];
+        for (int g = 0; g < circuit.Legs.Count; g++)
+        {
+            int c = CircuitAssembly.ClassOf(model, model.Channel.Legs[g]);
+            transistors[g] = Transistor(Slots.Pass(c), Role.Pass, model.Pass[c].Part, point.Legs[g]);
+            AddLeg(resistors, model, c, circuit.Legs[g], point.Legs[g], point, g);
+        }
+
+        transistors[^1] = Transistor(model.Slots.Control, Role.Control, model.Control.Part, point.Control);
+        AddShared(resistors, model, circuit, point);
+        return new SolvedState
+        {
+            State = state,
+            Corner = corner,
+            BaseVoltage = point.BaseVoltage,
+            ControlBaseVoltage = point.ControlBaseVoltage,
+            CollectorVoltage = point.CollectorVoltage,
+            LoadCurrent = point.LoadCurrent,
+            PinCurrent = point.PinCurrent,
+            Transistors = transistors,
+            Resistors = resistors,
+        };
+    }
+
+    private static TransistorPoint Transistor(int slot, Role role, Transistor part, in SolvedTransistor q) =>
+        new(slot, role, part, q.Vce, q.CollectorVoltage - q.BaseVoltage, q.Ic, q.Ib, q.Power, q.Tj, q.Held);
+
+    private static void AddLeg(
+        List<ResistorPoint> resistors, ChannelModel model, int c, LegGroup leg, in SolvedTransistor q, OperatingPoint point, int g)
+    {
+        double ve = Math.Abs(q.EmitterVoltage);
+        resistors.Add(new ResistorPoint(Slots.Sense(c), Role.Sense, model.Sense[c].Part, leg.Sense, ve, ve / leg.Sense));
+        if (model.Averaging[c] is { } averaging)
+        {
+            double i = Math.Abs(point.AveragingCurrents[g]);
+            resistors.Add(new ResistorPoint(Slots.Averaging(c), Role.Averaging, averaging.Part, leg.Averaging, i * leg.Averaging, i));
+        }
+    }
+
+    private static void AddShared(List<ResistorPoint> resistors, ChannelModel model, SinkCircuit circuit, OperatingPoint point)
+    {
+        double feed = Math.Abs(point.FeedCurrent);
+        resistors.Add(new ResistorPoint(model.Slots.Feed, Role.Feed, model.Feed.Part, circuit.Feed, feed * circuit.Feed, feed));
+        if (model.PullDown is { } pullDown)
+        {
+            double node = circuit.PullDownAt == PullDownAt.Base ? point.BaseVoltage : point.BaseVoltage + (point.FeedCurrent * circuit.Feed);
+            double volts = Math.Abs(node);
+            resistors.Add(new ResistorPoint(model.Slots.PullDown, Role.PullDown, pullDown.Part, circuit.PullDown, volts, volts / circuit.PullDown));
+        }
+    }
+}

@@ -1,0 +1,134 @@
+using PartCheck.Channels;
+using PartCheck.Quantities;
+
+namespace PartCheck.OperatingPoints;
+
+/// <summary>
+/// The room's door: every corner of a channel, solved, by full enumeration; the nominal state; the state with the pin low.
+/// Corners are solved in chunks of fixed length, each chunk from a cold start, so that no number depends on the thread count.
+/// </summary>
+public static class WorstCase
+{
+    private const int ChunkLength = 1024;
+
+    /// <summary>Visits every corner in the states on and unfed.</summary>
+    /// <typeparam name="T">What a chunk accumulates.</typeparam>
+    /// <param name="model">The channel.</param>
+    /// <param name="pin">Its pin.</param>
+    /// <param name="driveFactor">Drive factor of the derating table.</param>
+    /// <param name="threads">Threads to use; 0: all.</param>
+    /// <param name="make">Makes a chunk's accumulator.</param>
+    /// <param name="visit">Takes a solved state into it.</param>
+    /// <param name="cancel">Stops the enumeration.</param>
+    /// <returns>The accumulators in corner order.</returns>
+    public static IReadOnlyList<T> Enumerate<T>(
+        ChannelModel model, PinSource pin, double driveFactor, int threads, Func<T> make, Action<T, SolvedState> visit, CancellationToken cancel)
+    {
+        ArgumentNullException.ThrowIfNull(model);
+        ArgumentNullException.ThrowIfNull(make);
+        ArgumentNullException.ThrowIfNull(visit);
+        double k = Math.Max(driveFactor, 1.2);
+        List<(ChannelBox Box, int From, int To, int Offset)> chunks = [];
+        int offset = 0;
+        foreach (ChannelBox box in Boxes(model, pin))
+        {
+            for (int from = 0; from < box.Count; from += ChunkLength)
+            {
+                chunks.Add((box, from, Math.Min(from + ChunkLength, box.Count), offset));
+            }
+
+            offset += box.Count;
+        }
+
+        T[] results = new T[chunks.Count];
+        ParallelOptions options = new() { CancellationToken = cancel, MaxDegreeOfParallelism = threads > 0 ? threads : -1 };
+        Parallel.For(0, chunks.Count, options, i =>
+        {
+            (ChannelBox box, int from, int to, int shift) = chunks[i];
+            CornerSolver solver = new(model, pin, k);
+            T accumulator = make();
+            for (int index = from; index < to; index++)
+            {
+                visit(accumulator, solver.Solve(box, index, shift));
+            }
+
+            results[i] = accumulator;
+        });
+        return results;
+    }
+
+    /// <summary>The boxes of a channel: on and unfed, each distinct odd leg.</summary>
+    public static IReadOnlyList<ChannelBox> Boxes(ChannelModel model, PinSource pin)
+    {
+        ArgumentNullException.ThrowIfNull(model);
+        List<ChannelBox> boxes = [];
+        foreach (ChannelState state in (ReadOnlySpan<ChannelState>)[ChannelState.On, ChannelState.Unfed])
+        {
+            if (model.Channel.Legs.Count == 1)
+            {
+                boxes.Add(new ChannelBox(model, pin, state, -1));
+            }
+            else
+            {
+                for (int c = 0; c < model.Classes.Count; c++)
+                {
+                    boxes.Add(new ChannelBox(model, pin, state, c));
+                }
+            }
+        }
+
+        return boxes;
+    }
+
+    /// <summary>The nominal state at 25 degC ambient; null where the solver gave up.</summary>
+    public static SolvedState? Nominal(ChannelModel model, PinSource pin)
+    {
+        ArgumentNullException.ThrowIfNull(model);
+        ArgumentNullException.ThrowIfNull(pin);
+        SinkCircuit circuit = CircuitAssembly.BuildNominal(model, pin, PhysicalConstants.RoomTemperature);
+        OperatingPoint? point = new SinkSolver().Solve(circuit);
+        ChannelConditions c = model.Channel.Conditions;
+        Corner corner = new()
+        {
+            Supply = circuit.Supply,
+            LoadDrop = (c.LoadDrop.Min.Volts + c.LoadDrop.Max.Volts) / 2,
+            Ambient = PhysicalConstants.RoomTemperature,
+            PinLevel = pin.NominalVoltage,
+            PinResistance = pin.NominalResistance,
+            Heat = model.Heats ? 1 : 0,
+        };
+        return point is null ? null : StateAssembly.BuildByLeg(model, ChannelState.On, corner, circuit, point);
+    }
+
+    /// <summary>
+    /// The state with the pin at 0 V, the supply at its maximum, every part nominal, no self-heating: what the voltage rules
+    /// read in the state off (there the transistors stand under the whole supply). Null where the solver gave up.
+    /// </summary>
+    public static SolvedState? PinLow(ChannelModel model, double ambient)
+    {
+        ArgumentNullException.ThrowIfNull(model);
+        ChannelConditions c = model.Channel.Conditions;
+        Corner corner = new()
+        {
+            Supply = c.Supply.Max.Volts,
+            LoadDrop = c.LoadDrop.Min.Volts,
+            Ambient = ambient,
+            PinLevel = 0,
+            PinResistance = 0,
+            Heat = 0,
+        };
+        SinkCircuit nominal = CircuitAssembly.BuildNominal(model, new PinSource(model.Channel.Logic), ambient);
+        SinkCircuit circuit = nominal with
+        {
+            PinVoltage = 0,
+            PinResistance = 0,
+            Supply = corner.Supply,
+            Load = model.Load[0],
+            ControlHeat = nominal.ControlHeat with { RthJa = 0 },
+            Legs = [.. nominal.Legs.Select(l => l with { Heat = l.Heat with { RthJa = 0 }, Coupling = 0 })],
+            HottestLegCoupling = 0,
+        };
+        OperatingPoint? point = new SinkSolver().Solve(circuit);
+        return point is null ? null : StateAssembly.BuildByLeg(model, ChannelState.Off, corner, circuit, point);
+    }
+}
