@@ -1,0 +1,49 @@
+using PartCheck.Channels;
+using PartCheck.OperatingPoints;
+using PartCheck.Parts;
+
+namespace PartCheck.Rules;
+
+/// <summary>
+/// Load current, state on, both extremes within the channel's window: ratio max((Imax - M)/(Wmax - M), (M - Imin)/(M - Wmin)),
+/// M the window's centre. The lower half is not verified where the pin's current exceeds the current of its guaranteed level.
+/// </summary>
+public sealed class CurrentRule : ChannelRule
+{
+    /// <inheritdoc/>
+    public override string Id => "current";
+
+    /// <inheritdoc/>
+    public override string Title => "Load current within the channel's window";
+
+    /// <inheritdoc/>
+    public override string Unit => "A";
+
+    /// <inheritdoc/>
+    public override string Source => "the channel's own window";
+
+    /// <inheritdoc/>
+    public override Stress Evaluate(SolvedState state, BoundChannel channel, in RuleRows rows)
+    {
+        Interval window = new(channel.Conditions.CurrentWindow.Min.Amperes, channel.Conditions.CurrentWindow.Max.Amperes);
+        Stress stress = Stress.Window(state.LoadCurrent, window.Min, window.Max);
+        string? missing = MissingData.Gain(state) ?? MissingData.Vbe(state) ?? MissingData.Tolerance(state) ?? MissingData.Heat(state);
+        bool lower = state.LoadCurrent < (window.Min + window.Max) / 2;
+        if (missing is null && !state.PinGuaranteed && lower)
+        {
+            missing = "pin level at this current";
+        }
+
+        return missing is null ? stress : Stress.NotVerified(missing);
+    }
+
+    /// <inheritdoc/>
+    public override string? DecidingCell(BoundChannel channel, in Stress stress)
+    {
+        ArgumentNullException.ThrowIfNull(channel);
+        string column = stress.Allowed == channel.Conditions.CurrentWindow.Min.Amperes ? "Current min" : "Current max";
+        return channel.ConditionCells.GetValueOrDefault(column);
+    }
+
+    private readonly record struct Interval(double Min, double Max);
+}

@@ -1,0 +1,57 @@
+using PartCheck.Channels;
+using PartCheck.Derating;
+using PartCheck.OperatingPoints;
+using PartCheck.Parts;
+using PartCheck.Quantities;
+
+namespace PartCheck.Rules;
+
+/// <summary>
+/// Junction temperature, state on. Allowed: the lowest of Tmax x factor (a multiplication of degrees Celsius), Tmax - offset
+/// and cap. Ratio (Tj - Ta)/(Tallowed - Ta). A junction that ran away is nonconforming, "at least" where it is held.
+/// </summary>
+public sealed class JunctionRule : TransistorRule
+{
+    /// <inheritdoc/>
+    public override string Id => "junction";
+
+    /// <inheritdoc/>
+    public override string Title => "Junction temperature at most the derated maximum";
+
+    /// <inheritdoc/>
+    public override string Unit => "K";
+
+    /// <inheritdoc/>
+    public override string Source => "Tj = Ta + P RthJA (JESD51 family, RthJA of the stated board)";
+
+    /// <summary>The allowed junction temperature [K].</summary>
+    /// <param name="maximum">Highest junction temperature.</param>
+    /// <param name="row">Derating row.</param>
+    public static double Allowed(Temperature maximum, DeratingRow row)
+    {
+        ArgumentNullException.ThrowIfNull(row);
+        double allowed = Math.Min((maximum.Celsius * row.Factor) + Temperature.CelsiusZero, maximum.Kelvins - row.Offset.Kelvins);
+        return Math.Min(allowed, row.Cap?.Kelvins ?? double.PositiveInfinity);
+    }
+
+    /// <inheritdoc/>
+    public override Stress Evaluate(SolvedState state, in TransistorPoint point, BoundChannel channel, in RuleRows rows)
+    {
+        if (point.Part.TjMax is not { } max)
+        {
+            return Stress.NotVerified("Tj max of " + point.Part.PartNumber);
+        }
+
+        double allowed = Allowed(max.Value, rows.Own);
+        Stress stress = Stress.Temperatures(point.Tj, state.Corner.Ambient, allowed);
+        if (point.Held)
+        {
+            return stress with { Verdict = Verdict.Nonconforming, AtLeast = true };
+        }
+
+        return stress.Verdict == Verdict.Conforms && MissingData.Heat(state) is { } missing ? Stress.NotVerified(missing) : stress;
+    }
+
+    /// <inheritdoc/>
+    public override string? DecidingCell(Transistor part) => part.TjMax?.Cell;
+}

@@ -1,0 +1,63 @@
+using PartCheck.Channels;
+using PartCheck.OperatingPoints;
+using PartCheck.Parts;
+
+namespace PartCheck.Rules;
+
+/// <summary>
+/// Dissipation, state on, at the ambient where the ratio is worst. Allowed at ambient T:
+/// factor x min(Power, Power - slope (T - flat), (Tmax - T)/RthJA) [W]; slope from (Tmax - flat) where the table gives none.
+/// MIL-PRF-19500/255 1.3 states its ratings so: flat at PT, then a line to zero at TJ maximum.
+/// </summary>
+public sealed class PowerRule : TransistorRule
+{
+    /// <inheritdoc/>
+    public override string Id => "power";
+
+    /// <inheritdoc/>
+    public override string Title => "Dissipation at most the derated power at ambient temperature";
+
+    /// <inheritdoc/>
+    public override string Unit => "W";
+
+    /// <inheritdoc/>
+    public override string Source => "rated power: flat, then linear (form of MIL-PRF-19500/255, 1.3)";
+
+    /// <inheritdoc/>
+    public override Stress Evaluate(SolvedState state, in TransistorPoint point, BoundChannel channel, in RuleRows rows)
+    {
+        Transistor part = point.Part;
+        if (part.Power is not { } power)
+        {
+            return Stress.NotVerified("Power of " + part.PartNumber);
+        }
+
+        double ambient = state.Corner.Ambient;
+        double above = Math.Max(0, ambient - part.FlatTo.Kelvins);
+        double rated = power.Value.Watts;
+        if (part.PowerSlope is { } slope)
+        {
+            rated -= slope.Value * above;
+        }
+        else if (part.TjMax is { } max)
+        {
+            double span = max.Value.Kelvins - part.FlatTo.Kelvins;
+            rated = span > 0 ? rated * (1 - (above / span)) : 0;
+        }
+        else if (above > 0)
+        {
+            return Stress.NotVerified("Tj max of " + part.PartNumber);
+        }
+
+        if (part is { TjMax: { } tmax, RthJa: { } rth })
+        {
+            rated = Math.Min(rated, (tmax.Value.Kelvins - ambient) / rth.Value.KelvinsPerWatt);
+        }
+
+        Stress stress = Stress.AtMostOf(point.Power, rated * rows.Own.Factor);
+        return stress.Verdict == Verdict.Conforms && MissingData.Heat(state) is { } missing ? Stress.NotVerified(missing) : stress;
+    }
+
+    /// <inheritdoc/>
+    public override string? DecidingCell(Transistor part) => part.Power?.Cell;
+}

@@ -1,0 +1,81 @@
+using PartCheck.Channels;
+using PartCheck.Derating;
+using PartCheck.OperatingPoints;
+using PartCheck.Parts;
+
+namespace PartCheck.Rules;
+
+/// <summary>
+/// Dissipation of a resistor (zero ohm left out), states on and unfed. Allowed: factor x rated power up to T1, then a line to
+/// zero at T3 (<c>rated</c>), at T2 = F (T3 - T1) + T1 (<c>parallel</c>) or at a stated temperature [W]. Without a film maximum
+/// nothing is known above T1.
+/// </summary>
+public sealed class ResistorPowerRule : ResistorRule
+{
+    /// <inheritdoc/>
+    public override string Id => "r-power";
+
+    /// <inheritdoc/>
+    public override string Title => "Resistor dissipation at most the derated power at ambient temperature";
+
+    /// <inheritdoc/>
+    public override string Unit => "W";
+
+    /// <inheritdoc/>
+    public override string Source => "rated dissipation: flat, then linear; T2 = F (T3 - T1) + T1 (NASA EEE-INST-002, R2 Table 4, notes 1, 3, 4)";
+
+    /// <inheritdoc/>
+    public override bool AppliesTo(ResistorPart part) => part is { Resistance.Value.Ohms: > 0 };
+
+    /// <summary>The allowed power at an ambient [W]; NaN: not known there.</summary>
+    /// <param name="part">The resistor; its power must be given.</param>
+    /// <param name="row">Derating row of this rule.</param>
+    /// <param name="ambient">Ambient temperature [K].</param>
+    public static double Allowed(ResistorPart part, DeratingRow row, double ambient)
+    {
+        ArgumentNullException.ThrowIfNull(part);
+        ArgumentNullException.ThrowIfNull(row);
+        if (part.Power is not { } power)
+        {
+            return double.NaN;
+        }
+
+        double flat = part.FlatTo.Kelvins;
+        double full = power.Value.Watts * row.Factor;
+        if (ambient <= flat)
+        {
+            return full;
+        }
+
+        if (part.TjMax is not { } film)
+        {
+            return double.NaN;
+        }
+
+        double t3 = film.Value.Kelvins;
+        double zero = row.Zero switch
+        {
+            ZeroTemperature.Parallel => (row.Factor * (t3 - flat)) + flat,
+            ZeroTemperature.Fixed => row.ZeroAt?.Kelvins ?? t3,
+            _ => t3,
+        };
+        return zero <= flat ? 0 : Math.Max(0, full * (zero - ambient) / (zero - flat));
+    }
+
+    /// <inheritdoc/>
+    public override Stress Evaluate(SolvedState state, in ResistorPoint point, BoundChannel channel, in RuleRows rows)
+    {
+        if (point.Part.Power is null)
+        {
+            return Stress.NotVerified("Power of " + point.Part.PartNumber);
+        }
+
+        double allowed = Allowed(point.Part, rows.Own, state.Corner.Ambient);
+        return double.IsNaN(allowed)
+            ? Stress.NotVerified("Film max of " + point.Part.PartNumber)
+            : Stress.AtMostOf(point.Power, allowed);
+    }
+
+    /// <inheritdoc/>
+    public override string? DecidingCell(ResistorPart part) => part.Power?.Cell;
+}

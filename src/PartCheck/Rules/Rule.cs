@@ -1,0 +1,72 @@
+using PartCheck.Channels;
+using PartCheck.Derating;
+using PartCheck.OperatingPoints;
+using PartCheck.Parts;
+
+namespace PartCheck.Rules;
+
+/// <summary>The derating rows a rule reads, looked up once for a part.</summary>
+/// <param name="Own">The row of the rule itself.</param>
+/// <param name="ResistorPower">The row of <c>r-power</c>, which bounds the voltage, too.</param>
+public readonly record struct RuleRows(DeratingRow Own, DeratingRow ResistorPower);
+
+/// <summary>
+/// One rule: identifier, what it says in a line, the unit of its values, its equation's source. A rule that reads states is
+/// a pure function of one solved state and one part; the worst over all corners is taken in one place, by the judge.
+/// Identifiers are stable: reports and concessions quote them.
+/// </summary>
+public abstract class Rule
+{
+    /// <summary>Identifier.</summary>
+    public abstract string Id { get; }
+
+    /// <summary>What the rule demands, one line.</summary>
+    public abstract string Title { get; }
+
+    /// <summary>SI unit of actual and allowed value.</summary>
+    public abstract string Unit { get; }
+
+    /// <summary>Where the rule comes from.</summary>
+    public abstract string Source { get; }
+
+    /// <summary>True where the rule reads this state.</summary>
+    public virtual bool Reads(SolvedState state) => state is { State: ChannelState.On };
+}
+
+/// <summary>A rule that judges transistors.</summary>
+public abstract class TransistorRule : Rule
+{
+    /// <summary>Judges one transistor in one state.</summary>
+    public abstract Stress Evaluate(SolvedState state, in TransistorPoint point, BoundChannel channel, in RuleRows rows);
+
+    /// <summary>The cell of the rating that decides; null: not given.</summary>
+    public abstract string? DecidingCell(Transistor part);
+}
+
+/// <summary>A rule that judges resistors.</summary>
+public abstract class ResistorRule : Rule
+{
+    /// <summary>True where the rule applies to the part.</summary>
+    public virtual bool AppliesTo(ResistorPart part) => true;
+
+    /// <inheritdoc/>
+    public override bool Reads(SolvedState state) => state is { State: ChannelState.On or ChannelState.Unfed };
+
+    /// <summary>Judges one resistor in one state.</summary>
+    public abstract Stress Evaluate(SolvedState state, in ResistorPoint point, BoundChannel channel, in RuleRows rows);
+
+    /// <summary>The cell of the rating that decides; null: not given.</summary>
+    public abstract string? DecidingCell(ResistorPart part);
+}
+
+/// <summary>A rule that judges the channel as a whole.</summary>
+public abstract class ChannelRule : Rule
+{
+    /// <summary>Judges the channel in one state.</summary>
+    public abstract Stress Evaluate(SolvedState state, BoundChannel channel, in RuleRows rows);
+
+    /// <summary>The cell of the limit that decides; null: not given.</summary>
+    /// <param name="channel">The channel.</param>
+    /// <param name="stress">The worst stress, where the end of a window matters.</param>
+    public abstract string? DecidingCell(BoundChannel channel, in Stress stress);
+}
