@@ -1,29 +1,32 @@
-using PartCheck.Quantities;
-
 namespace PartCheck.Sheets;
-
-/// <summary>Header spellings of every table's columns: the project's own (<c>partdata/columns.csv</c>) and the user's.</summary>
-public sealed class ColumnSpellings
-{
-    /// <summary>Loads the embedded spellings and, where given, the user's file (same three columns: Table, Column, Spelling).</summary>
-    public static ColumnSpellings Load(string? userFile, ComplaintList complaints) => throw new NotSupportedException();
-}
-
-/// <summary>Reads spreadsheet files into sheets.</summary>
-public static class SheetFile
-{
-    /// <summary>Every sheet of an XLSX workbook in order, or the one sheet of a CSV file. Failures are complaints and an empty list.</summary>
-    /// <param name="path">Path to open.</param>
-    /// <param name="shownName">The name used in complaints and citations.</param>
-    /// <param name="encoding">Name of the text encoding for CSV; null: found out.</param>
-    /// <param name="complaints">Where complaints go.</param>
-    public static IReadOnlyList<SheetData> Read(string path, string shownName, string? encoding, ComplaintList complaints) =>
-        throw new NotSupportedException();
-}
 
 /// <summary>A table found in a sheet: header row and data rows.</summary>
 public sealed class Table
 {
+    private const int LastHeaderRow = 20;
+
+    private readonly Dictionary<string, TableColumn> columns;
+
+    private Table(SheetData sheet, TableHeader header, ComplaintList complaints)
+    {
+        Sheet = sheet;
+        HeaderRow = header.Row;
+        Complaints = complaints;
+        columns = header.Columns;
+    }
+
+    /// <summary>Data rows in order (section, totals and repeated header rows left out).</summary>
+    public IReadOnlyList<TableRow> Rows { get; private set; } = [];
+
+    /// <summary>The sheet that the table stands in.</summary>
+    public SheetData Sheet { get; }
+
+    /// <summary>One-based row of the header.</summary>
+    public int HeaderRow { get; }
+
+    /// <summary>Where complaints go.</summary>
+    internal ComplaintList Complaints { get; }
+
     /// <summary>Finds the header row (rows 1 to 20), maps its columns; complains and returns null where there is none.</summary>
     /// <param name="sheet">The sheet.</param>
     /// <param name="tableName">Name in the spellings file: BOM, Channels, Parts, Pins, Derating.</param>
@@ -31,40 +34,83 @@ public sealed class Table
     /// <param name="spellings">Header spellings.</param>
     /// <param name="complaints">Where complaints go.</param>
     public static Table? Find(
-        SheetData sheet, string tableName, IReadOnlyList<ColumnSpec> columns, ColumnSpellings spellings, ComplaintList complaints) =>
-        throw new NotSupportedException();
+        SheetData sheet, string tableName, IReadOnlyList<ColumnSpec> columns, ColumnSpellings spellings, ComplaintList complaints)
+    {
+        ArgumentNullException.ThrowIfNull(sheet);
+        ArgumentNullException.ThrowIfNull(tableName);
+        ArgumentNullException.ThrowIfNull(columns);
+        ArgumentNullException.ThrowIfNull(spellings);
+        ArgumentNullException.ThrowIfNull(complaints);
+        HeaderMatcher matcher = new(tableName, columns, spellings);
+        TableHeader? best = null;
+        TableHeader? nearest = null;
+        foreach (IReadOnlyList<SheetCell> row in sheet.Rows.Where(row => row[0].Row <= LastHeaderRow))
+        {
+            TableHeader header = matcher.Match(row);
+            nearest = nearest is null || header.Columns.Count > nearest.Columns.Count ? header : nearest;
+            if (header.Complete && (best is null || header.Columns.Count > best.Columns.Count))
+            {
+                best = header;
+            }
+        }
 
-    /// <summary>Data rows in order (section, totals and repeated header rows left out).</summary>
-    public IReadOnlyList<TableRow> Rows => throw new NotSupportedException();
+        if (best is null)
+        {
+            string text = ComplaintTexts.NoHeader(
+                tableName, matcher.LookedFor, nearest?.Row, [.. nearest?.Cells.Select(cell => OneLine(cell.Text)) ?? []]);
+            complaints.Add(new Complaint(
+                sheet.File, sheet.Sheet, null, null, null, null, string.Join(", ", matcher.LookedFor), text) { Fatal = true });
+            return null;
+        }
+
+        Table table = new(sheet, best, complaints);
+        foreach (TableColumn column in best.Columns.Values.Where(column => column.UnitWrong).OrderBy(column => column.Index))
+        {
+            string wanted = ColumnKindMap.QuantityOf(column.Spec.Kind) is { } kind ? Quantities.QuantityUnits.WantedOf(kind) : "a text";
+            complaints.Add(new Complaint(
+                sheet.File, sheet.Sheet, best.Row, column.Header, CellAddress.Of(best.Row, column.Index), column.Header, wanted,
+                ComplaintTexts.HeaderUnit(column.Header, wanted)));
+        }
+
+        table.Rows = DataRows(table, best, matcher, tableName);
+        return table;
+    }
 
     /// <summary>True where the sheet has the column.</summary>
-    public bool Has(string column) => throw new NotSupportedException();
-}
+    public bool Has(string column) => columns.ContainsKey(column);
 
-/// <summary>One data row.</summary>
-public sealed class TableRow
-{
-    /// <summary>One-based row in the sheet.</summary>
-    public int Row => throw new NotSupportedException();
+    /// <summary>The header of a column as it stands in the sheet; null where the sheet has no such column.</summary>
+    public string? HeaderOf(string column) => columns.TryGetValue(column, out TableColumn? found) ? found.Header : null;
 
-    /// <summary>When set, complaints about this row carry it as their channel.</summary>
-    public string? Channel { get; set; }
+    internal TableColumn? ColumnOf(string column) => columns.GetValueOrDefault(column);
 
-    /// <summary>True once this row has raised a complaint.</summary>
-    public bool HasComplaints => throw new NotSupportedException();
+    private static List<TableRow> DataRows(Table table, TableHeader header, HeaderMatcher matcher, string tableName)
+    {
+        List<TableRow> rows = [];
+        RowKinds kinds = new(header, matcher, tableName);
+        foreach (IReadOnlyList<SheetCell> row in table.Sheet.Rows.Where(row => row[0].Row > header.Row))
+        {
+            RowKind kind = kinds.Of(row);
+            if (kind == RowKind.OtherHeader)
+            {
+                SheetCell first = row[0];
+                if (!tableName.Equals("BOM", StringComparison.OrdinalIgnoreCase))
+                {
+                    table.Complaints.Add(new Complaint(
+                        table.Sheet.File, table.Sheet.Sheet, first.Row, null, first.Address, first.Text, "one table in one sheet", ComplaintTexts.SecondHeader));
+                }
 
-    /// <summary>The cell's trimmed text; null when blank or when the sheet has no such column.</summary>
-    public string? Text(string column) => throw new NotSupportedException();
+                break;
+            }
 
-    /// <summary>The cell's value in SI by its column's kind (percent as a share, temperatures in kelvins); null when blank; an unreadable one is a complaint and null.</summary>
-    public Cited<double>? Number(string column) => throw new NotSupportedException();
+            if (kind == RowKind.Data)
+            {
+                rows.Add(new TableRow(table, row));
+            }
+        }
 
-    /// <summary>Parses a text that is part of a cell (such as one point of a list) as a kind of quantity, with this file's decimal sign; null with a complaint when unreadable.</summary>
-    public double? Part(string column, string text, ColumnKind kind) => throw new NotSupportedException();
+        return rows;
+    }
 
-    /// <summary>File and cell of a column in this row (the row's first cell where the sheet has no such column).</summary>
-    public string Cite(string column) => throw new NotSupportedException();
-
-    /// <summary>Raises a complaint about a column of this row.</summary>
-    public void Complain(string column, string wanted, string text) => throw new NotSupportedException();
+    internal static string OneLine(string text) => string.Join(' ', text.Split((char[])['\r', '\n'], StringSplitOptions.RemoveEmptyEntries));
 }
