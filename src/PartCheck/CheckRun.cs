@@ -1,4 +1,12 @@
+using System.Security.Cryptography;
+using PartCheck.Bills;
+using PartCheck.Channels;
+using PartCheck.Derating;
+using PartCheck.OperatingPoints;
+using PartCheck.Parts;
 using PartCheck.Reports;
+using PartCheck.Rules;
+using PartCheck.Sheets;
 
 namespace PartCheck;
 
@@ -36,6 +44,9 @@ public sealed record CheckRequest
 /// <summary>The run that knows every room: inputs at the left, reports at the right.</summary>
 public static class CheckRun
 {
+    /// <summary>The derating table of a run that names none.</summary>
+    public const string DefaultDerating = "workshop";
+
     /// <summary>Checks boards.</summary>
     /// <param name="request">What is asked.</param>
     /// <param name="cancel">Stops the run.</param>
@@ -43,7 +54,327 @@ public static class CheckRun
     public static CheckReport Run(CheckRequest request, CancellationToken cancel = default)
     {
         ArgumentNullException.ThrowIfNull(request);
-        cancel.ThrowIfCancellationRequested();
-        return new CheckReport([], [], []);
+        ComplaintList complaints = new();
+        BoardSource source = new(request.Encoding, complaints);
+        ColumnSpellings spellings = ColumnSpellings.Load(request.Columns, complaints);
+        List<Part> given = [];
+        foreach (string file in request.Parts)
+        {
+            if (source.File(file, "Parts") is { } sheet)
+            {
+                given.AddRange(PartTableReader.Read(sheet, Folder(BoardSource.Split(file).Path), spellings, complaints));
+            }
+        }
+
+        List<BoardReport> boards = [];
+        foreach (string board in request.Boards)
+        {
+            cancel.ThrowIfCancellationRequested();
+            boards.Add(new BoardCheck(request, board, source, spellings, given, complaints).Run(cancel));
+        }
+
+        return new CheckReport(boards, complaints.Items, [.. source.Files.Select(Hashed)]);
+    }
+
+    private static string Folder(string file) => Path.GetDirectoryName(Path.GetFullPath(file)) ?? ".";
+
+    private static InputFile Hashed((string Path, string Shown) file)
+    {
+        using FileStream stream = new(file.Path, FileMode.Open, FileAccess.Read, FileShare.ReadWrite);
+        return new InputFile(file.Shown, Convert.ToHexStringLower(SHA256.HashData(stream)));
+    }
+
+    /// <summary>One board of a run.</summary>
+    private sealed class BoardCheck(
+        CheckRequest request, string board, BoardSource source, ColumnSpellings spellings, List<Part> given, ComplaintList complaints)
+    {
+        private readonly Dictionary<Transistor, TransistorVariants> variants = new(ReferenceEqualityComparer.Instance);
+        private readonly List<Advice> advice = [];
+        private IReadOnlyList<DeratingTable> ownDerating = [];
+
+        public BoardReport Run(CancellationToken cancel)
+        {
+            DeratingTable derating = RunDerating();
+            bool exists = Directory.Exists(board) || File.Exists(board);
+            if (!exists && (request.Bill is null || request.Channels is null))
+            {
+                complaints.Add(new Complaint(
+                    BoardSource.Shown(board), null, null, null, null, null, "a workbook, or a folder with bom.csv and channels.csv",
+                    "There is no such workbook or folder.") { Fatal = true, NoInput = true });
+                return Unread(derating);
+            }
+
+            SheetData? billSheet = request.Bill is { } b ? source.File(b, "BOM") : source.Table(board, "BOM", required: true);
+            SheetData? channelSheet = request.Channels is { } c ? source.File(c, "Channels") : source.Table(board, "Channels", required: true);
+            if (exists && source.Table(board, "Derating", required: false) is { } deratingSheet)
+            {
+                ownDerating = DeratingReader.Read(deratingSheet, spellings, complaints);
+                derating = RunDerating();
+            }
+
+            if (exists && source.Table(board, "Concessions", required: false) is not null)
+            {
+                advice.Add(new Advice(null, null, "The board has a concessions table; this version does not apply concessions."));
+            }
+
+            PartTable parts = ReadParts(exists);
+            IReadOnlyList<LogicPin> pins = ReadPins(exists);
+            Bill? bill = billSheet is null ? null : BillReader.Read(billSheet, spellings, complaints);
+            IReadOnlyList<ChannelRow> rows = channelSheet is null ? [] : ChannelReader.Read(channelSheet, bill, pins, spellings, complaints);
+            if (bill is null || rows.Count == 0)
+            {
+                return Unread(derating);
+            }
+
+            IReadOnlyList<Channel> channels = ChannelBinder.Bind(rows, bill, parts, pins, complaints);
+            IReadOnlyList<Finding> billFindings = BillRule.Judge(bill, parts, channels);
+            IReadOnlyList<JudgedChannel> judged = JudgeChannels(channels, derating, cancel);
+            IReadOnlyList<Finding> pinFindings = JudgePins(judged, derating);
+            AddAdvice(bill, channels);
+            return Report(derating, judged, billFindings, pinFindings);
+        }
+
+        private DeratingTable RunDerating()
+        {
+            string name = request.Derating ?? DefaultDerating;
+            if (Find(name) is { } found)
+            {
+                return found;
+            }
+
+            if (File.Exists(BoardSource.Split(name).Path) && source.File(name, "Derating") is { } sheet)
+            {
+                IReadOnlyList<DeratingTable> tables = DeratingReader.Read(sheet, spellings, complaints);
+                if (tables.Count == 1)
+                {
+                    return tables[0];
+                }
+
+                complaints.Add(new Complaint(
+                    sheet.File, sheet.Sheet, null, "Name", null, null, "rows of one table",
+                    tables.Count == 0 ? "The file holds no derating table." : "The file holds several derating tables: name one a file."));
+                return tables.Count > 0 ? tables[0] : new DeratingTable(name, null, []);
+            }
+
+            complaints.Add(new Complaint(
+                BoardSource.Shown(name), null, null, null, null, name, "one of " + string.Join(", ", DeratingLibrary.Names),
+                $"There is no derating table \"{BoardSource.Shown(name)}\"."));
+            return new DeratingTable(name, null, []);
+        }
+
+        private DeratingTable? Find(string name) =>
+            ownDerating.FirstOrDefault(t => string.Equals(t.Name, name, StringComparison.OrdinalIgnoreCase)) ?? DeratingLibrary.Named(name);
+
+        private PartTable ReadParts(bool exists)
+        {
+            List<Part> parts = [.. given];
+            if (request.Parts.Count == 0 && exists && source.Table(board, "Parts", required: false) is { } sheet)
+            {
+                string folder = Directory.Exists(board) ? Path.GetFullPath(board) : Folder(board);
+                parts.AddRange(PartTableReader.Read(sheet, folder, spellings, complaints));
+            }
+            else if (request.Parts.Count == 0)
+            {
+                complaints.Add(new Complaint(
+                    BoardSource.Shown(board), null, null, null, null, null, "--parts FILE, or a table Parts with the board",
+                    "No part table is given: nothing can be verified."));
+            }
+
+            return PartTableReader.Combine(parts, complaints);
+        }
+
+        private IReadOnlyList<LogicPin> ReadPins(bool exists)
+        {
+            SheetData? sheet = request.Pins is { } file ? source.File(file, "Pins")
+                : exists ? source.Table(board, "Pins", required: false) : null;
+            if (sheet is null && request.Pins is null)
+            {
+                sheet = SheetFile.Embedded("partdata/logic-pins.csv", complaints);
+            }
+
+            return sheet is null ? [] : LogicPinReader.Read(sheet, spellings, complaints);
+        }
+
+        private List<JudgedChannel> JudgeChannels(IReadOnlyList<Channel> channels, DeratingTable runDerating, CancellationToken cancel)
+        {
+            List<JudgedChannel> judged = [.. channels.Select(c => new JudgedChannel(c, TableOf(c, runDerating)))];
+            foreach (JudgedChannel channel in judged)
+            {
+                foreach (BoundChannel reading in channel.Channel.Readings)
+                {
+                    ChannelModel model = new(reading, Variants);
+                    if (model.Pass.Append(model.Control).Distinct().FirstOrDefault(v => v.CardFault is not null) is { } wrong)
+                    {
+                        channel.CardFault = wrong;
+                        continue;
+                    }
+
+                    channel.Models.Add(model);
+                }
+            }
+
+            foreach (IGrouping<TransistorVariants, JudgedChannel> fault in judged.Where(j => j.CardFault is not null).GroupBy(j => j.CardFault!))
+            {
+                string[] cite = fault.Key.Part.Card!.Cell.Split('!');
+                complaints.Add(new Complaint(
+                    cite[0], cite.Length > 2 ? cite[1] : null, null, "Model", cite[^1], fault.Key.Part.Card.Value.Name, "this part's own card",
+                    $"The model card of {fault.Key.Part.PartNumber} is another part's, or wrong: {fault.Key.CardFault}.") { Channel = fault.First().Channel.Name });
+                foreach (JudgedChannel channel in fault)
+                {
+                    channel.Models.Clear();
+                }
+            }
+
+            // Feeds on one pin lower each other's level: first each alone, then with what the others draw.
+            foreach (IGrouping<string, JudgedChannel> pin in judged.Where(j => j.Models.Count > 0).GroupBy(PinKey, StringComparer.OrdinalIgnoreCase))
+            {
+                List<JudgedChannel> feeds = [.. pin];
+                if (feeds.Count > 1)
+                {
+                    foreach (JudgedChannel feed in feeds)
+                    {
+                        feed.AloneCurrent = feed.Models.Max(m => Judgement(feed, m, 0, cancel).PinMax);
+                    }
+                }
+
+                foreach (JudgedChannel feed in feeds)
+                {
+                    double others = feeds.Where(f => f != feed).Sum(f => f.AloneCurrent);
+                    feed.Readings.AddRange(feed.Models.Select(m => Judgement(feed, m, others, cancel)));
+                }
+            }
+
+            return judged;
+        }
+
+        private ReadingJudgement Judgement(JudgedChannel channel, ChannelModel model, double others, CancellationToken cancel) =>
+            new ChannelJudge(model, channel.Derating).Judge(new PinSource(model.Channel.Logic, others), request.Threads, cancel);
+
+        private DeratingTable TableOf(Channel channel, DeratingTable runDerating)
+        {
+            if (channel.Derating is not { } name)
+            {
+                return runDerating;
+            }
+
+            if (Find(name) is { } table)
+            {
+                return table;
+            }
+
+            string[] cite = channel.Cell.Split('!');
+            complaints.Add(new Complaint(
+                cite[0], cite.Length > 2 ? cite[1] : null, null, "Derating", cite[^1], name, "one of " + string.Join(", ", DeratingLibrary.Names.Concat(ownDerating.Select(t => t.Name))),
+                $"Channel {channel.Name} names the derating table \"{name}\", which there is not.") { Channel = channel.Name });
+            return new DeratingTable(name, null, []) { Unknown = true };
+        }
+
+        private static List<Finding> JudgePins(IReadOnlyList<JudgedChannel> judged, DeratingTable derating)
+        {
+            List<Finding> findings = [];
+            foreach (IGrouping<string, JudgedChannel> pin in judged.Where(j => j.Channel.Readings.Count > 0).GroupBy(PinKey, StringComparer.OrdinalIgnoreCase))
+            {
+                LogicPin logic = pin.First().Channel.Readings[0].Logic;
+                findings.Add(PinCurrentRule.Judge(
+                    PinName(pin.First().Channel.Readings[0]), [.. pin.Select(j => (j.Channel.Name, j.Readings.Count == 0 ? double.NaN : j.Readings.Max(r => r.PinMax)))], logic, derating));
+            }
+
+            return findings;
+        }
+
+        private static string PinName(BoundChannel channel) => channel.Pin ?? channel.Name;
+
+        private static string PinKey(JudgedChannel judged) =>
+            judged.Channel.Readings[0] is { Pin: { } net } ? "net " + net : "own " + judged.Channel.Name;
+
+        private TransistorVariants Variants(Transistor part)
+        {
+            if (!variants.TryGetValue(part, out TransistorVariants? made))
+            {
+                made = new TransistorVariants(part);
+                variants[part] = made;
+            }
+
+            return made;
+        }
+
+        private void AddAdvice(Bill bill, IReadOnlyList<Channel> channels)
+        {
+            foreach (BillLine line in bill.Lines.Where(l => l.Alternates.Count > 0))
+            {
+                if (channels.Any(c => c.References.Any(r => line.References.Contains(r, StringComparer.OrdinalIgnoreCase))))
+                {
+                    advice.Add(new Advice(null, line.References[0], $"Alternates {string.Join(", ", line.Alternates)} of this line are not judged by this version."));
+                }
+            }
+        }
+
+        private BoardReport Unread(DeratingTable derating) => new()
+        {
+            Board = BoardSource.Shown(board),
+            Verdict = Verdict.NotVerified,
+            Derating = derating.Name,
+            DeratingNote = derating.Note,
+            Channels = [],
+            Findings = [],
+            Rules = RuleBook.Judged,
+            RulesNotJudged = RuleBook.NotJudged,
+            Assumed = [],
+            Advice = advice,
+            Cautions = Cautions.All,
+        };
+
+        private BoardReport Report(
+            DeratingTable derating, IReadOnlyList<JudgedChannel> judged, IReadOnlyList<Finding> billFindings, IReadOnlyList<Finding> pinFindings)
+        {
+            List<ChannelJudgement> channels = [.. judged.Select(j => ChannelAssembly.Assemble(
+                j.Channel, j.Derating.Name, j.Readings, j.MissingData, [.. billFindings, .. pinFindings],
+                [.. j.Channel.Assumed, .. j.Models.SelectMany(m => m.Assumed)]))];
+            List<string> names = [.. channels.Select(c => c.Channel)];
+            IReadOnlyList<Finding> all = FindingOrder.WorstFirst(
+                [.. channels.SelectMany(c => c.Findings), .. billFindings, .. pinFindings], names, RuleBook.Order);
+            List<AssumedValue> assumed = [.. channels
+                .SelectMany(c => c.Assumed.Select(a => (Assumption: a, c.Channel)))
+                .GroupBy(p => p.Assumption)
+                .Select(g => new AssumedValue(g.Key.What, g.Key.Of, g.Key.Value, [.. g.Select(p => p.Channel).Distinct().OrderBy(names.IndexOf)]))
+                .OrderBy(a => a.What, StringComparer.Ordinal).ThenBy(a => a.Of, StringComparer.Ordinal).ThenBy(a => a.Value, StringComparer.Ordinal)];
+            return new BoardReport
+            {
+                Board = BoardSource.Shown(board),
+                Verdict = FindingSeverity.WorstOf(channels.Select(c => c.Verdict).Concat(all.Select(f => f.Verdict))),
+                Derating = derating.Name,
+                DeratingNote = derating.Note,
+                Channels = channels,
+                Findings = all,
+                Rules = RuleBook.Judged,
+                RulesNotJudged = RuleBook.NotJudged,
+                Assumed = assumed,
+                Advice = advice,
+                Cautions = Cautions.All,
+            };
+        }
+    }
+
+    /// <summary>A channel on its way through the run.</summary>
+    private sealed class JudgedChannel(Channel channel, DeratingTable derating)
+    {
+        public Channel Channel => channel;
+
+        public DeratingTable Derating => derating;
+
+        public List<ChannelModel> Models { get; } = [];
+
+        public List<ReadingJudgement> Readings { get; } = [];
+
+        public TransistorVariants? CardFault { get; set; }
+
+        public double AloneCurrent { get; set; }
+
+        public IReadOnlyList<string> MissingData =>
+        [
+            .. channel.Missing,
+            .. CardFault is null ? (string[])[] : [$"a right model card of {CardFault.Part.PartNumber}"],
+            .. derating.Unknown ? (string[])[$"derating table {derating.Name}"] : [],
+        ];
     }
 }

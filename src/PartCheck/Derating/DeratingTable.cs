@@ -58,6 +58,9 @@ public sealed record DeratingRow
 /// <param name="Rows">Its rows.</param>
 public sealed record DeratingTable(string Name, string? Note, IReadOnlyList<DeratingRow> Rows)
 {
+    /// <summary>True for the stand-in of a table that somebody named and that there is not: nothing judged by it is verified.</summary>
+    public bool Unknown { get; init; }
+
     /// <summary>
     /// The row for a rule and a part: the most specific one (style before kind before any). No row: the rating itself
     /// (factor 1, no offset, no cap, no limit), with <c>no derating row: the rating itself</c> as its source.

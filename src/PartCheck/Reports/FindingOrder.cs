@@ -34,7 +34,7 @@ public static class FindingOrder
             .ThenBy(f => ruleAt.GetValueOrDefault(f.Rule, int.MaxValue))
             .ThenBy(f => f.Rule, StringComparer.Ordinal)
             .ThenBy(f => f.Pin, NaturalOrder.Instance)
-            .ThenBy(f => f.Reference ?? f.References?.FirstOrDefault(), NaturalOrder.Instance)
+            .ThenBy(f => f.Reference ?? (f.References is { Count: > 0 } all ? all[0] : null), NaturalOrder.Instance)
             .ThenBy(f => f.PartNumber, StringComparer.Ordinal)
             .ThenBy(f => f.Manufacturer, StringComparer.Ordinal)];
     }

@@ -4,7 +4,7 @@ namespace PartCheck.Reports;
 /// Order in which a person lists references: runs of digits compare as numbers (Q2 before Q10), everything else by code unit.
 /// The result does not depend on the culture.
 /// </summary>
-public sealed class NaturalOrder : IComparer<string>
+public sealed class NaturalOrder : IComparer<string?>
 {
     /// <summary>The only instance.</summary>
     public static NaturalOrder Instance { get; } = new();

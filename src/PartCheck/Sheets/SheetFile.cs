@@ -36,6 +36,24 @@ public static class SheetFile
         }
     }
 
+    /// <summary>A CSV table that travels inside the tool.</summary>
+    /// <param name="resource">Its name, such as <c>partdata/logic-pins.csv</c>; also the name it is cited by.</param>
+    /// <param name="complaints">Where complaints go.</param>
+    /// <returns>The sheet; null where there is none of that name.</returns>
+    public static SheetData? Embedded(string resource, ComplaintList complaints)
+    {
+        using Stream? stream = typeof(SheetFile).Assembly.GetManifestResourceStream(resource);
+        if (stream is null)
+        {
+            return null;
+        }
+
+        byte[] bytes = new byte[stream.Length];
+        stream.ReadExactly(bytes);
+        IReadOnlyList<SheetData> sheets = CsvSheet.Read(bytes, resource, "utf-8", complaints);
+        return sheets.Count == 0 ? null : sheets[0];
+    }
+
     private static IReadOnlyList<SheetData> Read(
         FileStream stream, string path, string shownName, string? encoding, ComplaintList complaints)
     {

@@ -1,0 +1,147 @@
+using FluentValidation;
+using PartCheck.Quantities;
+using PartCheck.Sheets;
+
+namespace PartCheck.Bills;
+
+/// <summary>Cells to a bill of materials.</summary>
+public static class BillReader
+{
+    private static readonly string[] NotFittedMarks = ["DNP", "DNF", "DNI", "DNM", "NF", "NC", "N/F", "NOT FITTED", "DO NOT FIT", "DO NOT PLACE", "DO NOT POPULATE", "NOFIT"];
+    private static readonly string[] No = ["NO", "N", "0", "FALSE", "-"];
+    private static readonly string[] Yes = ["YES", "Y", "1", "TRUE", "X", "\u2713", "\u2714", "FITTED"];
+    private static readonly LineValidator Rules = new();
+
+    /// <summary>Columns of the table.</summary>
+    public static IReadOnlyList<ColumnSpec> Columns { get; } =
+    [
+        new("References", ColumnKind.Text, Required: true),
+        new("Part number", ColumnKind.Text),
+        new("Quantity", ColumnKind.Number),
+        new("Value", ColumnKind.Text),
+        new("Package", ColumnKind.Text),
+        new("Manufacturer", ColumnKind.Text),
+        new("Description", ColumnKind.Text),
+        new("Fitted", ColumnKind.Text),
+        new("Do not fit", ColumnKind.Text),
+        new("Alternates", ColumnKind.Text),
+        new("Channel", ColumnKind.Text),
+        new("Role", ColumnKind.Text),
+    ];
+
+    /// <summary>The bill of a sheet; null where it has none.</summary>
+    public static Bill? Read(SheetData sheet, ColumnSpellings spellings, ComplaintList complaints)
+    {
+        ArgumentNullException.ThrowIfNull(sheet);
+        ArgumentNullException.ThrowIfNull(complaints);
+        Table? table = Table.Find(sheet, "BOM", Columns, spellings, complaints);
+        if (table is null)
+        {
+            return null;
+        }
+
+        List<BillLine> lines = [];
+        Dictionary<string, string> seen = new(StringComparer.OrdinalIgnoreCase);
+        foreach (TableRow row in table.Rows)
+        {
+            if (ReadLine(row, sheet.DecimalComma) is not { } line)
+            {
+                continue;
+            }
+
+            row.Check(Rules, line);
+            foreach (string reference in line.References)
+            {
+                if (!seen.TryAdd(reference, line.Cell))
+                {
+                    row.Complain("References", "each reference once", $"{reference} stands on the bill twice; the other place is {seen[reference]}.");
+                }
+            }
+
+            lines.Add(line);
+        }
+
+        if (lines.Count == 0)
+        {
+            complaints.Add(new Complaint(
+                sheet.File, sheet.Sheet, null, null, null, null, "at least one bill line", "The bill has a header row and no lines.") { Fatal = true });
+            return null;
+        }
+
+        return new Bill(sheet.File, lines);
+    }
+
+    private static BillLine? ReadLine(TableRow row, bool decimalComma)
+    {
+        if (row.Text("References") is not { } text)
+        {
+            return null;
+        }
+
+        if (ReferenceList.Read(text, out IReadOnlyList<string> references) is { } wrong)
+        {
+            row.Complain("References", "references such as R1, R2, R5-R8", wrong);
+        }
+
+        string? value = row.Text("Value");
+        (bool fitted, Cited<string>? mark) = Fitted(row, value);
+        Resistance? ohms = value is not null
+            && QuantityParser.TryParse(value, QuantityKind.Resistance, decimalComma, null, out QuantityReading reading)
+            && reading.Si >= 0 ? Resistance.FromOhms(reading.Si) : null;
+        return new BillLine
+        {
+            References = references,
+            PartNumber = row.Text("Part number"),
+            Quantity = row.Number("Quantity")?.Value,
+            Value = value,
+            Resistance = ohms,
+            Package = row.Text("Package"),
+            Manufacturer = row.Text("Manufacturer"),
+            Description = row.Text("Description"),
+            Fitted = fitted,
+            FittedMark = mark,
+            Alternates = [.. (row.Text("Alternates") ?? string.Empty).Split([',', ';', '\n', '\r'], StringSplitOptions.RemoveEmptyEntries | StringSplitOptions.TrimEntries)],
+            Channel = row.Text("Channel"),
+            Role = row.Text("Role"),
+            Cell = row.Cite("References"),
+        };
+    }
+
+    private static (bool Fitted, Cited<string>? Mark) Fitted(TableRow row, string? value)
+    {
+        if (row.Text("Fitted") is { } text)
+        {
+            string upper = text.ToUpperInvariant();
+            if (No.Contains(upper) || NotFittedMarks.Contains(upper))
+            {
+                return (false, new Cited<string>(text, row.Cite("Fitted")));
+            }
+
+            if (!Yes.Contains(upper))
+            {
+                row.Complain("Fitted", "yes or no", $"\"{text}\" says neither that the line is fitted nor that it is not.");
+            }
+        }
+
+        if (row.Text("Do not fit") is { } mark && !No.Contains(mark.ToUpperInvariant()))
+        {
+            return (false, new Cited<string>(mark, row.Cite("Do not fit")));
+        }
+
+        // A mark inside the value: "DNP", "0R - DNP".
+        bool marked = value is not null && value.ToUpperInvariant()
+            .Split([' ', ',', ';', '(', ')', '-', '_'], StringSplitOptions.RemoveEmptyEntries)
+            .Any(word => word is "DNP" or "DNF" or "DNI" or "DNM")
+            || (value is not null && NotFittedMarks.Contains(value.Trim().ToUpperInvariant()));
+        return marked ? (false, new Cited<string>(value!, row.Cite("Value"))) : (true, null);
+    }
+
+    private sealed class LineValidator : AbstractValidator<BillLine>
+    {
+        public LineValidator()
+        {
+            this.Demand("Quantity", l => l.Quantity is not { } q || (q >= 0 && q == Math.Floor(q) && q < 1e6), "a whole number, at least 0", l => "A quantity is a whole number, at least 0.");
+            this.Demand("References", l => l.References.Count > 0, "references such as R1, R2, R5-R8", _ => "No reference designator stands in the cell.");
+        }
+    }
+}

@@ -1,0 +1,77 @@
+using System.Globalization;
+using System.Text;
+using System.Text.RegularExpressions;
+
+namespace PartCheck.Bills;
+
+/// <summary>
+/// Reads a cell of reference designators: <c>R1, R2, R5-R8</c>; <c>R5,6,7</c>; <c>C6-7</c>; en dash; blanks, commas,
+/// semicolons and slashes between; <c>Q1.1</c> for an element of a package. What is no such designator is kept as its text.
+/// </summary>
+public static partial class ReferenceList
+{
+    /// <summary>Longest range that is written out.</summary>
+    public const int LongestRange = 10_000;
+
+    /// <summary>The references of a cell.</summary>
+    /// <param name="text">The cell's text.</param>
+    /// <param name="references">The references, ranges written out.</param>
+    /// <returns>What is wrong with the cell; null: nothing.</returns>
+    public static string? Read(string text, out IReadOnlyList<string> references)
+    {
+        ArgumentNullException.ThrowIfNull(text);
+        List<string> found = [];
+        references = found;
+        string normal = Dashes().Replace(text.Normalize(NormalizationForm.FormKC), "-");
+        normal = BlanksAroundDash().Replace(normal, "-");
+        string prefix = string.Empty;
+        foreach (string token in normal.Split([',', ';', ' ', '\t', '\n', '\r', '/', '\u00A0'], StringSplitOptions.RemoveEmptyEntries))
+        {
+            string item = char.IsAsciiDigit(token[0]) && prefix.Length > 0 ? prefix + token : token;
+            Match range = Range().Match(item);
+            if (!range.Success)
+            {
+                found.Add(item);
+                prefix = Letters().Match(item).Value;
+                continue;
+            }
+
+            prefix = range.Groups["p"].Value;
+            if (range.Groups["q"].Value is { Length: > 0 } other && other != prefix)
+            {
+                return $"The range \"{item}\" runs from {prefix} to {other}: a range keeps its letters.";
+            }
+
+            long from = long.Parse(range.Groups["a"].Value, CultureInfo.InvariantCulture);
+            long to = long.Parse(range.Groups["b"].Value, CultureInfo.InvariantCulture);
+            if (to < from)
+            {
+                return $"The range \"{item}\" runs backwards.";
+            }
+
+            if (to - from >= LongestRange)
+            {
+                return $"The range \"{item}\" is longer than {LongestRange.ToString(CultureInfo.InvariantCulture)} references.";
+            }
+
+            for (long i = from; i <= to; i++)
+            {
+                found.Add(prefix + i.ToString(CultureInfo.InvariantCulture));
+            }
+        }
+
+        return null;
+    }
+
+    [GeneratedRegex("[\u2010-\u2015\u2212~]|\\.\\.+")]
+    private static partial Regex Dashes();
+
+    [GeneratedRegex(@"\s*-\s*")]
+    private static partial Regex BlanksAroundDash();
+
+    [GeneratedRegex(@"^(?<p>[A-Za-z_]+)(?<a>\d{1,9})-(?<q>[A-Za-z_]*)(?<b>\d{1,9})$")]
+    private static partial Regex Range();
+
+    [GeneratedRegex("^[A-Za-z_]+")]
+    private static partial Regex Letters();
+}

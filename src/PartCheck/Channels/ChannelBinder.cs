@@ -1,0 +1,243 @@
+using System.Globalization;
+using PartCheck.Bills;
+using PartCheck.Parts;
+using PartCheck.Sheets;
+
+namespace PartCheck.Channels;
+
+/// <summary>Channel rows, bill and part table to channels with every role bound to a part row.</summary>
+public static class ChannelBinder
+{
+    /// <summary>Most readings of a bill that one channel may have.</summary>
+    public const int MostReadings = 256;
+
+    /// <summary>Binds every channel.</summary>
+    public static IReadOnlyList<Channel> Bind(
+        IReadOnlyList<ChannelRow> rows, Bill bill, PartTable parts, IReadOnlyList<LogicPin> pins, ComplaintList complaints)
+    {
+        ArgumentNullException.ThrowIfNull(rows);
+        ArgumentNullException.ThrowIfNull(bill);
+        Dictionary<string, BillLine> byReference = new(StringComparer.OrdinalIgnoreCase);
+        foreach (BillLine line in bill.Lines)
+        {
+            foreach (string reference in line.References)
+            {
+                byReference.TryAdd(reference, line);
+            }
+        }
+
+        return [.. rows.Select(row => BindOne(row, byReference, parts, pins, complaints))];
+    }
+
+    private static Channel BindOne(
+        ChannelRow row, Dictionary<string, BillLine> bill, PartTable parts, IReadOnlyList<LogicPin> pins, ComplaintList complaints)
+    {
+        List<RoleFault> faults = [];
+        List<string> missing = [];
+        List<Assumption> assumed = [.. row.Assumed];
+        Dictionary<BillLine, IReadOnlyList<Part>> choices = new(ReferenceEqualityComparer.Instance);
+        Dictionary<string, string> usedBy = new(StringComparer.OrdinalIgnoreCase);
+        foreach ((Role role, string column) in RoleNames.Columns)
+        {
+            foreach (string reference in row.Of(role).Where(r => r != "-"))
+            {
+                if (!usedBy.TryAdd(reference, column))
+                {
+                    faults.Add(new RoleFault(role, reference, $"{reference} serves as {usedBy[reference].ToLowerInvariant()} and as {column.ToLowerInvariant()}.", row.Cells[column]));
+                    continue;
+                }
+
+                BindReference(row, role, column, reference, bill, parts, choices, faults, missing, assumed);
+            }
+        }
+
+        if (row.Conditions is null)
+        {
+            missing.Insert(0, "a channel row without complaints");
+        }
+
+        LogicPin? pin = pins.FirstOrDefault(p => string.Equals(p.Name, row.Logic, StringComparison.OrdinalIgnoreCase));
+        List<BoundChannel> readings = [];
+        if (faults.Count == 0 && missing.Count == 0 && pin is not null)
+        {
+            long count = choices.Values.Aggregate(1L, (n, c) => Math.Min(n * c.Count, 1L << 40));
+            if (count > MostReadings)
+            {
+                string[] cite = row.Cell.Split('!');
+                string text = string.Create(CultureInfo.InvariantCulture, $"The bill's part numbers have {count} combinations of rows in the part table for this channel, more than {MostReadings}: name the manufacturers on the bill.");
+                complaints.Add(new Complaint(cite[0], cite.Length > 2 ? cite[1] : null, null, "Channel", cite[^1], row.Name, "manufacturers on the bill", text) { Channel = row.Name });
+                missing.Add("manufacturers on the bill");
+            }
+            else
+            {
+                foreach (Dictionary<BillLine, Part> reading in Combinations([.. choices]))
+                {
+                    readings.Add(Reading(row, pin, bill, reading));
+                }
+            }
+        }
+
+        return new Channel
+        {
+            Name = row.Name,
+            Cell = row.Cell,
+            Readings = readings,
+            Missing = missing,
+            RoleFaults = faults,
+            Assumed = assumed,
+            References = [.. RoleNames.Columns.SelectMany(c => row.Of(c.Role)).Where(r => r != "-")],
+            Derating = row.Conditions?.Derating,
+        };
+    }
+
+    private static void BindReference(
+        ChannelRow row, Role role, string column, string reference, Dictionary<string, BillLine> bill, PartTable parts,
+        Dictionary<BillLine, IReadOnlyList<Part>> choices, List<RoleFault> faults, List<string> missing, List<Assumption> assumed)
+    {
+        void Fault(string text, string cell) => faults.Add(new RoleFault(role, reference, text, cell));
+        if (!bill.TryGetValue(reference, out BillLine? line))
+        {
+            Fault($"{reference} ({column.ToLowerInvariant()}) is not on the bill.", row.Cells[column]);
+            return;
+        }
+
+        if (!line.Fitted)
+        {
+            Fault($"{reference} ({column.ToLowerInvariant()}) is not fitted: the bill says \"{line.FittedMark?.Value}\".", line.FittedMark?.Cell ?? line.Cell);
+            return;
+        }
+
+        if (line.PartNumber is null)
+        {
+            Missing(missing, "part number of " + reference);
+            return;
+        }
+
+        IReadOnlyList<Part> found = parts.Find(line.PartNumber);
+        if (found.Count == 0)
+        {
+            Missing(missing, "part table row of " + line.PartNumber);
+            return;
+        }
+
+        if (line.Manufacturer is { } maker)
+        {
+            found = [.. found.Where(p => p.Manufacturer is null || string.Equals(p.Manufacturer, maker, StringComparison.OrdinalIgnoreCase))];
+            if (found.Count == 0)
+            {
+                Missing(missing, $"part table row of {line.PartNumber} by {maker}");
+                return;
+            }
+        }
+
+        if (row.Conditions?.Mounting is { } mounting)
+        {
+            IReadOnlyList<Part> mounted = [.. found.Where(p => p.Mounting is null || string.Equals(p.Mounting, mounting, StringComparison.OrdinalIgnoreCase))];
+            if (mounted.Count == 0)
+            {
+                Missing(missing, $"part table row of {line.PartNumber} on {mounting}");
+                return;
+            }
+
+            found = mounted;
+        }
+        else if (found.Select(p => p.Mounting ?? string.Empty).Distinct(StringComparer.OrdinalIgnoreCase).Count() > 1
+            && !assumed.Any(a => a.What == "Mounting" && a.Of == line.PartNumber))
+        {
+            assumed.Add(new Assumption("Mounting", line.PartNumber, "the worst of its rows"));
+        }
+
+        bool transistor = role is Role.Pass or Role.Control;
+        foreach (Part part in found)
+        {
+            if (part is RefusedPart refused)
+            {
+                Fault($"{line.PartNumber} is refused as {column.ToLowerInvariant()}: {refused.Reason}.", line.Cell);
+                return;
+            }
+
+            if (part is Transistor != transistor)
+            {
+                Fault($"{reference} ({column.ToLowerInvariant()}) is a {(part is Transistor ? "transistor" : "resistor")}: a {(transistor ? "transistor" : "resistor")} is wanted.", line.Cell);
+                return;
+            }
+
+            if (part is ResistorPart { Resistance.Value.Ohms: 0 } && role != Role.Averaging)
+            {
+                Fault($"{reference} ({column.ToLowerInvariant()}) has zero ohm: only averaging may.", part.Cell);
+                return;
+            }
+        }
+
+        choices[line] = found;
+    }
+
+    private static BoundChannel Reading(ChannelRow row, LogicPin pin, Dictionary<string, BillLine> bill, Dictionary<BillLine, Part> parts)
+    {
+        Placement Place(Role role, int leg, string reference)
+        {
+            BillLine line = bill[reference];
+            return new Placement(role, leg, reference, line, parts[line]);
+        }
+
+        IReadOnlyList<string> pass = row.Of(Role.Pass);
+        IReadOnlyList<string> sense = row.Of(Role.Sense);
+        IReadOnlyList<string> averaging = row.Of(Role.Averaging);
+        List<Leg> legs = [];
+        for (int i = 0; i < pass.Count; i++)
+        {
+            bool sensed = averaging.Count == 0 || averaging[i] != "-";
+            legs.Add(new Leg(
+                Place(Role.Pass, i, pass[i]), Place(Role.Sense, i, sense[i]),
+                averaging.Count > 0 && sensed ? Place(Role.Averaging, i, averaging[i]) : null, sensed));
+        }
+
+        return new BoundChannel
+        {
+            Name = row.Name,
+            Cell = row.Cell,
+            Conditions = row.Conditions!,
+            Logic = pin,
+            Pin = row.Pin,
+            Legs = legs,
+            Control = Place(Role.Control, -1, row.Of(Role.Control)[0]),
+            Feed = Place(Role.Feed, -1, row.Of(Role.Feed)[0]),
+            PullDown = row.Of(Role.PullDown) is { Count: > 0 } down ? Place(Role.PullDown, -1, down[0]) : null,
+            PullDownAt = row.PullDownAt,
+            ConditionCells = row.Cells,
+        };
+    }
+
+    private static IEnumerable<Dictionary<BillLine, Part>> Combinations(IReadOnlyList<KeyValuePair<BillLine, IReadOnlyList<Part>>> choices)
+    {
+        int[] at = new int[choices.Count];
+        while (true)
+        {
+            Dictionary<BillLine, Part> one = new(ReferenceEqualityComparer.Instance);
+            for (int i = 0; i < at.Length; i++)
+            {
+                one[choices[i].Key] = choices[i].Value[at[i]];
+            }
+
+            yield return one;
+            int digit = 0;
+            while (digit < at.Length && ++at[digit] == choices[digit].Value.Count)
+            {
+                at[digit++] = 0;
+            }
+
+            if (digit == at.Length)
+            {
+                yield break;
+            }
+        }
+    }
+
+    private static void Missing(List<string> missing, string what)
+    {
+        if (!missing.Contains(what))
+        {
+            missing.Add(what);
+        }
+    }
+}

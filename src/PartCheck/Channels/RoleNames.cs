@@ -1,0 +1,30 @@
+namespace PartCheck.Channels;
+
+/// <summary>Roles as columns and bills write them.</summary>
+public static class RoleNames
+{
+    /// <summary>Each role with its column.</summary>
+    public static IReadOnlyList<(Role Role, string Column)> Columns { get; } =
+    [
+        (Role.Pass, "Pass"), (Role.Sense, "Sense"), (Role.Control, "Control"), (Role.Feed, "Feed"),
+        (Role.Averaging, "Averaging"), (Role.PullDown, "Pull-down"),
+    ];
+
+    /// <summary>The column of a role.</summary>
+    public static string ColumnOf(Role role) => Columns.First(c => c.Role == role).Column;
+
+    /// <summary>The role that a text names; null: none.</summary>
+    public static Role? Of(string? text)
+    {
+        foreach ((Role role, string column) in Columns)
+        {
+            if (string.Equals(column, text, StringComparison.OrdinalIgnoreCase)
+                || string.Equals(column.Replace("-", string.Empty, StringComparison.Ordinal), text?.Replace(" ", string.Empty, StringComparison.Ordinal), StringComparison.OrdinalIgnoreCase))
+            {
+                return role;
+            }
+        }
+
+        return null;
+    }
+}

@@ -1,0 +1,112 @@
+using PartCheck.Quantities;
+using PartCheck.Sheets;
+
+namespace PartCheck.Derating;
+
+/// <summary>Cells to derating tables.</summary>
+public static class DeratingReader
+{
+    private static readonly string[] KnownRules =
+    [
+        "vce", "vcb", "ic", "power", "junction", "soa", "stability", "sharing", "r-power", "r-voltage", "r-film",
+        "current", "headroom", "drive", "pin-current", "off",
+    ];
+
+    /// <summary>Columns of the table.</summary>
+    public static IReadOnlyList<ColumnSpec> Columns { get; } =
+    [
+        new("Name", ColumnKind.Text, Required: true),
+        new("Rule", ColumnKind.Text, Required: true),
+        new("Kind", ColumnKind.Text),
+        new("Style", ColumnKind.Text),
+        new("Factor", ColumnKind.Number, 0, 1),
+        new("Cap", ColumnKind.Temperature, 173, 623),
+        new("Offset", ColumnKind.TemperatureDelta, 0, 200),
+        new("Zero temperature", ColumnKind.Text),
+        new("Limit", ColumnKind.Number, 0, 1000),
+        new("Source", ColumnKind.Text),
+        new("Note", ColumnKind.Text),
+    ];
+
+    /// <summary>Every table of a sheet, rows grouped by Name, in the order in which the names appear.</summary>
+    public static IReadOnlyList<DeratingTable> Read(SheetData sheet, ColumnSpellings spellings, ComplaintList complaints)
+    {
+        Table? table = Table.Find(sheet, "Derating", Columns, spellings, complaints);
+        if (table is null)
+        {
+            return [];
+        }
+
+        List<(string Name, string? Note, DeratingRow Row, TableRow Line)> rows = [];
+        foreach (TableRow line in table.Rows)
+        {
+            if (ReadRow(line) is { } row)
+            {
+                if (rows.Find(r => Same(r.Name, line.Text("Name")) && Same(r.Row.Rule, row.Rule) && Same(r.Row.Kind, row.Kind) && Same(r.Row.Style, row.Style)) is { Line: not null } twin)
+                {
+                    line.Complain("Rule", "one row for a rule, kind and style", $"This row says again what row {twin.Line.Row} says for the same rule, kind and style: keep one.");
+                    continue;
+                }
+
+                rows.Add((line.Text("Name")!, line.Text("Note"), row, line));
+            }
+        }
+
+        return [.. rows.GroupBy(r => r.Name, StringComparer.OrdinalIgnoreCase)
+            .Select(g => new DeratingTable(g.Key, g.Select(r => r.Note).FirstOrDefault(n => n is not null), [.. g.Select(r => r.Row)]))];
+    }
+
+    private static DeratingRow? ReadRow(TableRow line)
+    {
+        string? rule = line.Text("Rule");
+        if (line.Text("Name") is null)
+        {
+            line.Complain("Name", "the name of a derating table", "The row names no derating table.");
+        }
+
+        if (rule is null || !KnownRules.Contains(rule, StringComparer.OrdinalIgnoreCase))
+        {
+            line.Complain("Rule", "one of " + string.Join(", ", KnownRules), $"The rule \"{rule}\" is not known.");
+        }
+
+        string? kind = line.Text("Kind");
+        if (kind is not null && !Same(kind, "npn") && !Same(kind, "resistor"))
+        {
+            line.Complain("Kind", "npn or resistor", $"The kind \"{kind}\" is not known here.");
+        }
+
+        string? zero = line.Text("Zero temperature");
+        ZeroTemperature at = ZeroTemperature.Rated;
+        Temperature? zeroAt = null;
+        if (Same(zero, "parallel"))
+        {
+            at = ZeroTemperature.Parallel;
+        }
+        else if (zero is not null && !Same(zero, "rated") && line.Part("Zero temperature", zero, ColumnKind.Temperature) is { } kelvins)
+        {
+            at = ZeroTemperature.Fixed;
+            zeroAt = Temperature.FromKelvins(kelvins);
+        }
+
+        Cited<double>? factor = line.Number("Factor");
+        Cited<double>? cap = line.Number("Cap");
+        Cited<double>? offset = line.Number("Offset");
+        Cited<double>? limit = line.Number("Limit");
+        return line.HasComplaints ? null : new DeratingRow
+        {
+            Rule = rule!.ToLowerInvariant(),
+            Kind = kind,
+            Style = line.Text("Style"),
+            Factor = factor?.Value ?? 1,
+            Cap = cap is null ? null : Temperature.FromKelvins(cap.Value),
+            Offset = TemperatureDelta.FromKelvins(offset?.Value ?? 0),
+            Zero = at,
+            ZeroAt = zeroAt,
+            Limit = limit?.Value,
+            Source = line.Text("Source") ?? "no source given",
+            Cell = line.Cite("Rule"),
+        };
+    }
+
+    private static bool Same(string? a, string? b) => string.Equals(a, b, StringComparison.OrdinalIgnoreCase);
+}

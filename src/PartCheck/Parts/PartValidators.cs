@@ -1,0 +1,39 @@
+using FluentValidation;
+using PartCheck.Sheets;
+
+namespace PartCheck.Parts;
+
+/// <summary>What must hold between the columns of a transistor's row.</summary>
+internal sealed class TransistorValidator : AbstractValidator<Transistor>
+{
+    public TransistorValidator()
+    {
+        this.Demand("Power", PartValidation.PowerFitsAmbient, "the power in ambient air", _ => PartValidation.CasePower);
+        this.Demand("Tj max", p => p.TjMax is null || p.TjMax.Value.Kelvins > p.FlatTo.Kelvins, "a temperature above Power flat to", _ => "Tj max is not above the temperature up to which the power holds.");
+        this.Demand("VBE min", p => p.Vbe is not { Value: { Min: { } min, Max: { } max } } || min.Volts <= max.Volts, "a voltage at most VBE max", _ => "VBE min is above VBE max.");
+        this.Demand("VBE typ", p => p.Vbe is not { Value: { Typ: { } typ } w } || ((w.Min is not { } min || min.Volts <= typ.Volts) && (w.Max is not { } max || typ.Volts <= max.Volts)), "a voltage inside the window", _ => "VBE typ lies outside VBE min to VBE max.");
+        this.Demand("VCBO", p => p.Vcbo is null || p.Vceo is null || p.Vcbo.Value.Volts >= p.Vceo.Value.Volts, "a voltage at least VCEO", _ => "VCBO is below VCEO: with the emitter open a junction stands at least as much.");
+        this.Demand("hFE cold min", p => p.HfeCold is null || p.Hfe is not null, "hFE points at 25 degC", _ => "A gain in the cold needs the gain at 25 degC beside it.");
+    }
+}
+
+/// <summary>What must hold between the columns of a resistor's row.</summary>
+internal sealed class ResistorValidator : AbstractValidator<ResistorPart>
+{
+    public ResistorValidator()
+    {
+        this.Demand("Power", PartValidation.PowerFitsAmbient, "the power in ambient air", _ => PartValidation.CasePower);
+        this.Demand("Tj max", p => p.TjMax is null || p.TjMax.Value.Kelvins > p.FlatTo.Kelvins, "a temperature above Power flat to", _ => "The film maximum is not above the temperature up to which the power holds.");
+    }
+}
+
+/// <summary>What both kinds share.</summary>
+internal static class PartValidation
+{
+    public const string CasePower =
+        "This power is more than RthJA allows in ambient air (1.3 times (Tj max - flat)/RthJA): it is a power at case temperature; give the one in ambient air.";
+
+    public static bool PowerFitsAmbient(Part p) =>
+        p is not { Power: { } power, TjMax: { } max, RthJa: { } rth }
+        || power.Value.Watts <= 1.3 * (max.Value.Kelvins - p.FlatTo.Kelvins) / rth.Value.KelvinsPerWatt;
+}

@@ -1,0 +1,259 @@
+using PartCheck.Channels;
+using PartCheck.Derating;
+using PartCheck.OperatingPoints;
+using PartCheck.Parts;
+
+namespace PartCheck.Rules;
+
+/// <summary>
+/// Judges one reading of one channel: every rule that reads states, over every corner. The one place where the worst is taken.
+/// </summary>
+public sealed class ChannelJudge
+{
+    private readonly ChannelModel model;
+    private readonly DeratingTable derating;
+    private readonly IReadOnlyList<Rule> rules = RuleBook.StateRules;
+    private readonly RuleRows[,] rows;
+    private readonly bool[,] applies;
+
+    /// <summary>Makes a judge.</summary>
+    /// <param name="model">The channel's model.</param>
+    /// <param name="derating">Its derating table.</param>
+    public ChannelJudge(ChannelModel model, DeratingTable derating)
+    {
+        ArgumentNullException.ThrowIfNull(model);
+        ArgumentNullException.ThrowIfNull(derating);
+        this.model = model;
+        this.derating = derating;
+        int slots = model.Slots.Count;
+        rows = new RuleRows[rules.Count, slots + 1];
+        applies = new bool[rules.Count, slots + 1];
+        for (int r = 0; r < rules.Count; r++)
+        {
+            for (int s = 0; s <= slots; s++)
+            {
+                Part? part = s < slots && model.Slots.Of(s) is { Count: > 0 } placements ? placements[0].Part : null;
+                applies[r, s] = (rules[r], part) switch
+                {
+                    (TransistorRule, Transistor) => true,
+                    (ResistorRule rule, ResistorPart resistor) => rule.AppliesTo(resistor),
+                    (ChannelRule, _) => s == slots,
+                    _ => false,
+                };
+                string? kind = part switch { Transistor => "npn", ResistorPart => "resistor", _ => null };
+                string? style = (part as ResistorPart)?.Style;
+                rows[r, s] = new RuleRows(derating.For(rules[r].Id, kind, style), derating.For("r-power", kind, style));
+            }
+        }
+    }
+
+    /// <summary>Judges over all corners.</summary>
+    /// <param name="pin">The channel's pin.</param>
+    /// <param name="threads">Threads to use; 0: all.</param>
+    /// <param name="cancel">Stops the enumeration.</param>
+    public ReadingJudgement Judge(PinSource pin, int threads, CancellationToken cancel)
+    {
+        double driveFactor = derating.For("drive").Limit ?? 1;
+        IReadOnlyList<Accumulator> chunks = WorstCase.Enumerate(
+            model, pin, driveFactor, threads, () => new Accumulator(rules.Count, model.Slots.Count + 1), Visit, cancel);
+        Accumulator total = new(rules.Count, model.Slots.Count + 1);
+        foreach (Accumulator chunk in chunks)
+        {
+            total.Merge(chunk);
+        }
+
+        foreach (double ambient in (ReadOnlySpan<double>)[model.Channel.Conditions.Ambient.Min.Kelvins, model.Channel.Conditions.Ambient.Max.Kelvins])
+        {
+            if (WorstCase.PinLow(model, ambient) is { } off)
+            {
+                Visit(total, off);
+            }
+            else
+            {
+                total.NotSolved++;
+            }
+        }
+
+        SolvedState? nominal = WorstCase.Nominal(model, pin);
+        return new ReadingJudgement(model.Channel, Findings(total), nominal, total.LoadMin, total.LoadMax, total.PinMax, total.Corners, total.NotSolved + (nominal is null ? 1 : 0));
+    }
+
+    private void Visit(Accumulator into, SolvedState state)
+    {
+        into.Corners++;
+        if (!state.Solved)
+        {
+            into.NotSolved++;
+            Fail(into, state);
+            return;
+        }
+
+        if (state.State == ChannelState.On)
+        {
+            into.LoadMin = Math.Min(into.LoadMin, state.LoadCurrent);
+            into.LoadMax = Math.Max(into.LoadMax, state.LoadCurrent);
+        }
+
+        into.PinMax = Math.Max(into.PinMax, state.PinCurrent);
+        int channelSlot = model.Slots.Count;
+        for (int r = 0; r < rules.Count; r++)
+        {
+            if (!rules[r].Reads(state))
+            {
+                continue;
+            }
+
+            switch (rules[r])
+            {
+                case TransistorRule rule:
+                    foreach (TransistorPoint point in (TransistorPoint[])state.Transistors)
+                    {
+                        into.At(r, point.Slot).Take(rule.Evaluate(state, point, model.Channel, rows[r, point.Slot]), state);
+                    }
+
+                    break;
+                case ResistorRule rule:
+                    for (int i = 0; i < state.Resistors.Count; i++)
+                    {
+                        ResistorPoint point = state.Resistors[i];
+                        if (applies[r, point.Slot])
+                        {
+                            into.At(r, point.Slot).Take(rule.Evaluate(state, point, model.Channel, rows[r, point.Slot]), state);
+                        }
+                    }
+
+                    break;
+                case ChannelRule rule:
+                    into.At(r, channelSlot).Take(rule.Evaluate(state, model.Channel, rows[r, channelSlot]), state);
+                    break;
+            }
+        }
+    }
+
+    /// <summary>A corner without a solution: nothing that reads its state is verified.</summary>
+    private void Fail(Accumulator into, SolvedState state)
+    {
+        Stress failed = Stress.NotVerified("a solution: the solver gave up in a corner (NotSolved)");
+        for (int r = 0; r < rules.Count; r++)
+        {
+            for (int s = 0; s <= model.Slots.Count; s++)
+            {
+                if (applies[r, s] && (rules[r].Reads(state) || rules[r] is ChannelRule))
+                {
+                    into.At(r, s).Take(failed, state);
+                }
+            }
+        }
+    }
+
+    private List<Finding> Findings(Accumulator total)
+    {
+        List<Finding> findings = [];
+        for (int r = 0; r < rules.Count; r++)
+        {
+            for (int s = 0; s <= model.Slots.Count; s++)
+            {
+                if (!applies[r, s])
+                {
+                    continue;
+                }
+
+                Worst worst = total.At(r, s);
+                if (s == model.Slots.Count)
+                {
+                    findings.Add(Make(r, s, worst, null));
+                    continue;
+                }
+
+                foreach (Placement placement in model.Slots.Of(s))
+                {
+                    findings.Add(Make(r, s, worst, placement));
+                }
+            }
+        }
+
+        return findings;
+    }
+
+    private Finding Make(int r, int s, Worst worst, Placement? placement)
+    {
+        Rule rule = rules[r];
+        Stress stress = worst.Stress;
+        bool judged = worst.State is not null;
+        string? cell = (rule, placement?.Part) switch
+        {
+            (TransistorRule t, Transistor part) => t.DecidingCell(part),
+            (ResistorRule t, ResistorPart part) => t.DecidingCell(part),
+            (ChannelRule t, _) => t.DecidingCell(model.Channel, stress),
+            _ => null,
+        };
+        string? text = rule is ResistorVoltageRule && placement?.Part is ResistorPart { WorkingVoltageMax: null, Resistance.Value.Ohms: > 0 }
+            ? "no limiting element voltage given: judged by sqrt(P R) alone" : null;
+        return new Finding
+        {
+            Channel = model.Channel.Name,
+            Rule = rule.Id,
+            Reference = placement?.Reference,
+            PartNumber = placement?.Part.PartNumber,
+            Manufacturer = placement?.Part.Manufacturer,
+            State = worst.State?.State,
+            Actual = judged && double.IsFinite(stress.Actual) ? stress.Actual : null,
+            ActualIsAtLeast = stress.AtLeast,
+            Allowed = judged && double.IsFinite(stress.Allowed) ? stress.Allowed : null,
+            Unit = stress.Half ? "A" : rule.Unit,
+            StressRatio = judged ? stress.Ratio : null,
+            Verdict = worst.Verdict,
+            Corner = worst.State?.Corner,
+            Source = rows[r, s].Own.Source,
+            Cell = cell,
+            Text = text,
+            Missing = worst.Verdict == Verdict.NotVerified ? [.. worst.Missing.DefaultIfEmpty("a state to judge")] : [],
+        };
+    }
+
+    private sealed class Accumulator(int rules, int slots)
+    {
+        private readonly Worst?[] worst = new Worst?[rules * slots];
+
+        public int Corners { get; set; }
+
+        public int NotSolved { get; set; }
+
+        public double LoadMin { get; set; } = double.PositiveInfinity;
+
+        public double LoadMax { get; set; } = double.NegativeInfinity;
+
+        public double PinMax { get; set; }
+
+        public Worst At(int rule, int slot) => worst[(rule * slots) + slot] ??= new Worst();
+
+        public void Merge(Accumulator later)
+        {
+            Corners += later.Corners;
+            NotSolved += later.NotSolved;
+            LoadMin = Math.Min(LoadMin, later.LoadMin);
+            LoadMax = Math.Max(LoadMax, later.LoadMax);
+            PinMax = Math.Max(PinMax, later.PinMax);
+            for (int i = 0; i < worst.Length; i++)
+            {
+                if (later.worst[i] is { } other)
+                {
+                    (worst[i] ??= new Worst()).Merge(other);
+                }
+            }
+        }
+    }
+}
+
+/// <summary>One reading of a channel, judged.</summary>
+/// <param name="Channel">The reading.</param>
+/// <param name="Findings">Findings of all rules that read states.</param>
+/// <param name="Nominal">The nominal state; null: not solved.</param>
+/// <param name="LoadMin">Smallest load current, state on [A].</param>
+/// <param name="LoadMax">Largest load current, state on [A].</param>
+/// <param name="PinMax">Largest current out of the pin into this channel, on and unfed [A].</param>
+/// <param name="Corners">Corners solved.</param>
+/// <param name="NotSolved">Corners that the solver gave up on.</param>
+public sealed record ReadingJudgement(
+    BoundChannel Channel, IReadOnlyList<Finding> Findings, SolvedState? Nominal, double LoadMin, double LoadMax, double PinMax,
+    int Corners, int NotSolved);
