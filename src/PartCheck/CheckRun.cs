@@ -100,7 +100,8 @@ public static class CheckRun
             {
                 complaints.Add(new Complaint(
                     BoardSource.Shown(board), null, null, null, null, null, "a workbook, or a folder with bom.csv and channels.csv",
-                    "There is no such workbook or folder.") { Fatal = true, NoInput = true });
+                    "There is no such workbook or folder.")
+                { Fatal = true, NoInput = true });
                 return Unread(derating);
             }
 
@@ -218,7 +219,8 @@ public static class CheckRun
                 string[] cite = fault.Key.Part.Card!.Cell.Split('!');
                 complaints.Add(new Complaint(
                     cite[0], cite.Length > 2 ? cite[1] : null, null, "Model", cite[^1], fault.Key.Part.Card.Value.Name, "this part's own card",
-                    $"The model card of {fault.Key.Part.PartNumber} is another part's, or wrong: {fault.Key.CardFault}.") { Channel = fault.First().Channel.Name });
+                    $"The model card of {fault.Key.Part.PartNumber} is another part's, or wrong: {fault.Key.CardFault}.")
+                { Channel = fault.First().Channel.Name });
                 foreach (JudgedChannel channel in fault)
                 {
                     channel.Models.Clear();
@@ -265,7 +267,8 @@ public static class CheckRun
             string[] cite = channel.Cell.Split('!');
             complaints.Add(new Complaint(
                 cite[0], cite.Length > 2 ? cite[1] : null, null, "Derating", cite[^1], name, "one of " + string.Join(", ", DeratingLibrary.Names.Concat(ownDerating.Select(t => t.Name))),
-                $"Channel {channel.Name} names the derating table \"{name}\", which there is not.") { Channel = channel.Name });
+                $"Channel {channel.Name} names the derating table \"{name}\", which there is not.")
+            { Channel = channel.Name });
             return new DeratingTable(name, null, []) { Unknown = true };
         }
 

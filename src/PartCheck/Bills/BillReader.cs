@@ -64,7 +64,8 @@ public static class BillReader
         if (lines.Count == 0)
         {
             complaints.Add(new Complaint(
-                sheet.File, sheet.Sheet, null, null, null, null, "at least one bill line", "The bill has a header row and no lines.") { Fatal = true });
+                sheet.File, sheet.Sheet, null, null, null, null, "at least one bill line", "The bill has a header row and no lines.")
+            { Fatal = true });
             return null;
         }
 

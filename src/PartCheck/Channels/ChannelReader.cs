@@ -53,7 +53,8 @@ public static class ChannelReader
         if (rows.Count == 0)
         {
             complaints.Add(new Complaint(
-                sheet.File, sheet.Sheet, null, null, null, null, "at least one channel", "The channels sheet has a header row and no channels.") { Fatal = true });
+                sheet.File, sheet.Sheet, null, null, null, null, "at least one channel", "The channels sheet has a header row and no channels.")
+            { Fatal = true });
         }
 
         return rows;

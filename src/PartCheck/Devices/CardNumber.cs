@@ -29,7 +29,15 @@ internal static partial class CardNumber
         : letters.Length == 0 ? 1
         : letters[0] switch
         {
-            'F' => 1e-15, 'P' => 1e-12, 'N' => 1e-9, 'U' => 1e-6, 'M' => 1e-3, 'K' => 1e3, 'G' => 1e9, 'T' => 1e12, _ => 1,
+            'F' => 1e-15,
+            'P' => 1e-12,
+            'N' => 1e-9,
+            'U' => 1e-6,
+            'M' => 1e-3,
+            'K' => 1e3,
+            'G' => 1e9,
+            'T' => 1e12,
+            _ => 1,
         };
 
     [GeneratedRegex(@"^(?<n>[+-]?(\d+\.?\d*|\.\d+)([eE][+-]?\d+)?)(?<s>[A-Za-z]*)$")]

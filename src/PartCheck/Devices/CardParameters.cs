@@ -14,8 +14,19 @@ internal sealed class CardParameters(string name)
 
     private static readonly Dictionary<string, string> OtherNames = new(StringComparer.Ordinal)
     {
-        ["VA"] = "VAF", ["VB"] = "VAR", ["IK"] = "IKF", ["NK"] = "NKF", ["PT"] = "XTI", ["TREF"] = "TNOM",
-        ["PE"] = "VJE", ["ME"] = "MJE", ["PC"] = "VJC", ["MC"] = "MJC", ["PS"] = "VJS", ["MS"] = "MJS", ["CCS"] = "CJS",
+        ["VA"] = "VAF",
+        ["VB"] = "VAR",
+        ["IK"] = "IKF",
+        ["NK"] = "NKF",
+        ["PT"] = "XTI",
+        ["TREF"] = "TNOM",
+        ["PE"] = "VJE",
+        ["ME"] = "MJE",
+        ["PC"] = "VJC",
+        ["MC"] = "MJC",
+        ["PS"] = "VJS",
+        ["MS"] = "MJS",
+        ["CCS"] = "CJS",
     };
 
     /// <summary>Known parameters without a part in the static result.</summary>
@@ -28,10 +39,40 @@ internal sealed class CardParameters(string name)
     /// <summary>Parameters that change the static result beyond this model, each with the value that does not.</summary>
     private static readonly Dictionary<string, double> Beyond = new(StringComparer.Ordinal)
     {
-        ["RCO"] = 0, ["VO"] = 0, ["GAMMA"] = 0, ["QCO"] = 0, ["TLEV"] = 0, ["TLEVC"] = 0, ["ISS"] = 0, ["QUASIMOD"] = 0,
-        ["TRE1"] = 0, ["TRE2"] = 0, ["TRC1"] = 0, ["TRC2"] = 0, ["TRB1"] = 0, ["TRB2"] = 0, ["TRM1"] = 0, ["TRM2"] = 0,
-        ["TBF1"] = 0, ["TBF2"] = 0, ["TBR1"] = 0, ["TBR2"] = 0, ["TIKF1"] = 0, ["TIKF2"] = 0, ["TIRB1"] = 0, ["TIRB2"] = 0,
-        ["TNF1"] = 0, ["TNF2"] = 0, ["TNE1"] = 0, ["TNE2"] = 0, ["TVAF1"] = 0, ["TVAF2"] = 0, ["TISE1"] = 0, ["TISE2"] = 0, ["IBE"] = 0, ["IBC"] = 0,
+        ["RCO"] = 0,
+        ["VO"] = 0,
+        ["GAMMA"] = 0,
+        ["QCO"] = 0,
+        ["TLEV"] = 0,
+        ["TLEVC"] = 0,
+        ["ISS"] = 0,
+        ["QUASIMOD"] = 0,
+        ["TRE1"] = 0,
+        ["TRE2"] = 0,
+        ["TRC1"] = 0,
+        ["TRC2"] = 0,
+        ["TRB1"] = 0,
+        ["TRB2"] = 0,
+        ["TRM1"] = 0,
+        ["TRM2"] = 0,
+        ["TBF1"] = 0,
+        ["TBF2"] = 0,
+        ["TBR1"] = 0,
+        ["TBR2"] = 0,
+        ["TIKF1"] = 0,
+        ["TIKF2"] = 0,
+        ["TIRB1"] = 0,
+        ["TIRB2"] = 0,
+        ["TNF1"] = 0,
+        ["TNF2"] = 0,
+        ["TNE1"] = 0,
+        ["TNE2"] = 0,
+        ["TVAF1"] = 0,
+        ["TVAF2"] = 0,
+        ["TISE1"] = 0,
+        ["TISE2"] = 0,
+        ["IBE"] = 0,
+        ["IBC"] = 0,
     };
 
     /// <summary>What card collections add that no simulator reads.</summary>

@@ -87,8 +87,13 @@ public static class PartTableReader
         {
             return new RefusedPart
             {
-                PartNumber = number, Manufacturer = row.Text("Manufacturer"), Package = row.Text("Package"), Mounting = row.Text("Mounting"),
-                Cell = row.Cite("Part number"), Kind = kind, Reason = reason,
+                PartNumber = number,
+                Manufacturer = row.Text("Manufacturer"),
+                Package = row.Text("Package"),
+                Mounting = row.Text("Mounting"),
+                Cell = row.Cite("Part number"),
+                Kind = kind,
+                Reason = reason,
             };
         }
 

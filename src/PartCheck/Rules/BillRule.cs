@@ -42,8 +42,13 @@ public static class BillRule
             {
                 findings.Add(new Finding
                 {
-                    Channel = channel.Name, Rule = Id, Reference = fault.Reference, Verdict = Verdict.Nonconforming, Source = Source,
-                    Cell = fault.Cell, Text = fault.Text,
+                    Channel = channel.Name,
+                    Rule = Id,
+                    Reference = fault.Reference,
+                    Verdict = Verdict.Nonconforming,
+                    Source = Source,
+                    Cell = fault.Cell,
+                    Text = fault.Text,
                 });
             }
         }

@@ -59,7 +59,8 @@ public sealed class Table
             string text = ComplaintTexts.NoHeader(
                 tableName, matcher.LookedFor, nearest?.Row, [.. nearest?.Cells.Select(cell => OneLine(cell.Text)) ?? []]);
             complaints.Add(new Complaint(
-                sheet.File, sheet.Sheet, null, null, null, null, string.Join(", ", matcher.LookedFor), text) { Fatal = true });
+                sheet.File, sheet.Sheet, null, null, null, null, string.Join(", ", matcher.LookedFor), text)
+            { Fatal = true });
             return null;
         }
 

@@ -1,0 +1,59 @@
+using System.CommandLine;
+using System.CommandLine.Invocation;
+
+namespace PartCheck.Cli;
+
+/// <summary>The command line as a function, so that tests call it as a user would.</summary>
+public static class CommandLine
+{
+    /// <summary>Runs one command.</summary>
+    /// <param name="args">Arguments.</param>
+    /// <param name="output">Standard output.</param>
+    /// <param name="error">Standard error.</param>
+    /// <param name="colour">True where the output is a terminal that wants colour.</param>
+    /// <param name="cancel">Stops the run (exit code 130).</param>
+    /// <returns>The exit code.</returns>
+    public static async Task<int> RunAsync(string[] args, TextWriter output, TextWriter error, bool colour, CancellationToken cancel)
+    {
+        ArgumentNullException.ThrowIfNull(output);
+        ArgumentNullException.ThrowIfNull(error);
+        try
+        {
+            RootCommand root = new("Checks LED current sinks of a board's bill of materials at worst case.")
+            {
+                CheckCommand.Build(output, error, colour),
+            };
+            ParseResult parsed = root.Parse(args);
+            if (parsed.Errors.Count > 0)
+            {
+                foreach (string message in parsed.Errors.Select(e => e.Message).Distinct(StringComparer.Ordinal))
+                {
+                    await error.WriteLineAsync("partcheck: " + message).ConfigureAwait(false);
+                }
+
+                return ExitCodes.Usage;
+            }
+
+            if (parsed.Action is null)
+            {
+                await error.WriteLineAsync("partcheck: no command given; partcheck --help lists them.").ConfigureAwait(false);
+                return ExitCodes.Usage;
+            }
+
+            InvocationConfiguration configuration = new() { Output = output, Error = error, EnableDefaultExceptionHandler = false };
+            int code = await parsed.InvokeAsync(configuration, cancel).ConfigureAwait(false);
+            await output.FlushAsync(CancellationToken.None).ConfigureAwait(false);
+            return code;
+        }
+        catch (OperationCanceledException)
+        {
+            return ExitCodes.Interrupted;
+        }
+        catch (Exception e) when (e is not OutOfMemoryException)
+        {
+            bool debug = Environment.GetEnvironmentVariable("PARTCHECK_DEBUG") == "1";
+            await error.WriteLineAsync("partcheck: internal error: " + (debug ? e.ToString() : e.GetType().Name + ": " + e.Message)).ConfigureAwait(false);
+            return ExitCodes.Internal;
+        }
+    }
+}

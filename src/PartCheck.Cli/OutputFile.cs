@@ -1,0 +1,60 @@
+using System.Text;
+
+namespace PartCheck.Cli;
+
+/// <summary>Writes a report beside its target and renames it: nothing is ever half-written.</summary>
+internal static class OutputFile
+{
+    /// <summary>Why a file cannot be made; null: it can.</summary>
+    /// <param name="path">The target.</param>
+    /// <param name="replace">True where an existing file may be replaced.</param>
+    /// <param name="inputs">Files that are being read and must not be replaced.</param>
+    public static string? Refusal(string path, bool replace, IEnumerable<string> inputs)
+    {
+        string full = Path.GetFullPath(path);
+        if (Directory.Exists(full))
+        {
+            return $"{path} is a folder.";
+        }
+
+        if (inputs.Any(i => string.Equals(Path.GetFullPath(i), full, StringComparison.Ordinal)))
+        {
+            return $"{path} is an input of this run.";
+        }
+
+        if (File.Exists(full) && !replace)
+        {
+            return $"{path} exists; --replace allows to replace it.";
+        }
+
+        try
+        {
+            using FileStream probe = new(Beside(full), FileMode.CreateNew, FileAccess.Write, FileShare.None, 1, FileOptions.DeleteOnClose);
+            return null;
+        }
+        catch (Exception e) when (e is IOException or UnauthorizedAccessException or NotSupportedException or ArgumentException)
+        {
+            return $"{path} cannot be created: its folder does not exist or cannot be written to.";
+        }
+    }
+
+    /// <summary>Writes a file; an exception leaves the target as it was.</summary>
+    public static async Task WriteAsync(string path, string text)
+    {
+        string full = Path.GetFullPath(path);
+        string beside = Beside(full);
+        try
+        {
+            await File.WriteAllTextAsync(beside, text, new UTF8Encoding(false), CancellationToken.None).ConfigureAwait(false);
+            File.Move(beside, full, overwrite: true);
+        }
+        catch
+        {
+            File.Delete(beside);
+            throw;
+        }
+    }
+
+    private static string Beside(string full) =>
+        Path.Combine(Path.GetDirectoryName(full) ?? ".", "." + Path.GetFileName(full) + "." + Guid.NewGuid().ToString("N") + ".part");
+}

@@ -1,0 +1,187 @@
+using System.Globalization;
+using System.Text;
+using PartCheck.Quantities;
+using PartCheck.Rules;
+using PartCheck.Sheets;
+
+namespace PartCheck.Reports;
+
+/// <summary>The report for a person at a terminal: 80 columns, worst first.</summary>
+public static class TextReport
+{
+    private const int Closest = 3;
+
+    /// <summary>Writes a report.</summary>
+    /// <param name="report">What a run found.</param>
+    /// <param name="colour">True: verdict words are coloured (ANSI).</param>
+    public static string Write(CheckReport report, bool colour)
+    {
+        ArgumentNullException.ThrowIfNull(report);
+        StringBuilder text = new();
+        foreach (BoardReport board in report.Boards)
+        {
+            Board(text, board);
+        }
+
+        if (report.Complaints.Count > 0)
+        {
+            text.Append(CultureInfo.InvariantCulture, $"Complaints ({report.Complaints.Count}): what could not be read\n");
+            foreach (Complaint c in report.Complaints)
+            {
+                Columns80.Wrap(text, "  ", Place(c) + ": " + c.Text, 4);
+                if (c.Found is not null || c.Wanted is not null)
+                {
+                    string found = c.Found is null ? string.Empty : $"found \"{c.Found}\"" + (c.Wanted is null ? string.Empty : ", ");
+                    Columns80.Wrap(text, "    ", found + (c.Wanted is null ? string.Empty : "wanted " + c.Wanted), 6);
+                }
+            }
+
+            text.Append('\n');
+        }
+
+        foreach (string caution in report.Boards.SelectMany(b => b.Cautions).Distinct(StringComparer.Ordinal))
+        {
+            Columns80.Wrap(text, "! ", caution, 2);
+        }
+
+        return colour ? Coloured(text.ToString()) : text.ToString();
+    }
+
+    private static void Board(StringBuilder text, BoardReport board)
+    {
+        Columns80.Wrap(text, string.Empty, $"{board.Board}: {VerdictWords.Of(board.Verdict).ToUpperInvariant()} (derating: {board.Derating})", 2);
+        if (board.DeratingNote is { } note)
+        {
+            Columns80.Wrap(text, "  ", note, 2);
+        }
+
+        text.Append('\n');
+        if (board.Channels.Count == 0)
+        {
+            text.Append("  Nothing could be judged: see the complaints.\n\n");
+            return;
+        }
+
+        Findings(text, "Nonconforming", board.Findings.Where(f => f.Verdict == Verdict.Nonconforming));
+        Findings(text, "Not verified", board.Findings.Where(f => f.Verdict == Verdict.NotVerified));
+        Channels(text, board);
+        Conforming(text, board);
+        Columns80.Wrap(text, string.Empty, "Rules judged: " + string.Join(", ", board.Rules) + ".", 2);
+        if (board.RulesNotJudged.Count > 0)
+        {
+            Columns80.Wrap(text, string.Empty, "Not judged by this version: " + string.Join(", ", board.RulesNotJudged) + ".", 2);
+        }
+
+        int solved = board.Channels.Sum(c => c.CornersSolved);
+        int gaveUp = board.Channels.Sum(c => c.NotSolved);
+        Columns80.Wrap(text, string.Empty, string.Create(CultureInfo.InvariantCulture, $"Corners solved: {solved}; given up: {gaveUp}."), 2);
+        text.Append('\n');
+        Listed(text, "Assumed", board.Assumed.Select(a => $"{a.What} of {a.Of}: {a.Value}" + Used(a, board)));
+        Listed(text, "Advice", board.Advice.Select(a => string.Join(" ", new[] { a.Channel, a.Reference }.OfType<string>().Append(a.Text))));
+    }
+
+    private static void Findings(StringBuilder text, string title, IEnumerable<Finding> findings)
+    {
+        IReadOnlyList<IReadOnlyList<Finding>> groups = FindingText.Grouped(findings);
+        if (groups.Count == 0)
+        {
+            return;
+        }
+
+        text.Append(title).Append('\n');
+        foreach (IReadOnlyList<Finding> group in groups)
+        {
+            Finding f = group[0];
+            string head = string.Join(" ", new[] { f.Channel, f.Rule, FindingText.Subject(group) }.Where(s => !string.IsNullOrEmpty(s)));
+            string numbers = FindingText.Numbers(f);
+            string said = string.Join("; ", new[] { f.Verdict == Verdict.NotVerified ? "missing " + string.Join(", ", f.Missing) : numbers, f.Text }.Where(s => !string.IsNullOrEmpty(s)));
+            Columns80.Wrap(text, "  ", head + ": " + said, 4);
+            if (f.Verdict == Verdict.Nonconforming && FindingText.Corner(f) is { Length: > 0 } corner)
+            {
+                Columns80.Wrap(text, "    ", corner, 6);
+            }
+
+            if (f.Verdict == Verdict.Nonconforming && f.Cell is not null)
+            {
+                Columns80.Wrap(text, "    ", $"limit from {f.Cell}; {f.Source}", 6);
+            }
+        }
+
+        text.Append('\n');
+    }
+
+    private static void Channels(StringBuilder text, BoardReport board)
+    {
+        text.Append("Channels\n");
+        int width = Math.Min(20, board.Channels.Max(c => c.Channel.Length));
+        foreach (ChannelJudgement c in board.Channels)
+        {
+            string current = c.LoadCurrent is { } i
+                ? $"{EngineeringNotation.Format(i.Min, "A", 3)} .. {EngineeringNotation.Format(i.Nominal, "A", 3)} .. {EngineeringNotation.Format(i.Max, "A", 3)}"
+                : "not solved";
+            string word = VerdictWords.Of(c.Verdict);
+            string table = c.Derating == board.Derating ? string.Empty : $" (derating {c.Derating})";
+            Columns80.Wrap(text, $"  {c.Channel.PadRight(width)} {word.PadRight(13)} ", current + table + WorstOf(c, board), 4);
+        }
+
+        text.Append('\n');
+    }
+
+    private static string WorstOf(ChannelJudgement channel, BoardReport board)
+    {
+        Finding? worst = board.Findings.FirstOrDefault(f => f.Channel == channel.Channel || (f.Channel is null && f.Channels?.Contains(channel.Channel) == true));
+        if (worst is null)
+        {
+            return string.Empty;
+        }
+
+        string ratio = worst.StressRatio is { } r ? string.Create(CultureInfo.InvariantCulture, $" {r:0.00}") : string.Empty;
+        return $"; {worst.Rule}{(worst.Reference is null ? string.Empty : " " + worst.Reference)}{ratio}";
+    }
+
+    private static void Conforming(StringBuilder text, BoardReport board)
+    {
+        List<Finding> conforming = [.. board.Findings.Where(f => f.Verdict == Verdict.Conforms)];
+        text.Append(CultureInfo.InvariantCulture, $"Conforming findings: {conforming.Count}");
+        text.Append(conforming.Count > 0 ? "; the closest to their limits:\n" : ".\n");
+        foreach (IReadOnlyList<Finding> group in FindingText.Grouped(conforming.Where(f => f.StressRatio is not null)).Take(Closest))
+        {
+            Finding f = group[0];
+            string head = string.Join(" ", new[] { f.Channel, f.Rule, FindingText.Subject(group) }.Where(s => !string.IsNullOrEmpty(s)));
+            Columns80.Wrap(text, "  ", head + ": " + FindingText.Numbers(f), 4);
+        }
+
+        text.Append('\n');
+    }
+
+    private static void Listed(StringBuilder text, string title, IEnumerable<string> items)
+    {
+        List<string> all = [.. items];
+        if (all.Count == 0)
+        {
+            return;
+        }
+
+        text.Append(title).Append('\n');
+        foreach (string item in all)
+        {
+            Columns80.Wrap(text, "  ", item, 4);
+        }
+
+        text.Append('\n');
+    }
+
+    private static string Used(AssumedValue value, BoardReport board) =>
+        value.Channels.Count == board.Channels.Count && board.Channels.Count > 1 ? " (every channel)"
+        : value.Channels.Count == 1 && value.Channels[0] == value.Of ? string.Empty
+        : " (" + string.Join(", ", value.Channels) + ")";
+
+    private static string Place(Complaint c) =>
+        string.Join("!", new[] { c.File, c.Sheet, c.Cell }.OfType<string>()) + (c.Column is null ? string.Empty : $" [{c.Column}]");
+
+    private static string Coloured(string text) => text
+        .Replace("NONCONFORMING", "\u001b[31mNONCONFORMING\u001b[0m", StringComparison.Ordinal)
+        .Replace("nonconforming", "\u001b[31mnonconforming\u001b[0m", StringComparison.Ordinal)
+        .Replace("NOT VERIFIED", "\u001b[33mNOT VERIFIED\u001b[0m", StringComparison.Ordinal)
+        .Replace("not verified", "\u001b[33mnot verified\u001b[0m", StringComparison.Ordinal);
+}
