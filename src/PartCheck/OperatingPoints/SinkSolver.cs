@@ -189,8 +189,8 @@ public sealed class SinkSolver
         {
             double magnitude = Math.Abs(equations.Residual[i]);
 
-            // Below 1e-18 A a current balances by any standard of this work.
-            double relative = magnitude < 1e-18 ? 0 : magnitude / (equations.Scale[i] + 1e-300);
+            // Below 10 fA (or 10 fV) rounding of the voltages decides: it balances by any standard of this work.
+            double relative = magnitude < 1e-14 ? 0 : magnitude / (equations.Scale[i] + 1e-300);
             worst = double.IsNaN(relative) ? double.NaN : Math.Max(worst, relative);
         }
 

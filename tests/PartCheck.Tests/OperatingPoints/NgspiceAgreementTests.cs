@@ -1,0 +1,66 @@
+using System.Globalization;
+using PartCheck.OperatingPoints;
+using PartCheck.Tests.Reference;
+using Xunit;
+
+namespace PartCheck.Tests.OperatingPoints;
+
+/// <summary>The solver against the recorded table: 0.1 %, or 1 nA and 10 uV where currents vanish.</summary>
+public class NgspiceAgreementTests
+{
+    private const double Share = 1e-3;
+    private const double Amperes = 1e-9;
+    private const double Volts = 10e-6;
+
+    [Fact]
+    public void EveryRecordedCircuitAgrees()
+    {
+        IReadOnlyList<(ReferenceCircuit Circuit, ReferenceResult Result)> rows = ReferenceTable.Read();
+        Assert.InRange(rows.Count, 300, 10_000);
+        SinkSolver solver = new();
+        List<string> wrong = [];
+        foreach ((ReferenceCircuit circuit, ReferenceResult expected) in rows)
+        {
+            OperatingPoint? point = solver.Solve(circuit.ToSink());
+            if (point is null)
+            {
+                wrong.Add($"{circuit.Name}: NotSolved {solver.Failure}");
+                continue;
+            }
+
+            void Hold(string what, double reference, double actual, double floor)
+            {
+                if (!(Math.Abs(actual - reference) <= Math.Max(Share * Math.Abs(reference), floor)))
+                {
+                    wrong.Add(string.Create(CultureInfo.InvariantCulture, $"{circuit.Name} {what}: {actual:g8}, ngspice {reference:g8}"));
+                }
+            }
+
+            Hold("load current", expected.LoadCurrent, point.LoadCurrent, Amperes);
+            Hold("pin current", expected.PinCurrent, point.PinCurrent, Amperes);
+            Hold("base node", expected.BaseVoltage, point.BaseVoltage, Volts);
+            Hold("control base", expected.ControlBaseVoltage, point.ControlBaseVoltage, Volts);
+            Hold("control IC", expected.ControlIc, point.Control.Ic, Amperes);
+            Hold("control IB", expected.ControlIb, point.Control.Ib, Amperes);
+            for (int i = 0; i < circuit.Legs.Count; i++)
+            {
+                Hold($"IC {i}", expected.Ic[i], point.Legs[i].Ic, Amperes);
+                Hold($"IB {i}", expected.Ib[i], point.Legs[i].Ib, Amperes);
+                Hold($"emitter {i}", expected.Emitter[i], point.Legs[i].EmitterVoltage, Volts);
+            }
+        }
+
+        Assert.True(wrong.Count == 0, $"{wrong.Count} deviations:\n" + string.Join("\n", wrong.Take(25)));
+    }
+
+    [Theory]
+    [InlineData("regulating")]
+    [InlineData("drop-out")]
+    [InlineData("off")]
+    [InlineData("unfed")]
+    public void TheTableHoldsEveryKindWithOneToEightLegs(string kind)
+    {
+        HashSet<int> legs = [.. ReferenceTable.Read().Where(r => r.Circuit.Name.StartsWith(kind, StringComparison.Ordinal)).Select(r => r.Circuit.Legs.Count)];
+        Assert.Equal([1, 2, 3, 4, 5, 6, 7, 8], legs.Order());
+    }
+}
