@@ -13,6 +13,7 @@ public sealed class CornerSolver
     private readonly double driveFactor;
     private int edgeOf = -1;
     private OperatingPoint? edge;
+    private bool edgeFailed;
 
     /// <summary>Makes a solver for a channel.</summary>
     /// <param name="model">The channel.</param>
@@ -50,15 +51,16 @@ public sealed class CornerSolver
         DriveEdge? drive = null;
         if (box.State == ChannelState.On && at.Corner.Heat == 0)
         {
-            if (edgeOf != index / box.InnerCount || edge is null)
+            if (edgeOf != index / box.InnerCount)
             {
                 edgeOf = index / box.InnerCount;
-                if (!edgeStart.HasSolution)
-                {
-                    edgeStart.CopyFrom(start);
-                }
-
                 edge = solver.SolveEdge(at.Circuit, driveFactor, edgeStart);
+                edgeFailed = solver.Failure is not null;
+            }
+
+            if (edgeFailed)
+            {
+                return Unsolved(box, at, offset + index);
             }
 
             drive = Edge(at.Circuit);
@@ -66,6 +68,11 @@ public sealed class CornerSolver
 
         return StateAssembly.Build(model, pin, box.State, at, box.OddClass, point, drive, offset + index);
     }
+
+    private static SolvedState Unsolved(ChannelBox box, in BoxCorner at, int index) => new()
+    {
+        State = box.State, Corner = at.Corner, Index = index, Solved = false, Transistors = [], Resistors = [],
+    };
 
     private DriveEdge Edge(SinkCircuit circuit)
     {

@@ -10,6 +10,9 @@ internal enum BaseNodeCondition
 
     /// <summary>Edge of regulation: the control collects (k' - 1) times the sum of the pass bases.</summary>
     Edge,
+
+    /// <summary>The base node is held at a voltage, whatever it takes.</summary>
+    Driven,
 }
 
 /// <summary>
@@ -57,6 +60,12 @@ internal sealed class SinkEquations
 
     /// <summary>k' of the edge of regulation.</summary>
     public double EdgeFactor { get; private set; }
+
+    /// <summary>Voltage at which a driven base node is held [V].</summary>
+    public double DrivenVoltage { get; set; }
+
+    /// <summary>Sum of the pass transistors' base currents at the last point evaluated [A].</summary>
+    public double SumBaseCurrent { get; private set; }
 
     /// <summary>Share of the pin's source voltage that is switched on: 1, less on the way there.</summary>
     public double SourceShare { get; set; } = 1;
@@ -243,7 +252,8 @@ internal sealed class SinkEquations
 
             sumBase += m * q.Ib;
             absBase += m * Math.Abs(q.Ib);
-            AddOwn(0, g, q.DIb, Condition == BaseNodeCondition.Fed ? -m : -m * (EdgeFactor - 1));
+            double weight = Condition switch { BaseNodeCondition.Fed => m, BaseNodeCondition.Edge => m * (EdgeFactor - 1), _ => 0 };
+            AddOwn(0, g, q.DIb, -weight);
 
             // Heat.
             double vce = vc - ve;
@@ -269,6 +279,7 @@ internal sealed class SinkEquations
             }
         }
 
+        SumBaseCurrent = sumBase;
         double conductance = 1 / c.FeedResistance;
         if (Condition == BaseNodeCondition.Fed)
         {
@@ -277,6 +288,12 @@ internal sealed class SinkEquations
             Scale[0] = ((Math.Abs(source) + Math.Abs(vb)) * conductance) + Math.Abs(q0.Ic) + absBase;
             AddControl(0, dVb, -conductance - c.BaseConductance);
             AddControl(0, q0.DIc, -1);
+        }
+        else if (Condition == BaseNodeCondition.Driven)
+        {
+            Residual[0] = vb - DrivenVoltage;
+            Scale[0] = 1;
+            AddControl(0, dVb, 1);
         }
         else
         {

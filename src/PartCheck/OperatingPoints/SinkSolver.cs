@@ -29,29 +29,86 @@ public sealed class SinkSolver
     /// <param name="start">A solution nearby to start from; null: a cold start. Overwritten by this solution's unknowns.</param>
     /// <returns>The operating point; null where the ladder gave up (see <see cref="Failure"/>).</returns>
     public OperatingPoint? Solve(SinkCircuit circuit, StartPoint? start = null) =>
-        Run(circuit, BaseNodeCondition.Fed, 0, start);
+        Run(circuit, start);
 
     /// <summary>
-    /// Solves the edge of regulation: the base voltage at which the control collects (factor - 1) times the sum of the
-    /// pass transistors' base currents, whatever feeds the base node.
+    /// Solves the edge of regulation: the lowest base voltage at which the control collects (factor - 1) times the sum of the
+    /// pass transistors' base currents, whatever feeds the base node. Down at the leakage currents the same equation holds
+    /// once more near 0 V; that is no regulation, so a solution counts only where the control's junction conducts.
     /// </summary>
-    /// <param name="circuit">The circuit; its pin, feed and pull-down are not read.</param>
+    /// <param name="circuit">The circuit; its pin, feed and pull-down are not read. No junction may heat itself.</param>
     /// <param name="factor">k', above 1.</param>
-    /// <param name="start">A solution nearby in regulation; overwritten by this solution's unknowns.</param>
+    /// <param name="start">An edge nearby to start from; overwritten by this one.</param>
+    /// <returns>The edge; null where there is none up to 3.6 V at the base node, or where the solver gave up (<see cref="Failure"/>).</returns>
     public OperatingPoint? SolveEdge(SinkCircuit circuit, double factor, StartPoint? start = null)
     {
+        ArgumentNullException.ThrowIfNull(circuit);
         ArgumentOutOfRangeException.ThrowIfLessThanOrEqual(factor, 1);
-        return Run(circuit, BaseNodeCondition.Edge, factor, start);
+        Failure = null;
+        iterations = 0;
+        Array.Fill(held, double.NaN);
+        held.CopyTo(equations.HeldAt, 0);
+        equations.SourceShare = 1;
+        equations.Lay(circuit, BaseNodeCondition.Edge, factor, heated: false);
+        if (start is not null && start.Give(x, equations.Count, circuit) && Newton() && Regulates())
+        {
+            start.Take(x, equations.Count, circuit);
+            return Point(circuit);
+        }
+
+        start?.Clear();
+        ColdStart(circuit);
+        bool found = false;
+        bool failed = false;
+        for (double volts = 0.2; volts <= 3.6 && !found; volts += 0.1)
+        {
+            equations.Lay(circuit, BaseNodeCondition.Driven, factor, heated: false);
+            equations.DrivenVoltage = volts;
+            if (!Newton())
+            {
+                failed = true;
+                ColdStart(circuit);
+                continue;
+            }
+
+            equations.Evaluate(x);
+            if (equations.Currents(0).Ic < (factor - 1) * equations.SumBaseCurrent || !Regulates())
+            {
+                continue;
+            }
+
+            // From above: the control collects more than asked.
+            equations.Lay(circuit, BaseNodeCondition.Edge, factor, heated: false);
+            double[] above = [.. x];
+            found = Newton() && Regulates();
+            if (!found)
+            {
+                failed = true;
+                above.CopyTo(x, 0);
+            }
+        }
+
+        if (!found)
+        {
+            Failure = failed ? new NotSolved(lastResidual, iterations) : null;
+            return null;
+        }
+
+        start?.Take(x, equations.Count, circuit);
+        return Point(circuit);
     }
 
-    private OperatingPoint? Run(SinkCircuit circuit, BaseNodeCondition condition, double factor, StartPoint? start)
+    /// <summary>True where the control's junction conducts well above its leakage.</summary>
+    private bool Regulates() => x[0] > 3 * equations.Device(0).ForwardVoltage;
+
+    private OperatingPoint? Run(SinkCircuit circuit, StartPoint? start)
     {
         ArgumentNullException.ThrowIfNull(circuit);
         Failure = null;
         iterations = 0;
         equations.SourceShare = 1;
         Array.Fill(held, double.NaN);
-        bool solved = Attempt(circuit, condition, factor, start);
+        bool solved = Attempt(circuit, start);
 
         // A junction beyond its bound is held there, one after the other, hottest first.
         for (int round = 0; round <= circuit.Legs.Count; round++)
@@ -63,7 +120,7 @@ public sealed class SinkSolver
             }
 
             held[runaway] = equations.Heat(runaway).Limit;
-            solved = Attempt(circuit, condition, factor, null);
+            solved = Attempt(circuit, null);
         }
 
         if (!solved || !HeldJunctionsRanAway(circuit))
@@ -77,10 +134,10 @@ public sealed class SinkSolver
         return Point(circuit);
     }
 
-    private bool Attempt(SinkCircuit circuit, BaseNodeCondition condition, double factor, StartPoint? start)
+    private bool Attempt(SinkCircuit circuit, StartPoint? start)
     {
         held.CopyTo(equations.HeldAt, 0);
-        equations.Lay(circuit, condition, factor, heated: true);
+        equations.Lay(circuit, BaseNodeCondition.Fed, 0, heated: true);
         if (start is not null && start.Give(x, equations.Count, circuit) && Newton())
         {
             return true;
@@ -93,16 +150,6 @@ public sealed class SinkSolver
     /// <summary>Third rung: the pin's source from zero, each level from the solution below it.</summary>
     private bool RaiseSource(SinkCircuit circuit)
     {
-        if (equations.Condition == BaseNodeCondition.Edge)
-        {
-            // The edge has no source to raise: solve the circuit as fed, then move the condition over from there.
-            equations.Lay(circuit, BaseNodeCondition.Fed, 0, heated: true);
-            ColdStart(circuit);
-            bool fed = Newton() || RaiseSource(circuit);
-            equations.Lay(circuit, BaseNodeCondition.Edge, equations.EdgeFactor == 0 ? 1.5 : equations.EdgeFactor, heated: true);
-            return fed && Newton();
-        }
-
         ColdStart(circuit);
         for (int i = 0; i < equations.LoadIndex; i++)
         {

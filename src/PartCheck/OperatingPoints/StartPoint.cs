@@ -13,15 +13,6 @@ public sealed class StartPoint
     /// <summary>Forgets the solution.</summary>
     public void Clear() => count = 0;
 
-    /// <summary>Takes another's solution over.</summary>
-    public void CopyFrom(StartPoint other)
-    {
-        ArgumentNullException.ThrowIfNull(other);
-        other.unknowns.CopyTo(unknowns, 0);
-        count = other.count;
-        fed = other.fed;
-    }
-
     internal void Take(double[] x, int used, SinkCircuit circuit)
     {
         x.CopyTo(unknowns, 0);
