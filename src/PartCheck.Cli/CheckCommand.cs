@@ -96,6 +96,6 @@ internal static class CheckCommand
         IEnumerable<string> named = request.Boards.Concat(request.Parts)
             .Concat(new[] { request.Bill, request.Channels, request.Derating, request.Pins, request.Columns }.OfType<string>())
             .Select(f => BoardSource.Split(f).Path);
-        return named.SelectMany(f => Directory.Exists(f) ? Directory.EnumerateFiles(f) : [f]);
+        return named.SelectMany(f => Directory.Exists(f) ? Directory.EnumerateFiles(f, "*.csv") : [f]);
     }
 }

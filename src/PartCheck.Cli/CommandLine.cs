@@ -28,7 +28,7 @@ public static class CommandLine
             {
                 foreach (string message in parsed.Errors.Select(e => e.Message).Distinct(StringComparer.Ordinal))
                 {
-                    await error.WriteLineAsync("partcheck: " + message).ConfigureAwait(false);
+                    await error.WriteLineAsync("partcheck: " + string.Join(' ', message.Split((char[])[' ', '\n', '\r', '\t'], StringSplitOptions.RemoveEmptyEntries))).ConfigureAwait(false);
                 }
 
                 return ExitCodes.Usage;

@@ -44,6 +44,9 @@ public sealed record BillLine
     /// <summary>Role column.</summary>
     public string? Role { get; init; }
 
+    /// <summary>True where something in the line could not be read or contradicts another line: it is not verified.</summary>
+    public bool HasComplaints { get; init; }
+
     /// <summary>File and cell of the references.</summary>
     public required string Cell { get; init; }
 }

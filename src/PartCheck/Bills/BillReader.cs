@@ -41,7 +41,7 @@ public static class BillReader
         }
 
         List<BillLine> lines = [];
-        Dictionary<string, string> seen = new(StringComparer.OrdinalIgnoreCase);
+        Dictionary<string, int> seen = new(StringComparer.OrdinalIgnoreCase);
         foreach (TableRow row in table.Rows)
         {
             if (ReadLine(row, sheet.DecimalComma) is not { } line)
@@ -52,13 +52,19 @@ public static class BillReader
             row.Check(Rules, line);
             foreach (string reference in line.References)
             {
-                if (!seen.TryAdd(reference, line.Cell))
+                if (!seen.TryAdd(reference, lines.Count))
                 {
-                    row.Complain("References", "each reference once", $"{reference} stands on the bill twice; the other place is {seen[reference]}.");
+                    int other = seen[reference];
+                    string cell = other < lines.Count ? lines[other].Cell : line.Cell;
+                    row.Complain("References", "each reference once", $"{reference} stands on the bill twice; the other place is {cell}.");
+                    if (other < lines.Count)
+                    {
+                        lines[other] = lines[other] with { HasComplaints = true };
+                    }
                 }
             }
 
-            lines.Add(line);
+            lines.Add(row.HasComplaints ? line with { HasComplaints = true } : line);
         }
 
         if (lines.Count == 0)

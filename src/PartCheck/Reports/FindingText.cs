@@ -20,6 +20,11 @@ internal static class FindingText
             Text = f.Text + string.Join("|", f.Missing) + string.Join(",", f.References ?? []) + string.Join(",", f.Channels ?? []),
         }).Select(g => (IReadOnlyList<Finding>)[.. g])];
 
+    /// <summary>Findings of one subject that miss the same, their rules together.</summary>
+    public static IReadOnlyList<IReadOnlyList<Finding>> GroupedByGap(IEnumerable<Finding> findings) =>
+        [.. findings.GroupBy(f => string.Join("|", [f.Channel, f.Pin, f.PartNumber, string.Join(",", f.Channels ?? []), string.Join(",", f.Missing)]))
+            .Select(g => (IReadOnlyList<Finding>)[.. g])];
+
     /// <summary>Whom it concerns: references and part number, pin, or nothing.</summary>
     public static string Subject(IReadOnlyList<Finding> group)
     {
@@ -29,7 +34,7 @@ internal static class FindingText
             return f.Pin + " (" + string.Join(", ", f.Channels ?? []) + ")";
         }
 
-        IEnumerable<string> references = f.References ?? group.Select(g => g.Reference).OfType<string>();
+        IEnumerable<string> references = f.References ?? group.Select(g => g.Reference).OfType<string>().Distinct(StringComparer.Ordinal);
         string joined = string.Join(", ", references);
         return (joined.Length > 0, f.PartNumber) switch
         {

@@ -62,8 +62,8 @@ public static class TextReport
             return;
         }
 
-        Findings(text, "Nonconforming", board.Findings.Where(f => f.Verdict == Verdict.Nonconforming));
-        Findings(text, "Not verified", board.Findings.Where(f => f.Verdict == Verdict.NotVerified));
+        Nonconforming(text, board.Findings.Where(f => f.Verdict == Verdict.Nonconforming));
+        NotVerified(text, board.Findings.Where(f => f.Verdict == Verdict.NotVerified));
         Channels(text, board);
         Conforming(text, board);
         Columns80.Wrap(text, string.Empty, "Rules judged: " + string.Join(", ", board.Rules) + ".", 2);
@@ -77,10 +77,10 @@ public static class TextReport
         Columns80.Wrap(text, string.Empty, string.Create(CultureInfo.InvariantCulture, $"Corners solved: {solved}; given up: {gaveUp}."), 2);
         text.Append('\n');
         Listed(text, "Assumed", board.Assumed.Select(a => $"{a.What} of {a.Of}: {a.Value}" + Used(a, board)));
-        Listed(text, "Advice", board.Advice.Select(a => string.Join(" ", new[] { a.Channel, a.Reference }.OfType<string>().Append(a.Text))));
+        Listed(text, "Advice", board.Advice.Select(a => Joined(" ", a.Channel, a.Reference) is { Length: > 0 } whom ? whom + ": " + a.Text : a.Text));
     }
 
-    private static void Findings(StringBuilder text, string title, IEnumerable<Finding> findings)
+    private static void Nonconforming(StringBuilder text, IEnumerable<Finding> findings)
     {
         IReadOnlyList<IReadOnlyList<Finding>> groups = FindingText.Grouped(findings);
         if (groups.Count == 0)
@@ -88,20 +88,17 @@ public static class TextReport
             return;
         }
 
-        text.Append(title).Append('\n');
+        text.Append("Nonconforming\n");
         foreach (IReadOnlyList<Finding> group in groups)
         {
             Finding f = group[0];
-            string head = string.Join(" ", new[] { f.Channel, f.Rule, FindingText.Subject(group) }.Where(s => !string.IsNullOrEmpty(s)));
-            string numbers = FindingText.Numbers(f);
-            string said = string.Join("; ", new[] { f.Verdict == Verdict.NotVerified ? "missing " + string.Join(", ", f.Missing) : numbers, f.Text }.Where(s => !string.IsNullOrEmpty(s)));
-            Columns80.Wrap(text, "  ", head + ": " + said, 4);
-            if (f.Verdict == Verdict.Nonconforming && FindingText.Corner(f) is { Length: > 0 } corner)
+            Columns80.Wrap(text, "  ", Head(group) + ": " + Joined("; ", FindingText.Numbers(f), f.Text), 4);
+            if (FindingText.Corner(f) is { Length: > 0 } corner)
             {
                 Columns80.Wrap(text, "    ", corner, 6);
             }
 
-            if (f.Verdict == Verdict.Nonconforming && f.Cell is not null)
+            if (f.Cell is not null)
             {
                 Columns80.Wrap(text, "    ", $"limit from {f.Cell}; {f.Source}", 6);
             }
@@ -109,6 +106,29 @@ public static class TextReport
 
         text.Append('\n');
     }
+
+    private static void NotVerified(StringBuilder text, IEnumerable<Finding> findings)
+    {
+        IReadOnlyList<IReadOnlyList<Finding>> groups = FindingText.GroupedByGap(findings);
+        if (groups.Count == 0)
+        {
+            return;
+        }
+
+        text.Append("Not verified\n");
+        foreach (IReadOnlyList<Finding> group in groups)
+        {
+            string rules = string.Join(", ", group.Select(f => f.Rule).Distinct(StringComparer.Ordinal));
+            string head = Joined(" ", group[0].Channel, rules, FindingText.Subject(group));
+            Columns80.Wrap(text, "  ", head + ": missing " + Joined("; ", string.Join(", ", group[0].Missing), group[0].Text), 4);
+        }
+
+        text.Append('\n');
+    }
+
+    private static string Head(IReadOnlyList<Finding> group) => Joined(" ", group[0].Channel, group[0].Rule, FindingText.Subject(group));
+
+    private static string Joined(string between, params string?[] parts) => string.Join(between, parts.Where(p => !string.IsNullOrEmpty(p)));
 
     private static void Channels(StringBuilder text, BoardReport board)
     {
@@ -147,8 +167,7 @@ public static class TextReport
         foreach (IReadOnlyList<Finding> group in FindingText.Grouped(conforming.Where(f => f.StressRatio is not null)).Take(Closest))
         {
             Finding f = group[0];
-            string head = string.Join(" ", new[] { f.Channel, f.Rule, FindingText.Subject(group) }.Where(s => !string.IsNullOrEmpty(s)));
-            Columns80.Wrap(text, "  ", head + ": " + FindingText.Numbers(f), 4);
+            Columns80.Wrap(text, "  ", Head(group) + ": " + FindingText.Numbers(f), 4);
         }
 
         text.Append('\n');

@@ -63,6 +63,11 @@ public static class BillRule
         double? actual = null;
         double? allowed = null;
         string? unit = null;
+        if (line.HasComplaints)
+        {
+            missing.Add("a bill line without complaints");
+        }
+
         if (line.Quantity is { } quantity && quantity != line.References.Count)
         {
             wrong.Add(string.Create(CultureInfo.InvariantCulture, $"the quantity is {quantity}, the references are {line.References.Count}"));
