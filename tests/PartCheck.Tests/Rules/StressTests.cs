@@ -1,0 +1,67 @@
+using PartCheck.Rules;
+using Xunit;
+
+namespace PartCheck.Tests.Rules;
+
+public class StressTests
+{
+    [Theory]
+    [InlineData(0, 0, 0.0, Verdict.Conforms)]
+    [InlineData(1, 0, null, Verdict.Nonconforming)]
+    [InlineData(1, -5, null, Verdict.Nonconforming)]
+    [InlineData(0, -5, 0.0, Verdict.Conforms)]
+    [InlineData(3, 3, 1.0, Verdict.Conforms)]
+    [InlineData(double.NaN, 3, null, Verdict.NotVerified)]
+    [InlineData(3, double.NaN, null, Verdict.NotVerified)]
+    [InlineData(3, double.PositiveInfinity, null, Verdict.NotVerified)]
+    public void AtMostAtTheEdges(double actual, double allowed, double? ratio, Verdict verdict)
+    {
+        Stress stress = Stress.AtMostOf(actual, allowed);
+        Assert.Equal(ratio, stress.Ratio);
+        Assert.Equal(verdict, stress.Verdict);
+    }
+
+    [Theory]
+    [InlineData(0, 1, null, Verdict.Nonconforming)]
+    [InlineData(-1, 1, null, Verdict.Nonconforming)]
+    [InlineData(0, 0, 0.0, Verdict.Conforms)]
+    [InlineData(2, 1, 0.5, Verdict.Conforms)]
+    public void AtLeastAtTheEdges(double actual, double required, double? ratio, Verdict verdict)
+    {
+        Stress stress = Stress.AtLeastOf(actual, required);
+        Assert.Equal(ratio, stress.Ratio);
+        Assert.Equal(verdict, stress.Verdict);
+    }
+
+    [Fact]
+    public void TheDefaultIsNotVerified() => Assert.Equal(Verdict.NotVerified, default(Stress).Verdict);
+
+    [Fact]
+    public void NoRatioAndNonconformingIsWorst()
+    {
+        Stress none = Stress.AtMostOf(1, 0);
+        Stress high = Stress.AtMostOf(9, 1);
+        Assert.True(none.Worse(high) > 0);
+        Assert.True(high.Worse(Stress.AtMostOf(1, 2)) > 0);
+    }
+}
+
+public class RuleBookTests
+{
+    /// <summary>The approved list: identifiers are stable, reports and concessions quote them.</summary>
+    [Fact]
+    public void TheRulesJudgedAreTheApprovedOnes() => Assert.Equal(
+        ["vce", "vcb", "ic", "power", "junction", "r-power", "r-voltage", "current", "headroom", "drive", "pin-current", "bill"],
+        RuleBook.Judged);
+
+    [Fact]
+    public void WhatIsNotJudgedIsSaid() => Assert.Equal(["soa", "stability", "sharing", "r-film", "off"], RuleBook.NotJudged);
+
+    [Fact]
+    public void EveryRuleHasATitleAUnitAndASource() => Assert.All(RuleBook.StateRules, rule =>
+    {
+        Assert.NotEmpty(rule.Title);
+        Assert.NotEmpty(rule.Unit);
+        Assert.NotEmpty(rule.Source);
+    });
+}

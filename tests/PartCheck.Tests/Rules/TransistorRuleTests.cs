@@ -1,0 +1,210 @@
+using PartCheck.Channels;
+using PartCheck.OperatingPoints;
+using PartCheck.Parts;
+using PartCheck.Quantities;
+using PartCheck.Rules;
+using PartCheck.Tests.OperatingPoints;
+using Xunit;
+
+namespace PartCheck.Tests.Rules;
+
+public class VceRuleTests : RuleTests
+{
+    private static readonly VceRule Rule = new();
+
+    // The sample channel's Supply peak is 28 V.
+    protected override Stress Below() => Judge(45);
+
+    protected override Stress AtTheLimit() => States.Judge(Rule, States.Of(States.Pass(With(35))), States.Row("vce", 0.8));
+
+    protected override Stress Above() => States.Judge(Rule, States.Of(States.Pass(With(34))), States.Row("vce", 0.8));
+
+    protected override Stress WithoutTheRating() => States.Judge(Rule, States.Of(States.Pass(SampleChannel.Transistor() with { Vceo = null })));
+
+    [Fact]
+    public void TheControlStandsUnderTheBaseNodeBoundedByThePin()
+    {
+        TransistorPoint control = States.Pass(With(5), Role.Control);
+        Assert.Equal(0.26, States.Judge(Rule, States.Of(control, baseNode: 1.3)).Ratio!.Value, 9);
+        Assert.Equal(0.24, States.Judge(Rule, States.Of(control, baseNode: 1.3, pinLevel: 1.2)).Ratio!.Value, 9);
+    }
+
+    private static Stress Judge(double rating) => States.Judge(Rule, States.Of(States.Pass(With(rating))));
+
+    private static Transistor With(double rating) => SampleChannel.Transistor() with { Vceo = States.Cite(Voltage.FromVolts(rating)) };
+}
+
+public class VcbRuleTests : RuleTests
+{
+    private static readonly VcbRule Rule = new();
+
+    // On: 20 V in the corner, 28 V peak over 25.2 V supply: 22.8 V.
+    protected override Stress Below() => Judge(25);
+
+    protected override Stress AtTheLimit() => States.Judge(Rule, States.Of(States.Pass(With(28.5), vcb: 20)), States.Row("vcb", 0.8));
+
+    protected override Stress Above() => Judge(22.7);
+
+    protected override Stress WithoutTheRating() => States.Judge(Rule, States.Of(States.Pass(SampleChannel.Transistor() with { Vcbo = null })));
+
+    [Fact]
+    public void WithThePinLowTheWholePeakStandsOnTheCollector()
+    {
+        Stress stress = States.Judge(Rule, States.Of(States.Pass(With(56)), state: ChannelState.Off, baseNode: 0));
+        Assert.Equal(28, stress.Actual, 9);
+        Assert.Equal(0.5, stress.Ratio!.Value, 9);
+    }
+
+    private static Stress Judge(double rating) => States.Judge(Rule, States.Of(States.Pass(With(rating), vcb: 20)));
+
+    private static Transistor With(double rating) => SampleChannel.Transistor() with { Vcbo = States.Cite(Voltage.FromVolts(rating)) };
+}
+
+public class IcRuleTests : RuleTests
+{
+    private static readonly IcRule Rule = new();
+
+    // Rating 100 mA, factor 0.75: 75 mA.
+    protected override Stress Below() => Judge(0.05);
+
+    protected override Stress AtTheLimit() => Judge(0.075);
+
+    protected override Stress Above() => Judge(0.076);
+
+    protected override Stress WithoutTheRating() => States.Judge(Rule, States.Of(States.Pass(SampleChannel.Transistor() with { Ic = null })));
+
+    private static Stress Judge(double ic) => States.Judge(Rule, States.Of(States.Pass(ic: ic)), States.Row("ic", 0.75));
+}
+
+public class PowerRuleTests : RuleTests
+{
+    private static readonly PowerRule Rule = new();
+
+    // MIL-PRF-19500/255 1.3, 2N2222A: PT 0.50 W, 3.08 mW/K above TA 37.5 degC, RthJA 325 K/W, TJ 200 degC.
+    private static readonly Transistor Slash255 = SampleChannel.Transistor() with
+    {
+        Power = States.Cite(Power.FromWatts(0.5)),
+        PowerFlatTo = States.Cite(Temperature.FromCelsius(37.5)),
+        PowerSlope = States.Cite(3.08e-3),
+        RthJa = States.Cite(ThermalResistance.FromKelvinsPerWatt(325)),
+        TjMax = States.Cite(Temperature.FromCelsius(200)),
+    };
+
+    protected override Stress Below() => Judge(Slash255, 0.3, 100);
+
+    protected override Stress AtTheLimit() => Judge(Slash255, 0.5, 37.5);
+
+    protected override Stress Above() => Judge(Slash255, 0.31, 100);
+
+    protected override Stress WithoutTheRating() => Judge(Slash255 with { Power = null }, 0.1, 25);
+
+    // 500 mW - 3.08 mW/K x 62.5 K = 307.5 mW, just under (200 - 100)/325 = 307.7 mW.
+    [Theory]
+    [InlineData(25, 0.5)]
+    [InlineData(37.5, 0.5)]
+    [InlineData(100, 0.3075)]
+    [InlineData(150, 0.1535)]
+    public void SlashSheet255RatesATwoN2222AByItsLine(double celsius, double watts) => Assert.Equal(watts, Judge(Slash255, 0.01, celsius).Allowed, 4);
+
+    // The AUA of the same sheet: 0.65 W, 4.76 mW/K above 63.5 degC, 210 K/W: (200 - 150)/210 = 238.1 mW governs at 150 degC.
+    [Theory]
+    [InlineData(63.5, 0.65)]
+    [InlineData(150, 0.2381)]
+    public void SlashSheet255RatesTheSurfaceMountTypeByItsLine(double celsius, double watts)
+    {
+        Transistor aua = Slash255 with
+        {
+            Power = States.Cite(Power.FromWatts(0.65)),
+            PowerFlatTo = States.Cite(Temperature.FromCelsius(63.5)),
+            PowerSlope = States.Cite(4.76e-3),
+            RthJa = States.Cite(ThermalResistance.FromKelvinsPerWatt(210)),
+        };
+        Assert.Equal(watts, Judge(aua, 0.01, celsius).Allowed, 4);
+    }
+
+    // MIL-PRF-19500/251, 2N2219A: 0.8 W at TA 25, RthJA 195 K/W, TJ 200; corner 200 - 0.8 x 195 = 44 degC; 100/195 = 512.8 mW at 100 degC.
+    [Fact]
+    public void SlashSheet251HasNoSlopeAndTheThermalResistanceGoverns()
+    {
+        Transistor part = Slash255 with
+        {
+            Power = States.Cite(Power.FromWatts(0.8)),
+            PowerFlatTo = States.Cite(Temperature.FromCelsius(44)),
+            PowerSlope = null,
+            RthJa = States.Cite(ThermalResistance.FromKelvinsPerWatt(195)),
+        };
+        Assert.Equal(0.8, Judge(part, 0.01, 44).Allowed, 4);
+        Assert.Equal(0.5128, Judge(part, 0.01, 100).Allowed, 4);
+    }
+
+    [Fact]
+    public void WithoutSlopeAndMaximumNothingIsKnownAboveTheFlatPart()
+    {
+        Transistor part = Slash255 with { PowerSlope = null, TjMax = null };
+        Assert.Equal(Verdict.NotVerified, Judge(part, 0.01, 60).Verdict);
+        Assert.Equal("Tj max of TQ-31", Judge(part, 0.01, 60).Missing);
+    }
+
+    [Fact]
+    public void AnAmbientAtTheMaximumAllowsNothing()
+    {
+        Stress stress = Judge(Slash255, 0.01, 210);
+        Assert.Equal(Verdict.Nonconforming, stress.Verdict);
+        Assert.Null(stress.Ratio);
+    }
+
+    [Fact]
+    public void WithoutThermalDataAnOverloadIsStillNonconforming()
+    {
+        Transistor part = Slash255 with { RthJa = null, TjMax = null, PowerSlope = States.Cite(3.08e-3) };
+        Assert.Equal(Verdict.Nonconforming, Judge(part, 0.6, 25).Verdict);
+        Assert.Equal(Verdict.NotVerified, Judge(part, 0.1, 25).Verdict);
+    }
+
+    private static Stress Judge(Transistor part, double watts, double celsius) =>
+        States.Judge(Rule, States.Of(States.Pass(part, power: watts), celsius: celsius));
+}
+
+public class JunctionRuleTests : RuleTests
+{
+    private static readonly JunctionRule Rule = new();
+
+    // Sample: Tj max 150 degC, 25 K under it: 125 degC; ambient 25 degC.
+    protected override Stress Below() => Judge(100);
+
+    protected override Stress AtTheLimit() => Judge(125);
+
+    protected override Stress Above() => Judge(126);
+
+    protected override Stress WithoutTheRating() => States.Judge(Rule, States.Of(States.Pass(SampleChannel.Transistor() with { TjMax = null })));
+
+    // NASA EEE-INST-002 (May 2003), S1 Table 4 and note 2: 0.80 Tj max, at most 125 degC, at most Tj max - 40 K.
+    [Theory]
+    [InlineData(200, 125)]
+    [InlineData(175, 125)]
+    [InlineData(150, 110)]
+    [InlineData(125, 85)]
+    public void TheLowestOfFactorOffsetAndCapCounts(double maximum, double allowed) =>
+        Assert.Equal(allowed, JunctionRule.Allowed(Temperature.FromCelsius(maximum), States.Row("junction", 0.8, 40, 125)) - 273.15, 9);
+
+    [Fact]
+    public void TheRatioIsOfTheRiseOverAmbient() => Assert.Equal(0.75, Judge(100).Ratio!.Value, 9);
+
+    [Fact]
+    public void AJunctionThatRanAwayIsNonconformingAtLeast()
+    {
+        Stress stress = States.Judge(Rule, States.Of(States.Pass(tj: 200, held: true)));
+        Assert.Equal(Verdict.Nonconforming, stress.Verdict);
+        Assert.True(stress.AtLeast);
+    }
+
+    [Fact]
+    public void AnAmbientAtTheAllowedTemperatureHasNoRatio()
+    {
+        Stress stress = States.Judge(Rule, States.Of(States.Pass(tj: 130), celsius: 125), States.Row("junction", 1, 25));
+        Assert.Equal(Verdict.Nonconforming, stress.Verdict);
+        Assert.Null(stress.Ratio);
+    }
+
+    private static Stress Judge(double celsius) => States.Judge(Rule, States.Of(States.Pass(tj: celsius)), States.Row("junction", 1, 25));
+}
