@@ -1,0 +1,30 @@
+using PartCheck.Bills;
+using Xunit;
+
+namespace PartCheck.Tests.Bills;
+
+public class ReferenceListTests
+{
+    [Theory]
+    [InlineData("R1, R2, R5-R8", "R1 R2 R5 R6 R7 R8")]
+    [InlineData("R5,6,7", "R5 R6 R7")]
+    [InlineData("C6-7", "C6 C7")]
+    [InlineData("R1\u2013R3", "R1 R2 R3")]
+    [InlineData("R1 - R3", "R1 R2 R3")]
+    [InlineData("Q1.1, Q1.2", "Q1.1 Q1.2")]
+    [InlineData("R1;R2 R3", "R1 R2 R3")]
+    [InlineData("R1,", "R1")]
+    [InlineData("LED1 DS2", "LED1 DS2")]
+    public void ReadsEveryUsualWayOfListing(string text, string references)
+    {
+        Assert.Null(ReferenceList.Read(text, out IReadOnlyList<string> found));
+        Assert.Equal(references.Split(' '), found);
+    }
+
+    [Theory]
+    [InlineData("R8-R5", "backwards")]
+    [InlineData("R1-C4", "keeps its letters")]
+    [InlineData("R1-R20000", "longer than 10000")]
+    public void RefusesWhatIsNoRange(string text, string reason) =>
+        Assert.Contains(reason, ReferenceList.Read(text, out _), StringComparison.Ordinal);
+}
