@@ -110,7 +110,7 @@ public static class CheckRun
             if (exists && source.Table(board, "Derating", required: false) is { } deratingSheet)
             {
                 ownDerating = DeratingReader.Read(deratingSheet, spellings, complaints);
-                derating = RunDerating();
+                derating = request.Derating is null && ownDerating.Count == 1 ? ownDerating[0] : RunDerating();
             }
 
             if (exists && source.Table(board, "Concessions", required: false) is not null)

@@ -47,7 +47,14 @@ public static class ChannelReader
                 continue;
             }
 
-            rows.Add(ReadRow(row, name, bill, pins));
+            ChannelRow read = ReadRow(row, name, bill, pins);
+            if (read.Pin is not null && rows.Find(r => Same(r.Pin, read.Pin) && r.Logic is not null && read.Logic is not null && !Same(r.Logic, read.Logic)) is { } other)
+            {
+                row.Complain("Logic", "one row of the pin table for one pin", $"The pin {read.Pin} is {read.Logic} here and {other.Logic} in channel {other.Name}.");
+                read = read with { Conditions = null };
+            }
+
+            rows.Add(read);
         }
 
         if (rows.Count == 0)

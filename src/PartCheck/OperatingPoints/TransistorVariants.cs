@@ -51,6 +51,11 @@ public sealed class TransistorVariants
             highGain = GainFactor.Constant(0);
         }
 
+        if (part.Card is null && part.Hfe?.Value.Any(p => p.Min is not null && p.Max is null) == true)
+        {
+            Assume("nominal hFE", "2 x the minimum where no maximum is given");
+        }
+
         (double minCold, double minHot, double maxCold, double maxHot) = GainExponents(part, model);
         for (int v = 0; v < 2; v++)
         {

@@ -138,7 +138,7 @@ public sealed class ChannelJudge
         {
             for (int s = 0; s <= model.Slots.Count; s++)
             {
-                if (applies[r, s] && (rules[r].Reads(state) || rules[r] is ChannelRule))
+                if (applies[r, s] && (rules[r].Reads(state) || (rules[r] is ChannelRule && state.State == ChannelState.On)))
                 {
                     into.At(r, s).Take(failed, state);
                 }

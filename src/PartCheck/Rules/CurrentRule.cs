@@ -27,13 +27,15 @@ public sealed class CurrentRule : ChannelRule
     {
         Interval window = new(channel.Conditions.CurrentWindow.Min.Amperes, channel.Conditions.CurrentWindow.Max.Amperes);
         Stress stress = Stress.Window(state.LoadCurrent, window.Min, window.Max);
-        string? missing = MissingData.Gain(state) ?? MissingData.Vbe(state) ?? MissingData.Tolerance(state) ?? MissingData.Heat(state);
+        string? missing = MissingData.Gain(state) ?? MissingData.Vbe(state) ?? MissingData.Tolerance(state);
         bool lower = state.LoadCurrent < (window.Min + window.Max) / 2;
         if (missing is null && !state.PinGuaranteed && lower)
         {
             missing = "pin level at this current";
         }
 
+        // Without thermal data the cold start alone was solved: it can refuse, but not clear.
+        missing ??= stress.Verdict == Verdict.Conforms ? MissingData.Heat(state) : null;
         return missing is null ? stress : Stress.NotVerified(missing);
     }
 

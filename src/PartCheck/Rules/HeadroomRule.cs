@@ -28,8 +28,7 @@ public sealed class HeadroomRule : ChannelRule
     /// <inheritdoc/>
     public override Stress Evaluate(SolvedState state, BoundChannel channel, in RuleRows rows)
     {
-        string? missing = MissingData.Gain(state) ?? MissingData.Heat(state)
-            ?? (state.PinGuaranteed ? null : "pin level at this current");
+        string? missing = MissingData.Gain(state) ?? (state.PinGuaranteed ? null : "pin level at this current");
         if (missing is not null)
         {
             return Stress.NotVerified(missing);
@@ -59,6 +58,7 @@ public sealed class HeadroomRule : ChannelRule
             }
         }
 
+        missing ??= MissingData.Heat(state);
         return missing is not null && worst.Verdict != Verdict.Nonconforming ? Stress.NotVerified(missing) : worst;
     }
 
