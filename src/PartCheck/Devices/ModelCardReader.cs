@@ -1,142 +1,114 @@
-using System.Text.RegularExpressions;
+using System.Globalization;
 
 namespace PartCheck.Devices;
 
 /// <summary>
-/// Reads SPICE <c>.MODEL</c> cards of NPN transistors as they are met in the wild: any case, with or without parentheses,
-/// continuation lines, comments, foreign parameters. Refuses what is not a plain NPN transistor, with the reason.
+/// Reads SPICE <c>.MODEL</c> cards of NPN transistors as they are met: any case, with or without parentheses, continued with <c>+</c>.
 /// </summary>
-public static partial class ModelCardReader
+/// <remarks>
+/// Refused with the reason: PNP, a card inside <c>.SUBCKT</c>, parameters that change the static result beyond
+/// <see cref="BipolarParameters"/>, unreadable numbers, names one slip away from a known one. Charge, time and noise parameters are
+/// skipped silently, foreign ones with a note.
+/// </remarks>
+public static class ModelCardReader
 {
-    /// <summary>Reads a card.</summary>
-    /// <param name="text">One or several cards.</param>
-    /// <param name="name">Which card; null: the only one.</param>
+    /// <summary>Reads one card.</summary>
+    /// <param name="text">The card's text or a whole file.</param>
+    /// <param name="name">Name of the card wanted, in any case; null: the text's only transistor card.</param>
+    /// <returns>The card, or the reasons why there is none; never both.</returns>
     public static ModelCardResult Read(string text, string? name)
     {
         ArgumentNullException.ThrowIfNull(text);
-        List<string> lines = Joined(text);
-        int depth = 0;
-        List<(string Name, string Body, bool Inside)> cards = [];
-        foreach (string line in lines)
-        {
-            if (line.StartsWith(".subckt", StringComparison.OrdinalIgnoreCase))
-            {
-                depth++;
-            }
-            else if (line.StartsWith(".ends", StringComparison.OrdinalIgnoreCase))
-            {
-                depth = Math.Max(0, depth - 1);
-            }
-            else if (Header().Match(line) is { Success: true } header)
-            {
-                cards.Add((header.Groups["name"].Value, header.Groups["body"].Value, depth > 0));
-            }
-        }
-
-        if (cards.Count == 0)
-        {
-            return Refuse("There is no .MODEL card in the text.");
-        }
-
-        List<(string Name, string Body, bool Inside)> wanted = name is null
-            ? cards
-            : [.. cards.Where(c => string.Equals(c.Name, name, StringComparison.OrdinalIgnoreCase))];
-        if (wanted.Count == 0)
-        {
-            return Refuse($"There is no card {name}: the cards are {string.Join(", ", cards.Select(c => c.Name))}.");
-        }
-
-        if (wanted.Count > 1)
-        {
-            return Refuse(name is null
-                ? $"There are several cards, {string.Join(", ", cards.Select(c => c.Name))}: name one."
-                : $"The card {name} stands there {wanted.Count} times: it is not clear which is meant.");
-        }
-
-        (string card, string body, bool inside) = wanted[0];
-        return inside
-            ? Refuse($"The card {card} stands inside a .SUBCKT: the part is more than one transistor.")
-            : One(card, body);
+        ModelCardText cards = ModelCardText.Of(text);
+        List<string> errors = [];
+        List<string> notes = [];
+        ModelStatement? chosen = Choose(cards, name, errors, notes);
+        return chosen is null ? new ModelCardResult(null, errors) : ModelCardParameters.Read(chosen, notes);
     }
 
-    private static ModelCardResult One(string name, string body)
+    private static ModelStatement? Choose(ModelCardText cards, string? name, List<string> errors, List<string> notes)
     {
-        Match type = TypeWord().Match(body);
-        if (!type.Success)
+        IReadOnlyList<ModelStatement> all = cards.Statements;
+        List<ModelStatement> found = name is null
+            ? OnlyTransistors(all)
+            : [.. all.Where(s => string.Equals(s.Name, name, StringComparison.OrdinalIgnoreCase))];
+        if (found.Count == 0)
         {
-            return Refuse($"The card {name} has no type: NPN is wanted.");
+            errors.Add(NotFound(cards, name));
+            return null;
         }
 
-        string kind = type.Groups["type"].Value.ToUpperInvariant();
-        if (kind != "NPN")
+        if (found.Select(s => s.Name).Distinct(StringComparer.OrdinalIgnoreCase).Count() > 1)
         {
-            return Refuse(kind == "PNP"
-                ? $"The card {name} is a PNP transistor: it does not fit a low-side sink."
-                : $"The card {name} is of type {kind}: NPN is wanted.");
+            errors.Add($"There are several cards, {Names(found)}: name one.");
+            return null;
         }
 
-        CardParameters parameters = new(name);
-        string rest = Spaces().Replace(type.Groups["rest"].Value.Replace('(', ' ').Replace(')', ' ').Replace(',', ' '), " ").Trim();
-        rest = AroundEquals().Replace(rest, "=");
-        foreach (string item in rest.Split(' ', StringSplitOptions.RemoveEmptyEntries))
+        if (found.Any(s => s != found[0] && !SameCard(s, found[0])))
         {
-            int equals = item.IndexOf('=', StringComparison.Ordinal);
-            if (equals <= 0 || equals == item.Length - 1)
-            {
-                parameters.Stray(item);
-            }
-            else
-            {
-                parameters.Take(item[..equals], item[(equals + 1)..]);
-            }
+            string lines = string.Join(", ", found.Select(s => s.Line.ToString(CultureInfo.InvariantCulture)));
+            errors.Add($"The card {found[0].Name} stands in the text more than once, and differs (lines {lines}): it is not clear which is meant.");
+            return null;
         }
 
-        return parameters.Result();
+        if (found.Count > 1)
+        {
+            notes.Add($"card {found[0].Name} stands in the text more than once, each time the same");
+        }
+
+        return Fits(found[0], errors) ? found[0] : null;
     }
 
-    /// <summary>Lines without comments, continuation lines joined.</summary>
-    private static List<string> Joined(string text)
+    private static bool Fits(ModelStatement card, List<string> errors)
     {
-        List<string> lines = [];
-        foreach (string raw in text.Split(['\n', '\r'], StringSplitOptions.RemoveEmptyEntries))
+        if (card.Subcircuit is string subcircuit)
         {
-            string line = Tail().Replace(raw, string.Empty).Trim();
-            if (line.Length == 0 || line[0] == '*')
-            {
-                continue;
-            }
-
-            if (line[0] == '+' && lines.Count > 0)
-            {
-                lines[^1] += " " + line[1..];
-            }
-            else if (line == ")" && lines.Count > 0)
-            {
-                lines[^1] += " )";
-            }
-            else
-            {
-                lines.Add(line);
-            }
+            errors.Add($"The card {card.Name} stands inside .SUBCKT {subcircuit}: the part (a Darlington, one with built-in resistors) is more "
+                + "than one transistor.");
+        }
+        else if (card.Type.Equals("PNP", StringComparison.OrdinalIgnoreCase) || card.Type.Equals("LPNP", StringComparison.OrdinalIgnoreCase))
+        {
+            errors.Add($"The card {card.Name} is a PNP transistor: it does not fit a low-side sink.");
+        }
+        else if (!card.Type.Equals("NPN", StringComparison.OrdinalIgnoreCase))
+        {
+            errors.Add(card.Type.Length == 0
+                ? "The .MODEL line ends before its type: .MODEL name NPN(...) is wanted."
+                : $"The card {card.Name} is of type {card.Type}: NPN is wanted.");
         }
 
-        return lines;
+        return errors.Count == 0;
     }
 
-    private static ModelCardResult Refuse(string reason) => new(null, [reason]);
+    /// <summary>Cards of bipolar transistors; where there is none, every card, so that the reason can name it.</summary>
+    private static List<ModelStatement> OnlyTransistors(IReadOnlyList<ModelStatement> all)
+    {
+        List<ModelStatement> transistors =
+            [.. all.Where(s => s.Type.EndsWith("NPN", StringComparison.OrdinalIgnoreCase) || s.Type.EndsWith("PNP", StringComparison.OrdinalIgnoreCase))];
+        return transistors.Count > 0 ? transistors : [.. all];
+    }
 
-    [GeneratedRegex(@"[;$].*$")]
-    private static partial Regex Tail();
+    private static bool SameCard(ModelStatement a, ModelStatement b) =>
+        string.Equals(a.Type, b.Type, StringComparison.OrdinalIgnoreCase)
+        && a.Subcircuit is null == b.Subcircuit is null
+        && a.Stray.Count + b.Stray.Count == 0
+        && Words(a.Body).SequenceEqual(Words(b.Body), StringComparer.OrdinalIgnoreCase);
 
-    [GeneratedRegex(@"^\.model\s+(?<name>\S+)\s+(?<body>.*)$", RegexOptions.IgnoreCase | RegexOptions.Singleline)]
-    private static partial Regex Header();
+    private static string[] Words(string body) =>
+        body.Replace("=", " = ", StringComparison.Ordinal).Split((char[]?)null, StringSplitOptions.RemoveEmptyEntries);
 
-    [GeneratedRegex(@"^\s*(?<type>[A-Za-z]+)\b(?<rest>.*)$", RegexOptions.Singleline)]
-    private static partial Regex TypeWord();
+    private static string NotFound(ModelCardText cards, string? name)
+    {
+        if (name is not null && cards.Subcircuits.Contains(name, StringComparer.OrdinalIgnoreCase))
+        {
+            return $"{name} is a .SUBCKT, not a .MODEL card: the part is more than one transistor.";
+        }
 
-    [GeneratedRegex(@"\s+")]
-    private static partial Regex Spaces();
+        return cards.Statements.Count == 0
+            ? "There is no .MODEL card in the text."
+            : $"There is no card {name}: the text holds {Names(cards.Statements)}.";
+    }
 
-    [GeneratedRegex(@"\s*=\s*")]
-    private static partial Regex AroundEquals();
+    private static string Names(IReadOnlyList<ModelStatement> cards) =>
+        string.Join(", ", cards.Select(c => c.Name).Distinct(StringComparer.OrdinalIgnoreCase));
 }
