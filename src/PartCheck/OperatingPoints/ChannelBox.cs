@@ -36,9 +36,10 @@ public sealed class ChannelBox
     /// <summary>Lays out a box.</summary>
     /// <param name="model">The channel.</param>
     /// <param name="pin">Its pin.</param>
-    /// <param name="state">On or unfed.</param>
+    /// <param name="state">On, off (hottest ambient, nothing heats itself) or unfed.</param>
     /// <param name="oddClass">Leg class of the odd leg; -1: one leg only, none is odd.</param>
-    public ChannelBox(ChannelModel model, PinSource pin, ChannelState state, int oddClass)
+    /// <param name="matched">True: the odd leg's VBE is one lot's match away from the rest's, not anywhere in the window.</param>
+    public ChannelBox(ChannelModel model, PinSource pin, ChannelState state, int oddClass, bool matched = false)
     {
         ArgumentNullException.ThrowIfNull(model);
         ArgumentNullException.ThrowIfNull(pin);
@@ -47,9 +48,10 @@ public sealed class ChannelBox
         State = state;
         OddClass = oddClass;
         ChannelConditions c = model.Channel.Conditions;
-        bool on = state == ChannelState.On;
-        ambients = Ambients();
-        heats = !model.Heats ? [(0, null)]
+        bool on = state != ChannelState.Unfed;
+        bool off = state == ChannelState.Off;
+        ambients = off ? [c.Ambient.Max.Kelvins] : Ambients();
+        heats = !model.Heats || off ? [(0, null)]
             : model.CouplingGiven ? [(0, null), (1, null)]
             : [(0, null), (1, 0), (1, ChannelModel.AssumedCouplingShare)];
 
@@ -62,7 +64,7 @@ public sealed class ChannelBox
         sense = When(rest && model.Sense.Any(r => r.Varies));
         averaging = When(rest && model.Averaging.Any(r => r is { Varies: true }));
         bool odd = oddClass >= 0;
-        oddVbe = When(odd && model.Pass[Math.Max(oddClass, 0)].VbeVaries);
+        oddVbe = matched ? [Extreme.Match] : When(odd && model.Pass[Math.Max(oddClass, 0)].VbeVaries);
         oddHfe = When(odd && model.Pass[Math.Max(oddClass, 0)].GainVaries);
         oddSense = When(odd && model.Sense[Math.Max(oddClass, 0)].Varies);
         oddAveraging = When(odd && model.Averaging[Math.Max(oddClass, 0)] is { Varies: true });
@@ -124,8 +126,8 @@ public sealed class ChannelBox
             Supply = supply,
             LoadDrop = drop == 0 ? c.LoadDrop.Min.Volts : c.LoadDrop.Max.Volts,
             Ambient = ambient,
-            PinLevel = isStrong ? pin.StrongVoltage : pin.WeakVoltage,
-            PinResistance = isStrong ? 0 : pin.WeakResistance,
+            PinLevel = State == ChannelState.Off ? (isStrong ? 0 : pin.LowVoltage) : isStrong ? pin.StrongVoltage : pin.WeakVoltage,
+            PinResistance = isStrong ? 0 : State == ChannelState.Off ? pin.LowResistance : pin.WeakResistance,
             Heat = heat,
             Control = new TransistorCorner(cv, ch),
             Pass = new TransistorCorner(pv, ph),

@@ -18,13 +18,16 @@ internal static class CircuitAssembly
             int count = model.Classes[c].Legs.Count;
             if (c == oddClass)
             {
-                groups.Add(Group(model, c, 1, corner.OddPass, corner.OddSense, corner.OddAveraging, h, ambient));
+                BipolarDevice odd = corner.OddPass.Vbe == Extreme.Match
+                    ? model.Pass[c].Matched(corner.Pass.Vbe, corner.OddPass.Hfe)
+                    : model.Pass[c].At(corner.OddPass);
+                groups.Add(Group(model, c, 1, odd, corner.OddSense, corner.OddAveraging, h, ambient));
                 count--;
             }
 
             if (count > 0)
             {
-                groups.Add(Group(model, c, count, corner.Pass, corner.Sense, corner.Averaging, h, ambient));
+                groups.Add(Group(model, c, count, model.Pass[c].At(corner.Pass), corner.Sense, corner.Averaging, h, ambient));
             }
         }
 
@@ -41,6 +44,9 @@ internal static class CircuitAssembly
             ControlHeat = Heat(model.Control.Part, model.ControlRth, h, ambient),
             Legs = groups,
             HottestLegCoupling = h * (corner.AssumedCoupling ?? 0),
+            BaseLeakage = state == ChannelState.Off
+                ? model.Channel.Legs.Sum(l => l.PassPart.IcboMax?.Value.Amperes ?? 0)
+                : 0,
         };
     }
 
@@ -89,11 +95,11 @@ internal static class CircuitAssembly
     }
 
     private static LegGroup Group(
-        ChannelModel model, int c, int count, TransistorCorner pass, Extreme sense, Extreme averaging, double h, double ambient)
+        ChannelModel model, int c, int count, BipolarDevice pass, Extreme sense, Extreme averaging, double h, double ambient)
     {
         Leg leg = model.Classes[c].First;
         return new LegGroup(
-            count, model.Pass[c].At(pass), model.Sense[c].At(sense, ambient), model.Averaging[c]?.At(averaging, ambient) ?? 0,
+            count, pass, model.Sense[c].At(sense, ambient), model.Averaging[c]?.At(averaging, ambient) ?? 0,
             leg.Sensed, Heat(leg.PassPart, model.PassRth[c], h, ambient), model.CouplingGiven ? h * leg.PassPart.Coupling!.Value.KelvinsPerWatt : 0);
     }
 

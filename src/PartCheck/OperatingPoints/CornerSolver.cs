@@ -49,7 +49,7 @@ public sealed class CornerSolver
         }
 
         DriveEdge? drive = null;
-        if (box.State == ChannelState.On && at.Corner.Heat == 0)
+        if (box.State == ChannelState.On && at.Corner.Heat == 0 && at.Corner.OddPass.Vbe != Extreme.Match)
         {
             if (edgeOf != index / box.InnerCount)
             {

@@ -11,6 +11,12 @@ namespace PartCheck.OperatingPoints;
 public readonly record struct SolvedTransistor(
     double Ic, double Ib, double BaseVoltage, double CollectorVoltage, double EmitterVoltage, double Tj, bool Held)
 {
+    /// <summary>Slope of VBE with temperature at constant collector current [V/K].</summary>
+    public double VbeSlope { get; init; }
+
+    /// <summary>Effective base resistance [ohm].</summary>
+    public double BaseResistance { get; init; }
+
     /// <summary>Collector-emitter voltage [V].</summary>
     public double Vce => CollectorVoltage - EmitterVoltage;
 

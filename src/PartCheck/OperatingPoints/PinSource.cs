@@ -21,6 +21,9 @@ public sealed record PinSource
         double supplyMax = pin.Supply.Max.Volts;
         GuaranteedCurrent = pin.High.Max(h => h.Current.Amperes);
         StrongVoltage = supplyMax;
+        LowGuaranteed = pin.LowMax is not null && (pin.Output == PinOutput.Ttl || pin.LowCurrent is not null);
+        LowVoltage = pin.Output == PinOutput.Ttl ? pin.LowMax?.Volts ?? 0 : 0;
+        LowResistance = pin is { Output: PinOutput.Cmos, LowMax: { } low, LowCurrent: { } lowCurrent } ? low.Volts / lowCurrent.Amperes : 0;
         if (pin.Output == PinOutput.Cmos)
         {
             WeakResistance = pin.High.Min(h => Math.Max(0, supplyMin - h.Min.Volts) / h.Current.Amperes);
@@ -52,6 +55,15 @@ public sealed record PinSource
 
     /// <summary>Current up to which the weak level is guaranteed, all feeds together [A].</summary>
     public double GuaranteedCurrent { get; }
+
+    /// <summary>True where the row says how low the pin goes.</summary>
+    public bool LowGuaranteed { get; }
+
+    /// <summary>Highest source voltage with the pin low: <c>ttl</c> Low max, <c>cmos</c> 0 [V].</summary>
+    public double LowVoltage { get; }
+
+    /// <summary>Highest resistance to ground with the pin low: <c>cmos</c> Low max/Low current, <c>ttl</c> 0 [ohm].</summary>
+    public double LowResistance { get; }
 
     /// <summary>Highest current that other feeds draw from the same pin [A].</summary>
     public double Others { get; }

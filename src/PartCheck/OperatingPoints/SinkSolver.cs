@@ -376,7 +376,11 @@ public sealed class SinkSolver
             ref readonly Devices.BipolarCurrents q = ref equations.Currents(g);
             legs[g - 1] = new SolvedTransistor(
                 q.Ic, q.Ib, equations.BaseVoltage, equations.CollectorVoltage, equations.EmitterVoltage(g),
-                equations.Temperature(g, x), !double.IsNaN(held[g]));
+                equations.Temperature(g, x), !double.IsNaN(held[g]))
+            {
+                VbeSlope = q.DIc.Vbe > 0 ? -q.DIc.T / q.DIc.Vbe : 0,
+                BaseResistance = q.Rbb,
+            };
             averaging[g - 1] = equations.AveragingCurrent(g);
         }
 

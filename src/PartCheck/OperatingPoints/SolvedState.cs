@@ -27,6 +27,9 @@ public enum Extreme
 
     /// <summary>The largest.</summary>
     Max,
+
+    /// <summary>The odd leg's VBE, one lot's match away from the rest's end of the window.</summary>
+    Match,
 }
 
 /// <summary>Ends of a transistor's two windows.</summary>
@@ -99,7 +102,35 @@ public sealed record Corner
 /// <param name="Tj">Junction temperature [K].</param>
 /// <param name="Held">True where Tj ran away and is held at its bound: it is "at least" this.</param>
 public readonly record struct TransistorPoint(
-    int Slot, Role Role, Transistor Part, double Vce, double Vcb, double Ic, double Ib, double Power, double Tj, bool Held);
+    int Slot, Role Role, Transistor Part, double Vce, double Vcb, double Ic, double Ib, double Power, double Tj, bool Held)
+{
+    /// <summary>Slope of VBE with temperature at constant collector current, of the solved model [V/K].</summary>
+    public double VbeSlope { get; init; }
+
+    /// <summary>Emitter resistance of the device [ohm].</summary>
+    public double EmitterResistance { get; init; }
+
+    /// <summary>Effective base resistance of the device [ohm].</summary>
+    public double BaseResistance { get; init; }
+
+    /// <summary>Ballast between this leg and the others: sense parallel averaging, sense alone where not sensed [ohm].</summary>
+    public double Ballast { get; init; }
+
+    /// <summary>Thermal resistance junction to ambient, given or assumed [K/W]; NaN: not to be had.</summary>
+    public double RthJa { get; init; }
+
+    /// <summary>Emitter voltage of a pass transistor, the voltage over its sense resistor [V].</summary>
+    public double SenseVoltage { get; init; }
+
+    /// <summary>Sense resistance of the leg in this corner and nominal [ohm].</summary>
+    public double SenseResistance { get; init; }
+
+    /// <summary>Nominal sense resistance of the leg [ohm].</summary>
+    public double NominalSense { get; init; }
+
+    /// <summary>Legs that this point stands for.</summary>
+    public int Count { get; init; }
+}
 
 /// <summary>One resistor in a solved state, SI units.</summary>
 /// <param name="Slot">Which references this point stands for.</param>

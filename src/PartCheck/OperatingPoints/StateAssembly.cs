@@ -21,7 +21,7 @@ internal static class StateAssembly
             {
                 bool odd = c == oddClass && k == 0;
                 SolvedTransistor q = point.Legs[g];
-                transistors[g] = Transistor(Slots.Pass(c), Role.Pass, model.Pass[c].Part, q);
+                transistors[g] = Leg(model, c, circuit.Legs[g], q);
                 gain &= model.Pass[c].GainHolds(q.Ic, odd ? at.Corner.OddPass.Hfe : at.Corner.Pass.Hfe);
                 AddLeg(resistors, model, c, circuit.Legs[g], q, point, g);
             }
@@ -56,7 +56,7 @@ internal static class StateAssembly
         for (int g = 0; g < circuit.Legs.Count; g++)
         {
             int c = CircuitAssembly.ClassOf(model, model.Channel.Legs[g]);
-            transistors[g] = Transistor(Slots.Pass(c), Role.Pass, model.Pass[c].Part, point.Legs[g]);
+            transistors[g] = Leg(model, c, circuit.Legs[g], point.Legs[g]);
             AddLeg(resistors, model, c, circuit.Legs[g], point.Legs[g], point, g);
         }
 
@@ -66,6 +66,7 @@ internal static class StateAssembly
         {
             State = state,
             Corner = corner,
+            Index = -1,
             BaseVoltage = point.BaseVoltage,
             ControlBaseVoltage = point.ControlBaseVoltage,
             CollectorVoltage = point.CollectorVoltage,
@@ -78,6 +79,20 @@ internal static class StateAssembly
 
     private static TransistorPoint Transistor(int slot, Role role, Transistor part, in SolvedTransistor q) =>
         new(slot, role, part, q.Vce, q.CollectorVoltage - q.BaseVoltage, q.Ic, q.Ib, q.Power, q.Tj, q.Held);
+
+    private static TransistorPoint Leg(ChannelModel model, int c, LegGroup leg, in SolvedTransistor q) =>
+        Transistor(Slots.Pass(c), Role.Pass, model.Pass[c].Part, q) with
+        {
+            VbeSlope = q.VbeSlope,
+            EmitterResistance = leg.Pass.Parameters.Re,
+            BaseResistance = q.BaseResistance,
+            Ballast = leg.Sensed ? leg.Sense * leg.Averaging / (leg.Sense + leg.Averaging) : leg.Sense,
+            RthJa = model.PassRth[c] ?? double.NaN,
+            SenseVoltage = q.EmitterVoltage,
+            SenseResistance = leg.Sense,
+            NominalSense = model.Sense[c].Nominal,
+            Count = leg.Count,
+        };
 
     private static void AddLeg(
         List<ResistorPoint> resistors, ChannelModel model, int c, LegGroup leg, in SolvedTransistor q, OperatingPoint point, int g)

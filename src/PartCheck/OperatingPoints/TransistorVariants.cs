@@ -15,6 +15,7 @@ public sealed class TransistorVariants
     private const double ColdExponent = 3.4;
     private const double HotExponent = 1.5;
     private readonly BipolarDevice[] corners = new BipolarDevice[4];
+    private readonly BipolarDevice[] matched = new BipolarDevice[4];
     private readonly List<Assumption> assumed = [];
 
     /// <summary>Builds the devices of a row.</summary>
@@ -62,8 +63,13 @@ public sealed class TransistorVariants
             for (int h = 0; h < 2; h++)
             {
                 GainFactor? gain = h == 0 ? lowGain : highGain;
-                corners[(2 * v) + h] = Shifted(
-                    model, gain, v == 0 ? min : max, at, vce, h == 0 ? minCold : maxCold, h == 0 ? minHot : maxHot);
+                double end = v == 0 ? min : max;
+                corners[(2 * v) + h] = Shifted(model, gain, end, at, vce, h == 0 ? minCold : maxCold, h == 0 ? minHot : maxHot);
+                if (part.VbeMatch is { } match)
+                {
+                    double inside = Math.Clamp(v == 0 ? end + match.Value.Volts : end - match.Value.Volts, min, max);
+                    matched[(2 * v) + h] = Shifted(model, gain, inside, at, vce, h == 0 ? minCold : maxCold, h == 0 ? minHot : maxHot);
+                }
             }
         }
 
@@ -102,6 +108,14 @@ public sealed class TransistorVariants
     /// <summary>The device at the ends of its windows (<see cref="Extreme.Typical"/>: a window without width).</summary>
     public BipolarDevice At(TransistorCorner corner) =>
         corners[(corner.Vbe == Extreme.Max ? 2 : 0) + (corner.Hfe == Extreme.Max ? 1 : 0)];
+
+    /// <summary>The device one lot's match inside an end of the VBE window.</summary>
+    /// <param name="restVbe">The end that the rest takes.</param>
+    /// <param name="hfe">End of the gain window.</param>
+    /// <exception cref="InvalidOperationException">The row gives no match.</exception>
+    public BipolarDevice Matched(Extreme restVbe, Extreme hfe) =>
+        matched[(restVbe == Extreme.Max ? 2 : 0) + (hfe == Extreme.Max ? 1 : 0)]
+        ?? throw new InvalidOperationException($"{Part.PartNumber} has no VBE match.");
 
     /// <summary>True where a collector current lies within a factor 3 of the guaranteed points of the window's end.</summary>
     public bool GainHolds(double ic, Extreme hfe)

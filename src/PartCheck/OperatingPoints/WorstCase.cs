@@ -57,13 +57,21 @@ public static class WorstCase
         return results;
     }
 
-    /// <summary>The boxes of a channel: on and unfed, each distinct odd leg.</summary>
+    /// <summary>
+    /// The boxes of a channel: on, unfed and, where its current is asked for, off; each distinct odd leg, on once more with one lot's match.
+    /// </summary>
     public static IReadOnlyList<ChannelBox> Boxes(ChannelModel model, PinSource pin)
     {
         ArgumentNullException.ThrowIfNull(model);
         List<ChannelBox> boxes = [];
-        foreach (ChannelState state in (ReadOnlySpan<ChannelState>)[ChannelState.On, ChannelState.Unfed])
+        bool offAsked = model.Channel.Conditions.OffCurrentMax is not null;
+        foreach (ChannelState state in (ReadOnlySpan<ChannelState>)[ChannelState.On, ChannelState.Unfed, ChannelState.Off])
         {
+            if (state == ChannelState.Off && !offAsked)
+            {
+                continue;
+            }
+
             if (model.Channel.Legs.Count == 1)
             {
                 boxes.Add(new ChannelBox(model, pin, state, -1));
@@ -73,6 +81,10 @@ public static class WorstCase
                 for (int c = 0; c < model.Classes.Count; c++)
                 {
                     boxes.Add(new ChannelBox(model, pin, state, c));
+                    if (state == ChannelState.On && model.Pass[c].Part.VbeMatch is not null)
+                    {
+                        boxes.Add(new ChannelBox(model, pin, state, c, matched: true));
+                    }
                 }
             }
         }

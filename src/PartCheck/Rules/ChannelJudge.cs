@@ -33,16 +33,17 @@ public sealed class ChannelJudge
             for (int s = 0; s <= slots; s++)
             {
                 Part? part = s < slots && model.Slots.Of(s) is { Count: > 0 } placements ? placements[0].Part : null;
-                applies[r, s] = (rules[r], part) switch
-                {
-                    (TransistorRule, Transistor) => true,
-                    (ResistorRule rule, ResistorPart resistor) => rule.AppliesTo(resistor),
-                    (ChannelRule, _) => s == slots,
-                    _ => false,
-                };
                 string? kind = part switch { Transistor => "npn", ResistorPart => "resistor", _ => null };
                 string? style = (part as ResistorPart)?.Style;
                 rows[r, s] = new RuleRows(derating.For(rules[r].Id, kind, style), derating.For("r-power", kind, style));
+                applies[r, s] = (rules[r], part) switch
+                {
+                    (TransistorRule rule, Transistor transistor) =>
+                        rule.AppliesTo(model.Slots.Of(s)[0].Role) && rule.Asked(transistor, model.Channel, rows[r, s]),
+                    (ResistorRule rule, ResistorPart resistor) => rule.AppliesTo(resistor),
+                    (ChannelRule rule, _) => s == slots && rule.Asked(model.Channel, rows[r, s]),
+                    _ => false,
+                };
             }
         }
     }
@@ -108,6 +109,11 @@ public sealed class ChannelJudge
                 case TransistorRule rule:
                     foreach (TransistorPoint point in (TransistorPoint[])state.Transistors)
                     {
+                        if (!applies[r, point.Slot])
+                        {
+                            continue;
+                        }
+
                         into.At(r, point.Slot).Take(rule.Evaluate(state, point, model.Channel, rows[r, point.Slot]), state);
                     }
 
@@ -123,7 +129,7 @@ public sealed class ChannelJudge
                     }
 
                     break;
-                case ChannelRule rule:
+                case ChannelRule rule when applies[r, channelSlot]:
                     into.At(r, channelSlot).Take(rule.Evaluate(state, model.Channel, rows[r, channelSlot]), state);
                     break;
             }

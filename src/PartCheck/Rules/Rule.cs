@@ -36,6 +36,12 @@ public abstract class Rule
 /// <summary>A rule that judges transistors.</summary>
 public abstract class TransistorRule : Rule
 {
+    /// <summary>True where the rule applies to the role.</summary>
+    public virtual bool AppliesTo(Role role) => true;
+
+    /// <summary>True where the table or the channel asks for it; a rule that nobody asked for is not listed.</summary>
+    public virtual bool Asked(Transistor part, BoundChannel channel, in RuleRows rows) => true;
+
     /// <summary>Judges one transistor in one state.</summary>
     public abstract Stress Evaluate(SolvedState state, in TransistorPoint point, BoundChannel channel, in RuleRows rows);
 
@@ -62,6 +68,9 @@ public abstract class ResistorRule : Rule
 /// <summary>A rule that judges the channel as a whole.</summary>
 public abstract class ChannelRule : Rule
 {
+    /// <summary>True where the table or the channel asks for it; a rule that nobody asked for is not listed.</summary>
+    public virtual bool Asked(BoundChannel channel, in RuleRows rows) => true;
+
     /// <summary>Judges the channel in one state.</summary>
     public abstract Stress Evaluate(SolvedState state, BoundChannel channel, in RuleRows rows);
 

@@ -1,0 +1,76 @@
+using PartCheck.Channels;
+using PartCheck.OperatingPoints;
+
+namespace PartCheck.Rules;
+
+/// <summary>
+/// How evenly legs share, state on: the largest I Rs (Rs nominal) of a leg over the mean of all legs, minus 1 [-]. The odd leg is off by
+/// one lot's VBE match where the table gives one, else by the whole window. Allowed: Sharing max - 1, of the channel, else of the
+/// derating table, else not asked.
+/// </summary>
+public sealed class SharingRule : ChannelRule
+{
+    /// <inheritdoc/>
+    public override string Id => "sharing";
+
+    /// <inheritdoc/>
+    public override string Title => "No leg takes more than its share";
+
+    /// <inheritdoc/>
+    public override string Unit => string.Empty;
+
+    /// <inheritdoc/>
+    public override string Source => "the channel's or the derating table's limit (common practice, no source)";
+
+    /// <inheritdoc/>
+    public override bool Asked(BoundChannel channel, in RuleRows rows) =>
+        channel is { Legs.Count: > 1 } && (channel.Conditions.SharingMax ?? rows.Own.Limit) is > 1;
+
+    /// <inheritdoc/>
+    public override bool Reads(SolvedState state)
+    {
+        if (state is not { State: ChannelState.On, Transistors.Count: > 1 })
+        {
+            return false;
+        }
+
+        // With a match given, an odd leg elsewhere in the window is of another lot.
+        bool match = state.Corner.OddPass.Vbe == Extreme.Match;
+        for (int i = 0; i < state.Transistors.Count; i++)
+        {
+            TransistorPoint point = state.Transistors[i];
+            if (point is { Role: Role.Pass, Part.VbeMatch: not null })
+            {
+                return match;
+            }
+        }
+
+        return !match;
+    }
+
+    /// <inheritdoc/>
+    public override Stress Evaluate(SolvedState state, BoundChannel channel, in RuleRows rows)
+    {
+        double sum = 0;
+        double most = 0;
+        int legs = 0;
+        for (int i = 0; i < state.Transistors.Count; i++)
+        {
+            TransistorPoint point = state.Transistors[i];
+            if (point.Role == Role.Pass)
+            {
+                double share = point.SenseVoltage / point.SenseResistance * point.NominalSense;
+                sum += point.Count * share;
+                legs += point.Count;
+                most = Math.Max(most, share);
+            }
+        }
+
+        double allowed = (channel.Conditions.SharingMax ?? rows.Own.Limit ?? 1) - 1;
+        return sum > 0 ? Stress.AtMostOf((most * legs / sum) - 1, allowed) : Stress.AtMostOf(0, allowed);
+    }
+
+    /// <inheritdoc/>
+    public override string? DecidingCell(BoundChannel channel, in Stress stress) =>
+        channel is { Conditions.SharingMax: not null } ? channel.ConditionCells.GetValueOrDefault("Sharing max") : null;
+}

@@ -1,0 +1,89 @@
+using PartCheck.Channels;
+using PartCheck.OperatingPoints;
+using PartCheck.Parts;
+using PartCheck.Quantities;
+
+namespace PartCheck.Rules;
+
+/// <summary>
+/// The pair (VCE, IC) inside the DC boundary of the safe operating area, state on, where the table gives one. Allowed current [A]:
+/// log-log between the points, the IC rating below the first, nothing above the last; times (Tmax - T)/(Tmax - 25 degC), at most 1,
+/// times factor. T is the ambient, or the case at Tj - P RthJC.
+/// </summary>
+public sealed class SoaRule : TransistorRule
+{
+    /// <inheritdoc/>
+    public override string Id => "soa";
+
+    /// <inheritdoc/>
+    public override string Title => "Collector current at the collector-emitter voltage inside the derated safe operating area";
+
+    /// <inheritdoc/>
+    public override string Unit => "A";
+
+    /// <inheritdoc/>
+    public override string Source => "DC boundary of the part's sheet, reduced linearly to zero at Tj max (common practice, no source)";
+
+    /// <inheritdoc/>
+    public override bool Asked(Transistor part, BoundChannel channel, in RuleRows rows) => part is { Soa: not null };
+
+    /// <inheritdoc/>
+    public override Stress Evaluate(SolvedState state, in TransistorPoint point, BoundChannel channel, in RuleRows rows)
+    {
+        Transistor part = point.Part;
+        if (part is not { Soa: { } boundary, TjMax: { } max })
+        {
+            return Stress.NotVerified("Tj max of " + part.PartNumber);
+        }
+
+        if (part.Ic is not { } rating)
+        {
+            return Stress.NotVerified("IC of " + part.PartNumber);
+        }
+
+        double temperature = state.Corner.Ambient;
+        if (part.SoaAtCase)
+        {
+            if (part.RthJc is not { } rth)
+            {
+                return Stress.NotVerified("RthJC of " + part.PartNumber);
+            }
+
+            temperature = point.Tj - (point.Power * rth.Value.KelvinsPerWatt);
+        }
+
+        double share = (max.Value.Kelvins - temperature) / (max.Value.Kelvins - PhysicalConstants.RoomTemperature);
+        double allowed = Boundary(boundary.Value, rating.Value.Amperes, point.Vce) * Math.Clamp(share, 0, 1) * rows.Own.Factor;
+        return Stress.AtMostOf(point.Ic, allowed);
+    }
+
+    /// <inheritdoc/>
+    public override string? DecidingCell(Transistor part) => part.Soa?.Cell;
+
+    /// <summary>The boundary's current at a voltage [A].</summary>
+    private static double Boundary(IReadOnlyList<SoaPoint> points, double rating, double vce)
+    {
+        if (points.Count == 0 || vce > points[^1].Vce.Volts)
+        {
+            return 0;
+        }
+
+        if (vce < points[0].Vce.Volts)
+        {
+            return rating;
+        }
+
+        for (int i = 1; i < points.Count; i++)
+        {
+            SoaPoint right = points[i];
+            if (vce <= right.Vce.Volts)
+            {
+                SoaPoint left = points[i - 1];
+                double share = Math.Log(vce / left.Vce.Volts) / Math.Log(right.Vce.Volts / left.Vce.Volts);
+                return left.Ic.Amperes * Math.Pow(right.Ic.Amperes / left.Ic.Amperes, share);
+            }
+        }
+
+        return points[0].Ic.Amperes;
+    }
+}

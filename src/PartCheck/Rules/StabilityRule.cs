@@ -1,0 +1,54 @@
+using PartCheck.Channels;
+using PartCheck.OperatingPoints;
+using PartCheck.Parts;
+using PartCheck.Quantities;
+
+namespace PartCheck.Rules;
+
+/// <summary>
+/// Thermal stability of legs that share one control, state on: the loop gain of the difference between two legs,
+/// S = d VCE RthJA abs(dVBE/dT) / (Rs Ra/(Rs + Ra) + RE + VT/IC + RB/hFE), at most factor [-]. The ballast is Rs parallel Ra (an
+/// unsensed leg: Rs alone); dVBE/dT is the solved model's at constant IC. A duty below 100 % counts as 100 % (d = 1).
+/// </summary>
+public sealed class StabilityRule : TransistorRule
+{
+    /// <inheritdoc/>
+    public override string Id => "stability";
+
+    /// <inheritdoc/>
+    public override string Title => "Thermal loop gain between legs below the derated edge of stability";
+
+    /// <inheritdoc/>
+    public override string Unit => string.Empty;
+
+    /// <inheritdoc/>
+    public override string Source => "S < 1 at fixed base voltage: own derivation, ballast held to ngspice (emitter ballasting, IEEE Trans. ED, 1970s)";
+
+    /// <inheritdoc/>
+    public override bool Asked(Transistor part, BoundChannel channel, in RuleRows rows) => channel is { Legs.Count: > 1 };
+
+    /// <inheritdoc/>
+    public override bool AppliesTo(Role role) => role == Role.Pass;
+
+    /// <inheritdoc/>
+    public override Stress Evaluate(SolvedState state, in TransistorPoint point, BoundChannel channel, in RuleRows rows)
+    {
+        if (double.IsNaN(point.RthJa))
+        {
+            return Stress.NotVerified("RthJA of " + point.Part.PartNumber);
+        }
+
+        if (point.Ic <= 0)
+        {
+            return Stress.AtMostOf(0, rows.Own.Factor);
+        }
+
+        double thermal = point.Vce * point.RthJa * Math.Abs(point.VbeSlope);
+        double electrical = point.Ballast + point.EmitterResistance + (PhysicalConstants.ThermalVoltage(point.Tj) / point.Ic)
+            + (point.BaseResistance * Math.Max(point.Ib, 0) / point.Ic);
+        return Stress.AtMostOf(thermal / electrical, rows.Own.Factor);
+    }
+
+    /// <inheritdoc/>
+    public override string? DecidingCell(Transistor part) => part.RthJa?.Cell;
+}
