@@ -68,9 +68,10 @@ public static class BillRule
             missing.Add("a bill line without complaints");
         }
 
-        if (line.Quantity is { } quantity && quantity != line.References.Count)
+        int placed = PlacedComponents(line);
+        if (line.Quantity is { } quantity && quantity != placed)
         {
-            wrong.Add(string.Create(CultureInfo.InvariantCulture, $"the quantity is {quantity}, the references are {line.References.Count}"));
+            wrong.Add(string.Create(CultureInfo.InvariantCulture, $"the quantity is {quantity}, the references are {placed}"));
         }
 
         IReadOnlyList<Part> rows = line.PartNumber is null ? [] : parts.Find(line.PartNumber);
@@ -120,6 +121,12 @@ public static class BillRule
             Missing = wrong.Count > 0 ? [] : missing,
         };
     }
+
+    /// <summary>Components to place: elements of one package (<c>Q1.1, Q1.2</c>) are one.</summary>
+    private static int PlacedComponents(BillLine line) => line.References
+        .Select(r => r.IndexOf('.', StringComparison.Ordinal) is > 0 and int dot ? r[..dot] : r)
+        .Distinct(StringComparer.OrdinalIgnoreCase)
+        .Count();
 
     /// <summary>Package names without regard to case, blanks and dashes.</summary>
     private static bool SamePackage(string a, string b)

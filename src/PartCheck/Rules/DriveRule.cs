@@ -38,7 +38,7 @@ public sealed class DriveRule : ChannelRule
         }
 
         double required = drive.Factor * drive.SumBaseCurrent;
-        return drive.Exists && drive.Available > 0
+        return drive.Exists && !(drive.Available <= 0)
             ? Stress.AtLeastOf(drive.Available, required)
             : new Stress(drive.Exists ? drive.Available : double.NaN, drive.Exists ? required : double.NaN, null, Verdict.Nonconforming);
     }

@@ -39,7 +39,10 @@ public sealed class JunctionRule : TransistorRule
     {
         if (point.Part.TjMax is not { } max)
         {
-            return Stress.NotVerified("Tj max of " + point.Part.PartNumber);
+            // A junction that ran away broke any limit there may be.
+            return point.Held
+                ? new Stress(point.Tj, double.NaN, null, Verdict.Nonconforming, AtLeast: true)
+                : Stress.NotVerified("Tj max of " + point.Part.PartNumber);
         }
 
         double allowed = Allowed(max.Value, rows.Own);

@@ -30,28 +30,22 @@ internal static class MissingData
     {
         foreach (TransistorPoint point in Points(state))
         {
-            Transistor part = point.Part;
-            bool given = false;
-            foreach (HfePoint p in part.Hfe?.Value ?? [])
+            if (point.Part.Card is null && !GivesGain(point.Part.Hfe?.Value))
             {
-                given |= p.Min is not null;
-            }
-
-            if (!given && part.Card is null)
-            {
-                return "hFE min of " + part.PartNumber;
+                return "hFE min of " + point.Part.PartNumber;
             }
         }
 
         return state.GainGuaranteed ? null : "hFE points near the leg's current";
     }
 
-    /// <summary>A base-emitter voltage.</summary>
+    /// <summary>A base-emitter voltage: a typical value or both ends of the window; one end alone leaves the other assumed.</summary>
     public static string? Vbe(SolvedState state)
     {
         foreach (TransistorPoint point in Points(state))
         {
-            if (point.Part.Vbe is null && point.Part.Card is null)
+            bool given = point.Part.Vbe?.Value is { Typ: not null } or { Min: not null, Max: not null };
+            if (!given && point.Part.Card is null)
             {
                 return "VBE of " + point.Part.PartNumber;
             }
@@ -73,6 +67,20 @@ internal static class MissingData
         }
 
         return null;
+    }
+
+    // By index: this runs for every corner, and an enumerator of an interface is an allocation.
+    private static bool GivesGain(IReadOnlyList<HfePoint>? points)
+    {
+        for (int i = 0; i < points?.Count; i++)
+        {
+            if (points[i].Min is not null)
+            {
+                return true;
+            }
+        }
+
+        return false;
     }
 
     private static TransistorPoint[] Points(SolvedState state) => (TransistorPoint[])state.Transistors;

@@ -6,7 +6,8 @@ namespace PartCheck.Rules;
 
 /// <summary>
 /// Dissipation, state on, at the ambient where the ratio is worst. Allowed at ambient T:
-/// factor x min(Power, Power - slope (T - flat), (Tmax - T)/RthJA) [W]; slope from (Tmax - flat) where the table gives none.
+/// factor x min(Power, Power - slope (T - flat), (Tmax - T)/RthJA) [W]; slope from (Tmax - flat) where the table gives none;
+/// nothing from Tmax up, whatever the slope says.
 /// MIL-PRF-19500/255 1.3 states its ratings so: flat at PT, then a line to zero at TJ maximum.
 /// </summary>
 public sealed class PowerRule : TransistorRule
@@ -54,8 +55,20 @@ public sealed class PowerRule : TransistorRule
             rated = Math.Min(rated, (tmax.Value.Kelvins - ambient) / rth.Value.KelvinsPerWatt);
         }
 
+        if (ambient >= part.TjMax?.Value.Kelvins)
+        {
+            rated = 0;
+        }
+
         Stress stress = Stress.AtMostOf(point.Power, rated * rows.Own.Factor);
-        return stress.Verdict == Verdict.Conforms && MissingData.Heat(state) is { } missing ? Stress.NotVerified(missing) : stress;
+        if (stress.Verdict != Verdict.Conforms)
+        {
+            return stress;
+        }
+
+        // With RthJA but no Tj max the third limit is unknown: what is known can refuse, but not clear.
+        string? missing = part is { RthJa: not null, TjMax: null } ? "Tj max of " + part.PartNumber : MissingData.Heat(state);
+        return missing is null ? stress : Stress.NotVerified(missing);
     }
 
     /// <inheritdoc/>

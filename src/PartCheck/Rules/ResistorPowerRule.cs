@@ -7,8 +7,8 @@ namespace PartCheck.Rules;
 
 /// <summary>
 /// Dissipation of a resistor (zero ohm left out), states on and unfed. Allowed: factor x rated power up to T1, then a line to
-/// zero at T3 (<c>rated</c>), at T2 = F (T3 - T1) + T1 (<c>parallel</c>) or at a stated temperature [W]. Without a film maximum
-/// nothing is known above T1.
+/// zero at T3 (<c>rated</c>), at T2 = F (T3 - T1) + T1 (<c>parallel</c>) or at a stated temperature, never above T3 [W]. T3 is the
+/// film maximum, or where the part's own power slope reaches zero if that is lower. Without a film maximum nothing is known above T1.
 /// </summary>
 public sealed class ResistorPowerRule : ResistorRule
 {
@@ -42,24 +42,24 @@ public sealed class ResistorPowerRule : ResistorRule
 
         double flat = part.FlatTo.Kelvins;
         double full = power.Value.Watts * row.Factor;
-        if (ambient <= flat)
-        {
-            return full;
-        }
-
         if (part.TjMax is not { } film)
         {
-            return double.NaN;
+            return ambient <= flat ? full : double.NaN;
         }
 
         double t3 = film.Value.Kelvins;
+        if (part.PowerSlope is { Value: > 0 } slope)
+        {
+            t3 = Math.Min(t3, flat + (power.Value.Watts / slope.Value));
+        }
+
         double zero = row.Zero switch
         {
-            ZeroTemperature.Parallel => (row.Factor * (t3 - flat)) + flat,
-            ZeroTemperature.Fixed => row.ZeroAt?.Kelvins ?? t3,
+            ZeroTemperature.Parallel => Math.Min(t3, (row.Factor * (t3 - flat)) + flat),
+            ZeroTemperature.Fixed => Math.Min(t3, row.ZeroAt?.Kelvins ?? t3),
             _ => t3,
         };
-        return zero <= flat ? 0 : Math.Max(0, full * (zero - ambient) / (zero - flat));
+        return ambient >= zero ? 0 : ambient <= flat ? full : full * (zero - ambient) / (zero - flat);
     }
 
     /// <inheritdoc/>

@@ -11,6 +11,11 @@ namespace PartCheck.Rules;
 public readonly record struct Stress(
     double Actual, double Allowed, double? Ratio, Verdict Verdict, string? Missing = null, bool AtLeast = false, bool Half = false)
 {
+    /// <summary>
+    /// Relative rounding of double-precision arithmetic that counts as equality [-]: 0.7 x 45 V must not fall short of 31.5 V.
+    /// </summary>
+    public const double Rounding = 1e-12;
+
     /// <summary>A datum is missing or not guaranteed in this state.</summary>
     public static Stress NotVerified(string missing) => new(double.NaN, double.NaN, null, Verdict.NotVerified, missing);
 
@@ -27,7 +32,7 @@ public readonly record struct Stress(
     /// <summary>At least: ratio = required/actual; nothing there where something is required: null and nonconforming.</summary>
     public static Stress AtLeastOf(double actual, double required) =>
         !double.IsFinite(actual) || !double.IsFinite(required) ? NotVerified("a finite value")
-        : required <= 0 ? Of(actual, required, 0)
+        : required <= 0 && actual >= required ? Of(actual, required, 0)
         : actual > 0 ? Of(actual, required, required / actual)
         : new Stress(actual, required, null, Verdict.Nonconforming);
 
@@ -55,8 +60,15 @@ public readonly record struct Stress(
     private static double Rank(in Stress s) =>
         s.Ratio ?? (s.Verdict == Verdict.Nonconforming ? double.PositiveInfinity : double.NegativeInfinity);
 
-    /// <summary>The one comparison: a ratio of exactly 1 conforms.</summary>
-    private static Stress Of(double actual, double allowed, double ratio) => double.IsFinite(ratio)
-        ? new(actual, allowed, ratio, ratio <= 1 ? Verdict.Conforms : Verdict.Nonconforming)
-        : NotVerified("a finite value");
+    /// <summary>The one comparison: a ratio of exactly 1 conforms, and one that differs from it by rounding alone is 1.</summary>
+    private static Stress Of(double actual, double allowed, double ratio)
+    {
+        if (!double.IsFinite(ratio))
+        {
+            return NotVerified("a finite value");
+        }
+
+        double settled = Math.Abs(ratio - 1) <= Rounding ? 1 : ratio;
+        return new(actual, allowed, settled, settled <= 1 ? Verdict.Conforms : Verdict.Nonconforming);
+    }
 }

@@ -41,6 +41,26 @@ public class CurrentRuleTests : RuleTests
         Assert.Equal(Verdict.Nonconforming, States.Judge(Rule, States.Of(States.Pass(), load: 0.030, pinHolds: false)).Verdict);
     }
 
+    // 25 mA is in the upper half, but at a level that nobody guarantees the current may be any lower one.
+    [Fact]
+    public void APinBeyondItsGuaranteeClearsNothing() =>
+        Assert.Equal(Verdict.NotVerified, States.Judge(Rule, States.Of(States.Pass(), load: 0.025, pinHolds: false)).Verdict);
+
+    [Theory]
+    [InlineData(0.02, Verdict.NotVerified)]
+    [InlineData(0.03, Verdict.Nonconforming)]
+    public void WithoutThermalDataTheColdStartRefusesButDoesNotClear(double load, Verdict verdict) =>
+        Assert.Equal(verdict, States.Judge(Rule, States.Of(States.Pass(NoHeat), load: load)).Verdict);
+
+    [Fact]
+    public void OneEndOfTheVbeWindowAloneIsNotEnough()
+    {
+        VbeWindow window = new(null, null, Voltage.FromVolts(0.7), Current.FromAmperes(0.01), Voltage.FromVolts(5));
+        Assert.Equal("VBE of TQ-31", Judge(window).Missing);
+        Assert.Equal(Verdict.Conforms, Judge(window with { Min = Voltage.FromVolts(0.6) }).Verdict);
+        Assert.Equal(Verdict.Conforms, Judge(window with { Typ = Voltage.FromVolts(0.65) }).Verdict);
+    }
+
     [Theory]
     [InlineData(true)]
     [InlineData(false)]
@@ -54,7 +74,12 @@ public class CurrentRuleTests : RuleTests
         Assert.Equal("Tolerance of RK-33", States.Judge(Rule, States.Of(States.Pass(), States.Resistor(part, 0.66, 0.02))).Missing);
     }
 
+    private static readonly Transistor NoHeat = SampleChannel.Transistor() with { RthJa = null, Power = null };
+
     private static Stress Judge(double load) => States.Judge(Rule, States.Of(States.Pass(), load: load));
+
+    private static Stress Judge(VbeWindow window) =>
+        States.Judge(Rule, States.Of(States.Pass(SampleChannel.Transistor() with { Vbe = States.Cite(window) }), load: 0.02));
 }
 
 public class HeadroomRuleTests : RuleTests
@@ -87,6 +112,12 @@ public class HeadroomRuleTests : RuleTests
     [Fact]
     public void WithoutASaturationVoltageTooLittleCurrentIsStillNonconforming() => Assert.Equal(Verdict.Nonconforming, States.Judge(
         Rule, States.Of(States.Pass(SampleChannel.Transistor() with { VceSatMax = null }, vce: 2), load: 0.01, lowest: true)).Verdict);
+
+    [Theory]
+    [InlineData(0.02, Verdict.NotVerified)]
+    [InlineData(0.01, Verdict.Nonconforming)]
+    public void WithoutThermalDataTheColdStartRefusesButDoesNotClear(double load, Verdict verdict) => Assert.Equal(verdict, States.Judge(
+        Rule, States.Of(States.Pass(SampleChannel.Transistor() with { RthJa = null, Power = null }), load: load, lowest: true)).Verdict);
 
     [Fact]
     public void OnlyLowestSupplyWithHighestDropIsRead()
@@ -122,6 +153,9 @@ public class DriveRuleTests : RuleTests
         Assert.Equal(Verdict.Nonconforming, stress.Verdict);
         Assert.Null(stress.Ratio);
     }
+
+    [Fact]
+    public void AnEdgeWithoutANumberIsNotVerified() => Assert.Equal(Verdict.NotVerified, Judge(double.NaN).Verdict);
 
     [Fact]
     public void APinBeyondItsGuaranteeIsNotVerified() => Assert.Equal(

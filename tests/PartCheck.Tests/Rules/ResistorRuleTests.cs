@@ -59,6 +59,25 @@ public class ResistorPowerRuleTests : RuleTests
         Assert.Equal(Verdict.Conforms, Judge(Chip with { TjMax = null }, 1, 70).Verdict);
     }
 
+    // 0.1 W with 2 mW/K above 70 degC is gone at 120 degC, not at the film's 155 degC: half at 95 degC.
+    [Theory]
+    [InlineData(95, 0.05)]
+    [InlineData(120, 0.0)]
+    public void ASlopeOfThePartsOwnGovernsWhereItIsSteeper(double celsius, double watts) =>
+        Assert.Equal(watts, ResistorPowerRule.Allowed(Chip with { PowerSlope = States.Cite(2e-3) }, States.Row("r-power"), celsius + 273.15), 9);
+
+    // Film maximum 155 degC: a stated 200 degC counts as 155 (half at 112.5); a stated 60 degC ends the curve below its flat end.
+    [Theory]
+    [InlineData(200, 112.5, 0.05)]
+    [InlineData(200, 156, 0.0)]
+    [InlineData(60, 59, 0.1)]
+    [InlineData(60, 61, 0.0)]
+    public void AStatedZeroTemperatureNeverPassesTheFilmMaximum(double zero, double celsius, double watts)
+    {
+        DeratingRow row = States.Row("r-power", zero: ZeroTemperature.Fixed) with { ZeroAt = Temperature.FromCelsius(zero) };
+        Assert.Equal(watts, ResistorPowerRule.Allowed(Chip, row, celsius + 273.15), 9);
+    }
+
     private static Stress Judge(ResistorPart part, double volts, double celsius) => States.Judge(
         Rule, States.Of(resistor: States.Resistor(part, volts, volts / 100), celsius: celsius), States.Row("r-power", 0.5, zero: ZeroTemperature.Parallel));
 }

@@ -26,11 +26,25 @@ public class StressTests
     [InlineData(-1, 1, null, Verdict.Nonconforming)]
     [InlineData(0, 0, 0.0, Verdict.Conforms)]
     [InlineData(2, 1, 0.5, Verdict.Conforms)]
+    [InlineData(-1, 0, null, Verdict.Nonconforming)]
     public void AtLeastAtTheEdges(double actual, double required, double? ratio, Verdict verdict)
     {
         Stress stress = Stress.AtLeastOf(actual, required);
         Assert.Equal(ratio, stress.Ratio);
         Assert.Equal(verdict, stress.Verdict);
+    }
+
+    // 45 V x 0.7 is 31.5 V, 0.6 W x 0.75 is 0.45 W; in doubles both products fall short by one part in 2^53.
+    [Theory]
+    [InlineData(31.5, 45, 0.7)]
+    [InlineData(0.45, 0.6, 0.75)]
+    public void TheRoundingOfAProductDecidesNothing(double actual, double rating, double factor)
+    {
+        Assert.True(actual > rating * factor);
+        Stress stress = Stress.AtMostOf(actual, rating * factor);
+        Assert.Equal(1.0, stress.Ratio);
+        Assert.Equal(Verdict.Conforms, stress.Verdict);
+        Assert.Equal(Verdict.Nonconforming, Stress.AtMostOf(actual + 1e-9, rating * factor).Verdict);
     }
 
     [Fact]

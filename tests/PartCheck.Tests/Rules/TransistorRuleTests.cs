@@ -153,6 +153,22 @@ public class PowerRuleTests : RuleTests
         Assert.Null(stress.Ratio);
     }
 
+    // (Tmax - T)/RthJA cannot be known: 0.5 W refuses 0.6 W, but does not clear 0.3 W.
+    [Theory]
+    [InlineData(0.3, Verdict.NotVerified)]
+    [InlineData(0.6, Verdict.Nonconforming)]
+    public void AThermalResistanceWithoutAMaximumDoesNotClear(double watts, Verdict verdict) =>
+        Assert.Equal(verdict, Judge(Slash255 with { TjMax = null }, watts, 25).Verdict);
+
+    // 500 mW - 2 mW/K x (210 - 37.5) K would still leave 155 mW, 10 K above the highest junction temperature.
+    [Fact]
+    public void ASlopeThatReachesPastTheMaximumAllowsNothingThere()
+    {
+        Transistor part = Slash255 with { PowerSlope = States.Cite(2e-3), RthJa = null };
+        Assert.Equal(0.175, Judge(part, 0.01, 200 - 1e-6).Allowed, 6);
+        Assert.Equal(0, Judge(part, 0.01, 210).Allowed, 9);
+    }
+
     [Fact]
     public void WithoutThermalDataAnOverloadIsStillNonconforming()
     {
@@ -195,6 +211,16 @@ public class JunctionRuleTests : RuleTests
     {
         Stress stress = States.Judge(Rule, States.Of(States.Pass(tj: 200, held: true)));
         Assert.Equal(Verdict.Nonconforming, stress.Verdict);
+        Assert.True(stress.AtLeast);
+    }
+
+    // Without a maximum the solver holds the junction at 200 degC.
+    [Fact]
+    public void AJunctionThatRanAwayIsNonconformingWithoutAMaximum()
+    {
+        Stress stress = States.Judge(Rule, States.Of(States.Pass(SampleChannel.Transistor() with { TjMax = null }, tj: 200, held: true)));
+        Assert.Equal(Verdict.Nonconforming, stress.Verdict);
+        Assert.Equal(473.15, stress.Actual, 9);
         Assert.True(stress.AtLeast);
     }
 

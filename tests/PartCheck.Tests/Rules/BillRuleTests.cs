@@ -1,0 +1,96 @@
+using PartCheck.Bills;
+using PartCheck.Channels;
+using PartCheck.Parts;
+using PartCheck.Quantities;
+using PartCheck.Rules;
+using PartCheck.Tests.OperatingPoints;
+using Xunit;
+
+namespace PartCheck.Tests.Rules;
+
+public class BillRuleTests
+{
+    private static readonly PartTable Table = new([SampleChannel.Transistor(), SampleChannel.Resistor(33)]);
+
+    private static readonly BillLine Senses = new()
+    {
+        References = ["R1", "R2"],
+        PartNumber = "RK-33",
+        Quantity = 2,
+        Resistance = Resistance.FromOhms(33),
+        Cell = "bom.csv!A2",
+    };
+
+    [Fact]
+    public void ALineThatAgreesConformsAndNamesItsChannels()
+    {
+        Finding finding = Assert.Single(Judge(Senses));
+        Assert.Equal(Verdict.Conforms, finding.Verdict);
+        Assert.Equal(["CH1"], finding.Channels);
+        Assert.Null(finding.StressRatio);
+    }
+
+    [Theory]
+    [InlineData(1)]
+    [InlineData(3)]
+    public void AQuantityThatDisagreesIsNonconforming(double quantity) =>
+        Assert.Equal(Verdict.Nonconforming, Assert.Single(Judge(Senses with { Quantity = quantity })).Verdict);
+
+    [Fact]
+    public void ABlankQuantityContradictsNothing() =>
+        Assert.Equal(Verdict.Conforms, Assert.Single(Judge(Senses with { Quantity = null })).Verdict);
+
+    // Two transistors in one package are one component to buy and place.
+    [Theory]
+    [InlineData(1, Verdict.Conforms)]
+    [InlineData(2, Verdict.Nonconforming)]
+    public void ElementsOfOnePackageAreOneComponent(double quantity, Verdict verdict) => Assert.Equal(
+        verdict, Assert.Single(Judge(new BillLine { References = ["Q1.1", "Q1.2"], PartNumber = "TQ-31", Quantity = quantity, Cell = "bom.csv!A3" })).Verdict);
+
+    [Theory]
+    [InlineData("SOT-23", Verdict.Conforms)]
+    [InlineData("sot23", Verdict.Conforms)]
+    [InlineData("SOT-23-5", Verdict.Nonconforming)]
+    [InlineData("TO-92", Verdict.Nonconforming)]
+    public void ThePackageAgreesWithThePartTable(string package, Verdict verdict) => Assert.Equal(
+        verdict, Assert.Single(Judge(new BillLine { References = ["Q1.1"], PartNumber = "TQ-31", Package = package, Cell = "bom.csv!A3" })).Verdict);
+
+    [Theory]
+    [InlineData(33.0, Verdict.Conforms)]
+    [InlineData(33.2, Verdict.Nonconforming)]
+    public void TheValueAgreesWithThePartTable(double ohms, Verdict verdict) =>
+        Assert.Equal(verdict, Assert.Single(Judge(Senses with { Resistance = Resistance.FromOhms(ohms) })).Verdict);
+
+    [Fact]
+    public void APartThatTheTableDoesNotHaveIsNotVerified()
+    {
+        Finding finding = Assert.Single(Judge(Senses with { PartNumber = "RK-99" }));
+        Assert.Equal(Verdict.NotVerified, finding.Verdict);
+        Assert.Equal(["part table row of RK-99"], finding.Missing);
+    }
+
+    [Fact]
+    public void ALineThatServesNoChannelIsLeftInPeace() =>
+        Assert.Empty(Judge(Senses with { References = ["C7"], Quantity = 9, PartNumber = null }));
+
+    [Fact]
+    public void ARoleThatTheBillDoesNotServeIsAFindingOfItsChannel()
+    {
+        RoleFault fault = new(Role.Feed, "R9", "R9 is not on the bill.", "channels.csv!M2");
+        Finding finding = Assert.Single(BillRule.Judge(new Bill("bom.csv", []), Table, [Channel() with { RoleFaults = [fault] }]));
+        Assert.Equal(("CH1", "R9", Verdict.Nonconforming, "channels.csv!M2"), (finding.Channel, finding.Reference, finding.Verdict, finding.Cell));
+    }
+
+    private static IReadOnlyList<Finding> Judge(BillLine line) => BillRule.Judge(new Bill("bom.csv", [line]), Table, [Channel()]);
+
+    private static Channel Channel() => new()
+    {
+        Name = "CH1",
+        Cell = "channels.csv!A2",
+        Readings = [],
+        Missing = [],
+        RoleFaults = [],
+        Assumed = [],
+        References = ["Q1.1", "Q1.2", "R1", "R2", "R9"],
+    };
+}
