@@ -13,7 +13,20 @@ public class CheckCasesTests
 {
     private static readonly BipolarParameters Card = new()
     {
-        Is = 1e-14, Nf = 1, Bf = 250, Vaf = 80, Ikf = 0.2, Ise = 1e-14, Ne = 1.5, Br = 4, Xti = 3, Eg = 1.11, Xtb = 1.5, Rb = 5, Rc = 0.5, Re = 0.1,
+        Is = 1e-14,
+        Nf = 1,
+        Bf = 250,
+        Vaf = 80,
+        Ikf = 0.2,
+        Ise = 1e-14,
+        Ne = 1.5,
+        Br = 4,
+        Xti = 3,
+        Eg = 1.11,
+        Xtb = 1.5,
+        Rb = 5,
+        Rc = 0.5,
+        Re = 0.1,
     };
 
     [Fact]

@@ -18,14 +18,24 @@ public static class ReferenceTable
     }
 
     /// <summary>Writes the table anew into the source folder.</summary>
-    public static void Write(string folder, IReadOnlyList<(ReferenceCircuit Circuit, ReferenceResult Result)> rows, int dropped)
+    /// <param name="folder">The source folder.</param>
+    /// <param name="rows">Circuits and what ngspice printed.</param>
+    /// <param name="rungs">How many circuits each of <see cref="Ngspice.Options"/> solved.</param>
+    /// <param name="dropped">How many none of them solved.</param>
+    public static void Write(
+        string folder, IReadOnlyList<(ReferenceCircuit Circuit, ReferenceResult Result)> rows, IReadOnlyList<int> rungs, int dropped)
     {
         StringBuilder text = new();
         text.Append("# Operating points of LED current-sink channels at given junction temperatures\n");
-        text.Append(CultureInfo.InvariantCulture, $"# Source: {Ngspice.Version()} (Debian package), .options {Ngspice.Options}\n");
+        text.Append(CultureInfo.InvariantCulture, $"# Source: {Ngspice.Version()} (Debian package), .options {Ngspice.Options[0]} ({rungs[0]} circuits)\n");
+        for (int i = 1; i < rungs.Count; i++)
+        {
+            text.Append(CultureInfo.InvariantCulture, $"# Where that found no operating point: .options {Ngspice.Options[i]} ({rungs[i]} circuits)\n");
+        }
+
         text.Append("# Constants: those of ngspice 39 (k 1.38064852e-23 J/K, q 1.6021766208e-19 C); the project's are CODATA 2018 (k/q apart by 1e-5)\n");
         text.Append("# Load: diode with emission coefficient LoadN and saturation current LoadIs at 25 degC in series with LoadR; LoadN 0: LoadR alone\n");
-        text.Append(CultureInfo.InvariantCulture, $"# Made by: ReferenceGenerator (seeds 0x5EED0000 + i) and Ngspice, with PARTCHECK_RECORD_NGSPICE=1; {rows.Count} circuits, {dropped} dropped for want of an operating point in ngspice\n");
+        text.Append(CultureInfo.InvariantCulture, $"# Made by: ReferenceGenerator (seeds 0x5EED0000 + i) and Ngspice, with PARTCHECK_RECORD_NGSPICE=1; {rows.Count} circuits, {dropped} dropped for want of an operating point with any of the options\n");
         text.Append("# Tolerance of the comparison: 0.1 %, or 1 nA and 10 uV where currents vanish. SI units, junction temperatures in degC\n");
         text.Append("Name,Unfed,PinV,PinR,Feed,PullDown,PullDownAt,Supply,LoadN,LoadIs,LoadR,Control,Legs,ILoad,IPin,Vb,Vx,Vc,IC0,IB0,IC,IB,Ve\n");
         foreach ((ReferenceCircuit c, ReferenceResult r) in rows)
