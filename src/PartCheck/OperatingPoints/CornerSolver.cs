@@ -71,7 +71,12 @@ public sealed class CornerSolver
 
     private static SolvedState Unsolved(ChannelBox box, in BoxCorner at, int index) => new()
     {
-        State = box.State, Corner = at.Corner, Index = index, Solved = false, Transistors = [], Resistors = [],
+        State = box.State,
+        Corner = at.Corner,
+        Index = index,
+        Solved = false,
+        Transistors = [],
+        Resistors = [],
     };
 
     private DriveEdge Edge(SinkCircuit circuit)
