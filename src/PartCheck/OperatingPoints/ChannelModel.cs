@@ -114,6 +114,12 @@ public sealed class ChannelModel
             }
         }
 
+        if (Channel.Legs.Count > 1)
+        {
+            assumed.AddRange(Pass.Where(p => p.Part.VbeMatch is null && p.VbeVaries).Distinct()
+                .Select(p => new Assumption("VBE match between legs", p.Part.PartNumber, "the whole window")));
+        }
+
         if (Control.MinPoints.Count > 0)
         {
             assumed.Add(new Assumption("hFE of the control far below its points", Control.Part.PartNumber, "the outermost value held"));

@@ -134,5 +134,5 @@ internal static class FindingText
         }
     }
 
-    private static string End(Extreme end) => end == Extreme.Min ? "min" : "max";
+    private static string End(Extreme end) => end switch { Extreme.Min => "min", Extreme.Match => "one lot's match off the rest", _ => "max" };
 }

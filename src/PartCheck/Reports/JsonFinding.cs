@@ -121,6 +121,7 @@ internal static class JsonFinding
         Extreme.Typical => "typical",
         Extreme.Min => "min",
         Extreme.Max => "max",
-        _ => throw new ArgumentOutOfRangeException(nameof(end), end, "An end is typical, min or max."),
+        Extreme.Match => "match",
+        _ => throw new ArgumentOutOfRangeException(nameof(end), end, "An end is typical, min, max or match."),
     };
 }

@@ -1,0 +1,109 @@
+using PartCheck.Derating;
+using PartCheck.Quantities;
+using PartCheck.Rules;
+using PartCheck.Sheets;
+using Xunit;
+
+namespace PartCheck.Tests.Derating;
+
+public sealed class DeratingLibraryTests
+{
+    [Fact]
+    public void TheTablesThatTravelInsideAreTheApprovedOnes() =>
+        Assert.Equal(["nasa-eee-inst-002", "ratings", "workshop"], DeratingLibrary.Names);
+
+    // Common practice, no source: the figures that the project states for its own table.
+    [Theory]
+    [InlineData("vce", "npn", 0.8)]
+    [InlineData("vcb", "npn", 0.8)]
+    [InlineData("ic", "npn", 0.75)]
+    [InlineData("power", "npn", 0.6)]
+    [InlineData("soa", "npn", 0.75)]
+    [InlineData("stability", "npn", 0.5)]
+    [InlineData("r-power", "resistor", 0.5)]
+    [InlineData("r-voltage", "resistor", 0.8)]
+    [InlineData("pin-current", null, 0.8)]
+    public void TheWorkshopsFactors(string rule, string? kind, double factor)
+    {
+        DeratingRow row = Named("workshop").For(rule, kind);
+        Assert.Equal(factor, row.Factor);
+        Assert.Equal("common practice, no source", row.Source);
+    }
+
+    [Fact]
+    public void TheWorkshopsOtherLimits()
+    {
+        DeratingTable table = Named("workshop");
+        Assert.Equal(25, table.For("junction", "npn").Offset.Kelvins);
+        Assert.Equal(25, table.For("r-film", "resistor").Offset.Kelvins);
+        Assert.Equal(1.5, table.For("drive").Limit);
+        Assert.Equal(1.25, table.For("sharing").Limit);
+        Assert.Equal(ZeroTemperature.Parallel, table.For("r-power", "resistor").Zero);
+    }
+
+    [Fact]
+    public void RatingsAreTheRatingsThemselves()
+    {
+        DeratingTable table = Named("ratings");
+        Assert.All(table.Rows, row => Assert.Equal(1, row.Factor));
+        Assert.Null(table.For("sharing").Limit);
+    }
+
+    // NASA EEE-INST-002 (May 2003), S1 Table 4 with note 2 and R2 Table 4, read in full text; a 2N2222A by it: VCE 37.5, VCB 56.25 V, 600 mA, 300 mW, 125 degC.
+    [Fact]
+    public void TheStandardsFactorsAreThoseOfItsTables()
+    {
+        DeratingTable table = Named("nasa-eee-inst-002");
+        Assert.Equal(37.5, 50 * table.For("vce", "npn").Factor, 9);
+        Assert.Equal(56.25, 75 * table.For("vcb", "npn").Factor, 9);
+        Assert.Equal(0.6, 0.8 * table.For("ic", "npn").Factor, 9);
+        Assert.Equal(0.3, 0.5 * table.For("power", "npn").Factor, 9);
+        Assert.Equal(125, JunctionRule.Allowed(Temperature.FromCelsius(200), table.For("junction", "npn")) - 273.15, 9);
+        Assert.Equal(110, JunctionRule.Allowed(Temperature.FromCelsius(150), table.For("junction", "npn")) - 273.15, 9);
+        Assert.Equal(0.5, table.For("r-power", "resistor").Factor);
+        Assert.Equal(0.6, table.For("r-power", "resistor", "RM").Factor);
+        Assert.Equal(0.8, table.For("r-voltage", "resistor", "RM").Factor);
+        Assert.Equal(ZeroTemperature.Parallel, table.For("r-power", "resistor", "RNX").Zero);
+    }
+
+    [Fact]
+    public void TheStandardSaysWhichEditionItIsAndWhatItLeavesOut()
+    {
+        string? note = Named("nasa-eee-inst-002").Note;
+        Assert.Contains("May 2003, without Addendum 1", note, StringComparison.Ordinal);
+        Assert.Contains("leaves plastic-encapsulated parts out", note, StringComparison.Ordinal);
+    }
+
+    [Fact]
+    public void AnUnknownNameIsNoTable() => Assert.Null(DeratingLibrary.Named("no-such-table"));
+
+    [Theory]
+    [InlineData("t,vce,npn,1.5", "D2")]
+    [InlineData("t,no-such-rule,npn,0.5", "The rule \"no-such-rule\" is not known.")]
+    [InlineData("t,vce,valve,0.5", "The kind \"valve\" is not known here.")]
+    [InlineData("t,vce,npn,0.5\nt,vce,npn,0.6", "keep one")]
+    public void AMistakeInATableIsToldWithItsCell(string rows, string text)
+    {
+        string file = Path.Combine(Path.GetTempPath(), $"partcheck-derating-{Guid.NewGuid():N}.csv");
+        try
+        {
+            File.WriteAllText(file, "Name,Rule,Kind,Factor\n" + rows + "\n");
+            ComplaintList complaints = new();
+            SheetData sheet = Assert.Single(SheetFile.Read(file, "d.csv", null, complaints));
+            _ = DeratingReader.Read(sheet, ColumnSpellings.Load(null, complaints), complaints);
+            Complaint complaint = Assert.Single(complaints.Items);
+            Assert.Contains(text, complaint.Cell + " " + complaint.Text, StringComparison.Ordinal);
+        }
+        finally
+        {
+            File.Delete(file);
+        }
+    }
+
+    private static DeratingTable Named(string name)
+    {
+        DeratingTable? table = DeratingLibrary.Named(name);
+        Assert.NotNull(table);
+        return table;
+    }
+}
