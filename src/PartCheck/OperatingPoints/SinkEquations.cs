@@ -70,6 +70,9 @@ internal sealed class SinkEquations
     /// <summary>Share of the pin's source voltage that is switched on: 1, less on the way there.</summary>
     public double SourceShare { get; set; } = 1;
 
+    /// <summary>Share of the thermal resistances that counts: 1, less on the way there.</summary>
+    public double HeatShare { get; set; } = 1;
+
     public double BaseVoltage { get; private set; }
 
     public double ControlBaseVoltage { get; private set; }
@@ -265,13 +268,13 @@ internal sealed class SinkEquations
             int rowT = TemperatureIndex[g];
             if (rowT >= 0)
             {
-                AddHeat(rowT, g, leg.Heat.RthJa, power, dPower, dVb, q.Ic, dVc);
+                AddHeat(rowT, g, HeatShare * leg.Heat.RthJa, power, dPower, dVb, q.Ic, dVc);
                 Residual[rowT] += x[rowT] - leg.Heat.Base;
                 Scale[rowT] = Math.Abs(x[rowT]);
                 At(rowT, rowT) += 1;
             }
 
-            double coupling = (m * leg.Coupling) + (g == hottest ? c.HottestLegCoupling * leg.Heat.RthJa : 0);
+            double coupling = HeatShare * ((m * leg.Coupling) + (g == hottest ? c.HottestLegCoupling * leg.Heat.RthJa : 0));
             heat0 += coupling * power;
             if (rowHeat0 >= 0 && coupling > 0)
             {
@@ -304,7 +307,7 @@ internal sealed class SinkEquations
 
         if (rowHeat0 >= 0)
         {
-            double rth = c.ControlHeat.RthJa;
+            double rth = HeatShare * c.ControlHeat.RthJa;
             double power = (vb * q0.Ic) + (vx * q0.Ib);
             Slopes dPower = new(
                 (dVb.Vbe * q0.Ic) + (vb * q0.DIc.Vbe) + (dVx.Vbe * q0.Ib) + (vx * q0.DIb.Vbe),

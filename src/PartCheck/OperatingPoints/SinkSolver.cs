@@ -2,8 +2,8 @@ namespace PartCheck.OperatingPoints;
 
 /// <summary>
 /// The scalar reference solver of one channel: Newton on <see cref="SinkEquations"/> with the junction-voltage steps
-/// limited, and a ladder below it: (1) Newton from the last solution, (2) Newton from a cold start, (3) the pin's source
-/// raised from zero in steps that halve where they fail, (4) <see cref="NotSolved"/>. Converged means that the steps have
+/// limited, and a ladder below it: (1) Newton from the last solution, (2) Newton from a cold start, (3) the thermal resistances
+/// raised from zero, (4) the pin's source raised from zero, each in steps that shrink where they fail, (5) <see cref="NotSolved"/>. Converged means that the steps have
 /// died out and that the currents balance. Not thread-safe: one solver a thread.
 /// </summary>
 public sealed class SinkSolver
@@ -107,6 +107,7 @@ public sealed class SinkSolver
         Failure = null;
         iterations = 0;
         equations.SourceShare = 1;
+        equations.HeatShare = 1;
         Array.Fill(held, double.NaN);
         bool solved = Attempt(circuit, start);
 
@@ -144,27 +145,47 @@ public sealed class SinkSolver
         }
 
         ColdStart(circuit);
-        return Newton() || RaiseSource(circuit);
+        return Newton() || RaiseHeat(circuit) || RaiseSource(circuit);
     }
 
-    /// <summary>Third rung: the pin's source from zero, each level from the solution below it.</summary>
+    /// <summary>Third rung: every junction at ambient first, then the thermal resistances from zero.</summary>
+    private bool RaiseHeat(SinkCircuit circuit)
+    {
+        if (equations.Count == equations.LoadIndex + 1)
+        {
+            return false;
+        }
+
+        equations.HeatShare = 0;
+        ColdStart(circuit);
+        bool solved = (Newton() || RaiseSource(circuit)) && Raise(share => equations.HeatShare = share);
+        equations.HeatShare = 1;
+        return solved;
+    }
+
+    /// <summary>Fourth rung: the pin's source from zero.</summary>
     private bool RaiseSource(SinkCircuit circuit)
     {
         ColdStart(circuit);
-        for (int i = 0; i < equations.LoadIndex; i++)
-        {
-            x[i] = 0;
-        }
+        Array.Clear(x, 0, equations.LoadIndex);
+        bool solved = Raise(share => equations.SourceShare = share);
+        equations.SourceShare = 1;
+        return solved;
+    }
 
+    /// <summary>Moves a share from 0 to 1 in steps that shrink where they fail, each from the solution below it.</summary>
+    private bool Raise(Action<double> set)
+    {
         double done = 0;
         double stride = 0.1;
-        double[] kept = (double[])x.Clone();
+        double[] kept = [.. x];
         while (done < 1)
         {
-            equations.SourceShare = Math.Min(1, done + stride);
+            double next = Math.Min(1, done + stride);
+            set(next);
             if (Newton())
             {
-                done = equations.SourceShare;
+                done = next;
                 x.CopyTo(kept, 0);
                 stride = Math.Min(0.2, stride * 2);
             }
@@ -174,13 +195,11 @@ public sealed class SinkSolver
                 stride /= 4;
                 if (stride < 1e-4)
                 {
-                    equations.SourceShare = 1;
                     return false;
                 }
             }
         }
 
-        equations.SourceShare = 1;
         return true;
     }
 

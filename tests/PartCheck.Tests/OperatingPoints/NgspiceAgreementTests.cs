@@ -53,6 +53,32 @@ public class NgspiceAgreementTests
         Assert.True(wrong.Count == 0, $"{wrong.Count} deviations:\n" + string.Join("\n", wrong.Take(25)));
     }
 
+    /// <summary>The solver finds the junction temperatures itself: 0.5 K, and 0.2 % of the currents.</summary>
+    [Fact]
+    public void EveryHeatedCircuitAgrees()
+    {
+        IReadOnlyList<(HeatedCircuit Heated, ReferenceResult Result)> rows = HeatedReference.Read();
+        Assert.Equal(40, rows.Count);
+        SinkSolver solver = new();
+        foreach ((HeatedCircuit heated, ReferenceResult expected) in rows)
+        {
+            OperatingPoint? point = solver.Solve(heated.ToSink());
+            Assert.True(point is not null, $"{heated.Circuit.Name}: {solver.Failure}");
+            Assert.True(
+                Math.Abs(point.LoadCurrent - expected.LoadCurrent) <= Math.Max(2e-3 * Math.Abs(expected.LoadCurrent), Amperes),
+                string.Create(CultureInfo.InvariantCulture, $"{heated.Circuit.Name}: load {point.LoadCurrent:g6}, ngspice {expected.LoadCurrent:g6}; Tj {string.Join(' ', point.Legs.Select(l => $"{l.Tj - 273.15:0.0}"))}, ngspice {string.Join(' ', heated.Circuit.Legs.Select(l => $"{l.Pass.Celsius:0.0}"))}"));
+            Assert.InRange(point.Control.Tj - 273.15 - heated.Circuit.Control.Celsius, -0.5, 0.5);
+            for (int i = 0; i < heated.Circuit.Legs.Count; i++)
+            {
+                Assert.InRange(point.Legs[i].Tj - 273.15 - heated.Circuit.Legs[i].Pass.Celsius, -0.5, 0.5);
+                Assert.InRange(Math.Abs(point.Legs[i].Ic - expected.Ic[i]), 0, Math.Max(2e-3 * Math.Abs(expected.Ic[i]), Amperes));
+            }
+        }
+
+        // The table means something only where junctions are well above ambient.
+        Assert.InRange(rows.Count(r => r.Heated.Circuit.Legs.Any(l => l.Pass.Celsius - r.Heated.Ambient > 20)), 15, 40);
+    }
+
     [Theory]
     [InlineData("regulating")]
     [InlineData("drop-out")]

@@ -5,38 +5,36 @@ using PartCheck.Devices;
 
 namespace PartCheck.Tests.Reference;
 
-/// <summary>The recorded table <c>ngspice-channels.csv</c>: inputs and ngspice's outputs, one circuit a row.</summary>
+/// <summary>Recorded tables of reference circuits: inputs and ngspice's outputs, one circuit a row, a header that says what made them.</summary>
 public static class ReferenceTable
 {
-    private const string FileName = "ngspice-channels.csv";
+    /// <summary>Channels at given junction temperatures.</summary>
+    public const string Channels = "ngspice-channels.csv";
 
-    /// <summary>Every row.</summary>
-    public static IReadOnlyList<(ReferenceCircuit Circuit, ReferenceResult Result)> Read()
+    /// <summary>Channels that heat themselves.</summary>
+    public const string Heated = "ngspice-heated.csv";
+
+    /// <summary>Every row of a table.</summary>
+    public static IReadOnlyList<(ReferenceCircuit Circuit, ReferenceResult Result)> Read(string table = Channels)
     {
-        string[] lines = File.ReadAllLines(Path.Combine(AppContext.BaseDirectory, "Reference", FileName));
+        string[] lines = File.ReadAllLines(Path.Combine(AppContext.BaseDirectory, "Reference", table));
         return [.. lines.Where(l => l.Length > 0 && l[0] != '#').Skip(1).Select(Row)];
     }
 
-    /// <summary>Writes the table anew into the source folder.</summary>
-    /// <param name="folder">The source folder.</param>
+    /// <summary>Writes a table anew.</summary>
+    /// <param name="path">The file, in the source folder.</param>
+    /// <param name="header">Lines that say what the table is and what made it.</param>
     /// <param name="rows">Circuits and what ngspice printed.</param>
-    /// <param name="rungs">How many circuits each of <see cref="Ngspice.Options"/> solved.</param>
-    /// <param name="dropped">How many none of them solved.</param>
-    public static void Write(
-        string folder, IReadOnlyList<(ReferenceCircuit Circuit, ReferenceResult Result)> rows, IReadOnlyList<int> rungs, int dropped)
+    public static void Write(string path, IEnumerable<string> header, IReadOnlyList<(ReferenceCircuit Circuit, ReferenceResult Result)> rows)
     {
         StringBuilder text = new();
-        text.Append("# Operating points of LED current-sink channels at given junction temperatures\n");
-        text.Append(CultureInfo.InvariantCulture, $"# Source: {Ngspice.Version()} (Debian package), .options {Ngspice.Options[0]} ({rungs[0]} circuits)\n");
-        for (int i = 1; i < rungs.Count; i++)
+        foreach (string line in header)
         {
-            text.Append(CultureInfo.InvariantCulture, $"# Where that found no operating point: .options {Ngspice.Options[i]} ({rungs[i]} circuits)\n");
+            text.Append("# ").Append(line).Append('\n');
         }
 
         text.Append("# Constants: those of ngspice 39 (k 1.38064852e-23 J/K, q 1.6021766208e-19 C); the project's are CODATA 2018 (k/q apart by 1e-5)\n");
         text.Append("# Load: diode with emission coefficient LoadN and saturation current LoadIs at 25 degC in series with LoadR; LoadN 0: LoadR alone\n");
-        text.Append(CultureInfo.InvariantCulture, $"# Made by: ReferenceGenerator (seeds 0x5EED0000 + i) and Ngspice, with PARTCHECK_RECORD_NGSPICE=1; {rows.Count} circuits, {dropped} dropped for want of an operating point with any of the options\n");
-        text.Append("# Tolerance of the comparison: 0.1 %, or 1 nA and 10 uV where currents vanish. SI units, junction temperatures in degC\n");
         text.Append("Name,Unfed,PinV,PinR,Feed,PullDown,PullDownAt,Supply,LoadN,LoadIs,LoadR,Control,Legs,ILoad,IPin,Vb,Vx,Vc,IC0,IB0,IC,IB,Ve\n");
         foreach ((ReferenceCircuit c, ReferenceResult r) in rows)
         {
@@ -48,7 +46,7 @@ public static class ReferenceTable
             text.Append(string.Join(' ', r.Ic.Select(Number))).Append(',').Append(string.Join(' ', r.Ib.Select(Number))).Append(',').Append(string.Join(' ', r.Emitter.Select(Number))).Append('\n');
         }
 
-        File.WriteAllText(Path.Combine(folder, FileName), text.ToString());
+        File.WriteAllText(path, text.ToString());
     }
 
     private static (ReferenceCircuit Circuit, ReferenceResult Result) Row(string line)
