@@ -92,7 +92,7 @@ public static class BillRule
 
         foreach (Part row in rows)
         {
-            if (line.Package is { } package && row.Package is { } tabled && !SamePackage(package, tabled))
+            if (line.Package is { } package && row.Package is { } tabled && !PackageName.Agrees(package, tabled))
             {
                 wrong.Add($"the bill's package is {package}, the part table's {tabled}");
             }
@@ -127,13 +127,6 @@ public static class BillRule
         .Select(r => r.IndexOf('.', StringComparison.Ordinal) is > 0 and int dot ? r[..dot] : r)
         .Distinct(StringComparer.OrdinalIgnoreCase)
         .Count();
-
-    /// <summary>Package names without regard to case, blanks and dashes.</summary>
-    private static bool SamePackage(string a, string b)
-    {
-        static string Plain(string s) => s.Replace("-", string.Empty, StringComparison.Ordinal).Replace(" ", string.Empty, StringComparison.Ordinal).ToUpperInvariant();
-        return Plain(a) == Plain(b);
-    }
 
     private static string Sentence(string text) => char.ToUpperInvariant(text[0]) + text[1..] + ".";
 }

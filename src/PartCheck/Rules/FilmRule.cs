@@ -20,6 +20,9 @@ public sealed class FilmRule : ResistorRule
     public override string Unit => "K";
 
     /// <inheritdoc/>
+    public override bool AlwaysAsked => false;
+
+    /// <inheritdoc/>
     public override string Source => "T = Ta + P Rth; the rated dissipation holds only while the film's limit is kept (film chip sheets)";
 
     /// <inheritdoc/>

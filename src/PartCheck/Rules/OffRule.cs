@@ -21,6 +21,9 @@ public sealed class OffRule : ChannelRule
     public override string Unit => "A";
 
     /// <inheritdoc/>
+    public override bool AlwaysAsked => false;
+
+    /// <inheritdoc/>
     public override string Source => "the channel's own limit; ICBO of the part's sheet";
 
     /// <inheritdoc/>

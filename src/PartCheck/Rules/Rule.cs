@@ -29,6 +29,9 @@ public abstract class Rule
     /// <summary>Where the rule comes from.</summary>
     public abstract string Source { get; }
 
+    /// <summary>True where every channel is judged by it; false where table or channel must ask for it.</summary>
+    public virtual bool AlwaysAsked => true;
+
     /// <summary>True where the rule reads this state.</summary>
     public virtual bool Reads(SolvedState state) => state is { State: ChannelState.On };
 }

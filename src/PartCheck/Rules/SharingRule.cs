@@ -20,6 +20,9 @@ public sealed class SharingRule : ChannelRule
     public override string Unit => string.Empty;
 
     /// <inheritdoc/>
+    public override bool AlwaysAsked => false;
+
+    /// <inheritdoc/>
     public override string Source => "the channel's or the derating table's limit (common practice, no source)";
 
     /// <inheritdoc/>

@@ -22,6 +22,9 @@ public sealed class SoaRule : TransistorRule
     public override string Unit => "A";
 
     /// <inheritdoc/>
+    public override bool AlwaysAsked => false;
+
+    /// <inheritdoc/>
     public override string Source => "DC boundary of the part's sheet, reduced linearly to zero at Tj max (common practice, no source)";
 
     /// <inheritdoc/>

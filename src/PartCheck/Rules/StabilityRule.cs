@@ -22,6 +22,9 @@ public sealed class StabilityRule : TransistorRule
     public override string Unit => string.Empty;
 
     /// <inheritdoc/>
+    public override bool AlwaysAsked => false;
+
+    /// <inheritdoc/>
     public override string Source => "S < 1 at fixed base voltage: own derivation, ballast held to ngspice (emitter ballasting, IEEE Trans. ED, 1970s)";
 
     /// <inheritdoc/>
