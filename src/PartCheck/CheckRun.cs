@@ -242,7 +242,10 @@ public static class CheckRun
                 foreach (JudgedChannel feed in feeds)
                 {
                     double others = feeds.Where(f => f != feed).Sum(f => f.AloneCurrent);
-                    feed.Readings.AddRange(feed.Models.Select(m => Judgement(feed, m, others, cancel)));
+                    feed.Readings.AddRange(feed.Models.Select(m => Judgement(feed, m, others, cancel) with
+                    {
+                        TestLimits = TestLimits.Of(m.Channel, Variants, new PinSource(m.Channel.Logic, others), request.Threads, cancel),
+                    }));
                 }
             }
 
@@ -349,6 +352,7 @@ public static class CheckRun
                 DeratingNote = derating.Note,
                 Channels = channels,
                 Findings = all,
+                Totals = BoardTotals.Of(channels, pinFindings),
                 Rules = RuleBook.Judged,
                 RulesNotJudged = RuleBook.NotJudged,
                 Assumed = assumed,

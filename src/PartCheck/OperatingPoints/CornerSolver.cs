@@ -10,7 +10,7 @@ public sealed class CornerSolver
     private readonly StartPoint edgeStart = new();
     private readonly ChannelModel model;
     private readonly PinSource pin;
-    private readonly double driveFactor;
+    private readonly double? driveFactor;
     private int edgeOf = -1;
     private OperatingPoint? edge;
     private bool edgeFailed;
@@ -18,8 +18,8 @@ public sealed class CornerSolver
     /// <summary>Makes a solver for a channel.</summary>
     /// <param name="model">The channel.</param>
     /// <param name="pin">Its pin.</param>
-    /// <param name="driveFactor">k' = max(drive factor, 1.2) of the edge of regulation.</param>
-    public CornerSolver(ChannelModel model, PinSource pin, double driveFactor)
+    /// <param name="driveFactor">k' = max(drive factor, 1.2) of the edge of regulation; null: it is not solved.</param>
+    public CornerSolver(ChannelModel model, PinSource pin, double? driveFactor)
     {
         this.model = model;
         this.pin = pin;
@@ -49,12 +49,12 @@ public sealed class CornerSolver
         }
 
         DriveEdge? drive = null;
-        if (box.State == ChannelState.On && at.Corner.Heat == 0 && at.Corner.OddPass.Vbe != Extreme.Match)
+        if (driveFactor is { } factor && box.State == ChannelState.On && at.Corner.Heat == 0 && at.Corner.OddPass.Vbe != Extreme.Match)
         {
             if (edgeOf != index / box.InnerCount)
             {
                 edgeOf = index / box.InnerCount;
-                edge = solver.SolveEdge(at.Circuit, driveFactor, edgeStart);
+                edge = solver.SolveEdge(at.Circuit, factor, edgeStart);
                 edgeFailed = solver.Failure is not null;
             }
 
@@ -63,7 +63,7 @@ public sealed class CornerSolver
                 return Unsolved(box, at, offset + index);
             }
 
-            drive = Edge(at.Circuit);
+            drive = Edge(at.Circuit, factor);
         }
 
         return StateAssembly.Build(model, pin, box.State, at, box.OddClass, point, drive, offset + index);
@@ -79,11 +79,11 @@ public sealed class CornerSolver
         Resistors = [],
     };
 
-    private DriveEdge Edge(SinkCircuit circuit)
+    private DriveEdge Edge(SinkCircuit circuit, double factor)
     {
         if (edge is null)
         {
-            return new DriveEdge(false, 0, 0, 0, driveFactor);
+            return new DriveEdge(false, 0, 0, 0, factor);
         }
 
         double sum = 0;
@@ -94,6 +94,6 @@ public sealed class CornerSolver
 
         double available = ((circuit.FeedVoltage - edge.BaseVoltage) / circuit.FeedResistance)
             - (edge.BaseVoltage * circuit.BaseConductance);
-        return new DriveEdge(edge.BaseVoltage < circuit.PinVoltage, edge.BaseVoltage, sum, available, driveFactor);
+        return new DriveEdge(edge.BaseVoltage < circuit.PinVoltage, edge.BaseVoltage, sum, available, factor);
     }
 }

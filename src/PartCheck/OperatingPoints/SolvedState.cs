@@ -142,7 +142,10 @@ public readonly record struct TransistorPoint(
 public readonly record struct ResistorPoint(
     int Slot, Role Role, ResistorPart Part, double Resistance, double Voltage, double Current)
 {
-    /// <summary>Dissipation [W].</summary>
+    /// <summary>Resistors that this point stands for.</summary>
+    public int Count { get; init; } = 1;
+
+    /// <summary>Dissipation of one [W].</summary>
     public double Power => Voltage * Current;
 }
 

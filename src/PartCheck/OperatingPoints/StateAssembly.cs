@@ -98,11 +98,11 @@ internal static class StateAssembly
         List<ResistorPoint> resistors, ChannelModel model, int c, LegGroup leg, in SolvedTransistor q, OperatingPoint point, int g)
     {
         double ve = Math.Abs(q.EmitterVoltage);
-        resistors.Add(new ResistorPoint(Slots.Sense(c), Role.Sense, model.Sense[c].Part, leg.Sense, ve, ve / leg.Sense));
+        resistors.Add(new ResistorPoint(Slots.Sense(c), Role.Sense, model.Sense[c].Part, leg.Sense, ve, ve / leg.Sense) { Count = leg.Count });
         if (model.Averaging[c] is { } averaging)
         {
             double i = Math.Abs(point.AveragingCurrents[g]);
-            resistors.Add(new ResistorPoint(Slots.Averaging(c), Role.Averaging, averaging.Part, leg.Averaging, i * leg.Averaging, i));
+            resistors.Add(new ResistorPoint(Slots.Averaging(c), Role.Averaging, averaging.Part, leg.Averaging, i * leg.Averaging, i) { Count = leg.Count });
         }
     }
 

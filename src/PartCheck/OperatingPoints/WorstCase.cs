@@ -22,15 +22,20 @@ public static class WorstCase
     /// <param name="cancel">Stops the enumeration.</param>
     /// <returns>The accumulators in corner order.</returns>
     public static IReadOnlyList<T> Enumerate<T>(
-        ChannelModel model, PinSource pin, double driveFactor, int threads, Func<T> make, Action<T, SolvedState> visit, CancellationToken cancel)
+        ChannelModel model, PinSource pin, double driveFactor, int threads, Func<T> make, Action<T, SolvedState> visit, CancellationToken cancel) =>
+        Enumerate(model, pin, Boxes(model, pin), Math.Max(driveFactor, 1.2), threads, make, visit, cancel);
+
+    /// <summary>The same over given boxes; <paramref name="edge"/> is k', null: the edge of regulation is not solved.</summary>
+    internal static IReadOnlyList<T> Enumerate<T>(
+        ChannelModel model, PinSource pin, IReadOnlyList<ChannelBox> boxes, double? edge, int threads, Func<T> make,
+        Action<T, SolvedState> visit, CancellationToken cancel)
     {
         ArgumentNullException.ThrowIfNull(model);
         ArgumentNullException.ThrowIfNull(make);
         ArgumentNullException.ThrowIfNull(visit);
-        double k = Math.Max(driveFactor, 1.2);
         List<(ChannelBox Box, int From, int To, int Offset)> chunks = [];
         int offset = 0;
-        foreach (ChannelBox box in Boxes(model, pin))
+        foreach (ChannelBox box in boxes)
         {
             for (int from = 0; from < box.Count; from += ChunkLength)
             {
@@ -45,7 +50,7 @@ public static class WorstCase
         Parallel.For(0, chunks.Count, options, i =>
         {
             (ChannelBox box, int from, int to, int shift) = chunks[i];
-            CornerSolver solver = new(model, pin, k);
+            CornerSolver solver = new(model, pin, edge);
             T accumulator = make();
             for (int index = from; index < to; index++)
             {
@@ -63,34 +68,31 @@ public static class WorstCase
     public static IReadOnlyList<ChannelBox> Boxes(ChannelModel model, PinSource pin)
     {
         ArgumentNullException.ThrowIfNull(model);
-        List<ChannelBox> boxes = [];
-        bool offAsked = model.Channel.Conditions.OffCurrentMax is not null;
-        foreach (ChannelState state in (ReadOnlySpan<ChannelState>)[ChannelState.On, ChannelState.Unfed, ChannelState.Off])
+        List<ChannelBox> boxes = [.. OnBoxes(model, pin)];
+        for (int c = 0; c < model.Classes.Count && model.Channel.Legs.Count > 1; c++)
         {
-            if (state == ChannelState.Off && !offAsked)
+            if (model.Pass[c].Part.VbeMatch is not null)
             {
-                continue;
+                boxes.Add(new ChannelBox(model, pin, ChannelState.On, c, matched: true));
             }
+        }
 
-            if (model.Channel.Legs.Count == 1)
-            {
-                boxes.Add(new ChannelBox(model, pin, state, -1));
-            }
-            else
-            {
-                for (int c = 0; c < model.Classes.Count; c++)
-                {
-                    boxes.Add(new ChannelBox(model, pin, state, c));
-                    if (state == ChannelState.On && model.Pass[c].Part.VbeMatch is not null)
-                    {
-                        boxes.Add(new ChannelBox(model, pin, state, c, matched: true));
-                    }
-                }
-            }
+        boxes.AddRange(OfState(model, pin, ChannelState.Unfed));
+        if (model.Channel.Conditions.OffCurrentMax is not null)
+        {
+            boxes.AddRange(OfState(model, pin, ChannelState.Off));
         }
 
         return boxes;
     }
+
+    /// <summary>The boxes of the state on, each distinct odd leg.</summary>
+    internal static IReadOnlyList<ChannelBox> OnBoxes(ChannelModel model, PinSource pin) => OfState(model, pin, ChannelState.On);
+
+    private static IReadOnlyList<ChannelBox> OfState(ChannelModel model, PinSource pin, ChannelState state) =>
+        model.Channel.Legs.Count == 1
+            ? [new ChannelBox(model, pin, state, -1)]
+            : [.. Enumerable.Range(0, model.Classes.Count).Select(c => new ChannelBox(model, pin, state, c))];
 
     /// <summary>The nominal state at 25 degC ambient; null where the solver gave up.</summary>
     public static SolvedState? Nominal(ChannelModel model, PinSource pin)

@@ -31,6 +31,9 @@ public sealed record BoardReport
     /// <summary>Every finding, worst first.</summary>
     public required IReadOnlyList<Finding> Findings { get; init; }
 
+    /// <summary>Sums over the board; null where nothing was judged.</summary>
+    public BoardTotals? Totals { get; init; }
+
     /// <summary>Identifiers of the rules judged.</summary>
     public required IReadOnlyList<string> Rules { get; init; }
 

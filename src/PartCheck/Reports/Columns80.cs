@@ -8,6 +8,9 @@ internal static class Columns80
     /// <summary>The width of every text report.</summary>
     public const int Width = 80;
 
+    /// <summary>Stands for a blank that no line breaks at: between a number and its unit.</summary>
+    public const char Glue = '\u00A0';
+
     /// <summary>Appends a text, wrapped.</summary>
     /// <param name="into">Where to.</param>
     /// <param name="first">What the first line begins with.</param>
@@ -19,7 +22,7 @@ internal static class Columns80
         bool fresh = true;
         foreach (string word in text.Split(' ', StringSplitOptions.RemoveEmptyEntries))
         {
-            string rest = word;
+            string rest = word.Replace(Glue, ' ');
             while (true)
             {
                 string glue = fresh || line.EndsWith(' ') ? string.Empty : " ";

@@ -65,9 +65,9 @@ internal static class FindingText
     }
 
     /// <summary>A value with its unit; temperatures in degrees Celsius.</summary>
-    public static string Value(double si, string? unit) => unit == "K"
+    public static string Value(double si, string? unit, int digits = 4) => (unit == "K"
         ? string.Create(CultureInfo.InvariantCulture, $"{si - Temperature.CelsiusZero:0.0} degC")
-        : EngineeringNotation.Format(si, unit ?? string.Empty, 4);
+        : EngineeringNotation.Format(si, unit ?? string.Empty, digits)).Replace(' ', Columns80.Glue);
 
     /// <summary>The corner in words.</summary>
     public static string Corner(Finding f)

@@ -36,9 +36,33 @@ internal static class JsonChannel
             json.WriteNull("nominal");
         }
 
+        if (channel.TestLimits is { } limits)
+        {
+            json.WriteStartObject("testLimits");
+            json.Real("supply", limits.Supply);
+            json.Real("ambient", TestLimits.Ambient);
+            WriteRange(json, "baseVoltage", limits.BaseVoltage);
+            WriteRange(json, "senseVoltage", limits.SenseVoltage);
+            WriteRange(json, "collectorVoltage", limits.CollectorVoltage);
+            WriteRange(json, "loadCurrent", limits.LoadCurrent);
+            json.WriteEndObject();
+        }
+        else
+        {
+            json.WriteNull("testLimits");
+        }
+
         json.Text("derating", channel.Derating);
         json.Whole("cornersSolved", channel.CornersSolved);
         json.Whole("notSolved", channel.NotSolved);
+    }
+
+    private static void WriteRange(Utf8JsonWriter json, string name, ValueRange range)
+    {
+        json.WriteStartObject(name);
+        json.Real("min", range.Min);
+        json.Real("max", range.Max);
+        json.WriteEndObject();
     }
 
     private static void WriteNominal(Utf8JsonWriter json, SolvedState nominal, BoundChannel reading)

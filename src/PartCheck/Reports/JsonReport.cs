@@ -45,12 +45,46 @@ public static class JsonReport
         json.Text("derating", board.Derating);
         json.List("channels", board.Channels, JsonChannel.Write);
         json.List("findings", FindingOrder.WorstFirst(board), JsonFinding.Write);
+        if (board.Totals is { } totals)
+        {
+            json.WriteStartObject("totals");
+            WriteTotals(json, totals);
+            json.WriteEndObject();
+        }
+        else
+        {
+            json.WriteNull("totals");
+        }
+
         json.Text("deratingNote", board.DeratingNote);
         json.Texts("cautions", board.Cautions);
         json.Texts("rules", board.Rules);
         json.Texts("rulesNotJudged", board.RulesNotJudged);
         json.List("assumed", board.Assumed, WriteAssumed);
         json.List("advice", board.Advice, WriteAdvice);
+    }
+
+    private static void WriteTotals(Utf8JsonWriter json, BoardTotals totals)
+    {
+        json.WriteStartObject("supplyCurrent");
+        json.Real("min", totals.SupplyMin);
+        json.Real("max", totals.SupplyMax);
+        json.WriteEndObject();
+        json.WriteStartObject("heat");
+        json.Real("max", totals.HeatMax);
+        json.WriteEndObject();
+        json.List("pins", totals.Pins, (into, pin) =>
+        {
+            into.Text("pin", pin.Pin);
+            into.Real("current", pin.Current);
+        });
+        json.List("hottest", totals.Hottest, (into, part) =>
+        {
+            into.Text("channel", part.Channel);
+            into.Text("reference", part.Reference);
+            into.Real("junctionTemperature", part.Tj);
+        });
+        json.Texts("without", totals.Without);
     }
 
     private static void WriteAssumed(Utf8JsonWriter json, AssumedValue assumed)

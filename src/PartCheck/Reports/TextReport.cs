@@ -66,6 +66,12 @@ public static class TextReport
         NotVerified(text, board.Findings.Where(f => f.Verdict == Verdict.NotVerified));
         Channels(text, board);
         Conforming(text, board);
+        Bench(text, board);
+        if (board.Totals is { } totals)
+        {
+            Totals(text, totals);
+        }
+
         Columns80.Wrap(text, string.Empty, "Rules judged: " + string.Join(", ", board.Rules) + ".", 2);
         if (board.RulesNotJudged.Count > 0)
         {
@@ -137,7 +143,7 @@ public static class TextReport
         foreach (ChannelJudgement c in board.Channels)
         {
             string current = c.LoadCurrent is { } i
-                ? $"{EngineeringNotation.Format(i.Min, "A", 3)} .. {EngineeringNotation.Format(i.Nominal, "A", 3)} .. {EngineeringNotation.Format(i.Max, "A", 3)}"
+                ? $"{FindingText.Value(i.Min, "A", 3)} .. {FindingText.Value(i.Nominal, "A", 3)} .. {FindingText.Value(i.Max, "A", 3)}"
                 : "not solved";
             string word = VerdictWords.Of(c.Verdict);
             string table = c.Derating == board.Derating ? string.Empty : $" (derating {c.Derating})";
@@ -145,6 +151,40 @@ public static class TextReport
         }
 
         text.Append('\n');
+    }
+
+    private static void Bench(StringBuilder text, BoardReport board)
+    {
+        List<ChannelJudgement> solved = [.. board.Channels.Where(c => c.TestLimits is not null)];
+        if (solved.Count == 0)
+        {
+            return;
+        }
+
+        text.Append("On the bench, at 25 degC and mean supply, a good channel measures\n");
+        foreach (ChannelJudgement c in solved)
+        {
+            OperatingPoints.TestLimits l = c.TestLimits!;
+            Columns80.Wrap(
+                text, $"  {c.Channel} ",
+                $"at {FindingText.Value(l.Supply, "V")}: load {Range(l.LoadCurrent, "A")}; sense {Range(l.SenseVoltage, "V")}; base {Range(l.BaseVoltage, "V")}; collector {Range(l.CollectorVoltage, "V")}",
+                4);
+        }
+
+        text.Append('\n');
+    }
+
+    private static string Range(OperatingPoints.ValueRange range, string unit) =>
+        $"{FindingText.Value(range.Min, unit, 3)} .. {FindingText.Value(range.Max, unit, 3)}";
+
+    private static void Totals(StringBuilder text, BoardTotals totals)
+    {
+        string without = totals.Without.Count == 0 ? string.Empty : $" (without {string.Join(", ", totals.Without)})";
+        Columns80.Wrap(
+            text, string.Empty,
+            $"Board{without}: load supplies {FindingText.Value(totals.SupplyMin, "A", 3)} .. {FindingText.Value(totals.SupplyMax, "A", 3)}; heat of its parts up to {FindingText.Value(totals.HeatMax, "W", 3)}; hottest "
+            + string.Join(", ", totals.Hottest.Select(h => $"{h.Reference} {FindingText.Value(h.Tj, "K")}")) + ".",
+            2);
     }
 
     private static string WorstOf(ChannelJudgement channel, BoardReport board)

@@ -70,6 +70,12 @@ public static class ChannelAssembly
             LoadCurrent = worst?.Nominal is { } nominal && readings.All(r => double.IsFinite(r.LoadMin))
                 ? new LoadCurrentRange(readings.Min(r => r.LoadMin), nominal.LoadCurrent, readings.Max(r => r.LoadMax))
                 : null,
+            TestLimits = readings.Count > 0 && readings.All(r => r.TestLimits is not null)
+                ? readings.Select(r => r.TestLimits!).Aggregate((a, b) => a.Union(b))
+                : null,
+            HeatMax = readings.Count > 0 ? readings.Max(r => r.HeatMax) : null,
+            Hottest = [.. readings.SelectMany(r => r.Hottest).GroupBy(h => h.Reference, StringComparer.Ordinal)
+                .Select(g => (g.Key, g.Max(h => h.Tj))).OrderByDescending(h => h.Item2).ThenBy(h => h.Key, StringComparer.Ordinal)],
             Nominal = worst?.Nominal,
             Reading = worst?.Channel,
             CornersSolved = readings.Sum(r => r.Corners),

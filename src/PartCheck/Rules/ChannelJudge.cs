@@ -76,7 +76,29 @@ public sealed class ChannelJudge
         }
 
         SolvedState? nominal = WorstCase.Nominal(model, pin);
-        return new ReadingJudgement(model.Channel, Findings(total), nominal, total.LoadMin, total.LoadMax, total.PinMax, total.Corners, total.NotSolved + (nominal is null ? 1 : 0));
+        return new ReadingJudgement(model.Channel, Findings(total), nominal, total.LoadMin, total.LoadMax, total.PinMax, total.Corners, total.NotSolved + (nominal is null ? 1 : 0))
+        {
+            HeatMax = total.HeatMax,
+            Hottest = [.. Enumerable.Range(0, model.Slots.Count).Where(s => total.Hottest[s] > 0)
+                .SelectMany(s => model.Slots.Of(s).Select(p => (p.Reference, total.Hottest[s])))],
+        };
+    }
+
+    /// <summary>Heat of everything on the board that belongs to the channel, the load left out [W].</summary>
+    private static double Heat(SolvedState state)
+    {
+        double sum = 0;
+        foreach (TransistorPoint point in (TransistorPoint[])state.Transistors)
+        {
+            sum += point.Power * (point.Role == Role.Pass ? point.Count : 1);
+        }
+
+        for (int i = 0; i < state.Resistors.Count; i++)
+        {
+            sum += state.Resistors[i].Power * state.Resistors[i].Count;
+        }
+
+        return sum;
     }
 
     private void Visit(Accumulator into, SolvedState state)
@@ -93,6 +115,11 @@ public sealed class ChannelJudge
         {
             into.LoadMin = Math.Min(into.LoadMin, state.LoadCurrent);
             into.LoadMax = Math.Max(into.LoadMax, state.LoadCurrent);
+            into.HeatMax = Math.Max(into.HeatMax, Heat(state));
+            foreach (TransistorPoint point in (TransistorPoint[])state.Transistors)
+            {
+                into.Hottest[point.Slot] = Math.Max(into.Hottest[point.Slot], point.Tj);
+            }
         }
 
         into.PinMax = Math.Max(into.PinMax, state.PinCurrent);
@@ -231,6 +258,10 @@ public sealed class ChannelJudge
 
         public double PinMax { get; set; }
 
+        public double HeatMax { get; set; }
+
+        public double[] Hottest { get; } = new double[slots];
+
         public Worst At(int rule, int slot) => worst[(rule * slots) + slot] ??= new Worst();
 
         public void Merge(Accumulator later)
@@ -240,6 +271,12 @@ public sealed class ChannelJudge
             LoadMin = Math.Min(LoadMin, later.LoadMin);
             LoadMax = Math.Max(LoadMax, later.LoadMax);
             PinMax = Math.Max(PinMax, later.PinMax);
+            HeatMax = Math.Max(HeatMax, later.HeatMax);
+            for (int s = 0; s < slots; s++)
+            {
+                Hottest[s] = Math.Max(Hottest[s], later.Hottest[s]);
+            }
+
             for (int i = 0; i < worst.Length; i++)
             {
                 if (later.worst[i] is { } other)
@@ -262,4 +299,14 @@ public sealed class ChannelJudge
 /// <param name="NotSolved">Corners that the solver gave up on.</param>
 public sealed record ReadingJudgement(
     BoundChannel Channel, IReadOnlyList<Finding> Findings, SolvedState? Nominal, double LoadMin, double LoadMax, double PinMax,
-    int Corners, int NotSolved);
+    int Corners, int NotSolved)
+{
+    /// <summary>Largest heat of the channel's parts on the board, the load left out [W].</summary>
+    public double HeatMax { get; init; }
+
+    /// <summary>Each transistor with its highest junction temperature [K].</summary>
+    public IReadOnlyList<(string Reference, double Tj)> Hottest { get; init; } = [];
+
+    /// <summary>What a good channel measures on the bench; null: not solved.</summary>
+    public TestLimits? TestLimits { get; init; }
+}

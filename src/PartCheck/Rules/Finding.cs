@@ -97,6 +97,15 @@ public sealed record ChannelJudgement
     /// <summary>The reading of the bill that <see cref="Nominal"/> belongs to (the worst one), for its references.</summary>
     public BoundChannel? Reading { get; init; }
 
+    /// <summary>What a good channel measures on the bench; null: not solved.</summary>
+    public TestLimits? TestLimits { get; init; }
+
+    /// <summary>Largest heat of the channel's parts on the board, the load left out [W]; null: not solved.</summary>
+    public double? HeatMax { get; init; }
+
+    /// <summary>Each transistor with its highest junction temperature [K], hottest first.</summary>
+    public IReadOnlyList<(string Reference, double Tj)> Hottest { get; init; } = [];
+
     /// <summary>Corners solved, over all states and readings.</summary>
     public int CornersSolved { get; init; }
 

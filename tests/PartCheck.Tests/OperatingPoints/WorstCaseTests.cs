@@ -1,7 +1,9 @@
 using PartCheck.Channels;
+using PartCheck.Derating;
 using PartCheck.OperatingPoints;
 using PartCheck.Parts;
 using PartCheck.Quantities;
+using PartCheck.Rules;
 using Xunit;
 
 namespace PartCheck.Tests.OperatingPoints;
@@ -78,6 +80,33 @@ public class WorstCaseTests
         channel = channel with { Legs = [channel.Legs[0] with { Pass = channel.Legs[0].Pass with { Part = part } }] };
         ChannelBox box = new(new ChannelModel(channel, p => new TransistorVariants(p)), new PinSource(channel.Logic), ChannelState.On, -1);
         Assert.All(Enumerable.Range(0, box.Count), i => Assert.Equal(0, box.At(i).Corner.Heat));
+    }
+
+    /// <summary>What the bench measures holds the nominal state and lies inside what the whole box allows.</summary>
+    [Theory]
+    [InlineData(1)]
+    [InlineData(2)]
+    public void BenchLimitsHoldTheNominalStateInsideTheWholeBox(int legs)
+    {
+        BoundChannel channel = SampleChannel.Channel(legs, feed: legs == 1 ? 4700 : 1500);
+        PinSource pin = new(channel.Logic);
+        TestLimits? limits = TestLimits.Of(channel, p => new TransistorVariants(p), pin, 0, TestContext.Current.CancellationToken);
+        ChannelModel model = new(channel, p => new TransistorVariants(p));
+        SolvedState? nominal = WorstCase.Nominal(model, pin);
+        Assert.NotNull(limits);
+        Assert.NotNull(nominal);
+        Assert.Equal(24, limits.Supply, 9);
+        Assert.InRange(nominal.LoadCurrent, limits.LoadCurrent.Min, limits.LoadCurrent.Max);
+        Assert.InRange(nominal.BaseVoltage, limits.BaseVoltage.Min, limits.BaseVoltage.Max);
+        Assert.InRange(nominal.CollectorVoltage, limits.CollectorVoltage.Min, limits.CollectorVoltage.Max);
+        Assert.InRange(nominal.Transistors[0].SenseVoltage, limits.SenseVoltage.Min, limits.SenseVoltage.Max);
+
+        ReadingJudgement judged = new ChannelJudge(model, DeratingLibrary.Named("ratings")!).Judge(pin, 0, TestContext.Current.CancellationToken);
+        Assert.InRange(limits.LoadCurrent.Min, judged.LoadMin, limits.LoadCurrent.Max);
+        Assert.InRange(limits.LoadCurrent.Max, limits.LoadCurrent.Min, judged.LoadMax);
+
+        // Everything that is taken from the supply and not by the load heats the board's parts: 25.2 V - 16 V at most.
+        Assert.InRange(judged.HeatMax, 0.5 * judged.LoadMax * (25.2 - 16), judged.LoadMax * (25.2 - 15) + 0.05);
     }
 
     // cmos: (4.75 - 4.2) V / 8 mA = 68.75 ohm; with 2 mA drawn by others the level falls by 0.1375 V. Of two pairs the smaller

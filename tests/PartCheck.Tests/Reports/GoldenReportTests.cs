@@ -113,11 +113,14 @@ public class GoldenReportTests
                         new ChannelJudgement
                         {
                             Channel = "BENCH", Verdict = Verdict.Nonconforming, Derating = "workshop", LoadCurrent = new LoadCurrentRange(0.0141, 0.0176, 0.0213),
-                            CornersSolved = 3842, Findings = findings, Assumed = [],
+                            CornersSolved = 3842, Findings = findings, Assumed = [], HeatMax = 0.31,
+                            TestLimits = new TestLimits(24, new ValueRange(1.14, 1.37), new ValueRange(0.545, 0.649), new ValueRange(5.17, 6.84), new ValueRange(0.0151, 0.0199)),
+                            Hottest = [("Q1", 473.15)],
                         },
                         new ChannelJudgement { Channel = "SHELF", Verdict = Verdict.NotVerified, Derating = "ratings", Findings = [], Assumed = [], NotSolved = 1 },
                     ],
                     Findings = findings,
+                    Totals = new BoardTotals(0.0141, 0.0213, 0.31, [("LAMP_A", 0.0031)], [("BENCH", "Q1", 473.15)], ["SHELF"]),
                     Rules = ["vce", "power", "junction", "drive", "pin-current", "bill"],
                     RulesNotJudged = ["off"],
                     Assumed = [new AssumedValue("TCR", "RK-33", "200 ppm/K", ["BENCH", "SHELF"]), new AssumedValue("LEDs", "BENCH", "6", ["BENCH"])],
