@@ -335,7 +335,7 @@ public static class CheckRun
         {
             List<ChannelJudgement> channels = [.. judged.Select(j => ChannelAssembly.Assemble(
                 j.Channel, j.Derating.Name, j.Readings, j.MissingData, [.. billFindings, .. pinFindings],
-                [.. j.Channel.Assumed, .. j.Models.SelectMany(m => m.Assumed)]))];
+                [.. j.Channel.Assumed, .. j.Models.SelectMany(m => m.Assumed), .. j.Readings.SelectMany(r => r.Assumed)]))];
             List<string> names = [.. channels.Select(c => c.Channel)];
             IReadOnlyList<Finding> all = FindingOrder.WorstFirst(
                 [.. channels.SelectMany(c => c.Findings), .. billFindings, .. pinFindings], names, RuleBook.Order);

@@ -42,6 +42,27 @@ public class ExampleTests
         Assert.Contains("given up: 0", run.Flat, StringComparison.Ordinal);
     }
 
+    [Fact]
+    public async Task ThePorchLampConformsAndNothingIsAssumed()
+    {
+        Run run = await Run.Of("check", Path.Combine(Root(), "examples", "porch-lamp"), "--format", "json");
+        Assert.True(run.Code == 0, run.Output);
+        using JsonDocument document = JsonDocument.Parse(run.Output);
+        JsonElement board = document.RootElement.GetProperty("boards")[0];
+        Assert.Empty(board.GetProperty("assumed").EnumerateArray());
+        Assert.Contains("off", board.GetProperty("findings").EnumerateArray().Select(f => f.GetProperty("rule").GetString()));
+    }
+
+    /// <summary>Every folder of examples is a test: one of these names it, and each has a README that gives its command.</summary>
+    [Fact]
+    public void EveryExampleIsRun()
+    {
+        IEnumerable<string?> folders = Directory.GetDirectories(Path.Combine(Root(), "examples")).Select(Path.GetFileName);
+        Assert.Equal(["greenhouse-lamps", "porch-lamp"], folders.Order(StringComparer.Ordinal));
+        Assert.All(folders, f => Assert.Contains(
+            "dotnet run --project src/PartCheck.Cli -- check examples/" + f, File.ReadAllText(Path.Combine(Root(), "examples", f!, "README.md")), StringComparison.Ordinal));
+    }
+
     private static void AssertVerdicts(string json)
     {
         using JsonDocument document = JsonDocument.Parse(json);

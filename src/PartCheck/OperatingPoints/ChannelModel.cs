@@ -120,11 +120,6 @@ public sealed class ChannelModel
                 .Select(p => new Assumption("VBE match between legs", p.Part.PartNumber, "the whole window")));
         }
 
-        if (Control.MinPoints.Count > 0)
-        {
-            assumed.Add(new Assumption("hFE of the control far below its points", Control.Part.PartNumber, "the outermost value held"));
-        }
-
         if (!CouplingGiven && Heats)
         {
             assumed.Add(new Assumption("Coupling", Channel.Name, "both 0 and 0.2 RthJA of the hottest leg"));

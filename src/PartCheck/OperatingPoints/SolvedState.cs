@@ -196,6 +196,9 @@ public sealed class SolvedState
     /// <summary>False where a pass transistor's current lies beyond a factor 3 of its gain points.</summary>
     public bool GainGuaranteed { get; init; } = true;
 
+    /// <summary>False where the control's current lies beyond a factor 3 of its gain points: the outermost value is held.</summary>
+    public bool ControlGainGuaranteed { get; init; } = true;
+
     /// <summary>True where supply is at its minimum and load drop at its maximum.</summary>
     public bool LowestHeadroom { get; init; }
 

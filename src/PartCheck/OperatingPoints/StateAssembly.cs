@@ -41,6 +41,7 @@ internal static class StateAssembly
             PinCurrent = point.PinCurrent,
             PinGuaranteed = at.Strong || point.PinCurrent + pin.Others <= pin.GuaranteedCurrent,
             GainGuaranteed = gain,
+            ControlGainGuaranteed = model.Control.GainHolds(point.Control.Ic, at.Corner.Control.Hfe),
             LowestHeadroom = at.LowestHeadroom && state == ChannelState.On,
             Transistors = transistors,
             Resistors = resistors,

@@ -79,6 +79,9 @@ public sealed class ChannelJudge
         return new ReadingJudgement(model.Channel, Findings(total), nominal, total.LoadMin, total.LoadMax, total.PinMax, total.Corners, total.NotSolved + (nominal is null ? 1 : 0))
         {
             HeatMax = total.HeatMax,
+            Assumed = total.ControlHeld
+                ? [new Assumption("hFE of the control beyond its points", model.Control.Part.PartNumber, "the outermost value held")]
+                : [],
             Hottest = [.. Enumerable.Range(0, model.Slots.Count).Where(s => total.Hottest[s] > 0)
                 .SelectMany(s => model.Slots.Of(s).Select(p => (p.Reference, total.Hottest[s])))],
         };
@@ -116,6 +119,7 @@ public sealed class ChannelJudge
             into.LoadMin = Math.Min(into.LoadMin, state.LoadCurrent);
             into.LoadMax = Math.Max(into.LoadMax, state.LoadCurrent);
             into.HeatMax = Math.Max(into.HeatMax, Heat(state));
+            into.ControlHeld |= !state.ControlGainGuaranteed;
             foreach (TransistorPoint point in (TransistorPoint[])state.Transistors)
             {
                 into.Hottest[point.Slot] = Math.Max(into.Hottest[point.Slot], point.Tj);
@@ -260,6 +264,8 @@ public sealed class ChannelJudge
 
         public double HeatMax { get; set; }
 
+        public bool ControlHeld { get; set; }
+
         public double[] Hottest { get; } = new double[slots];
 
         public Worst At(int rule, int slot) => worst[(rule * slots) + slot] ??= new Worst();
@@ -272,6 +278,7 @@ public sealed class ChannelJudge
             LoadMax = Math.Max(LoadMax, later.LoadMax);
             PinMax = Math.Max(PinMax, later.PinMax);
             HeatMax = Math.Max(HeatMax, later.HeatMax);
+            ControlHeld |= later.ControlHeld;
             for (int s = 0; s < slots; s++)
             {
                 Hottest[s] = Math.Max(Hottest[s], later.Hottest[s]);
@@ -309,4 +316,7 @@ public sealed record ReadingJudgement(
 
     /// <summary>What a good channel measures on the bench; null: not solved.</summary>
     public TestLimits? TestLimits { get; init; }
+
+    /// <summary>What the solved corners turned out to assume.</summary>
+    public IReadOnlyList<Assumption> Assumed { get; init; } = [];
 }
