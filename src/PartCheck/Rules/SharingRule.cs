@@ -70,7 +70,7 @@ public sealed class SharingRule : ChannelRule
         }
 
         double allowed = (channel.Conditions.SharingMax ?? rows.Own.Limit ?? 1) - 1;
-        return sum > 0 ? Stress.AtMostOf((most * legs / sum) - 1, allowed) : Stress.AtMostOf(0, allowed);
+        return sum > 0 ? Stress.AtMostOf((most * legs / sum) - 1, allowed) : Stress.NotVerified("a current through the legs");
     }
 
     /// <inheritdoc/>
