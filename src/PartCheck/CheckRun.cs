@@ -4,6 +4,7 @@ using PartCheck.Channels;
 using PartCheck.Derating;
 using PartCheck.OperatingPoints;
 using PartCheck.Parts;
+using PartCheck.Quantities;
 using PartCheck.Reports;
 using PartCheck.Rules;
 using PartCheck.Sheets;
@@ -132,6 +133,7 @@ public static class CheckRun
             IReadOnlyList<JudgedChannel> judged = JudgeChannels(channels, derating, cancel);
             IReadOnlyList<Finding> pinFindings = JudgePins(judged, derating);
             AddAdvice(bill, channels);
+            AddCircuitAdvice(channels);
             return Report(derating, judged, billFindings, pinFindings);
         }
 
@@ -311,6 +313,38 @@ public static class CheckRun
                 if (channels.Any(c => c.References.Any(r => line.References.Contains(r, StringComparer.OrdinalIgnoreCase))))
                 {
                     advice.Add(new Advice(null, line.References[0], $"Alternates {string.Join(", ", line.Alternates)} of this line are not judged by this version."));
+                }
+            }
+        }
+
+        /// <summary>Remarks on parts and circuits that no rule judges.</summary>
+        private void AddCircuitAdvice(IReadOnlyList<Channel> channels)
+        {
+            List<string> floating = [.. channels.Where(c => c.Readings.Count > 0 && c.Readings[0].PullDown is null).Select(c => c.Name)];
+            if (floating.Count > 0)
+            {
+                advice.Add(new Advice(null, null, $"{string.Join(", ", floating)}: no pull-down; while the pin floats at reset nothing holds the channel off."));
+            }
+
+            IEnumerable<Part> used = channels.SelectMany(c => c.Readings).SelectMany(r => r.Legs
+                .SelectMany(l => new[] { l.Pass, l.Sense, l.Averaging }).Append(r.Control).Append(r.Feed).Append(r.PullDown))
+                .OfType<Placement>().Select(p => p.Part).Distinct().OrderBy(p => p.PartNumber, StringComparer.Ordinal);
+            foreach (Part part in used)
+            {
+                if (part.Lifecycle is { } lifecycle && !lifecycle.Equals("active", StringComparison.OrdinalIgnoreCase))
+                {
+                    advice.Add(new Advice(null, null, $"{part.PartNumber}: lifecycle \"{lifecycle}\"."));
+                }
+
+                if (part.Stock is 0)
+                {
+                    advice.Add(new Advice(null, null, $"{part.PartNumber}: none in stock."));
+                }
+
+                if (part is ResistorPart { Resistance.Value.Ohms: > 0 and var ohms }
+                    && !PreferredValues.Contains(PreferredSeries.E24, ohms) && !PreferredValues.Contains(PreferredSeries.E96, ohms))
+                {
+                    advice.Add(new Advice(null, null, $"{part.PartNumber}: {EngineeringNotation.Format(ohms, "ohm")} is neither an E24 nor an E96 value."));
                 }
             }
         }

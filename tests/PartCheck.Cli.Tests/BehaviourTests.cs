@@ -114,6 +114,21 @@ public class BehaviourTests
         Assert.Contains("CH1 not verified", bad.Flat, StringComparison.Ordinal);
     }
 
+    [Fact]
+    public async Task AdviceIsSaidAndIsNoVerdict()
+    {
+        using BoardFolder board = new(
+            bill: BoardFolder.Bill.Replace("RK-33,1,33,", "RK-33,1,33.5,", StringComparison.Ordinal),
+            parts: string.Join('\n', BoardFolder.Parts.Split('\n').Select((l, i) => l.TrimEnd() + (i == 0 ? ",Lifecycle,Stock" : i == 1 ? ",last time buy,0" : ",active,5000")))
+                .Replace(",33,1%", ",33.5,1%", StringComparison.Ordinal));
+        Run run = await board.Check();
+        Assert.Equal(0, run.Code);
+        Assert.Contains("CH1: no pull-down", run.Flat, StringComparison.Ordinal);
+        Assert.Contains("TQ-31: lifecycle \"last time buy\".", run.Flat, StringComparison.Ordinal);
+        Assert.Contains("TQ-31: none in stock.", run.Flat, StringComparison.Ordinal);
+        Assert.Contains("RK-33: 33.5 ohm is neither an E24 nor an E96 value.", run.Flat, StringComparison.Ordinal);
+    }
+
     private static async Task<JsonElement[]> Findings(BoardFolder board, string rule)
     {
         Run run = await board.Check("--format", "json");
