@@ -56,7 +56,15 @@ public sealed class OffRule : ChannelRule
             }
         }
 
-        return Stress.AtMostOf(state.LoadCurrent, channel.Conditions.OffCurrentMax?.Amperes ?? 0);
+        if (channel.Conditions.OffCurrentMax is not { } limit)
+        {
+            return Stress.NotVerified("Off current max");
+        }
+
+        // An assumed VBE and a tolerance solved as zero can refuse, but not clear.
+        Stress stress = Stress.AtMostOf(state.LoadCurrent, limit.Amperes);
+        string? missing = MissingData.Vbe(state) ?? MissingData.Tolerance(state);
+        return stress.Verdict == Verdict.Conforms && missing is not null ? Stress.NotVerified(missing) : stress;
     }
 
     /// <inheritdoc/>

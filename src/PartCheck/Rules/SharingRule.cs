@@ -27,7 +27,7 @@ public sealed class SharingRule : ChannelRule
 
     /// <inheritdoc/>
     public override bool Asked(BoundChannel channel, in RuleRows rows) =>
-        channel is { Legs.Count: > 1 } && (channel.Conditions.SharingMax ?? rows.Own.Limit) is > 1;
+        channel is { Legs.Count: > 1 } && (channel.Conditions.SharingMax ?? rows.Own.Limit) is not null;
 
     /// <inheritdoc/>
     public override bool Reads(SolvedState state)
@@ -37,18 +37,18 @@ public sealed class SharingRule : ChannelRule
             return false;
         }
 
-        // With a match given, an odd leg elsewhere in the window is of another lot.
+        // With a match given for every leg, an odd leg elsewhere in the window is of another lot.
         bool match = state.Corner.OddPass.Vbe == Extreme.Match;
         for (int i = 0; i < state.Transistors.Count; i++)
         {
             TransistorPoint point = state.Transistors[i];
-            if (point is { Role: Role.Pass, Part.VbeMatch: not null })
+            if (point is { Role: Role.Pass, Part.VbeMatch: null })
             {
-                return match;
+                return !match;
             }
         }
 
-        return !match;
+        return match;
     }
 
     /// <inheritdoc/>
@@ -69,8 +69,21 @@ public sealed class SharingRule : ChannelRule
             }
         }
 
-        double allowed = (channel.Conditions.SharingMax ?? rows.Own.Limit ?? 1) - 1;
-        return sum > 0 ? Stress.AtMostOf((most * legs / sum) - 1, allowed) : Stress.NotVerified("a current through the legs");
+        if ((channel.Conditions.SharingMax ?? rows.Own.Limit) is not { } limit)
+        {
+            return Stress.NotVerified("Sharing max");
+        }
+
+        if (!(sum > 0))
+        {
+            return Stress.NotVerified("a current through the legs");
+        }
+
+        Stress stress = Stress.AtMostOf((most * legs / sum) - 1, limit - 1);
+
+        // A missing tolerance was solved as zero, missing thermal data as the cold start alone: they can refuse, but not clear.
+        string? missing = MissingData.Tolerance(state) ?? MissingData.Heat(state);
+        return stress.Verdict == Verdict.Conforms && missing is not null ? Stress.NotVerified(missing) : stress;
     }
 
     /// <inheritdoc/>

@@ -8,7 +8,8 @@ namespace PartCheck.Rules;
 /// <summary>
 /// The pair (VCE, IC) inside the DC boundary of the safe operating area, state on, where the table gives one. Allowed current [A]:
 /// log-log between the points, the IC rating below the first, nothing above the last; times (Tmax - T)/(Tmax - 25 degC), at most 1,
-/// times factor. T is the ambient, or the case at Tj - P RthJC.
+/// times factor. T is the ambient, or the case at Tj - P RthJC, never cooler than the ambient (just switched on Tj is the ambient); what
+/// the case reaches is not known without RthJA.
 /// </summary>
 public sealed class SoaRule : TransistorRule
 {
@@ -52,12 +53,15 @@ public sealed class SoaRule : TransistorRule
                 return Stress.NotVerified("RthJC of " + part.PartNumber);
             }
 
-            temperature = point.Tj - (point.Power * rth.Value.KelvinsPerWatt);
+            temperature = Math.Max(temperature, point.Tj - (point.Power * rth.Value.KelvinsPerWatt));
         }
 
         double share = (max.Value.Kelvins - temperature) / (max.Value.Kelvins - PhysicalConstants.RoomTemperature);
         double allowed = Boundary(boundary.Value, rating.Value.Amperes, point.Vce) * Math.Clamp(share, 0, 1) * rows.Own.Factor;
-        return Stress.AtMostOf(point.Ic, allowed);
+        Stress stress = Stress.AtMostOf(point.Ic, allowed);
+        return part.SoaAtCase && stress.Verdict == Verdict.Conforms && MissingData.Heat(state) is { } missing
+            ? Stress.NotVerified(missing)
+            : stress;
     }
 
     /// <inheritdoc/>

@@ -49,7 +49,10 @@ public sealed class StabilityRule : TransistorRule
         double thermal = point.Vce * point.RthJa * Math.Abs(point.VbeSlope);
         double electrical = point.Ballast + point.EmitterResistance + (PhysicalConstants.ThermalVoltage(point.Tj) / point.Ic)
             + (point.BaseResistance * Math.Max(point.Ib, 0) / point.Ic);
-        return Stress.AtMostOf(thermal / electrical, rows.Own.Factor);
+        Stress stress = Stress.AtMostOf(thermal / electrical, rows.Own.Factor);
+
+        // Without thermal data of any transistor the cold start alone was solved: it can refuse, but not clear.
+        return stress.Verdict == Verdict.Conforms && MissingData.Heat(state) is { } missing ? Stress.NotVerified(missing) : stress;
     }
 
     /// <inheritdoc/>

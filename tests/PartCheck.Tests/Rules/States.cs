@@ -45,6 +45,26 @@ internal static class States
     public static Stress Judge(ChannelRule rule, SolvedState state, BoundChannel? channel = null) =>
         rule.Evaluate(state, channel ?? Channel, Rows(rule, null));
 
+    /// <summary>The state of several legs, the odd one first.</summary>
+    public static SolvedState OfLegs(Extreme oddVbe, params TransistorPoint[] legs)
+    {
+        SolvedState one = Of();
+        return new SolvedState
+        {
+            State = ChannelState.On,
+            Corner = one.Corner with { OddPass = new TransistorCorner(oddVbe, Extreme.Min) },
+            Transistors = legs,
+            Resistors = [],
+        };
+    }
+
+    public static Stress Judge(ChannelRule rule, SolvedState state, DeratingRow row, BoundChannel channel) =>
+        rule.Evaluate(state, channel, Rows(rule, row));
+
+    public static bool Asks(TransistorRule rule, Transistor part, BoundChannel channel) => rule.Asked(part, channel, Rows(rule, null));
+
+    public static bool Asks(ChannelRule rule, BoundChannel channel, DeratingRow? row = null) => rule.Asked(channel, Rows(rule, row));
+
     public static DeratingRow Row(string rule, double factor = 1, double offset = 0, double? cap = null, ZeroTemperature zero = ZeroTemperature.Rated) => new()
     {
         Rule = rule,
