@@ -13,9 +13,21 @@ internal sealed class TypedBoard
 
     public Dictionary<string, string> Row { get; } = new(StringComparer.Ordinal)
     {
-        ["Channel"] = "CH1", ["Supply min"] = "11.4", ["Supply max"] = "12.6", ["Load drop min"] = "8.5", ["Load drop max"] = "9.5",
-        ["LEDs"] = "3", ["Current min"] = "12mA", ["Current max"] = "28mA", ["Logic"] = "P5", ["Ambient min"] = "0", ["Ambient max"] = "45",
-        ["Pass"] = "Q1", ["Sense"] = "R1", ["Control"] = "Q2", ["Feed"] = "R2",
+        ["Channel"] = "CH1",
+        ["Supply min"] = "11.4",
+        ["Supply max"] = "12.6",
+        ["Load drop min"] = "8.5",
+        ["Load drop max"] = "9.5",
+        ["LEDs"] = "3",
+        ["Current min"] = "12mA",
+        ["Current max"] = "28mA",
+        ["Logic"] = "P5",
+        ["Ambient min"] = "0",
+        ["Ambient max"] = "45",
+        ["Pass"] = "Q1",
+        ["Sense"] = "R1",
+        ["Control"] = "Q2",
+        ["Feed"] = "R2",
     };
 
     /// <summary>Rows of the channels sheet after the first; each a change to it.</summary>
