@@ -10,17 +10,17 @@ internal static class CheckCommand
 {
     public static Command Build(TextWriter output, TextWriter error, bool colour)
     {
-        Argument<string[]> boards = new("BOARD") { Description = "Workbook, or folder with bom.csv and channels.csv", Arity = ArgumentArity.OneOrMore };
-        Option<string[]> parts = new("--parts") { Description = "Part tables (default: the board's own)", HelpName = "FILE", AllowMultipleArgumentsPerToken = false };
-        Option<string?> bill = new("--bill") { Description = "Bill of materials apart from the board", HelpName = "FILE[:SHEET]" };
-        Option<string?> channels = new("--channels") { Description = "Channels apart from the board", HelpName = "FILE[:SHEET]" };
-        Option<string?> derating = new("--derating") { Description = "Derating table (default: workshop)", HelpName = "NAME|FILE" };
-        Option<string?> pins = new("--pins") { Description = "Logic pins (default: the board's, else the project's own)", HelpName = "FILE" };
-        Option<string?> columns = new("--columns") { Description = "Further header spellings", HelpName = "FILE" };
-        Option<string?> encoding = new("--encoding") { Description = "Text encoding of CSV files (default: found out)", HelpName = "NAME" };
+        Argument<string[]> boards = UsageError.NoOption(new Argument<string[]>("BOARD") { Description = "Workbook, or folder with bom.csv and channels.csv", Arity = ArgumentArity.OneOrMore });
+        Option<string[]> parts = UsageError.NoOption(new Option<string[]>("--parts") { Description = "Part tables (default: the board's own)", HelpName = "FILE", AllowMultipleArgumentsPerToken = false });
+        Option<string?> bill = UsageError.NoOption(new Option<string?>("--bill") { Description = "Bill of materials apart from the board", HelpName = "FILE[:SHEET]" });
+        Option<string?> channels = UsageError.NoOption(new Option<string?>("--channels") { Description = "Channels apart from the board", HelpName = "FILE[:SHEET]" });
+        Option<string?> derating = UsageError.NoOption(new Option<string?>("--derating") { Description = "Derating table (default: workshop)", HelpName = "NAME|FILE" });
+        Option<string?> pins = UsageError.NoOption(new Option<string?>("--pins") { Description = "Logic pins (default: the board's, else the project's own)", HelpName = "FILE" });
+        Option<string?> columns = UsageError.NoOption(new Option<string?>("--columns") { Description = "Further header spellings", HelpName = "FILE" });
+        Option<string?> encoding = UsageError.NoOption(new Option<string?>("--encoding") { Description = "Text encoding of CSV files (default: found out)", HelpName = "NAME" });
         Option<string> format = new("--format") { Description = "text or json", HelpName = "FORMAT", DefaultValueFactory = _ => "text" };
         format.AcceptOnlyFromAmong("text", "json");
-        Option<string?> file = new("--out") { Description = "File to write instead of standard output", HelpName = "FILE" };
+        Option<string?> file = UsageError.NoOption(new Option<string?>("--out") { Description = "File to write instead of standard output", HelpName = "FILE" });
         Option<bool> replace = new("--replace") { Description = "Replace the --out file where it exists" };
         Command command = new("check", "Solve every channel at worst case and judge its parts")
         {
@@ -56,13 +56,19 @@ internal static class CheckCommand
             string text = parse.GetValue(format) == "json" ? JsonReport.Write(report) : TextReport.Write(report, colour && target is null);
             if (target is null)
             {
-                await output.WriteAsync(text).ConfigureAwait(false);
-                return ExitCodes.Of(report);
+                return await CommandLine.WrittenAsync(output, text).ConfigureAwait(false)
+                    ? ExitCodes.Of(report)
+                    : await CommandLine.UnwritableAsync(error).ConfigureAwait(false);
             }
 
             try
             {
-                await OutputFile.WriteAsync(target, text).ConfigureAwait(false);
+                await OutputFile.WriteAsync(target, text, replace: parse.GetValue(replace)).ConfigureAwait(false);
+            }
+            catch (IOException) when (!parse.GetValue(replace) && File.Exists(target))
+            {
+                await error.WriteLineAsync($"partcheck: {target} came into being during the run; --replace allows to replace it.").ConfigureAwait(false);
+                return ExitCodes.CannotCreate;
             }
             catch (Exception e) when (e is IOException or UnauthorizedAccessException)
             {

@@ -24,13 +24,9 @@ public static class CommandLine
                 CheckCommand.Build(output, error, colour),
             };
             ParseResult parsed = root.Parse(args);
-            if (parsed.Errors.Count > 0)
+            if (UsageError.Of(parsed) is { } usage)
             {
-                foreach (string message in parsed.Errors.Select(e => e.Message).Distinct(StringComparer.Ordinal))
-                {
-                    await error.WriteLineAsync("partcheck: " + string.Join(' ', message.Split((char[])[' ', '\n', '\r', '\t'], StringSplitOptions.RemoveEmptyEntries))).ConfigureAwait(false);
-                }
-
+                await error.WriteLineAsync("partcheck: " + usage).ConfigureAwait(false);
                 return ExitCodes.Usage;
             }
 
@@ -42,8 +38,7 @@ public static class CommandLine
 
             InvocationConfiguration configuration = new() { Output = output, Error = error, EnableDefaultExceptionHandler = false };
             int code = await parsed.InvokeAsync(configuration, cancel).ConfigureAwait(false);
-            await output.FlushAsync(CancellationToken.None).ConfigureAwait(false);
-            return code;
+            return await FlushedAsync(output).ConfigureAwait(false) ? code : await UnwritableAsync(error).ConfigureAwait(false);
         }
         catch (OperationCanceledException)
         {
@@ -52,8 +47,44 @@ public static class CommandLine
         catch (Exception e) when (e is not OutOfMemoryException)
         {
             bool debug = Environment.GetEnvironmentVariable("PARTCHECK_DEBUG") == "1";
-            await error.WriteLineAsync("partcheck: internal error: " + (debug ? e.ToString() : e.GetType().Name + ": " + e.Message)).ConfigureAwait(false);
+            await error.WriteLineAsync("partcheck: internal error: " + (debug ? e.ToString() : UsageError.OneLine(e.GetType().Name + ": " + e.Message))).ConfigureAwait(false);
             return ExitCodes.Internal;
+        }
+    }
+
+    /// <summary>Writes a report to standard output; false: it could not be written (disk full, closed).</summary>
+    internal static async Task<bool> WrittenAsync(TextWriter output, string text)
+    {
+        try
+        {
+            await output.WriteAsync(text).ConfigureAwait(false);
+        }
+        catch (Exception e) when (e is IOException or UnauthorizedAccessException)
+        {
+            return false;
+        }
+
+        return await FlushedAsync(output).ConfigureAwait(false);
+    }
+
+    /// <summary>Says that standard output could not be written.</summary>
+    /// <returns>The exit code of it.</returns>
+    internal static async Task<int> UnwritableAsync(TextWriter error)
+    {
+        await error.WriteLineAsync("partcheck: standard output could not be written.").ConfigureAwait(false);
+        return ExitCodes.WriteFailure;
+    }
+
+    private static async Task<bool> FlushedAsync(TextWriter output)
+    {
+        try
+        {
+            await output.FlushAsync(CancellationToken.None).ConfigureAwait(false);
+            return true;
+        }
+        catch (Exception e) when (e is IOException or UnauthorizedAccessException)
+        {
+            return false;
         }
     }
 }

@@ -39,14 +39,17 @@ internal static class OutputFile
     }
 
     /// <summary>Writes a file; an exception leaves the target as it was.</summary>
-    public static async Task WriteAsync(string path, string text)
+    /// <param name="path">The target.</param>
+    /// <param name="text">What it holds.</param>
+    /// <param name="replace">True where an existing file may be replaced.</param>
+    public static async Task WriteAsync(string path, string text, bool replace)
     {
         string full = Path.GetFullPath(path);
         string beside = Beside(full);
         try
         {
             await File.WriteAllTextAsync(beside, text, new UTF8Encoding(false), CancellationToken.None).ConfigureAwait(false);
-            File.Move(beside, full, overwrite: true);
+            File.Move(beside, full, overwrite: replace);
         }
         catch
         {

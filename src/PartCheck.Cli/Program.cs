@@ -11,4 +11,12 @@ UTF8Encoding utf8 = new(encoderShouldEmitUTF8Identifier: false);
 using StreamWriter output = new(Console.OpenStandardOutput(), utf8) { NewLine = "\n" };
 using StreamWriter error = new(Console.OpenStandardError(), utf8) { NewLine = "\n", AutoFlush = true };
 bool colour = !Console.IsOutputRedirected && string.IsNullOrEmpty(Environment.GetEnvironmentVariable("NO_COLOR"));
-return await CommandLine.RunAsync(args, output, error, colour, cancel.Token).ConfigureAwait(false);
+try
+{
+    return await CommandLine.RunAsync(args, output, error, colour, cancel.Token).ConfigureAwait(false);
+}
+catch (Exception e) when (e is IOException or UnauthorizedAccessException)
+{
+    // Standard error itself cannot be written: the exit code is all that is left.
+    return 74;
+}

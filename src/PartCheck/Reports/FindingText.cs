@@ -48,13 +48,13 @@ internal static class FindingText
     /// <summary>Actual against allowed, e.g. <c>0.31 W of 0.19 W, ratio 1.63</c>.</summary>
     public static string Numbers(Finding f)
     {
-        if (f.Actual is not { } actual || f.Allowed is not { } allowed)
+        if (f.Actual is not { } actual || f.Allowed is not { } allowed || !double.IsFinite(actual) || !double.IsFinite(allowed))
         {
             return f.Verdict == Verdict.Nonconforming && f.Rule == "drive" ? "the control never conducts enough below the pin level" : string.Empty;
         }
 
         bool atLeast = f.Rule is "headroom" or "drive" || (f.Rule == "current" && allowed > actual && f.Verdict == Verdict.Nonconforming);
-        string ratio = f.StressRatio is { } r ? string.Create(CultureInfo.InvariantCulture, $", ratio {r:0.00}") : string.Empty;
+        string ratio = Ratio(f) is { } r ? ", ratio " + r : string.Empty;
         string limit = f.Rule switch
         {
             "headroom" or "drive" => "needs at least",
@@ -64,8 +64,22 @@ internal static class FindingText
         return $"{(f.ActualIsAtLeast ? "at least " : string.Empty)}{Value(actual, f.Unit)} {limit} {Value(allowed, f.Unit)}{ratio}";
     }
 
-    /// <summary>A value with its unit; temperatures in degrees Celsius.</summary>
-    public static string Value(double si, string? unit, int digits = 4) => (unit == "K"
+    /// <summary>
+    /// The stress ratio with two decimals, with more where two would show a broken limit as met exactly; null: none.
+    /// </summary>
+    public static string? Ratio(Finding f)
+    {
+        if (FindingOrder.Ratio(f) is not { } ratio)
+        {
+            return null;
+        }
+
+        string shown = ratio.ToString("0.00", CultureInfo.InvariantCulture);
+        return shown == "1.00" && ratio != 1 ? ratio.ToString("0.00####", CultureInfo.InvariantCulture) : shown;
+    }
+
+    /// <summary>A value with its unit; temperatures in degrees Celsius; NaN and infinity: not known.</summary>
+    public static string Value(double si, string? unit, int digits = 4) => !double.IsFinite(si) ? "not known" : (unit == "K"
         ? string.Create(CultureInfo.InvariantCulture, $"{si - Temperature.CelsiusZero:0.0} degC")
         : EngineeringNotation.Format(si, unit ?? string.Empty, digits)).Replace(' ', Columns80.Glue);
 

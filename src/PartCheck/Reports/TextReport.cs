@@ -20,7 +20,7 @@ public static class TextReport
         StringBuilder text = new();
         foreach (BoardReport board in report.Boards)
         {
-            Board(text, board);
+            Board(text, board with { Findings = FindingOrder.WorstFirst(board) });
         }
 
         if (report.Complaints.Count > 0)
@@ -195,7 +195,7 @@ public static class TextReport
             return string.Empty;
         }
 
-        string ratio = worst.StressRatio is { } r ? string.Create(CultureInfo.InvariantCulture, $" {r:0.00}") : string.Empty;
+        string ratio = FindingText.Ratio(worst) is { } r ? " " + r : string.Empty;
         return $"; {worst.Rule}{(worst.Reference is null ? string.Empty : " " + worst.Reference)}{ratio}";
     }
 
@@ -204,7 +204,7 @@ public static class TextReport
         List<Finding> conforming = [.. board.Findings.Where(f => f.Verdict == Verdict.Conforms)];
         text.Append(CultureInfo.InvariantCulture, $"Conforming findings: {conforming.Count}");
         text.Append(conforming.Count > 0 ? "; the closest to their limits:\n" : ".\n");
-        foreach (IReadOnlyList<Finding> group in FindingText.Grouped(conforming.Where(f => f.StressRatio is not null)).Take(Closest))
+        foreach (IReadOnlyList<Finding> group in FindingText.Grouped(conforming.Where(f => FindingOrder.Ratio(f) is not null)).Take(Closest))
         {
             Finding f = group[0];
             Columns80.Wrap(text, "  ", Head(group) + ": " + FindingText.Numbers(f), 4);
