@@ -31,7 +31,8 @@ internal static class ModelCardNames
     private static readonly HashSet<string> Dynamic = new(StringComparer.Ordinal)
     {
         "CJE", "VJE", "MJE", "CJC", "VJC", "MJC", "XCJC", "CJS", "VJS", "MJS", "FC", "TF", "XTF", "VTF", "ITF", "PTF", "TR", "KF",
-        "AF", "XCJS", "XCJC2", "TLEVC",
+        "AF", "XCJS", "XCJC2", "TLEVC", "CTC", "CTE", "CTS", "TVJC", "TVJE", "TVJS", "TITF1", "TITF2", "TTF1", "TTF2", "TTR1", "TTR2",
+        "TMJE1", "TMJE2", "TMJC1", "TMJC2", "TMJS1", "TMJS2",
     };
 
     private static readonly Dictionary<string, string> Spellings = new(StringComparer.Ordinal)

@@ -154,6 +154,17 @@ public class ModelCardReaderTests
         Assert.Equal(100, card.Parameters.Bf);
     }
 
+    // Every temperature coefficient of charge and time that ngspice 39 lists for its transistor (showmod).
+    [Theory]
+    [InlineData("CTC CTE CTS TVJC TVJE TVJS TITF1 TITF2 TTF1 TTF2 TTR1 TTR2 TMJE1 TMJE2 TMJC1 TMJC2 TMJS1 TMJS2")]
+    [InlineData("CJE VJE MJE CJC VJC MJC XCJC CJS VJS MJS FC TF XTF VTF ITF PTF TR KF AF TLEVC")]
+    public void WhatOnlyTouchesChargeAndTimeIsSkippedSilently(string names)
+    {
+        ModelCard card = Card($".model q NPN(IS=1e-14 BF=99 {string.Join(' ', names.Split(' ').Select(n => n + "=1m"))})");
+        Assert.Empty(card.Notes);
+        Assert.Equal(99, card.Parameters.Bf);
+    }
+
     [Fact]
     public void OlderNamesAreRead()
     {
