@@ -70,6 +70,31 @@ public class BipolarDeviceTests
         Assert.InRange(-q.DIc.Vbc / 1.238525e-4, 0.99, 1.01);
     }
 
+    // ngspice 39, no ohmic resistances, VBE 0.8 V: VCE 5 V at 25 degC, then VCE 0.1 V at 85 degC.
+    [Theory]
+    [InlineData(-4.2, 25, 3.414337479e-2, 1.669208390e-3)]
+    [InlineData(0.7, 85, 8.387161239e-3, 7.873703410e-2)]
+    public void ARollOffExponentAgreesWithNgspice(double vbc, double celsius, double ic, double ib)
+    {
+        BipolarDevice device = new(new BipolarParameters
+        {
+            Is = 1e-14,
+            Bf = 200,
+            Vaf = 60,
+            Var = 20,
+            Ikf = 0.02,
+            Nkf = 0.7,
+            Ikr = 0.01,
+            Ise = 1e-14,
+            Ne = 1.6,
+            Br = 3,
+            Tnom = 298.15,
+        });
+        device.At(celsius + 273.15).Evaluate(0.8, vbc, out BipolarCurrents q);
+        Assert.InRange(q.Ic / ic, 0.9999, 1.0001);
+        Assert.InRange(q.Ib / ib, 0.9999, 1.0001);
+    }
+
     [Theory]
     [InlineData(0.65, -3, 320)]
     [InlineData(0.72, 0.55, 300)]
