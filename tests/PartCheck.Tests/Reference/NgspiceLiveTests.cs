@@ -1,3 +1,4 @@
+using PartCheck.OperatingPoints;
 using Xunit;
 
 namespace PartCheck.Tests.Reference;
@@ -40,6 +41,32 @@ public class NgspiceLiveTests
         Assert.InRange(compared, 30, 1000);
         Assert.Equal(["drop-out", "off", "regulating", "unfed"], kinds.Order(StringComparer.Ordinal));
         Assert.Equal([1, 2, 3, 4, 5, 6, 7, 8], legs.Order());
+    }
+
+    /// <summary>Sense resistors below those of the table, down to 5 ohm: the solver against a live ngspice, 0.1 % of every leg's currents.</summary>
+    [Fact]
+    public void LowSenseResistorsAgreeLive()
+    {
+        Assert.SkipUnless(Ngspice.Absence is null, Ngspice.Absence ?? string.Empty);
+        SinkSolver solver = new();
+        int compared = 0;
+        foreach (ReferenceCircuit made in ReferenceGenerator.Circuits(400).Where((_, i) => i % 20 is 0 or 14))
+        {
+            ReferenceCircuit circuit = made with { Legs = [.. made.Legs.Select((l, i) => l with { Sense = 5 + i })] };
+            ReferenceResult? live = Ngspice.Solve(circuit);
+            Assert.NotNull(live);
+            OperatingPoint? point = solver.Solve(circuit.ToSink());
+            Assert.True(point is not null, $"{circuit.Name}: {solver.Failure}");
+            for (int i = 0; i < circuit.Legs.Count; i++)
+            {
+                Assert.InRange(Math.Abs(point.Legs[i].Ic - live.Ic[i]), 0, Math.Max(1e-3 * Math.Abs(live.Ic[i]), 1e-9));
+                Assert.InRange(Math.Abs(point.Legs[i].Ib - live.Ib[i]), 0, Math.Max(1e-3 * Math.Abs(live.Ib[i]), 1e-9));
+            }
+
+            compared++;
+        }
+
+        Assert.Equal(40, compared);
     }
 
     /// <summary>The inputs of the tables are those of the generator; with PARTCHECK_RECORD_NGSPICE=1 the tables are recorded anew first.</summary>
