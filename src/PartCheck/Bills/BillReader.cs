@@ -7,9 +7,6 @@ namespace PartCheck.Bills;
 /// <summary>Cells to a bill of materials.</summary>
 public static class BillReader
 {
-    private static readonly string[] NotFittedMarks = ["DNP", "DNF", "DNI", "DNM", "NF", "NC", "N/F", "NOT FITTED", "DO NOT FIT", "DO NOT PLACE", "DO NOT POPULATE", "NOFIT"];
-    private static readonly string[] No = ["NO", "N", "0", "FALSE", "-"];
-    private static readonly string[] Yes = ["YES", "Y", "1", "TRUE", "X", "\u2713", "\u2714", "FITTED"];
     private static readonly LineValidator Rules = new();
 
     /// <summary>Columns of the table.</summary>
@@ -91,7 +88,7 @@ public static class BillReader
         }
 
         string? value = row.Text("Value");
-        (bool fitted, Cited<string>? mark) = Fitted(row, value);
+        (bool fitted, Cited<string>? mark) = FittedMarks.Read(row, value);
         Resistance? ohms = value is not null
             && QuantityParser.TryParse(value, QuantityKind.Resistance, decimalComma, null, out QuantityReading reading)
             && reading.Si >= 0 ? Resistance.FromOhms(reading.Si) : null;
@@ -112,35 +109,6 @@ public static class BillReader
             Role = row.Text("Role"),
             Cell = row.Cite("References"),
         };
-    }
-
-    private static (bool Fitted, Cited<string>? Mark) Fitted(TableRow row, string? value)
-    {
-        if (row.Text("Fitted") is { } text)
-        {
-            string upper = text.ToUpperInvariant();
-            if (No.Contains(upper) || NotFittedMarks.Contains(upper))
-            {
-                return (false, new Cited<string>(text, row.Cite("Fitted")));
-            }
-
-            if (!Yes.Contains(upper))
-            {
-                row.Complain("Fitted", "yes or no", $"\"{text}\" says neither that the line is fitted nor that it is not.");
-            }
-        }
-
-        if (row.Text("Do not fit") is { } mark && !No.Contains(mark.ToUpperInvariant()))
-        {
-            return (false, new Cited<string>(mark, row.Cite("Do not fit")));
-        }
-
-        // A mark inside the value: "DNP", "0R - DNP".
-        bool marked = value is not null && value.ToUpperInvariant()
-            .Split([' ', ',', ';', '(', ')', '-', '_'], StringSplitOptions.RemoveEmptyEntries)
-            .Any(word => word is "DNP" or "DNF" or "DNI" or "DNM")
-            || (value is not null && NotFittedMarks.Contains(value.Trim().ToUpperInvariant()));
-        return marked ? (false, new Cited<string>(value!, row.Cite("Value"))) : (true, null);
     }
 
     private sealed class LineValidator : AbstractValidator<BillLine>

@@ -6,7 +6,7 @@ namespace PartCheck.Bills;
 
 /// <summary>
 /// Reads a cell of reference designators: <c>R1, R2, R5-R8</c>; <c>R5,6,7</c>; <c>C6-7</c>; en dash; blanks, commas,
-/// semicolons and slashes between; <c>Q1.1</c> for an element of a package. What is no such designator is kept as its text.
+/// semicolons and slashes between; <c>Q1.1</c> for an element of a package, <c>Q1.1-Q1.4</c> for several. What is no such designator is kept as its text.
 /// </summary>
 public static partial class ReferenceList
 {
@@ -36,10 +36,11 @@ public static partial class ReferenceList
                 continue;
             }
 
-            prefix = range.Groups["p"].Value;
-            if (range.Groups["q"].Value is { Length: > 0 } other && other != prefix)
+            string stem = range.Groups["p"].Value;
+            prefix = Letters().Match(stem).Value;
+            if (range.Groups["q"].Value is { Length: > 0 } other && other != stem)
             {
-                return $"The range \"{item}\" runs from {prefix} to {other}: a range keeps its letters.";
+                return $"The range \"{item}\" runs from {stem} to {other}: a range keeps its letters.";
             }
 
             long from = long.Parse(range.Groups["a"].Value, CultureInfo.InvariantCulture);
@@ -54,9 +55,12 @@ public static partial class ReferenceList
                 return $"The range \"{item}\" is longer than {LongestRange.ToString(CultureInfo.InvariantCulture)} references.";
             }
 
+            // R01-R12 keeps its leading zeros.
+            string first = range.Groups["a"].Value;
+            string digits = first[0] == '0' ? "D" + first.Length.ToString(CultureInfo.InvariantCulture) : "D";
             for (long i = from; i <= to; i++)
             {
-                found.Add(prefix + i.ToString(CultureInfo.InvariantCulture));
+                found.Add(stem + i.ToString(digits, CultureInfo.InvariantCulture));
             }
         }
 
@@ -69,7 +73,7 @@ public static partial class ReferenceList
     [GeneratedRegex(@"\s*-\s*")]
     private static partial Regex BlanksAroundDash();
 
-    [GeneratedRegex(@"^(?<p>[A-Za-z_]+)(?<a>\d{1,9})-(?<q>[A-Za-z_]*)(?<b>\d{1,9})$")]
+    [GeneratedRegex(@"^(?<p>[A-Za-z_]+(?:\d+\.)?)(?<a>\d{1,9})-(?<q>[A-Za-z_]*(?:\d+\.)?)(?<b>\d{1,9})$")]
     private static partial Regex Range();
 
     [GeneratedRegex("^[A-Za-z_]+")]

@@ -11,7 +11,6 @@ namespace PartCheck.Channels;
 public static class ChannelReader
 {
     private static readonly ChannelValidator Rules = new();
-    private static readonly Role[] ByLeg = [Role.Pass, Role.Sense];
 
     /// <summary>Every channel of a sheet, in order.</summary>
     /// <param name="sheet">The sheet.</param>
@@ -41,8 +40,11 @@ public static class ChannelReader
             }
 
             row.Channel = name;
-            if (rows.Find(r => string.Equals(r.Name, name, StringComparison.OrdinalIgnoreCase)) is { } twin)
+            int at = rows.FindIndex(r => Same(r.Name, name));
+            if (at >= 0)
             {
+                ChannelRow twin = rows[at];
+                rows[at] = twin with { Conditions = null };
                 row.Complain("Channel", "each channel once", $"The channel {name} stands in the sheet twice; the other row is {twin.Cell}.");
                 continue;
             }
@@ -52,6 +54,7 @@ public static class ChannelReader
             {
                 row.Complain("Logic", "one row of the pin table for one pin", $"The pin {read.Pin} is {read.Logic} here and {other.Logic} in channel {other.Name}.");
                 read = read with { Conditions = null };
+                rows[rows.IndexOf(other)] = other with { Conditions = null };
             }
 
             rows.Add(read);
@@ -70,8 +73,7 @@ public static class ChannelReader
     private static ChannelRow ReadRow(TableRow row, string name, Bill? bill, IReadOnlyList<LogicPin> pins)
     {
         List<Assumption> assumed = [];
-        Dictionary<Role, IReadOnlyList<string>> references = References(row, name, bill);
-        CheckLegs(row, references);
+        Dictionary<Role, IReadOnlyList<string>> references = RoleReferences.Read(row, name, bill);
         string? logic = row.Text("Logic");
         if (logic is null)
         {
@@ -154,7 +156,12 @@ public static class ChannelReader
             return null;
         }
 
-        if (leds is null && row.Text("LEDs") is null)
+        if (leds is { } count && count != Math.Floor(count))
+        {
+            row.Complain("LEDs", "a whole number", "The number of LEDs is a whole number.");
+        }
+
+        if (leds is null && row.Text("LEDs") is null or "-")
         {
             // 3.3 V a LED: the usual drop of a white one (common practice, no source).
             leds = Math.Ceiling(dropMax.Value / 3.3);
@@ -180,82 +187,6 @@ public static class ChannelReader
         };
     }
 
-    private static Dictionary<Role, IReadOnlyList<string>> References(TableRow row, string name, Bill? bill)
-    {
-        Dictionary<Role, IReadOnlyList<string>> references = [];
-        foreach ((Role role, string column) in RoleNames.Columns)
-        {
-            if (row.Text(column) is { } text)
-            {
-                if (ReferenceList.Read(text, out IReadOnlyList<string> list) is { } wrong)
-                {
-                    row.Complain(column, "references such as Q1, Q2", wrong);
-                }
-
-                references[role] = list;
-            }
-            else if (bill?.Lines.Where(l => Same(l.Channel, name) && RoleNames.Of(l.Role) == role).SelectMany(l => l.References).ToList() is { Count: > 0 } byBill)
-            {
-                references[role] = byBill;
-            }
-        }
-
-        foreach (Role role in (ReadOnlySpan<Role>)[Role.Pass, Role.Sense, Role.Control, Role.Feed])
-        {
-            if (!references.TryGetValue(role, out IReadOnlyList<string>? list) || list.Count == 0)
-            {
-                string column = RoleNames.ColumnOf(role);
-                row.Complain(column, "references", $"The channel has no {column.ToLowerInvariant()}.");
-            }
-        }
-
-        return references;
-    }
-
-    private static void CheckLegs(TableRow row, Dictionary<Role, IReadOnlyList<string>> references)
-    {
-        int legs = references.GetValueOrDefault(Role.Pass)?.Count ?? 0;
-        string Count(int n, string what) => string.Create(CultureInfo.InvariantCulture, $"{n} {what}");
-        if (legs > 8)
-        {
-            row.Complain("Pass", "one to eight legs", $"The channel has {Count(legs, "legs")}; more than eight are not solved.");
-        }
-
-        foreach (Role role in ByLeg)
-        {
-            int count = references.GetValueOrDefault(role)?.Count ?? 0;
-            if (count != legs && count > 0 && legs > 0)
-            {
-                row.Complain(RoleNames.ColumnOf(role), Count(legs, "references"), $"{Count(legs, "pass transistors")} need as many sense resistors, not {Count(count, "of them")}.");
-            }
-        }
-
-        foreach (Role role in (ReadOnlySpan<Role>)[Role.Control, Role.Feed, Role.PullDown])
-        {
-            if (references.GetValueOrDefault(role) is { Count: > 1 } many)
-            {
-                row.Complain(RoleNames.ColumnOf(role), "one reference", $"A channel has one {RoleNames.ColumnOf(role).ToLowerInvariant()}, not {Count(many.Count, "of them")}.");
-            }
-        }
-
-        IReadOnlyList<string> averaging = references.GetValueOrDefault(Role.Averaging) ?? [];
-        if (averaging.Count == 0)
-        {
-            if (legs > 1)
-            {
-                row.Complain("Averaging", Count(legs, "references"), "Legs that share a control transistor need an averaging resistor each (or - for a leg that is not sensed).");
-            }
-        }
-        else if (averaging.Count != legs && legs > 0)
-        {
-            row.Complain("Averaging", Count(legs, "references"), $"{Count(legs, "legs")} need as many averaging resistors (or -), not {Count(averaging.Count, "of them")}.");
-        }
-        else if (averaging.All(a => a == "-"))
-        {
-            row.Complain("Averaging", "at least one leg sensed", "The control transistor senses no leg: nothing limits the current.");
-        }
-    }
-
     private static bool Same(string? a, string? b) => string.Equals(a, b, StringComparison.OrdinalIgnoreCase);
 
     private sealed class ChannelValidator : AbstractValidator<ChannelConditions>
@@ -271,7 +202,6 @@ public static class ChannelReader
             this.Demand("Duty max", c => c.Duty > 0, "a duty above 0 %", _ => "A duty of 0 never switches the channel on.");
             this.Demand("Sharing max", c => c.SharingMax is not { } s || s > 1, "a ratio above 1", _ => "Sharing max is a ratio to the mean: it is above 1.");
             this.Demand("Load slope", c => c.Leds == 0 || c.LoadDrop.Min.Volts - (c.CurrentNominal.Amperes * c.LoadSlope.Ohms) > 0, "a smaller resistance", _ => "The slope alone would drop more than the whole load at the nominal current.");
-            this.Demand("LEDs", c => c.Leds >= 0, "a whole number", _ => "The number of LEDs is a whole number.");
         }
     }
 }

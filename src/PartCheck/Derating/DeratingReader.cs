@@ -12,6 +12,13 @@ public static class DeratingReader
         "current", "headroom", "drive", "pin-current", "off",
     ];
 
+    private const double CoolestZero = 273.15;
+    private const double HottestZero = 623.15;
+
+    private static readonly string[] ByLimit = ["drive", "sharing"];
+    private static readonly string[] ByTemperature = ["junction", "r-film"];
+    private static readonly string[] NotDerated = ["current", "headroom", "off"];
+
     /// <summary>Columns of the table.</summary>
     public static IReadOnlyList<ColumnSpec> Columns { get; } =
     [
@@ -84,14 +91,22 @@ public static class DeratingReader
         }
         else if (zero is not null && !Same(zero, "rated") && line.Part("Zero temperature", zero, ColumnKind.Temperature) is { } kelvins)
         {
-            at = ZeroTemperature.Fixed;
-            zeroAt = Temperature.FromKelvins(kelvins);
+            if (kelvins is < CoolestZero or > HottestZero)
+            {
+                line.Complain("Zero temperature", "rated, parallel or a temperature of 0 to 350 degC", $"A curve that reaches zero at {zero} is not plausible.");
+            }
+            else
+            {
+                at = ZeroTemperature.Fixed;
+                zeroAt = Temperature.FromKelvins(kelvins);
+            }
         }
 
         Cited<double>? factor = line.Number("Factor");
         Cited<double>? cap = line.Number("Cap");
         Cited<double>? offset = line.Number("Offset");
         Cited<double>? limit = line.Number("Limit");
+        CheckUse(line, rule, limit);
         return line.HasComplaints ? null : new DeratingRow
         {
             Rule = rule!.ToLowerInvariant(),
@@ -106,6 +121,58 @@ public static class DeratingReader
             Source = line.Text("Source") ?? "no source given",
             Cell = line.Cite("Rule"),
         };
+    }
+
+    /// <summary>A number in a column that its rule does not read would derate nothing, silently.</summary>
+    private static void CheckUse(TableRow line, string? rule, Cited<double>? limit)
+    {
+        bool Is(string[] rules) => rules.Contains(rule, StringComparer.OrdinalIgnoreCase);
+        void Unread(string column, string wanted) =>
+            line.Complain(column, wanted, $"The rule {rule} does not read {column}: this cell would change nothing.");
+
+        if (Is(NotDerated))
+        {
+            line.Complain("Rule", "a rule that derates a rating", $"The rule {rule} is held to the channel's own limits: nothing of it is derated.");
+            return;
+        }
+
+        if (limit is not null && !Is(ByLimit))
+        {
+            Unread("Limit", "a Factor, for a share of a rating");
+        }
+
+        if (limit is null && Is(ByLimit) && line.Text("Limit") is null or "-")
+        {
+            line.Complain("Limit", "a limit", $"The rule {rule} reads its limit, and the row gives none.");
+        }
+
+        if (limit is { Value: <= 1 } && Same(rule, "sharing"))
+        {
+            line.Complain("Limit", "a ratio above 1", "The limit of sharing is a ratio to the mean: it is above 1.");
+        }
+
+        if (limit is { Value: < 1 } && Same(rule, "drive"))
+        {
+            line.Complain("Limit", "a factor of at least 1", "A drive factor below 1 asks for less current than the legs take.");
+        }
+
+        if (line.Number("Factor") is { Value: not 1 } && Is(ByLimit))
+        {
+            Unread("Factor", "a Limit");
+        }
+
+        foreach (string column in (ReadOnlySpan<string>)["Cap", "Offset"])
+        {
+            if (line.Number(column) is { Value: not 0 } && !Is(ByTemperature))
+            {
+                Unread(column, "a blank cell");
+            }
+        }
+
+        if (line.Text("Zero temperature") is not null && !Same(rule, "r-power"))
+        {
+            Unread("Zero temperature", "a blank cell");
+        }
     }
 
     private static bool Same(string? a, string? b) => string.Equals(a, b, StringComparison.OrdinalIgnoreCase);

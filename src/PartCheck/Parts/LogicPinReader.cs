@@ -94,6 +94,9 @@ public static class LogicPinReader
             row.Complain(second is null ? "High min 2" : "High current 2", "both of the second pair", "The second high level needs both its voltage and its current.");
         }
 
+        Voltage? lowMax = row.Value("Low max", Voltage.FromVolts);
+        Current? lowCurrent = row.Value("Low current", Current.FromAmperes);
+        Cited<Current>? rating = row.Quantity("Pin current max", Current.FromAmperes);
         if (name is null || kind is null || supplyMin is null || supplyMax is null || highMin is null || highCurrent is null || row.HasComplaints)
         {
             return null;
@@ -107,8 +110,7 @@ public static class LogicPinReader
 
         return new LogicPin(
             name, kind.Value, new(Voltage.FromVolts(supplyMin.Value), Voltage.FromVolts(supplyMax.Value)), high,
-            row.Value("Low max", Voltage.FromVolts), row.Value("Low current", Current.FromAmperes),
-            row.Quantity("Pin current max", Current.FromAmperes), row.Text("Source"), row.Cite("Name"));
+            lowMax, lowCurrent, rating, row.Text("Source"), row.Cite("Name"));
     }
 
     private sealed class PinValidator : AbstractValidator<LogicPin>
@@ -117,6 +119,8 @@ public static class LogicPinReader
         {
             this.Demand("Supply min", p => p.Supply.Min.Volts <= p.Supply.Max.Volts, "a voltage at most Supply max", _ => "Supply min is above Supply max.");
             this.Demand("High min", p => p.High[0].Min.Volts <= p.Supply.Max.Volts, "a level at most the supply", _ => "The high level is above the pin's supply.");
+            this.Demand("High min 2", p => p.High.Skip(1).All(h => h.Min.Volts <= p.Supply.Max.Volts), "a level at most the supply", _ => "The second high level is above the pin's supply.");
+            this.Demand("Low max", p => p.LowMax is not { } low || p.High.All(h => low.Volts < h.Min.Volts), "a level below High min", _ => "The low level is not below the high level.");
         }
     }
 }

@@ -1,4 +1,5 @@
 using System.Reflection;
+using PartCheck.Devices;
 
 namespace PartCheck.Parts;
 
@@ -15,14 +16,14 @@ internal static class PartAgreement
 
         foreach (PropertyInfo property in a.GetType().GetProperties().OrderBy(p => p.Name, StringComparer.Ordinal))
         {
-            if (property.Name is nameof(Part.Cell) or nameof(Part.PartNumber) or nameof(Part.Manufacturer) or "EqualityContract")
+            if (property.Name is nameof(Part.Cell) or nameof(Part.PartNumber) or nameof(Part.Manufacturer) or nameof(Part.Mounting) or "EqualityContract")
             {
                 continue;
             }
 
             if (!Same(property.GetValue(a), property.GetValue(b)))
             {
-                return property.Name;
+                return ColumnOf(property.Name);
             }
         }
 
@@ -33,10 +34,30 @@ internal static class PartAgreement
     {
         a = Bare(a);
         b = Bare(b);
+        if (a is ModelCard one && b is ModelCard other)
+        {
+            return one.Name == other.Name && one.Parameters == other.Parameters;
+        }
+
         return a is System.Collections.IEnumerable x and not string && b is System.Collections.IEnumerable y
             ? x.Cast<object>().SequenceEqual(y.Cast<object>())
             : Equals(a, b);
     }
+
+    /// <summary>The column that a property is read from, as the part table writes it.</summary>
+    private static string ColumnOf(string property) => property switch
+    {
+        nameof(Transistor.Hfe) => "hFE points",
+        nameof(Transistor.HfeCold) => "hFE cold min",
+        nameof(Transistor.Vbe) => "VBE min",
+        nameof(Transistor.Zth) => "Zth points",
+        nameof(Transistor.SoaAtCase) => "SOA at",
+        nameof(Transistor.Card) => "Model",
+        nameof(RefusedPart.Reason) => "Kind",
+        _ => PartColumns.All.FirstOrDefault(c => string.Equals(Joined(c.Name), property, StringComparison.OrdinalIgnoreCase))?.Name ?? property,
+    };
+
+    private static string Joined(string column) => column.Replace(" ", string.Empty, StringComparison.Ordinal);
 
     /// <summary>The value inside a citation.</summary>
     private static object? Bare(object? value) =>

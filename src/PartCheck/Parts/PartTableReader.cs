@@ -40,12 +40,16 @@ public static class PartTableReader
         return parts;
     }
 
-    /// <summary>One table out of several; two rows of one part number, manufacturer and mounting must agree.</summary>
+    /// <summary>
+    /// One table out of several; two rows of one part number, manufacturer and mounting must agree. Where they do not, neither
+    /// is taken: what reads the part is then not verified.
+    /// </summary>
     public static PartTable Combine(IEnumerable<Part> parts, ComplaintList complaints)
     {
         ArgumentNullException.ThrowIfNull(parts);
         ArgumentNullException.ThrowIfNull(complaints);
         List<Part> kept = [];
+        HashSet<Part> contradicted = new(ReferenceEqualityComparer.Instance);
         Dictionary<string, Part> byKey = new(StringComparer.OrdinalIgnoreCase);
         foreach (Part part in parts)
         {
@@ -57,6 +61,7 @@ public static class PartTableReader
             }
             else if (PartAgreement.FirstDifference(twin, part) is { } difference)
             {
+                contradicted.Add(twin);
                 string[] cite = part.Cell.Split('!');
                 complaints.Add(new Complaint(
                     cite[0], cite.Length > 2 ? cite[1] : null, null, difference, cite[^1], part.PartNumber, "rows that agree, or one row",
@@ -64,7 +69,7 @@ public static class PartTableReader
             }
         }
 
-        return new PartTable(kept);
+        return new PartTable([.. kept.Where(p => !contradicted.Contains(p))]);
     }
 
     private static Part? ReadRow(TableRow row, string? folder)
@@ -113,17 +118,12 @@ public static class PartTableReader
         return null;
     }
 
-    private static ResistorPart? Resistor(TableRow row, string number)
+    private static ResistorPart Resistor(TableRow row, string number)
     {
         Cited<double>? ohms = row.Number("Resistance");
-        if (ohms is null)
+        if (ohms is null && row.Text("Resistance") is null or "-")
         {
-            if (!row.HasComplaints)
-            {
-                row.Complain("Resistance", "a resistance", $"The resistor {number} has no resistance.");
-            }
-
-            return null;
+            row.Complain("Resistance", "a resistance", $"The resistor {number} has no resistance.");
         }
 
         ResistorPart part = new()
@@ -137,7 +137,7 @@ public static class PartTableReader
             Stock = row.Number("Stock")?.Value,
             Source = row.Text("Source"),
             Style = row.Text("Style"),
-            Resistance = new Cited<Resistance>(Resistance.FromOhms(ohms.Value), ohms.Cell),
+            Resistance = new Cited<Resistance>(Resistance.FromOhms(ohms?.Value ?? 0), row.Cite("Resistance")),
             Tolerance = row.Number("Tolerance"),
             Tcr = row.Number("TCR"),
             WorkingVoltageMax = row.Quantity("Working voltage max", Voltage.FromVolts),

@@ -13,6 +13,7 @@ internal sealed class TransistorValidator : AbstractValidator<Transistor>
         this.Demand("VBE min", p => p.Vbe is not { Value: { Min: { } min, Max: { } max } } || min.Volts <= max.Volts, "a voltage at most VBE max", _ => "VBE min is above VBE max.");
         this.Demand("VBE typ", p => p.Vbe is not { Value: { Typ: { } typ } w } || ((w.Min is not { } min || min.Volts <= typ.Volts) && (w.Max is not { } max || typ.Volts <= max.Volts)), "a voltage inside the window", _ => "VBE typ lies outside VBE min to VBE max.");
         this.Demand("VCBO", p => p.Vcbo is null || p.Vceo is null || p.Vcbo.Value.Volts >= p.Vceo.Value.Volts, "a voltage at least VCEO", _ => "VCBO is below VCEO: with the emitter open a junction stands at least as much.");
+        this.Demand("RthJC", p => p.RthJc is null || p.RthJa is null || p.RthJc.Value.KelvinsPerWatt <= p.RthJa.Value.KelvinsPerWatt, "a thermal resistance at most RthJA", _ => "RthJC is above RthJA: the way to the air leads through the case.");
         this.Demand("hFE cold min", p => p.HfeCold is null || p.Hfe is not null, "hFE points at 25 degC", _ => "A gain in the cold needs the gain at 25 degC beside it.");
     }
 }

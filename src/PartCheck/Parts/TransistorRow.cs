@@ -18,7 +18,7 @@ internal static class TransistorRow
         Stock = row.Number("Stock")?.Value,
         Source = row.Text("Source"),
         Pins = row.Text("Pins"),
-        Elements = (int)(row.Number("Elements")?.Value ?? 1),
+        Elements = Elements(row),
         Vceo = row.Quantity("VCEO", Voltage.FromVolts),
         Vcbo = row.Quantity("VCBO", Voltage.FromVolts),
         Vebo = row.Quantity("VEBO", Voltage.FromVolts),
@@ -29,24 +29,35 @@ internal static class TransistorRow
         RthJa = row.Quantity("RthJA", ThermalResistance.FromKelvinsPerWatt),
         RthJc = row.Quantity("RthJC", ThermalResistance.FromKelvinsPerWatt),
         Coupling = row.Quantity("Coupling", ThermalResistance.FromKelvinsPerWatt),
-        Zth = PointLists.Zth(row),
+        Zth = PointText.Zth(row),
         TjMax = row.Quantity("Tj max", Temperature.FromKelvins),
-        Hfe = PointLists.Hfe(row),
+        Hfe = GainPoints.Read(row),
         HfeVce = row.Value("hFE VCE", Voltage.FromVolts) ?? Voltage.FromVolts(5),
         HfeCold = Cold(row),
         Vbe = Vbe(row),
         VbeMatch = row.Quantity("VBE match", Voltage.FromVolts),
-        VbeSatMax = row.Quantity("VBEsat max", Voltage.FromVolts),
+        VbeSatMax = Beside(row, "VBEsat max", "VBEsat at", "its collector current") ? row.Quantity("VBEsat max", Voltage.FromVolts) : null,
         VbeSatAt = row.Value("VBEsat at", Current.FromAmperes),
         VceSatMax = Beside(row, "VCEsat max", "VCEsat at", "its collector current") ? row.Quantity("VCEsat max", Voltage.FromVolts) : null,
         VceSatAt = row.Value("VCEsat at", Current.FromAmperes),
         IcboMax = Beside(row, "ICBO max", "ICBO temperature", "its temperature") ? row.Quantity("ICBO max", Current.FromAmperes) : null,
         IcboTemperature = row.Value("ICBO temperature", Temperature.FromKelvins),
-        Soa = PointLists.Soa(row),
+        Soa = PointText.Soa(row),
         SoaAtCase = SoaAtCase(row),
         Vaf = row.Quantity("VAF", Voltage.FromVolts),
         Card = Card(row, folder),
     };
+
+    private static int Elements(TableRow row)
+    {
+        double count = row.Number("Elements")?.Value ?? 1;
+        if (count != Math.Floor(count))
+        {
+            row.Complain("Elements", "a whole number", "The number of transistors in a package is a whole number.");
+        }
+
+        return (int)count;
+    }
 
     private static Cited<ColdHfe>? Cold(TableRow row)
     {
@@ -93,6 +104,11 @@ internal static class TransistorRow
     {
         if (row.Number(column) is not null && row.Number(partner) is null)
         {
+            if (row.Text(partner) is not (null or "-"))
+            {
+                return false; // unreadable, and complained about already
+            }
+
             row.Complain(partner, what, $"{column} needs {what} beside it.");
             return false;
         }

@@ -58,6 +58,6 @@ internal static partial class HeaderText
     [GeneratedRegex(@"^(?<name>[^,;/]*[^,;/\s])\s*[,;/]\s*(?:in\s+)?(?<unit>[^,;]+)$", RegexOptions.CultureInvariant | RegexOptions.Singleline)]
     private static partial Regex AfterSign();
 
-    [GeneratedRegex(@"^(?<name>.*\S)\s+(?<unit>\S+)\s*$", RegexOptions.CultureInvariant | RegexOptions.Singleline)]
+    [GeneratedRegex(@"^(?<name>.*?\S)(?:\s+in)?\s+(?<unit>\S+)\s*$", RegexOptions.CultureInvariant | RegexOptions.Singleline)]
     private static partial Regex AfterBlank();
 }

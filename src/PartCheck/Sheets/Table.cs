@@ -48,7 +48,9 @@ public sealed class Table
         {
             TableHeader header = matcher.Match(row);
             nearest = nearest is null || header.Columns.Count > nearest.Columns.Count ? header : nearest;
-            if (header.Complete && (best is null || header.Columns.Count > best.Columns.Count))
+
+            // The first header counts; only a title that happens to match one column gives way to a later row that matches more.
+            if (header.Complete && (best is null || (best.Columns.Count == 1 && header.Columns.Count > 1)))
             {
                 best = header;
             }

@@ -78,13 +78,17 @@ internal static class TextDecoding
         }
     }
 
+    /// <summary>
+    /// The text; null where a byte does not belong to the encoding. Double-byte code pages map such bytes to the private-use area.
+    /// </summary>
     private static string? Strict(ReadOnlySpan<byte> bytes, Encoding encoding)
     {
         Encoding strict = (Encoding)encoding.Clone();
         strict.DecoderFallback = DecoderFallback.ExceptionFallback;
         try
         {
-            return strict.GetString(bytes);
+            string text = strict.GetString(bytes);
+            return !encoding.IsSingleByte && text.AsSpan().ContainsAnyInRange('\uE000', '\uF8FF') ? null : text;
         }
         catch (DecoderFallbackException)
         {

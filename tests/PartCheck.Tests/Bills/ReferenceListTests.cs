@@ -12,6 +12,10 @@ public class ReferenceListTests
     [InlineData("R1\u2013R3", "R1 R2 R3")]
     [InlineData("R1 - R3", "R1 R2 R3")]
     [InlineData("Q1.1, Q1.2", "Q1.1 Q1.2")]
+    [InlineData("Q1.1-Q1.3", "Q1.1 Q1.2 Q1.3")]
+    [InlineData("Q2.1-2, 5", "Q2.1 Q2.2 Q5")]
+    [InlineData("R08-R10", "R08 R09 R10")]
+    [InlineData("R8-R10", "R8 R9 R10")]
     [InlineData("R1;R2 R3", "R1 R2 R3")]
     [InlineData("R1,", "R1")]
     [InlineData("LED1 DS2", "LED1 DS2")]
@@ -25,6 +29,16 @@ public class ReferenceListTests
     [InlineData("R8-R5", "backwards")]
     [InlineData("R1-C4", "keeps its letters")]
     [InlineData("R1-R20000", "longer than 10000")]
+    [InlineData("R1-R10001", "longer than 10000")]
+    [InlineData("Q1.1-Q2.4", "keeps its letters")]
     public void RefusesWhatIsNoRange(string text, string reason) =>
         Assert.Contains(reason, ReferenceList.Read(text, out _), StringComparison.Ordinal);
+
+    [Fact]
+    public void TheLongestRangeIsWrittenOut()
+    {
+        Assert.Null(ReferenceList.Read("R1-R10000", out IReadOnlyList<string> found));
+        Assert.Equal(10_000, found.Count);
+        Assert.Equal("R10000", found[^1]);
+    }
 }

@@ -100,6 +100,39 @@ public sealed class DeratingLibraryTests
         }
     }
 
+    // A number where its rule does not read it would derate nothing, and nobody would know.
+    [Theory]
+    [InlineData("Limit", "vce", "0.8", "The rule vce does not read Limit")]
+    [InlineData("Factor", "drive", "0.5", "the row gives none")]
+    [InlineData("Offset", "power", "25", "The rule power does not read Offset")]
+    [InlineData("Cap", "ic", "125", "The rule ic does not read Cap")]
+    [InlineData("Zero temperature", "r-voltage", "parallel", "The rule r-voltage does not read Zero temperature")]
+    [InlineData("Factor", "headroom", "0.5", "nothing of it is derated")]
+    [InlineData("Limit", "sharing", "1", "it is above 1")]
+    [InlineData("Limit", "drive", "0.5", "A drive factor below 1")]
+    [InlineData("Zero temperature", "r-power", "-300", "not plausible")]
+    [InlineData("Zero temperature", "r-power", "soon", "cannot be read")]
+    [InlineData("Factor", "vce", "-0.5", "C2")]
+    public void ANumberThatWouldChangeNothingIsAComplaint(string column, string rule, string cell, string text)
+    {
+        Bills.TypedSheet typed = new();
+        Assert.Empty(DeratingReader.Read(Bills.TypedSheet.Of("d.csv", $"Name|Rule|{column}", $"t|{rule}|{cell}"), typed.Spellings, typed.List));
+        Assert.Contains(typed.Complaints, c => (c.Cell + " " + c.Text).Contains(text, StringComparison.Ordinal));
+    }
+
+    [Fact]
+    public void RowsAreGroupedByNameInTheSheetsOrder()
+    {
+        Bills.TypedSheet typed = new();
+        IReadOnlyList<DeratingTable> tables = DeratingReader.Read(
+            Bills.TypedSheet.Of("d.csv", "Name|Rule|Factor|Zero temperature|Cap", "b|r-power|0.5|125|", "a|vce|0.7||", "B|junction|1||110"), typed.Spellings, typed.List);
+        Assert.Empty(typed.Complaints);
+        Assert.Equal(["b", "a"], tables.Select(t => t.Name));
+        Assert.Equal((ZeroTemperature.Fixed, 398.15), (tables[0].Rows[0].Zero, tables[0].Rows[0].ZeroAt!.Value.Kelvins));
+        Assert.Equal(383.15, tables[0].For("junction", "npn").Cap!.Value.Kelvins, 9);
+        Assert.Equal(0.7, tables[1].For("vce", "npn").Factor);
+    }
+
     private static DeratingTable Named(string name)
     {
         DeratingTable? table = DeratingLibrary.Named(name);

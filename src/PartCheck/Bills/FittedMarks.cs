@@ -1,0 +1,87 @@
+using PartCheck.Quantities;
+using PartCheck.Sheets;
+
+namespace PartCheck.Bills;
+
+/// <summary>
+/// Whether a line is fitted: its column Fitted, its do-not-fit column, or a mark inside its value (<c>DNP</c>, <c>0R - DNP</c>,
+/// <c>10k (not fitted)</c>). Marks that contradict each other are a complaint, and nothing is chosen between them.
+/// </summary>
+internal static class FittedMarks
+{
+    private static readonly string[] Marks = ["DNP", "DNF", "DNI", "DNM", "NF", "NC", "N/F", "NOFIT"];
+    private static readonly string[] MarkWords = ["DNP", "DNF", "DNI", "DNM"];
+
+    private static readonly string[] Phrases =
+    [
+        "NOT FITTED", "NOT PLACED", "NOT POPULATED", "NOT MOUNTED", "NOT INSTALLED", "UNFITTED", "NO FIT",
+        "DO NOT FIT", "DO NOT PLACE", "DO NOT POPULATE", "DO NOT MOUNT", "DO NOT INSTALL",
+    ];
+
+    private static readonly string[] No = ["NO", "N", "0", "FALSE", "-"];
+    private static readonly string[] Yes = ["YES", "Y", "1", "TRUE", "X", "\u2713", "\u2714"];
+    private static readonly string[] FittedWords = ["FIT", "FITTED", "PLACE", "PLACED", "POPULATE", "POPULATED", "MOUNT", "MOUNTED", "INSTALL", "INSTALLED"];
+
+    /// <summary>Fitted or not, and the mark that says not.</summary>
+    internal static (bool Fitted, Cited<string>? Mark) Read(TableRow row, string? value)
+    {
+        bool? byColumn = Said(row, "Fitted", yesMeansFitted: true);
+        bool? byMark = Said(row, "Do not fit", yesMeansFitted: false);
+        bool? byValue = value is not null && IsMark(value) ? false : null;
+        (string Column, bool? Fitted)[] said = [("Fitted", byColumn), ("Do not fit", byMark), ("Value", byValue)];
+        List<(string Column, bool? Fitted)> clear = [.. said.Where(s => s.Fitted is not null)];
+        if (clear.FirstOrDefault(s => s.Fitted == false) is not { Column: { } column })
+        {
+            return (true, null);
+        }
+
+        // A blank or a dash in the do-not-fit column is no statement; a plain "no" there says that the line is fitted.
+        if (clear.FirstOrDefault(s => s.Fitted == true) is { Column: { } other })
+        {
+            row.Complain(
+                column, "marks that agree",
+                $"{column} says \"{row.Text(column)}\", {other} says \"{row.Text(other)}\": one of them fits the line, the other does not.");
+        }
+
+        return (false, new Cited<string>(row.Text(column)!, row.Cite(column)));
+    }
+
+    /// <summary>What a column says; null: nothing.</summary>
+    private static bool? Said(TableRow row, string column, bool yesMeansFitted)
+    {
+        if (row.Text(column) is not { } text || (!yesMeansFitted && text is "-" or "\u2013" or "\u2014"))
+        {
+            return null;
+        }
+
+        string upper = text.ToUpperInvariant();
+        if (Marks.Contains(upper) || Phrases.Contains(upper))
+        {
+            return false;
+        }
+
+        if (FittedWords.Contains(upper))
+        {
+            return true;
+        }
+
+        if (Yes.Contains(upper) || No.Contains(upper))
+        {
+            return Yes.Contains(upper) == yesMeansFitted;
+        }
+
+        row.Complain(column, "yes or no", $"\"{text}\" says neither that the line is fitted nor that it is not.");
+        return null;
+    }
+
+    /// <summary>A mark that is the whole value, one of its words, or a phrase in it.</summary>
+    private static bool IsMark(string value)
+    {
+        string[] words = value.ToUpperInvariant()
+            .Split([' ', '\t', '\n', '\r', '\u00A0', ',', ';', '(', ')', '[', ']', '-', '\u2013', '_', '/', '*'], StringSplitOptions.RemoveEmptyEntries);
+        string spaced = " " + string.Join(' ', words) + " ";
+        return Marks.Contains(value.Trim().ToUpperInvariant())
+            || words.Any(MarkWords.Contains)
+            || Phrases.Any(phrase => spaced.Contains(" " + phrase + " ", StringComparison.Ordinal));
+    }
+}

@@ -1,0 +1,172 @@
+using PartCheck.Channels;
+using Xunit;
+
+namespace PartCheck.Tests.Channels;
+
+public sealed class ChannelBinderTests
+{
+    private readonly TypedBoard board = new();
+
+    [Fact]
+    public void LegsKeepTheOrderOfTheCellsAndADashIsNotSensed()
+    {
+        board.Row["Pass"] = "Q1, Q3";
+        board.Row["Sense"] = "R3, R1";
+        board.Row["Averaging"] = "-, R9";
+        BoundChannel channel = Assert.Single(Assert.Single(board.Bind()).Readings);
+        Assert.Equal(["Q1", "Q3"], channel.Legs.Select(l => l.Pass.Reference));
+        Assert.Equal(["R3", "R1"], channel.Legs.Select(l => l.Sense.Reference));
+        Assert.Equal([null, "R9"], channel.Legs.Select(l => l.Averaging?.Reference));
+        Assert.Equal([false, true], channel.Legs.Select(l => l.Sensed));
+    }
+
+    [Theory]
+    [InlineData("Sense", "R77", "R77 (sense) is not on the bill.")]
+    [InlineData("Sense", "Q3", "Q3 (sense) is a transistor: a resistor is wanted.")]
+    [InlineData("Control", "R8", "R8 (control) is a resistor: a transistor is wanted.")]
+    [InlineData("Sense", "R10", "R10 (sense) has zero ohm: only averaging may.")]
+    [InlineData("Control", "Q1", "Q1 serves as pass and as control.")]
+    public void ARoleThatTheBillDoesNotServeIsAFault(string column, string reference, string text)
+    {
+        board.Row[column] = reference;
+        Channel channel = Assert.Single(board.Bind());
+        Assert.Equal(text, Assert.Single(channel.RoleFaults).Text);
+        Assert.Empty(channel.Readings);
+        Assert.Empty(board.Complaints);
+    }
+
+    [Fact]
+    public void ZeroOhmMayAverage()
+    {
+        board.Row["Averaging"] = "R10";
+        Assert.Single(Assert.Single(board.Bind()).Readings);
+    }
+
+    [Fact]
+    public void ALineThatIsNotFittedIsAFaultWithItsMark()
+    {
+        board.Bill[3] = "R1, R3|RK-33||no";
+        RoleFault fault = Assert.Single(Assert.Single(board.Bind()).RoleFaults);
+        Assert.Equal(("R1 (sense) is not fitted: the bill says \"no\".", "b.csv!D4"), (fault.Text, fault.Cell));
+    }
+
+    [Fact]
+    public void ARefusedKindIsAFaultWithItsReason()
+    {
+        board.Parts[1] = "TQ-31|pnp";
+        Assert.Equal(
+            "TQ-31 is refused as pass: a PNP transistor does not fit a low-side sink.", Assert.Single(Assert.Single(board.Bind()).RoleFaults).Text);
+    }
+
+    [Theory]
+    [InlineData("R1, R3|RK-99", "part table row of RK-99")]
+    [InlineData("R1, R3||Kelbrook", "part number of R1")]
+    [InlineData("R1, R3|TQ-31|Otherone", "part table row of TQ-31 by Otherone")]
+    public void WhatThePartTableDoesNotHoldIsMissing(string line, string missing)
+    {
+        board.Bill[3] = line;
+        Channel channel = Assert.Single(board.Bind());
+        Assert.Equal(missing, Assert.Single(channel.Missing));
+        Assert.Empty(channel.Readings);
+    }
+
+    [Fact]
+    public void AMakerOnTheBillKeepsItsRowsAlone()
+    {
+        board.Parts.Add("TQ-31|npn|Kelbrook");
+        Assert.Equal(2, Assert.Single(board.Bind()).Readings.Count);
+        board.Bill[1] = "Q1, Q3|TQ-31|KELBROOK";
+        Assert.Equal("Kelbrook", Assert.Single(Assert.Single(board.Bind()).Readings).Legs[0].PassPart.Manufacturer);
+    }
+
+    [Fact]
+    public void OneLineInSeveralRolesTakesOneRowAtATime()
+    {
+        board.Parts.Add("TQ-31|npn|Kelbrook");
+        board.Row["Control"] = "Q3";
+        IReadOnlyList<BoundChannel> readings = Assert.Single(board.Bind()).Readings;
+        Assert.Equal(2, readings.Count);
+        Assert.All(readings, r => Assert.Same(r.Legs[0].PassPart, r.ControlPart));
+    }
+
+    [Fact]
+    public void MountingKeepsItsRowsAndBlankTakesAllAssumed()
+    {
+        board.Parts[1] = "TQ-31|npn|Tarnwood|FR4";
+        board.Parts.Add("TQ-31|npn|Tarnwood|1 cm2");
+        Channel channel = Assert.Single(board.Bind());
+        Assert.Equal(2, channel.Readings.Count);
+        Assert.Contains(new Assumption("Mounting", "TQ-31", "the worst of its rows"), channel.Assumed);
+
+        board.Row["Mounting"] = "fr4";
+        channel = Assert.Single(board.Bind());
+        Assert.Equal("FR4", Assert.Single(channel.Readings).Legs[0].PassPart.Mounting);
+        Assert.Empty(channel.Assumed);
+
+        board.Row["Mounting"] = "ceramic";
+        Assert.Equal("part table row of TQ-31 on ceramic", Assert.Single(Assert.Single(board.Bind()).Missing));
+    }
+
+    // 16 x 16 = 256 readings are solved, 17 x 16 = 272 are too many.
+    [Theory]
+    [InlineData(16, 256)]
+    [InlineData(17, 0)]
+    public void MoreThan256ReadingsAreAComplaint(int makers, int readings)
+    {
+        board.Parts.AddRange(Enumerable.Range(1, makers - 1).Select(i => $"TQ-31|npn|Maker {i}"));
+        board.Parts.AddRange(Enumerable.Range(1, 15).Select(i => $"TQ-30|npn|Maker {i}"));
+        Channel channel = Assert.Single(board.Bind());
+        Assert.Equal(readings, channel.Readings.Count);
+        if (readings == 0)
+        {
+            Assert.Equal("CH1", Assert.Single(board.Complaints).Channel);
+            Assert.Contains("272 combinations", board.Only(), StringComparison.Ordinal);
+            Assert.Equal(["manufacturers on the bill"], channel.Missing);
+        }
+    }
+
+    [Fact]
+    public void TheBillsChannelAndRoleStandForTheReferenceColumns()
+    {
+        GiveRoles();
+        BoundChannel channel = Assert.Single(Assert.Single(board.Bind()).Readings);
+        Assert.Empty(board.Complaints);
+        Assert.Equal(["Q1", "Q3"], channel.Legs.Select(l => l.Pass.Reference));
+        Assert.Equal(("Q2", "R2", "R10"), (channel.Control.Reference, channel.Feed.Reference, channel.PullDown?.Reference));
+        Assert.Equal(["R8", "R9"], channel.Legs.Select(l => l.Averaging?.Reference));
+    }
+
+    [Fact]
+    public void ARoleOnTheBillThatIsNotKnownIsAComplaint()
+    {
+        GiveRoles();
+        board.Bill[5] = "R8, R9|RK-100|||CH1|average";
+        Assert.Empty(Assert.Single(board.Bind()).Readings);
+        Assert.Contains(board.Complaints, c => c.Text.Contains("the role \"average\" in this channel, which is not known (b.csv!A6)", StringComparison.Ordinal));
+    }
+
+    [Fact]
+    public void ColumnsAndBillThatContradictAreTold()
+    {
+        GiveRoles();
+        board.Row["Feed"] = "R3";
+        Assert.Empty(Assert.Single(board.Bind()).Readings);
+        Assert.Contains("The channel's feed is R3 here and R2 by the bill's column Role.", board.Only(), StringComparison.Ordinal);
+    }
+
+    private void GiveRoles()
+    {
+        foreach (string column in (ReadOnlySpan<string>)["Pass", "Sense", "Control", "Feed"])
+        {
+            board.Row.Remove(column);
+        }
+
+        board.Parts[6] = "RK-0|resistor|||10k";
+        board.Bill.RemoveRange(1, board.Bill.Count - 1);
+        board.Bill.AddRange(
+        [
+            "Q1, Q3|TQ-31|||CH1|pass", "Q2|TQ-30|||ch1|Control", "R1, R3|RK-33|||CH1|sense", "R2|RK-4K7|||CH1|feed",
+            "R8, R9|RK-100|||CH1|averaging", "R10|RK-0|||CH1|pull-down",
+        ]);
+    }
+}
