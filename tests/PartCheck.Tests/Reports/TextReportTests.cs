@@ -92,8 +92,18 @@ public class TextReportTests
     {
         Finding finding = new()
         {
-            Channel = name, Rule = "power", Reference = "Q1", PartNumber = name, State = ChannelState.On, Actual = actual, Allowed = 0.1, Unit = "W",
-            StressRatio = ratio, Verdict = Verdict.Nonconforming, Source = name, Cell = name + "!K3",
+            Channel = name,
+            Rule = "power",
+            Reference = "Q1",
+            PartNumber = name,
+            State = ChannelState.On,
+            Actual = actual,
+            Allowed = 0.1,
+            Unit = "W",
+            StressRatio = ratio,
+            Verdict = Verdict.Nonconforming,
+            Source = name,
+            Cell = name + "!K3",
         };
         Finding gap = finding with { Rule = "vce", Verdict = Verdict.NotVerified, Actual = null, StressRatio = null, Missing = ["VCEO of " + name] };
         Finding pin = finding with { Rule = "pin-current", Channel = null, Reference = null, Pin = name, Channels = [name], Verdict = Verdict.Conforms };
