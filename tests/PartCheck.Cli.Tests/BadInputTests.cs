@@ -196,6 +196,19 @@ public class BadInputTests
     }
 
     [Fact]
+    public async Task APartThatServesTwoChannelsIsAFindingOfBoth()
+    {
+        string second = BoardFolder.Channels.Split('\n')[1].Replace("CH1", "CH2", StringComparison.Ordinal).Replace("R1", "r1", StringComparison.Ordinal);
+        using BoardFolder board = new(channels: BoardFolder.Channels + "\n" + second + "\n");
+        Run run = await board.Check();
+        Assert.Equal(1, run.Code);
+        Assert.Contains("R1 (sense) serves channel CH2 too.", run.Flat, StringComparison.Ordinal);
+        Assert.Contains("r1 (sense) serves channel CH1 too.", run.Flat, StringComparison.Ordinal);
+        Assert.DoesNotContain("CH1 conforms", run.Flat, StringComparison.Ordinal);
+        Assert.DoesNotContain("CH2 conforms", run.Flat, StringComparison.Ordinal);
+    }
+
+    [Fact]
     public async Task AllComplaintsOfAllFilesComeAtOnce()
     {
         using BoardFolder board = new(

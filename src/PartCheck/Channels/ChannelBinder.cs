@@ -26,11 +26,16 @@ public static class ChannelBinder
             }
         }
 
-        return [.. rows.Select(row => BindOne(row, byReference, parts, pins, complaints))];
+        // A row with complaints is not judged and proves nothing about the others.
+        ILookup<string, ChannelRow> users = rows
+            .Where(row => row.Conditions is not null)
+            .SelectMany(row => RoleNames.Columns.SelectMany(c => row.Of(c.Role)).Where(r => r != "-").Distinct(StringComparer.OrdinalIgnoreCase).Select(reference => (reference, row)))
+            .ToLookup(use => use.reference, use => use.row, StringComparer.OrdinalIgnoreCase);
+        return [.. rows.Select(row => BindOne(row, byReference, users, parts, pins, complaints))];
     }
 
     private static Channel BindOne(
-        ChannelRow row, Dictionary<string, BillLine> bill, PartTable parts, IReadOnlyList<LogicPin> pins, ComplaintList complaints)
+        ChannelRow row, Dictionary<string, BillLine> bill, ILookup<string, ChannelRow> users, PartTable parts, IReadOnlyList<LogicPin> pins, ComplaintList complaints)
     {
         List<RoleFault> faults = [];
         List<string> missing = [];
@@ -44,6 +49,13 @@ public static class ChannelBinder
                 if (!usedBy.TryAdd(reference, column))
                 {
                     faults.Add(new RoleFault(role, reference, $"{reference} serves as {usedBy[reference].ToLowerInvariant()} and as {column.ToLowerInvariant()}.", row.Cells[column]));
+                    continue;
+                }
+
+                // One part carries the current of one channel: in two it would be judged at half its load.
+                if (users[reference].FirstOrDefault(other => other != row) is { } twin)
+                {
+                    faults.Add(new RoleFault(role, reference, $"{reference} ({column.ToLowerInvariant()}) serves channel {twin.Name} too.", row.Cells[column]));
                     continue;
                 }
 
