@@ -208,6 +208,21 @@ public class BadInputTests
         Assert.DoesNotContain("CH2 conforms", run.Flat, StringComparison.Ordinal);
     }
 
+    [Theory]
+    [InlineData("mine,power,0.6\nmine,vce,80", "derating.csv!C3")]
+    [InlineData("mine,powr,0.6", "derating.csv!B2")]
+    [InlineData("mine,power,0.6\n,vce,0.8", "derating.csv!A3")]
+    public async Task ADeratingTableWithARowThatCannotBeReadVerifiesNothing(string rows, string cell)
+    {
+        using BoardFolder board = new();
+        board.Write("derating.csv", "Name,Rule,Factor\n" + rows + "\n");
+        Run run = await board.Check();
+        Assert.Equal(65, run.Code);
+        Assert.Contains(cell, run.Flat, StringComparison.Ordinal);
+        Assert.Contains("missing derating table mine", run.Flat, StringComparison.Ordinal);
+        Assert.Contains("CH1 not verified", run.Flat, StringComparison.Ordinal);
+    }
+
     [Fact]
     public async Task AllComplaintsOfAllFilesComeAtOnce()
     {

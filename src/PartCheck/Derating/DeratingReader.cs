@@ -45,8 +45,14 @@ public static class DeratingReader
         }
 
         List<(string Name, string? Note, DeratingRow Row, TableRow Line)> rows = [];
+        List<string> names = [];
         foreach (TableRow line in table.Rows)
         {
+            if (line.Text("Name") is { } name && !names.Contains(name, StringComparer.OrdinalIgnoreCase))
+            {
+                names.Add(name);
+            }
+
             if (ReadRow(line) is { } row)
             {
                 if (rows.Find(r => Same(r.Name, line.Text("Name")) && Same(r.Row.Rule, row.Rule) && Same(r.Row.Kind, row.Kind) && Same(r.Row.Style, row.Style)) is { Line: not null } twin)
@@ -59,8 +65,10 @@ public static class DeratingReader
             }
         }
 
-        return [.. rows.GroupBy(r => r.Name, StringComparer.OrdinalIgnoreCase)
-            .Select(g => new DeratingTable(g.Key, g.Select(r => r.Note).FirstOrDefault(n => n is not null), [.. g.Select(r => r.Row)]))];
+        // A row that cannot be read leaves a rule without its derating: nothing that such a table judges is verified.
+        bool Broken(string name) => table.Rows.Any(l => l.HasComplaints && (l.Text("Name") is null || Same(l.Text("Name"), name)));
+        return [.. names.Select(name => (Name: name, Rows: rows.Where(r => Same(r.Name, name)).ToList()))
+            .Select(g => new DeratingTable(g.Name, g.Rows.Select(r => r.Note).FirstOrDefault(n => n is not null), [.. g.Rows.Select(r => r.Row)]) { Unknown = Broken(g.Name) })];
     }
 
     private static DeratingRow? ReadRow(TableRow line)

@@ -58,7 +58,7 @@ public sealed record DeratingRow
 /// <param name="Rows">Its rows.</param>
 public sealed record DeratingTable(string Name, string? Note, IReadOnlyList<DeratingRow> Rows)
 {
-    /// <summary>True for the stand-in of a table that somebody named and that there is not: nothing judged by it is verified.</summary>
+    /// <summary>True for a table that somebody named and that there is not, or of which a row cannot be read: nothing judged by it is verified.</summary>
     public bool Unknown { get; init; }
 
     /// <summary>
