@@ -131,8 +131,7 @@ public sealed partial class LaneSolver
         }
         else
         {
-            Lanes u = Vector512.Min((load - c.ReferenceDrop) * c.InverseEmission, Vector512.Create(200.0));
-            Lanes exponential = Vector512.Exp(u);
+            Lanes exponential = ElementaryFunctions.Exp((load - c.ReferenceDrop) * c.InverseEmission);
             slope = c.LoadScale * exponential * c.InverseEmission;
             loadCurrent = c.LoadScale * (exponential - c.LoadFloor);
         }

@@ -169,7 +169,7 @@ public sealed partial class LaneSolver
     {
         if (Vector512.GreaterThanAny(Vector512.Abs(step), scale * 2.0))
         {
-            Lanes critical = scale * (Vector512.Log(scale * (1 / Math.Sqrt(2))) - device.LogSaturation);
+            Lanes critical = scale * (ElementaryFunctions.Log(scale * (1 / Math.Sqrt(2))) - device.LogSaturation);
             step = Junction(old, step, scale, critical);
         }
 
@@ -191,9 +191,9 @@ public sealed partial class LaneSolver
         Lanes argument = Lanes.One + (step / scale);
         Lanes forward = Vector512.ConditionalSelect(
             Vector512.GreaterThan(argument, Lanes.Zero),
-            scale * Vector512.Log(Vector512.Max(argument, Vector512.Create(1e-300))),
+            scale * ElementaryFunctions.Log(Vector512.Max(argument, Vector512.Create(1e-300))),
             Vector512.Max(critical, old - (scale * 10.0)) - old);
-        Lanes fromBelow = (scale * Vector512.Log(Vector512.Max(next / scale, Vector512.Create(1.01)))) - old;
+        Lanes fromBelow = (scale * ElementaryFunctions.Log(Vector512.Max(next / scale, Vector512.Create(1.01)))) - old;
         return Vector512.ConditionalSelect(
             limited, Vector512.ConditionalSelect(Vector512.GreaterThan(old, Lanes.Zero), forward, fromBelow), step);
     }

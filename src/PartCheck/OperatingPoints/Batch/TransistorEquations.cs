@@ -1,6 +1,7 @@
 using System.Runtime.CompilerServices;
 using System.Runtime.InteropServices;
 using System.Runtime.Intrinsics;
+using System.Runtime.Intrinsics.X86;
 using Lanes = System.Runtime.Intrinsics.Vector512<double>;
 
 namespace PartCheck.OperatingPoints.Batch;
@@ -35,8 +36,8 @@ internal sealed partial class TransistorLanes
         Lanes one = Lanes.One;
         Lanes beU = vbe * inverseNf;
         Lanes bcU = vbc * inverseNr;
-        Lanes beX = Exponential(beU);
-        Lanes bcX = Exponential(bcU);
+        Lanes beX = ElementaryFunctions.Exp(beU);
+        Lanes bcX = ElementaryFunctions.Exp(bcU);
         Lanes beI = isat * LessOne(beU, beX);
         Lanes beG = isat * beX * inverseNf;
         Lanes bcI = isat * LessOne(bcU, bcX);
@@ -54,7 +55,7 @@ internal sealed partial class TransistorLanes
         if (hasNkf)
         {
             Lanes nkf = Constant(TransistorField.Nkf);
-            root = Vector512.Exp(nkf * Vector512.Log(argument));
+            root = ElementaryFunctions.Exp(nkf * ElementaryFunctions.Log(argument));
             rootSlope = nkf * 4.0 * root / argument;
         }
         else
@@ -91,7 +92,7 @@ internal sealed partial class TransistorLanes
         if (hasIsc)
         {
             Lanes u = vbc * inverseNc;
-            Lanes x = Exponential(u);
+            Lanes x = ElementaryFunctions.Exp(u);
             Lanes current = isc * LessOne(u, x);
             Lanes conductance = isc * x * inverseNc;
             reverse += current;
@@ -106,7 +107,7 @@ internal sealed partial class TransistorLanes
         if (hasIse)
         {
             Lanes u = vbe * inverseNe;
-            Lanes x = Exponential(u);
+            Lanes x = ElementaryFunctions.Exp(u);
             Lanes current = ise * LessOne(u, x);
             Lanes conductance = ise * x * inverseNe;
             forward += current;
@@ -155,11 +156,6 @@ internal sealed partial class TransistorLanes
         }
     }
 
-    /// <summary>exp, held at 200 like the scalar equations' and at -700, where it is nothing.</summary>
-    [MethodImpl(MethodImplOptions.AggressiveInlining)]
-    private static Lanes Exponential(Lanes u) =>
-        Vector512.Exp(Vector512.Min(Vector512.Max(u, Vector512.Create(-700.0)), Vector512.Create(200.0)));
-
     /// <summary>exp(u) - 1 without cancellation near zero.</summary>
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     private static Lanes LessOne(Lanes u, Lanes exponential)
@@ -180,7 +176,7 @@ internal sealed partial class TransistorLanes
         Lanes bounded = Vector512.Max(ic, Vector512.Create(1e-300));
         Lanes perLog = Constant(TransistorField.GainPointsPerLog);
         Lanes last = Constant(TransistorField.GainLast);
-        Lanes position = (Vector512.Log(bounded) - Constant(TransistorField.GainFirstLog)) * perLog;
+        Lanes position = (ElementaryFunctions.Log(bounded) - Constant(TransistorField.GainFirstLog)) * perLog;
         Lanes inside = Vector512.GreaterThan(position, Lanes.Zero) & Vector512.LessThan(position, last);
         if (inside == Lanes.Zero && Vector512.LessThanOrEqualAll(position, Lanes.Zero))
         {
@@ -218,6 +214,19 @@ internal sealed partial class TransistorLanes
         Vector256<double> r0, Vector256<double> r1, Vector256<double> r2, Vector256<double> r3,
         out Vector256<double> c0, out Vector256<double> c1, out Vector256<double> c2, out Vector256<double> c3)
     {
+        if (Avx.IsSupported)
+        {
+            Vector256<double> low01 = Avx.UnpackLow(r0, r1);
+            Vector256<double> high01 = Avx.UnpackHigh(r0, r1);
+            Vector256<double> low23 = Avx.UnpackLow(r2, r3);
+            Vector256<double> high23 = Avx.UnpackHigh(r2, r3);
+            c0 = Avx.Permute2x128(low01, low23, 0x20);
+            c1 = Avx.Permute2x128(high01, high23, 0x20);
+            c2 = Avx.Permute2x128(low01, low23, 0x31);
+            c3 = Avx.Permute2x128(high01, high23, 0x31);
+            return;
+        }
+
         c0 = Vector256.Create(r0[0], r1[0], r2[0], r3[0]);
         c1 = Vector256.Create(r0[1], r1[1], r2[1], r3[1]);
         c2 = Vector256.Create(r0[2], r1[2], r2[2], r3[2]);
