@@ -11,6 +11,7 @@ namespace PartCheck.OperatingPoints.Batch;
 /// </summary>
 public sealed partial class LaneSolver
 {
+    private const int AllLanes = (1 << TransistorLanes.Width) - 1;
     private const int StepLimit = 40;
     private const double VoltageTolerance = 2e-7;
     private const double TemperatureTolerance = 2e-5;
@@ -45,26 +46,17 @@ public sealed partial class LaneSolver
         edge = edgeFactor;
         heated = circuits.Heated && edgeFactor is null;
         Start();
-        Lanes open = Lanes.AllBitsSet;
-        Lanes failed = Lanes.Zero;
         Lanes balanced = Lanes.Zero;
         int iterations = 0;
-        for (; iterations < StepLimit && open != Lanes.Zero; iterations++)
+        while (balanced.ExtractMostSignificantBits() != AllLanes && iterations < StepLimit)
         {
             Assemble(final: false);
-            Step(out Lanes moving, out Lanes lost);
-            failed |= lost;
-            open = Vector512.AndNot(moving, failed);
-            if (open == Lanes.Zero)
+            iterations++;
+            if (Step() == Lanes.Zero || iterations == StepLimit)
             {
+                // A lane that is lost (not a number) moves no more, but it does not balance.
                 balanced = Assemble(final: true);
-                open = Vector512.AndNot(~balanced, failed);
             }
-        }
-
-        if (open != Lanes.Zero)
-        {
-            balanced = Vector512.AndNot(Assemble(final: true), open);
         }
 
         for (int d = 0; d <= c.Shape.Legs; d++)
@@ -75,9 +67,9 @@ public sealed partial class LaneSolver
         }
 
         into.Store(baseVoltage, controlBase, collector, loadCurrent);
-        into.Solved = (int)Vector512.AndNot(balanced, failed).ExtractMostSignificantBits();
+        into.Solved = (int)balanced.ExtractMostSignificantBits();
         into.Iterations = iterations;
-        startShape = into.Solved == 0xFF ? c.Shape : default;
+        startShape = into.Solved == AllLanes ? c.Shape : default;
     }
 
     /// <summary>From the last solution, each junction at its old current; else cold, as the scalar solver starts.</summary>
@@ -126,30 +118,38 @@ public sealed partial class LaneSolver
         load = c.Shape.Fed ? drop : start;
     }
 
-    /// <summary>Solves for the node voltages, then every unknown takes its limited step.</summary>
-    private void Step(out Lanes moving, out Lanes lost)
+    /// <summary>Solves for the node voltages, then every unknown takes its limited step. Returns the lanes that still move.</summary>
+    private Lanes Step()
     {
         Inverse3 m = Inverse3.Of(
             controlRow.Vb, controlRow.Vx, controlRow.Vc,
             loadRow.Vb, loadRow.Vx, loadRow.Vc,
             baseRow.Vb, baseRow.Vx, baseRow.Vc);
-        Lanes vb = -((m.M00 * controlRow.Constant) + (m.M01 * loadRow.Constant) + (m.M02 * baseRow.Constant));
-        Lanes vx = -((m.M10 * controlRow.Constant) + (m.M11 * loadRow.Constant) + (m.M12 * baseRow.Constant));
-        Lanes vc = -((m.M20 * controlRow.Constant) + (m.M21 * loadRow.Constant) + (m.M22 * baseRow.Constant));
-        moving = Lanes.Zero;
-        Lanes sum = Lanes.Zero;
+        Lanes vb = -m.First(controlRow.Constant, loadRow.Constant, baseRow.Constant);
+        Lanes vx = -m.Second(controlRow.Constant, loadRow.Constant, baseRow.Constant);
+        Lanes vc = -m.Third(controlRow.Constant, loadRow.Constant, baseRow.Constant);
+        Lanes largest = Lanes.Zero;
+        Lanes warmest = Lanes.Zero;
         for (int d = 0; d <= c.Shape.Legs; d++)
         {
             TransistorLanes device = c.Devices[d];
-            vbe[d] += Bounded(vbe[d], ofVbe[d].At(vb, vx, vc), device.ForwardVoltage, device, ref moving, ref sum);
-            vbc[d] += Bounded(vbc[d], ofVbc[d].At(vb, vx, vc), device.ReverseVoltage, device, ref moving, ref sum);
+            Lanes forward = ofVbe[d].At(vb, vx, vc);
+            Lanes reverse = ofVbc[d].At(vb, vx, vc);
+            Lanes limit = device.ForwardVoltage * 2.0;
+            if (Vector512.GreaterThanAny(Vector512.Abs(forward), limit) || Vector512.GreaterThanAny(Vector512.Abs(reverse), limit))
+            {
+                forward = Junction(vbe[d], forward, device.ForwardVoltage, device.Critical(device.ForwardVoltage));
+                reverse = Junction(vbc[d], reverse, device.ReverseVoltage, device.Critical(device.ReverseVoltage));
+            }
+
+            vbe[d] += forward;
+            vbc[d] += reverse;
+            largest = Vector512.MaxNative(largest, Vector512.MaxNative(Vector512.Abs(forward), Vector512.Abs(reverse)));
             if (heated)
             {
-                Lanes step = Vector512.Max(Vector512.Min(ofKelvins[d].At(vb, vx, vc), Vector512.Create(40.0)), Vector512.Create(-40.0));
-                Lanes next = Vector512.Max(Vector512.Min(kelvins[d] + step, Vector512.Create(900.0)), Vector512.Create(100.0));
-                moving |= Vector512.GreaterThan(Vector512.Abs(step), Vector512.Create(TemperatureTolerance));
-                sum += step;
-                kelvins[d] = next;
+                Lanes step = Vector512.MaxNative(Vector512.MinNative(ofKelvins[d].At(vb, vx, vc), Vector512.Create(40.0)), Vector512.Create(-40.0));
+                kelvins[d] = Vector512.MaxNative(Vector512.MinNative(kelvins[d] + step, Vector512.Create(900.0)), Vector512.Create(100.0));
+                warmest = Vector512.MaxNative(warmest, Vector512.Abs(step));
             }
         }
 
@@ -159,23 +159,11 @@ public sealed partial class LaneSolver
             shift = Junction(load, shift, c.Emission, c.LoadCritical);
         }
 
-        moving |= Vector512.GreaterThan(Vector512.Abs(shift), (Lanes.One + Vector512.Abs(load)) * VoltageTolerance);
-        sum += shift;
         load += shift;
-        lost = ~Vector512.LessThan(Vector512.Abs(sum), Vector512.Create(1e12));
-    }
-
-    private static Lanes Bounded(Lanes old, Lanes step, Lanes scale, TransistorLanes device, ref Lanes moving, ref Lanes sum)
-    {
-        if (Vector512.GreaterThanAny(Vector512.Abs(step), scale * 2.0))
-        {
-            Lanes critical = scale * (ElementaryFunctions.Log(scale * (1 / Math.Sqrt(2))) - device.LogSaturation);
-            step = Junction(old, step, scale, critical);
-        }
-
-        moving |= Vector512.GreaterThan(Vector512.Abs(step), (Lanes.One + Vector512.Abs(old)) * VoltageTolerance);
-        sum += step;
-        return step;
+        largest = Vector512.MaxNative(largest, Vector512.Abs(shift));
+        Lanes still = Vector512.LessThanOrEqual(largest, Vector512.Create(VoltageTolerance))
+            & Vector512.LessThanOrEqual(warmest, Vector512.Create(TemperatureTolerance));
+        return ~still;
     }
 
     /// <summary>The logarithmic limit of <see cref="SinkSolver"/>.</summary>

@@ -148,6 +148,9 @@ internal sealed partial class TransistorLanes
         }
     }
 
+    /// <summary>Voltage above which a junction's steps are limited: scale ln(scale/(sqrt 2 IS)) [V].</summary>
+    public Lanes Critical(Lanes scale) => scale * (ElementaryFunctions.Log(scale * (1 / Math.Sqrt(2))) - LogSaturation);
+
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     private Lanes Constant(int field) =>
         Vector512.LoadUnsafe(ref MemoryMarshal.GetArrayDataReference(constants), (nuint)(field * Width));
