@@ -9,9 +9,8 @@ using Xunit;
 
 namespace PartCheck.Tests.Rules;
 
-public class SharingRuleTests : RuleTests
+public class SharingRuleTests : RuleTests<SharingRule>
 {
-    private static readonly SharingRule Rule = new();
     private static readonly Transistor Lot = SampleChannel.Transistor() with { VbeMatch = States.Cite(Voltage.FromVolts(0.002)) };
 
     // Allowed 1.1 - 1 = 0.1. Means 0.60 V: 0.63/0.60 - 1 = 0.05; 0.66/0.60 - 1 = 0.1; 0.67/0.60 - 1 = 0.1167.
@@ -23,6 +22,8 @@ public class SharingRuleTests : RuleTests
 
     protected override Stress WithoutTheRating() =>
         States.Judge(Rule, States.OfLegs(Extreme.Min, Leg(0.63), Leg(0.57)), SampleChannel.Channel(2));
+
+    protected override bool AskedByNobody() => States.Asks(Rule, SampleChannel.Channel(2));
 
     // One odd leg and seven others: mean (0.76 + 7 x 0.60)/8 = 0.62; 0.76/0.62 - 1 = 0.225806.
     [Fact]

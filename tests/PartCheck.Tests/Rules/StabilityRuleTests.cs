@@ -7,10 +7,8 @@ using Xunit;
 
 namespace PartCheck.Tests.Rules;
 
-public class StabilityRuleTests : RuleTests
+public class StabilityRuleTests : RuleTests<StabilityRule>
 {
-    private static readonly StabilityRule Rule = new();
-
     // VCE 3 V, RthJA 325 K/W, 2 mV/K: 1.95 ohm. VT/IC at 25 degC and 20 mA: 25.6926 mV/20 mA = 1.28463 ohm; so the edge is at
     // RE = 0.66537 ohm. Below: 1.95/2.28463 = 0.853530. Above: 1.95/1.88463 = 1.034686.
     protected override Stress Below() => Judge(1.0);
@@ -20,6 +18,8 @@ public class StabilityRuleTests : RuleTests
     protected override Stress Above() => Judge(0.6);
 
     protected override Stress WithoutTheRating() => States.Judge(Rule, States.Of(Leg(1) with { RthJa = double.NaN }));
+
+    protected override bool AskedByNobody() => States.Asks(Rule, States.BareTransistor, SampleChannel.Channel(1));
 
     [Theory]
     [InlineData(1.0, 0.853530)]

@@ -13,6 +13,9 @@ internal static class States
 {
     public static readonly BoundChannel Channel = SampleChannel.Channel(1);
 
+    /// <summary>A transistor whose row gives nothing: nobody asks for anything.</summary>
+    public static readonly Transistor BareTransistor = new() { PartNumber = "TQ-99", Cell = "parts.csv!A99" };
+
     public static SolvedState Of(
         TransistorPoint? pass = null, ResistorPoint? resistor = null, double celsius = 25, ChannelState state = ChannelState.On, double load = 0.02,
         double baseNode = 1.3, bool lowest = false, DriveEdge? drive = null, bool pinHolds = true, bool gainHolds = true, double pinLevel = 5.25) => new()
@@ -61,7 +64,13 @@ internal static class States
     public static Stress Judge(ChannelRule rule, SolvedState state, DeratingRow row, BoundChannel channel) =>
         rule.Evaluate(state, channel, Rows(rule, row));
 
-    public static bool Asks(TransistorRule rule, Transistor part, BoundChannel channel) => rule.Asked(part, channel, Rows(rule, null));
+    public static bool Asks(TransistorRule rule, Transistor part, BoundChannel channel) => rule.AppliesTo(Role.Pass) && rule.Asked(part, channel, Rows(rule, null));
+
+    public static bool Asks(ResistorRule rule, ResistorPart part) => rule.AppliesTo(part);
+
+    /// <summary>A resistor whose row gives its resistance alone.</summary>
+    public static ResistorPart BareResistor(double ohms) =>
+        new() { PartNumber = "RK-99", Cell = "parts.csv!A99", Resistance = Cite(Resistance.FromOhms(ohms)) };
 
     public static bool Asks(ChannelRule rule, BoundChannel channel, DeratingRow? row = null) => rule.Asked(channel, Rows(rule, row));
 
