@@ -93,7 +93,7 @@ public sealed record Placement(Role Role, int Leg, string Reference, BillLine Li
 /// <summary>One leg, every role bound.</summary>
 /// <param name="Pass">Pass transistor.</param>
 /// <param name="Sense">Sense resistor.</param>
-/// <param name="Averaging">Averaging resistor; null: none.</param>
+/// <param name="Averaging">Averaging resistor; null: none (the emitter is the control's base node, or the leg is not sensed).</param>
 /// <param name="Sensed">False where the control does not sense this leg (<c>-</c> in Averaging).</param>
 public sealed record Leg(Placement Pass, Placement Sense, Placement? Averaging, bool Sensed)
 {

@@ -29,7 +29,7 @@ public static class ChannelBinder
         // A row with complaints is not judged and proves nothing about the others.
         ILookup<string, ChannelRow> users = rows
             .Where(row => row.Conditions is not null)
-            .SelectMany(row => RoleNames.Columns.SelectMany(c => row.Of(c.Role)).Where(r => r != "-").Distinct(StringComparer.OrdinalIgnoreCase).Select(reference => (reference, row)))
+            .SelectMany(row => RoleNames.Columns.SelectMany(c => row.Placed(c.Role)).Distinct(StringComparer.OrdinalIgnoreCase).Select(reference => (reference, row)))
             .ToLookup(use => use.reference, use => use.row, StringComparer.OrdinalIgnoreCase);
         return [.. rows.Select(row => BindOne(row, byReference, users, parts, pins, complaints))];
     }
@@ -44,7 +44,7 @@ public static class ChannelBinder
         Dictionary<string, string> usedBy = new(StringComparer.OrdinalIgnoreCase);
         foreach ((Role role, string column) in RoleNames.Columns)
         {
-            foreach (string reference in row.Of(role).Where(r => r != "-"))
+            foreach (string reference in row.Placed(role))
             {
                 if (!usedBy.TryAdd(reference, column))
                 {
@@ -97,7 +97,7 @@ public static class ChannelBinder
             Missing = missing,
             RoleFaults = faults,
             Assumed = assumed,
-            References = [.. RoleNames.Columns.SelectMany(c => row.Of(c.Role)).Where(r => r != "-")],
+            References = [.. RoleNames.Columns.SelectMany(c => row.Placed(c.Role))],
             Derating = row.Conditions?.Derating,
         };
     }
@@ -198,10 +198,10 @@ public static class ChannelBinder
         List<Leg> legs = [];
         for (int i = 0; i < pass.Count; i++)
         {
-            bool sensed = averaging.Count == 0 || averaging[i] != "-";
+            bool sensed = averaging.Count == 0 || averaging[i] != RoleNames.NotSensed;
             legs.Add(new Leg(
                 Place(Role.Pass, i, pass[i]), Place(Role.Sense, i, sense[i]),
-                averaging.Count > 0 && sensed ? Place(Role.Averaging, i, averaging[i]) : null, sensed));
+                averaging.Count > 0 && RoleNames.IsReference(averaging[i]) ? Place(Role.Averaging, i, averaging[i]) : null, sensed));
         }
 
         return new BoundChannel

@@ -33,6 +33,7 @@ public sealed class ChannelModel
         ControlRth = Rth(Control.Part);
         Heats = ControlRth is not null && PassRth.All(r => r is not null);
         CouplingGiven = Classes.All(c => c.First.PassPart.Coupling is not null);
+        OneLegSensed = channel.Legs.Count(l => l.Sensed) == 1;
         Load = [LoadAt(channel.Conditions.LoadDrop.Min), LoadAt(channel.Conditions.LoadDrop.Max)];
         NominalLoad = LoadAt(Voltage.FromVolts(
             (channel.Conditions.LoadDrop.Min.Volts + channel.Conditions.LoadDrop.Max.Volts) / 2));
@@ -77,6 +78,12 @@ public sealed class ChannelModel
 
     /// <summary>True where the table gives the coupling of every pass transistor.</summary>
     public bool CouplingGiven { get; }
+
+    /// <summary>
+    /// True where the control senses one leg alone. It holds that leg's current, so nothing is averaged: an averaging resistor there carries
+    /// the control's base current and is no ballast.
+    /// </summary>
+    public bool OneLegSensed { get; }
 
     /// <summary>Load at the smallest and the largest drop.</summary>
     public IReadOnlyList<LoadElement> Load { get; }

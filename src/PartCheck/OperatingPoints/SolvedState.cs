@@ -113,7 +113,7 @@ public readonly record struct TransistorPoint(
     /// <summary>Effective base resistance of the device [ohm].</summary>
     public double BaseResistance { get; init; }
 
-    /// <summary>Ballast between this leg and the others: sense parallel averaging, sense alone where not sensed [ohm].</summary>
+    /// <summary>Ballast between this leg and the others: sense parallel averaging; sense alone where not sensed, or sensed alone [ohm].</summary>
     public double Ballast { get; init; }
 
     /// <summary>Thermal resistance junction to ambient, given or assumed [K/W]; NaN: not to be had.</summary>

@@ -7,8 +7,9 @@ namespace PartCheck.Rules;
 
 /// <summary>
 /// Thermal stability of legs that share one control, state on: the loop gain of the difference between two legs,
-/// S = d VCE RthJA abs(dVBE/dT) / (Rs Ra/(Rs + Ra) + RE + VT/IC + RB/hFE), at most factor [-]. The ballast is Rs parallel Ra (an
-/// unsensed leg: Rs alone); dVBE/dT is the solved model's at constant IC. A duty below 100 % counts as 100 % (d = 1).
+/// S = d VCE RthJA abs(dVBE/dT) / (Rs Ra/(Rs + Ra) + RE + VT/IC + RB/hFE), at most factor [-]. The ballast is Rs parallel Ra; Rs
+/// alone of a leg that is not sensed and of the only one that is (the control holds that one's current: Ra is no ballast there, and S an
+/// upper bound). dVBE/dT is the solved model's at constant IC. A duty below 100 % counts as 100 % (d = 1).
 /// </summary>
 public sealed class StabilityRule : TransistorRule
 {

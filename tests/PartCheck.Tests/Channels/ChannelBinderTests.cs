@@ -21,6 +21,33 @@ public sealed class ChannelBinderTests
     }
 
     [Theory]
+    [InlineData("direct, -", true)]
+    [InlineData("-, Direct", false)]
+    public void OneLegMayBeSensedDirectly(string averaging, bool first)
+    {
+        board.Row["Pass"] = "Q1, Q3";
+        board.Row["Sense"] = "R3, R1";
+        board.Row["Averaging"] = averaging;
+        Channel channel = Assert.Single(board.Bind());
+        Assert.Empty(board.Complaints);
+        Assert.All(Assert.Single(channel.Readings).Legs, l => Assert.Null(l.Averaging));
+        Assert.Equal([first, !first], channel.Readings[0].Legs.Select(l => l.Sensed));
+        Assert.Equal(["Q1", "Q3", "R3", "R1", "Q2", "R2"], channel.References);
+    }
+
+    [Theory]
+    [InlineData("direct, direct")]
+    [InlineData("direct, R9")]
+    public void WhereSeveralLegsAreSensedNoneIsDirect(string averaging)
+    {
+        board.Row["Pass"] = "Q1, Q3";
+        board.Row["Sense"] = "R3, R1";
+        board.Row["Averaging"] = averaging;
+        Assert.Empty(Assert.Single(board.Bind()).Readings);
+        Assert.Contains("Only a leg that the control senses alone may be joined to it directly", board.Only(), StringComparison.Ordinal);
+    }
+
+    [Theory]
     [InlineData("Sense", "R77", "R77 (sense) is not on the bill.")]
     [InlineData("Sense", "Q3", "Q3 (sense) is a transistor: a resistor is wanted.")]
     [InlineData("Control", "R8", "R8 (control) is a resistor: a transistor is wanted.")]

@@ -111,6 +111,16 @@ public class SharingRuleTests : RuleTests<SharingRule>
         Assert.Equal(matched, finding.Corner!.OddPass.Vbe == Extreme.Match);
     }
 
+    // The first leg alone is sensed, directly: the control holds its sense voltage at 0.55 V, the second's is 80 x 33/34.5/(1 - 0.10) =
+    // 85 mV off. 0.55/0.5075 - 1 = 0.084 where it is below, and 1 % of the sense resistors: about 0.09.
+    [Fact]
+    public void ALegThatIsNotSensedStandsApartByItsWindow()
+    {
+        Finding finding = EndToEnd(SampleChannel.Transistor(), 0.01, sensedAlone: true);
+        Assert.Equal(Verdict.Nonconforming, finding.Verdict);
+        Assert.InRange(finding.Actual!.Value, 0.075, 0.105);
+    }
+
     [Fact]
     public void AMissingToleranceDoesNotCountAsNone()
     {
@@ -119,14 +129,20 @@ public class SharingRuleTests : RuleTests<SharingRule>
         Assert.Equal(["Tolerance of RK-33"], finding.Missing);
     }
 
-    private static Finding EndToEnd(Transistor pass, double? tolerance)
+    private static Finding EndToEnd(Transistor pass, double? tolerance, bool sensedAlone = false)
     {
         BoundChannel sample = Limited(1.05);
         ResistorPart sense = SampleChannel.Resistor(33) with { Tolerance = tolerance is { } t ? States.Cite(t) : null };
         Temperature room = Temperature.FromCelsius(25);
         BoundChannel channel = sample with
         {
-            Legs = [.. sample.Legs.Select(l => l with { Pass = l.Pass with { Part = pass }, Sense = l.Sense with { Part = sense } })],
+            Legs = [.. sample.Legs.Select((l, i) => l with
+            {
+                Pass = l.Pass with { Part = pass },
+                Sense = l.Sense with { Part = sense },
+                Averaging = sensedAlone ? null : l.Averaging,
+                Sensed = !sensedAlone || i == 0,
+            })],
             Conditions = sample.Conditions with
             {
                 Supply = new(Voltage.FromVolts(24), Voltage.FromVolts(24)),

@@ -85,15 +85,16 @@ public class StabilityRuleTests : RuleTests<StabilityRule>
     // 33 x 100/133 = 24.812 ohm; unsensed 33 ohm. Silicon at constant current: about -(1.206 V - VBE)/T, that is -1.7 mV/K at 0.66 V
     // and 330 K.
     [Theory]
-    [InlineData(true, 24.812)]
-    [InlineData(false, 33.0)]
-    public void TheSolvedStateCarriesWhatTheRuleReads(bool sensed, double ballast)
+    [InlineData(true, 1, 24.812)]
+    [InlineData(false, 1, 33.0)]
+    [InlineData(false, 0, 33.0)]
+    public void TheSolvedStateCarriesWhatTheRuleReads(bool sensed, int of, double ballast)
     {
         BoundChannel channel = SampleChannel.Channel(2, feed: 1500);
         channel = channel with { Legs = [channel.Legs[0], channel.Legs[1] with { Sensed = sensed }] };
         SolvedState? state = WorstCase.Nominal(new ChannelModel(channel, p => new TransistorVariants(p)), new PinSource(channel.Logic));
         Assert.NotNull(state);
-        TransistorPoint leg = state.Transistors[1];
+        TransistorPoint leg = state.Transistors[of];
         Assert.Equal(ballast, leg.Ballast, 3);
         Assert.Equal(300, leg.RthJa, 9);
         Assert.InRange(leg.VbeSlope, -2.2e-3, -1.3e-3);
