@@ -13,7 +13,7 @@ public static class RoleNames
     public static IReadOnlyList<(Role Role, string Column)> Columns { get; } =
     [
         (Role.Pass, "Pass"), (Role.Sense, "Sense"), (Role.Control, "Control"), (Role.Feed, "Feed"),
-        (Role.Averaging, "Averaging"), (Role.PullDown, "Pull-down"),
+        (Role.Averaging, "Averaging"), (Role.PullDown, "Pull-down"), (Role.Led, "LED"),
     ];
 
     /// <summary>False for a mark that stands in Averaging instead of a reference.</summary>
@@ -21,6 +21,13 @@ public static class RoleNames
 
     /// <summary>True for the mark of a leg without an averaging resistor.</summary>
     public static bool IsDirect(string text) => string.Equals(text, Direct, StringComparison.OrdinalIgnoreCase);
+
+    /// <summary>A role's column inside a sentence.</summary>
+    public static string Spoken(string column)
+    {
+        ArgumentNullException.ThrowIfNull(column);
+        return column == "LED" ? column : column.ToLowerInvariant();
+    }
 
     /// <summary>The column of a role.</summary>
     public static string ColumnOf(Role role) => Columns.First(c => c.Role == role).Column;

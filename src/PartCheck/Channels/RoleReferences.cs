@@ -29,7 +29,7 @@ internal static class RoleReferences
                 {
                     row.Complain(
                         column, "references that agree with the bill's column Role",
-                        $"The channel's {column.ToLowerInvariant()} is {text} here and {string.Join(", ", other)} by the bill's column Role.");
+                        $"The channel's {RoleNames.Spoken(column)} is {text} here and {string.Join(", ", other)} by the bill's column Role.");
                 }
             }
             else if (onBill.TryGetValue(role, out List<string>? byBill))
@@ -48,6 +48,11 @@ internal static class RoleReferences
         }
 
         CheckLegs(row, references);
+        if (references.GetValueOrDefault(Role.Led)?.FirstOrDefault(r => r.All(char.IsAsciiDigit)) is { } number)
+        {
+            row.Complain("LED", "references such as D1-D6", $"\"{number}\" is no reference: LED names the load's LEDs on the bill; how many stand in series goes into LEDs.");
+        }
+
         return references;
     }
 
@@ -65,7 +70,7 @@ internal static class RoleReferences
             else if (line.Role is not null)
             {
                 row.Complain(
-                    "Channel", "one of " + string.Join(", ", RoleNames.Columns.Select(c => c.Column.ToLowerInvariant())),
+                    "Channel", "one of " + string.Join(", ", RoleNames.Columns.Select(c => RoleNames.Spoken(c.Column))),
                     $"The bill gives {string.Join(", ", line.References)} the role \"{line.Role}\" in this channel, which is not known ({line.Cell}).");
             }
         }

@@ -33,7 +33,7 @@ public sealed class ChannelJudge
             for (int s = 0; s <= slots; s++)
             {
                 Part? part = s < slots && model.Slots.Of(s) is { Count: > 0 } placements ? placements[0].Part : null;
-                string? kind = part switch { Transistor => "npn", ResistorPart => "resistor", _ => null };
+                string? kind = part switch { Transistor => "npn", ResistorPart => "resistor", LedPart => "led", _ => null };
                 string? style = (part as ResistorPart)?.Style;
                 rows[r, s] = new RuleRows(derating.For(rules[r].Id, kind, style), derating.For("r-power", kind, style));
                 applies[r, s] = (rules[r], part) switch
@@ -41,6 +41,7 @@ public sealed class ChannelJudge
                     (TransistorRule rule, Transistor transistor) =>
                         rule.AppliesTo(model.Slots.Of(s)[0].Role) && rule.Asked(transistor, model.Channel, rows[r, s]),
                     (ResistorRule rule, ResistorPart resistor) => rule.AppliesTo(resistor),
+                    (LedRule, LedPart) => true,
                     (ChannelRule rule, _) => s == slots && rule.Asked(model.Channel, rows[r, s]),
                     _ => false,
                 };
@@ -160,6 +161,13 @@ public sealed class ChannelJudge
                     }
 
                     break;
+                case LedRule rule:
+                    for (int s = model.Slots.FirstLed; s < model.Slots.Count; s++)
+                    {
+                        into.At(r, s).Take(rule.Evaluate(state, (LedPart)model.Slots.Of(s)[0].Part, model.Channel, rows[r, s]), state);
+                    }
+
+                    break;
                 case ChannelRule rule when applies[r, channelSlot]:
                     into.At(r, channelSlot).Take(rule.Evaluate(state, model.Channel, rows[r, channelSlot]), state);
                     break;
@@ -221,6 +229,7 @@ public sealed class ChannelJudge
         {
             (TransistorRule t, Transistor part) => t.DecidingCell(part),
             (ResistorRule t, ResistorPart part) => t.DecidingCell(part),
+            (LedRule t, LedPart part) => t.DecidingCell(part),
             (ChannelRule t, _) => t.DecidingCell(model.Channel, stress),
             _ => null,
         };

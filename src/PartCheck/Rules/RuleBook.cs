@@ -8,7 +8,7 @@ public static class RuleBook
     /// <summary>Identifiers in the order in which reports list them.</summary>
     public static IReadOnlyList<string> Order { get; } =
     [
-        "vce", "vcb", "ic", "power", "junction", "soa", "stability", "sharing", "r-power", "r-voltage", "r-film",
+        "vce", "vcb", "ic", "power", "junction", "soa", "stability", "sharing", "r-power", "r-voltage", "r-film", "led-current",
         "current", "headroom", "drive", "pin-current", "off", "bill",
     ];
 

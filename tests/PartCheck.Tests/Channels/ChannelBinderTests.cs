@@ -53,6 +53,8 @@ public sealed class ChannelBinderTests
     [InlineData("Control", "R8", "R8 (control) is a resistor: a transistor is wanted.")]
     [InlineData("Sense", "R10", "R10 (sense) has zero ohm: only averaging may.")]
     [InlineData("Control", "Q1", "Q1 serves as pass and as control.")]
+    [InlineData("LED", "D1", "D1 (LED) is not on the bill.")]
+    [InlineData("LED", "R3", "R3 (LED) is a resistor: an LED is wanted.")]
     public void ARoleThatTheBillDoesNotServeIsAFault(string column, string reference, string text)
     {
         board.Row[column] = reference;
@@ -60,6 +62,28 @@ public sealed class ChannelBinderTests
         Assert.Equal(text, Assert.Single(channel.RoleFaults).Text);
         Assert.Empty(channel.Readings);
         Assert.Empty(board.Complaints);
+    }
+
+    [Fact]
+    public void AnLedIsNoResistor()
+    {
+        board.Parts[3] = "RK-33|led";
+        Assert.Equal("R1 (sense) is an LED: a resistor is wanted.", Assert.Single(Assert.Single(board.Bind()).RoleFaults).Text);
+    }
+
+    // Nothing is solved with an LED's row: what is missing of it stays with the LED.
+    [Theory]
+    [InlineData("D1|LW-3", "part table row of LW-3")]
+    [InlineData("D1", "part number of D1")]
+    [InlineData("D1|LW-4|Kelbrook", "part table row of LW-4 by Kelbrook")]
+    public void AnLedWithoutItsRowLeavesTheChannelToBeJudged(string line, string missing)
+    {
+        board.Row["LED"] = "D1";
+        board.Bill.Add(line);
+        board.Parts.Add("LW-4|led|Tarnwood");
+        Channel channel = Assert.Single(board.Bind());
+        Assert.Empty(channel.Missing);
+        Assert.Equal(missing, ((PartCheck.Parts.LedPart)Assert.Single(Assert.Single(channel.Readings).Leds).Part).Missing);
     }
 
     [Fact]

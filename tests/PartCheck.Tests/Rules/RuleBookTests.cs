@@ -9,7 +9,7 @@ public class RuleBookTests
     /// <summary>The approved list: identifiers are stable, reports and concessions quote them.</summary>
     [Fact]
     public void TheRulesJudgedAreTheApprovedOnes() => Assert.Equal(
-        ["vce", "vcb", "ic", "power", "junction", "soa", "stability", "sharing", "r-power", "r-voltage", "r-film", "current", "headroom", "drive",
+        ["vce", "vcb", "ic", "power", "junction", "soa", "stability", "sharing", "r-power", "r-voltage", "r-film", "led-current", "current", "headroom", "drive",
             "pin-current", "off", "bill"],
         RuleBook.Judged);
 

@@ -45,6 +45,9 @@ internal static class States
     public static Stress Judge(ResistorRule rule, SolvedState state, DeratingRow? row = null, DeratingRow? power = null) =>
         rule.Evaluate(state, state.Resistors[0], Channel, new RuleRows(row ?? Row(rule.Id), power ?? row ?? Row("r-power")));
 
+    public static Stress Judge(LedRule rule, SolvedState state, LedPart part, DeratingRow row, BoundChannel? channel = null) =>
+        rule.Evaluate(state, part, channel ?? Channel, Rows(rule, row));
+
     public static Stress Judge(ChannelRule rule, SolvedState state, BoundChannel? channel = null) =>
         rule.Evaluate(state, channel ?? Channel, Rows(rule, null));
 
