@@ -1,4 +1,3 @@
-using System.Globalization;
 using PartCheck.Channels;
 using PartCheck.Parts;
 
@@ -82,11 +81,11 @@ public sealed record PulsedHeat
             : new PulsedHeat(rthJa, rthJa, 1, "none given: below 1 kHz full power heats the junction");
     }
 
-    /// <summary>What the assumption is about, by what is missing.</summary>
+    /// <summary>The assumption, under the name of what is missing; null: nothing was assumed.</summary>
     internal static Assumption? AssumptionOf(PulsedHeat heat, Transistor part, BoundChannel channel) =>
         heat.Assumed is not { } value ? null
         : channel.Conditions.Frequency is null ? new Assumption("Frequency", channel.Name, value)
-        : new Assumption("Zth points", part.PartNumber, string.Create(CultureInfo.InvariantCulture, $"{value} ({channel.Name})"));
+        : new Assumption("Zth points", part.PartNumber, value);
 
     private static double Zth(IReadOnlyList<ZthPoint> points, double seconds, double steady)
     {
