@@ -1,3 +1,4 @@
+using System.Globalization;
 using PartCheck.Channels;
 using PartCheck.Derating;
 using PartCheck.OperatingPoints;
@@ -88,7 +89,7 @@ public sealed class ChannelJudge
         };
     }
 
-    /// <summary>Heat of everything on the board that belongs to the channel, the load left out [W].</summary>
+    /// <summary>Heat while on of everything on the board that belongs to the channel, the load left out [W].</summary>
     private static double Heat(SolvedState state)
     {
         double sum = 0;
@@ -234,7 +235,9 @@ public sealed class ChannelJudge
             _ => null,
         };
         string? text = rule is ResistorVoltageRule && placement?.Part is ResistorPart { WorkingVoltageMax: null, Resistance.Value.Ohms: > 0 }
-            ? "no limiting element voltage given: judged by sqrt(P R) alone" : null;
+            ? "no limiting element voltage given: judged by sqrt(P R) alone"
+            : rule is PowerRule && PulsedHeat.AveragedShare(model.Channel.Conditions) is < 1 and var duty
+            ? string.Create(CultureInfo.InvariantCulture, $"averaged over a duty of {duty * 100:0.###} %") : null;
         return new Finding
         {
             Channel = model.Channel.Name,
@@ -317,7 +320,7 @@ public sealed record ReadingJudgement(
     BoundChannel Channel, IReadOnlyList<Finding> Findings, SolvedState? Nominal, double LoadMin, double LoadMax, double PinMax,
     int Corners, int NotSolved)
 {
-    /// <summary>Largest heat of the channel's parts on the board, the load left out [W].</summary>
+    /// <summary>Largest heat of the channel's parts on the board while on, whatever the duty, the load left out [W].</summary>
     public double HeatMax { get; init; }
 
     /// <summary>Each transistor with its highest junction temperature [K].</summary>
