@@ -79,7 +79,10 @@ internal static class StateAssembly
     }
 
     private static TransistorPoint Transistor(int slot, Role role, Transistor part, in SolvedTransistor q) =>
-        new(slot, role, part, q.Vce, q.CollectorVoltage - q.BaseVoltage, q.Ic, q.Ib, q.Power, q.Tj, q.Held);
+        new(slot, role, part, q.Vce, q.CollectorVoltage - q.BaseVoltage, q.Ic, q.Ib, q.Power, q.Tj, q.Held)
+        {
+            BaseResistance = q.BaseResistance,
+        };
 
     private static TransistorPoint Leg(ChannelModel model, int c, LegGroup leg, in SolvedTransistor q) =>
         Transistor(Slots.Pass(c), Role.Pass, model.Pass[c].Part, q) with

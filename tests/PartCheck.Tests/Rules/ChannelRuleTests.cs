@@ -176,7 +176,7 @@ public class PinCurrentRuleTests
     [InlineData(0.0081, Verdict.Nonconforming)]
     public void AllFeedsOfAPinCountTogether(double each, Verdict verdict)
     {
-        Finding finding = PinCurrentRule.Judge("P1", [("A", each), ("B", each)], Pin(0.02), Table);
+        Finding finding = PinCurrentRule.Judge("P1", [new("A", each), new("B", each)], Pin(0.02), Table);
         Assert.Equal(verdict, finding.Verdict);
         Assert.Equal(2 * each, finding.Actual!.Value, 12);
         Assert.Equal(0.016, finding.Allowed!.Value, 12);
@@ -185,11 +185,11 @@ public class PinCurrentRuleTests
     [Fact]
     public void AMissingRatingOrFeedIsNotVerified()
     {
-        Finding rating = PinCurrentRule.Judge("P1", [("A", 0.001)], Pin(null), Table);
+        Finding rating = PinCurrentRule.Judge("P1", [new("A", 0.001)], Pin(null), Table);
         Assert.Equal(Verdict.NotVerified, rating.Verdict);
         Assert.Equal(["Pin current max of CTRL-5"], rating.Missing);
-        Assert.Equal(Verdict.NotVerified, PinCurrentRule.Judge("P1", [("A", 0.001), ("B", double.NaN)], Pin(0.02), Table).Verdict);
-        Assert.Equal(Verdict.Nonconforming, PinCurrentRule.Judge("P1", [("A", 0.03), ("B", double.NaN)], Pin(0.02), Table).Verdict);
+        Assert.Equal(Verdict.NotVerified, PinCurrentRule.Judge("P1", [new("A", 0.001), new("B", double.NaN)], Pin(0.02), Table).Verdict);
+        Assert.Equal(Verdict.Nonconforming, PinCurrentRule.Judge("P1", [new("A", 0.03), new("B", double.NaN)], Pin(0.02), Table).Verdict);
     }
 
     private static LogicPin Pin(double? rating) => SampleChannel.Channel(1).Logic with
