@@ -284,7 +284,7 @@ public static class CheckRun
             {
                 LogicPin logic = pin.First().Channel.Readings[0].Logic;
                 findings.Add(PinCurrentRule.Judge(
-                    PinName(pin.First().Channel.Readings[0]), [.. pin.Select(j => (j.Channel.Name, j.Readings.Count == 0 ? double.NaN : j.Readings.Max(r => r.PinMax)))], logic, derating));
+                    PinName(pin.First().Channel.Readings[0]), [.. pin.Select(j => PinFeed.Of(j.Channel.Name, j.Readings))], logic, derating));
             }
 
             return findings;

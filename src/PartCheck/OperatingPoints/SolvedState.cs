@@ -164,7 +164,11 @@ public readonly record struct ResistorPoint(
 /// <param name="SumBaseCurrent">Sum of the pass transistors' base currents there [A].</param>
 /// <param name="Available">What pin level, source resistance, feed and pull-down deliver into the base node there [A].</param>
 /// <param name="Factor">k' = max(drive factor, 1.2).</param>
-public readonly record struct DriveEdge(bool Exists, double BaseVoltage, double SumBaseCurrent, double Available, double Factor);
+public readonly record struct DriveEdge(bool Exists, double BaseVoltage, double SumBaseCurrent, double Available, double Factor)
+{
+    /// <summary>Collector current of the control there [A].</summary>
+    public double ControlCurrent { get; init; }
+}
 
 /// <summary>One solved corner of one channel in one state, SI units: what a rule reads.</summary>
 public sealed class SolvedState

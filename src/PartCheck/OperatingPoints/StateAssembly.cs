@@ -83,6 +83,7 @@ internal static class StateAssembly
         {
             AveragedShare = PulsedHeat.AveragedShare(model.Channel.Conditions),
             CaseShare = heat.CaseShare,
+            BaseResistance = q.BaseResistance,
         };
 
     private static TransistorPoint Leg(ChannelModel model, int c, LegGroup leg, in SolvedTransistor q) =>

@@ -78,9 +78,10 @@ public sealed class ChannelJudge
         }
 
         SolvedState? nominal = WorstCase.Nominal(model, pin);
-        return new ReadingJudgement(model.Channel, Findings(total), nominal, total.LoadMin, total.LoadMax, total.PinMax, total.Corners, total.NotSolved + (nominal is null ? 1 : 0))
+        return new ReadingJudgement(model.Channel, Findings(total, pin), nominal, total.LoadMin, total.LoadMax, total.PinMax, total.Corners, total.NotSolved + (nominal is null ? 1 : 0))
         {
             HeatMax = total.HeatMax,
+            PinState = total.PinState,
             Assumed = total.ControlHeld
                 ? [new Assumption("hFE of the control beyond its points", model.Control.Part.PartNumber, "the outermost value held")]
                 : [],
@@ -128,7 +129,12 @@ public sealed class ChannelJudge
             }
         }
 
-        into.PinMax = Math.Max(into.PinMax, state.PinCurrent);
+        if (state.PinCurrent > into.PinMax)
+        {
+            into.PinMax = state.PinCurrent;
+            into.PinState = state;
+        }
+
         int channelSlot = model.Slots.Count;
         for (int r = 0; r < rules.Count; r++)
         {
@@ -192,7 +198,7 @@ public sealed class ChannelJudge
         }
     }
 
-    private List<Finding> Findings(Accumulator total)
+    private List<Finding> Findings(Accumulator total, PinSource pin)
     {
         List<Finding> findings = [];
         for (int r = 0; r < rules.Count; r++)
@@ -207,13 +213,13 @@ public sealed class ChannelJudge
                 Worst worst = total.At(r, s);
                 if (s == model.Slots.Count)
                 {
-                    findings.Add(Make(r, s, worst, null));
+                    findings.Add(Make(r, s, worst, null, pin));
                     continue;
                 }
 
                 foreach (Placement placement in model.Slots.Of(s))
                 {
-                    findings.Add(Make(r, s, worst, placement));
+                    findings.Add(Make(r, s, worst, placement, pin));
                 }
             }
         }
@@ -221,7 +227,7 @@ public sealed class ChannelJudge
         return findings;
     }
 
-    private Finding Make(int r, int s, Worst worst, Placement? placement)
+    private Finding Make(int r, int s, Worst worst, Placement? placement, PinSource pin)
     {
         Rule rule = rules[r];
         Stress stress = worst.Stress;
@@ -257,6 +263,7 @@ public sealed class ChannelJudge
             Cell = cell,
             Text = text,
             Missing = worst.Verdict == Verdict.NotVerified ? [.. worst.Missing.DefaultIfEmpty("a state to judge")] : [],
+            Basis = worst.State is { } state ? new FindingBasis(model, pin, rule, rows[r, s], state, s, stress) : null,
         };
     }
 
@@ -274,6 +281,8 @@ public sealed class ChannelJudge
 
         public double PinMax { get; set; }
 
+        public SolvedState? PinState { get; set; }
+
         public double HeatMax { get; set; }
 
         public bool ControlHeld { get; set; }
@@ -288,7 +297,7 @@ public sealed class ChannelJudge
             NotSolved += later.NotSolved;
             LoadMin = Math.Min(LoadMin, later.LoadMin);
             LoadMax = Math.Max(LoadMax, later.LoadMax);
-            PinMax = Math.Max(PinMax, later.PinMax);
+            (PinMax, PinState) = later.PinMax > PinMax ? (later.PinMax, later.PinState) : (PinMax, PinState);
             HeatMax = Math.Max(HeatMax, later.HeatMax);
             ControlHeld |= later.ControlHeld;
             for (int s = 0; s < slots; s++)
@@ -322,6 +331,9 @@ public sealed record ReadingJudgement(
 {
     /// <summary>Largest heat of the channel's parts on the board while on, whatever the duty, the load left out [W].</summary>
     public double HeatMax { get; init; }
+
+    /// <summary>The state of <see cref="PinMax"/>; null: the pin delivers nothing.</summary>
+    public SolvedState? PinState { get; init; }
 
     /// <summary>Each transistor with its highest junction temperature [K].</summary>
     public IReadOnlyList<(string Reference, double Tj)> Hottest { get; init; } = [];

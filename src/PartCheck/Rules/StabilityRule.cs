@@ -57,5 +57,23 @@ public sealed class StabilityRule : TransistorRule
     }
 
     /// <inheritdoc/>
+    public override void Derive(Derivation steps, SolvedState state, in TransistorPoint point, BoundChannel channel, in RuleRows rows, in Stress stress)
+    {
+        if (point.Ic <= 0)
+        {
+            steps.Step("S", "0", string.Empty, "no current, no loop gain");
+        }
+        else
+        {
+            steps.Solved("slope#", Math.Abs(point.VbeSlope), "V/K", "abs(dVBE/dT) of the model at constant collector current")
+                .Step("thermal", "VCE# x RthJA# x slope#", "V/A", "volts of VBE that an ampere's heat shifts")
+                .Step("electrical", "Rball# + RE# + VT# / IC# + Rbb# x max(0, IB#) / IC#", "ohm", "volts that an ampere drops: ballast, emitter, VT/IC, base")
+                .Step("S", "thermal / electrical", string.Empty, "thermal loop gain between legs");
+        }
+
+        steps.Factor(rows.Own).Step("Sallowed", "1 x F", string.Empty, "derated edge of stability").AtMost("S", "Sallowed", stress);
+    }
+
+    /// <inheritdoc/>
     public override string? DecidingCell(Transistor part) => part.RthJa?.Cell;
 }
