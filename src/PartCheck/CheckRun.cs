@@ -284,7 +284,7 @@ public static class CheckRun
             {
                 LogicPin logic = pin.First().Channel.Readings[0].Logic;
                 findings.Add(PinCurrentRule.Judge(
-                    PinName(pin.First().Channel.Readings[0]), [.. pin.Select(j => (j.Channel.Name, j.Readings.Count == 0 ? double.NaN : j.Readings.Max(r => r.PinMax)))], logic, derating));
+                    PinName(pin.First().Channel.Readings[0]), [.. pin.Select(j => PinFeed.Of(j.Channel.Name, j.Readings))], logic, derating));
             }
 
             return findings;
@@ -327,7 +327,7 @@ public static class CheckRun
             }
 
             IEnumerable<Part> used = channels.SelectMany(c => c.Readings).SelectMany(r => r.Legs
-                .SelectMany(l => new[] { l.Pass, l.Sense, l.Averaging }).Append(r.Control).Append(r.Feed).Append(r.PullDown))
+                .SelectMany(l => new[] { l.Pass, l.Sense, l.Averaging }).Append(r.Control).Append(r.Feed).Append(r.PullDown).Concat(r.Leds))
                 .OfType<Placement>().Select(p => p.Part).Distinct().OrderBy(p => p.PartNumber, StringComparer.Ordinal);
             foreach (Part part in used)
             {
