@@ -16,12 +16,14 @@ public sealed partial class LaneSolver
     private const double VoltageTolerance = 2e-7;
     private const double TemperatureTolerance = 2e-5;
     private const double BalanceTolerance = 1e-9;
+    private const double EmitterBalance = 1e-12;
+    private const double CollectorBalance = 1e-10;
 
     private readonly Lanes[] vbe = new Lanes[9];
     private readonly Lanes[] vbc = new Lanes[9];
     private readonly Lanes[] kelvins = new Lanes[9];
     private readonly Lanes[] ambient = new Lanes[9];
-    private readonly Lanes[] charge = new Lanes[9];
+    private readonly Lanes[] logCurrent = new Lanes[9];
     private readonly TransistorCurrents[] currents = new TransistorCurrents[9];
     private readonly Lanes[] emitter = new Lanes[9];
     private readonly Response[] ofVbe = new Response[9];
@@ -31,10 +33,14 @@ public sealed partial class LaneSolver
     private CircuitShape startShape;
     private CircuitLanes c = null!;
     private bool heated;
+    private bool crowded;
     private double? edge;
 
     /// <summary>Forgets the last solution: the next solve starts cold.</summary>
     public void Forget() => startShape = default;
+
+    /// <summary>True where the control's junction conducts well above its leakage (<see cref="SinkSolver.SolveEdge"/>).</summary>
+    public bool Regulates(int lane) => vbe[0][lane] > 3 * c.Devices[0].ForwardVoltage[lane];
 
     /// <summary>Solves the lanes.</summary>
     /// <param name="circuits">The circuits; every lane must hold one.</param>
@@ -63,7 +69,7 @@ public sealed partial class LaneSolver
         {
             balanced &= Vector512.LessThanOrEqual(kelvins[d], c.Limit(d));
             into.Store(d, currents[d], d == 0 ? Lanes.Zero : emitter[d], kelvins[d]);
-            charge[d] = c.Devices[d].LogSaturation;
+            logCurrent[d] = (vbe[d] / c.Devices[d].ForwardVoltage) + c.Devices[d].LogSaturation;
         }
 
         into.Store(baseVoltage, controlBase, collector, loadCurrent);
@@ -76,6 +82,7 @@ public sealed partial class LaneSolver
     private void Start()
     {
         int legs = c.Shape.Legs;
+        crowded = false;
         bool warm = startShape == c.Shape && legs > 0;
         if (!warm)
         {
@@ -88,12 +95,12 @@ public sealed partial class LaneSolver
             kelvins[d] = warm && heated ? kelvins[d] + c.BaseTemperature(d) - ambient[d] : c.BaseTemperature(d);
             ambient[d] = c.BaseTemperature(d);
 
-            Lanes before = device.ForwardVoltage;
             device.Bring(kelvins[d]);
+            crowded |= device.IsCrowded;
             if (warm)
             {
                 // The same current in another device, or at another temperature.
-                Lanes moved = (device.ForwardVoltage * ((vbe[d] / before) + charge[d] - device.LogSaturation)) - vbe[d];
+                Lanes moved = (device.ForwardVoltage * (logCurrent[d] - device.LogSaturation)) - vbe[d];
                 vbe[d] += moved;
                 vbc[d] += moved;
             }
@@ -161,7 +168,10 @@ public sealed partial class LaneSolver
 
         load += shift;
         largest = Vector512.MaxNative(largest, Vector512.Abs(shift));
-        Lanes still = Vector512.LessThanOrEqual(largest, Vector512.Create(VoltageTolerance))
+
+        // The slope of a crowded base resistance is left to iteration: there the steps die out by a factor, not by squares.
+        double tolerance = crowded ? VoltageTolerance / 1000 : VoltageTolerance;
+        Lanes still = Vector512.LessThanOrEqual(largest, Vector512.Create(tolerance))
             & Vector512.LessThanOrEqual(warmest, Vector512.Create(TemperatureTolerance));
         return ~still;
     }

@@ -55,6 +55,9 @@ internal sealed partial class TransistorLanes
     /// <summary>Junction temperature [K].</summary>
     public Lanes Temperature => temperature;
 
+    /// <summary>True where current crowding counts in some lane.</summary>
+    public bool IsCrowded => hasCrowding;
+
     /// <summary>Emitter resistance [ohm].</summary>
     public Lanes Re => Constant(TransistorField.Re);
 
