@@ -3,8 +3,8 @@ using PartCheck.Channels;
 namespace PartCheck.OperatingPoints.Batch;
 
 /// <summary>
-/// Solves consecutive corners of a box side by side, each block of eight from the one before: what <see cref="CornerSolver"/>
-/// gives one after the other, which stays the oracle and solves the corners that a block leaves. One a thread and chunk.
+/// Solves corners of a box side by side, each block of eight from the one before: what <see cref="CornerSolver"/> gives one after the
+/// other, which stays the oracle and solves the corners that a block leaves. One a thread and chunk.
 /// </summary>
 public sealed class CornerBatch
 {
@@ -18,6 +18,11 @@ public sealed class CornerBatch
     private readonly LaneSolver solver = new();
     private readonly LaneSolver edgeSolver = new();
     private readonly SinkSolver scalar = new();
+    private readonly List<int> edgeOf = [];
+    private readonly List<SinkCircuit> edgeCircuits = [];
+    private readonly List<(OperatingPoint? Point, bool Failed)> edges = [];
+    private BoxCorner[] corners = [];
+    private OperatingPoint?[] points = [];
 
     /// <summary>Makes a batch for a channel.</summary>
     /// <param name="model">The channel.</param>
@@ -30,56 +35,79 @@ public sealed class CornerBatch
         this.driveFactor = driveFactor;
     }
 
-    /// <summary>States solved so far.</summary>
+    /// <summary>States solved so far, edges of regulation among them.</summary>
     public long Solved { get; private set; }
 
     /// <summary>States among them that were left to the scalar solver.</summary>
     public long LeftToScalar { get; private set; }
 
-    /// <summary>Solves corners and hands each state on, in the order of the index.</summary>
+    /// <summary>Solves consecutive corners, from a cold start.</summary>
     /// <param name="box">The box.</param>
-    /// <param name="from">First index, a multiple of <see cref="ChannelBox.InnerCount"/>.</param>
+    /// <param name="from">First index.</param>
     /// <param name="to">Index behind the last.</param>
     /// <param name="offset">Added to the index in the state, where a channel has several boxes.</param>
-    /// <param name="visit">Takes a state.</param>
+    /// <param name="visit">Takes each state, in the order of the index.</param>
     public void Solve(ChannelBox box, int from, int to, int offset, Action<SolvedState> visit)
     {
         ArgumentNullException.ThrowIfNull(box);
-        ArgumentNullException.ThrowIfNull(visit);
-        ArgumentOutOfRangeException.ThrowIfNotEqual(from % box.InnerCount, 0, nameof(from));
-        int inner = box.InnerCount;
+        Forget();
 
         // As many corners as eight edges of regulation serve.
-        int stride = Width * inner;
-        BoxCorner[] corners = new BoxCorner[stride];
-        OperatingPoint?[] points = new OperatingPoint?[stride];
-        OperatingPoint?[] edges = new OperatingPoint?[Width];
-        bool[] edgeFailed = new bool[Width];
-        solver.Forget();
-        edgeSolver.Forget();
-        for (int start = from; start < to; start += stride)
+        int[] indices = new int[Width * box.InnerCount];
+        for (int start = from; start < to; start += indices.Length)
         {
-            int count = Math.Min(stride, to - start);
+            int count = Math.Min(indices.Length, to - start);
             for (int i = 0; i < count; i++)
             {
-                corners[i] = box.At(start + i);
+                indices[i] = start + i;
             }
 
-            Solve(corners, count, points);
-            SolveEdges(box, corners, count, edges, edgeFailed);
-            for (int i = 0; i < count; i++)
-            {
-                bool hasEdge = HasEdge(box, corners[i].Corner);
-                visit(points[i] is not { } point || (hasEdge && edgeFailed[i / inner])
-                    ? CornerSolver.Unsolved(box, corners[i], offset + start + i)
-                    : StateAssembly.Build(
-                        model, pin, box.State, corners[i], box.OddClass, point,
-                        hasEdge ? CornerSolver.Edge(corners[i].Circuit, edges[i / inner], driveFactor!.Value) : null, offset + start + i));
-            }
+            Solve(box, indices.AsSpan(0, count), offset, visit);
         }
     }
 
-    private void Solve(BoxCorner[] corners, int count, OperatingPoint?[] points)
+    /// <summary>The next corner is solved from a cold start.</summary>
+    public void Forget()
+    {
+        solver.Forget();
+        edgeSolver.Forget();
+    }
+
+    /// <summary>Solves any corners, from the ones before.</summary>
+    /// <param name="box">The box.</param>
+    /// <param name="indices">Their indices.</param>
+    /// <param name="offset">Added to the index in the state, where a channel has several boxes.</param>
+    /// <param name="visit">Takes each state, in the order of <paramref name="indices"/>.</param>
+    public void Solve(ChannelBox box, ReadOnlySpan<int> indices, int offset, Action<SolvedState> visit)
+    {
+        ArgumentNullException.ThrowIfNull(box);
+        ArgumentNullException.ThrowIfNull(visit);
+        if (corners.Length < indices.Length)
+        {
+            corners = new BoxCorner[indices.Length];
+            points = new OperatingPoint?[indices.Length];
+        }
+
+        for (int i = 0; i < indices.Length; i++)
+        {
+            corners[i] = box.At(indices[i]);
+        }
+
+        SolvePoints(indices.Length);
+        CollectEdges(box, indices);
+        SolveEdges();
+        for (int i = 0; i < indices.Length; i++)
+        {
+            int slot = HasEdge(box, corners[i].Corner) ? edgeOf.IndexOf(indices[i] / box.InnerCount) : -1;
+            visit(points[i] is not { } point || (slot >= 0 && edges[slot].Failed)
+                ? CornerSolver.Unsolved(box, corners[i], offset + indices[i])
+                : StateAssembly.Build(
+                    model, pin, box.State, corners[i], box.OddClass, point,
+                    slot >= 0 ? CornerSolver.Edge(corners[i].Circuit, edges[slot].Point, driveFactor!.Value) : null, offset + indices[i]));
+        }
+    }
+
+    private void SolvePoints(int count)
     {
         for (int block = 0; block < count; block += Width)
         {
@@ -102,53 +130,50 @@ public sealed class CornerBatch
         }
     }
 
-    /// <summary>The edges of regulation, one for each <see cref="ChannelBox.InnerCount"/> corners.</summary>
-    private void SolveEdges(ChannelBox box, BoxCorner[] corners, int count, OperatingPoint?[] edges, bool[] failed)
+    /// <summary>The edge does not depend on pin, feed and pull-down: one serves <see cref="ChannelBox.InnerCount"/> corners.</summary>
+    private void CollectEdges(ChannelBox box, ReadOnlySpan<int> indices)
     {
-        int inner = box.InnerCount;
-        int used = (count + inner - 1) / inner;
-        int first = -1;
-        for (int i = 0; i < used; i++)
+        edgeOf.Clear();
+        edgeCircuits.Clear();
+        edges.Clear();
+        for (int i = 0; i < indices.Length; i++)
         {
-            if (HasEdge(box, corners[i * inner].Corner))
+            int outer = indices[i] / box.InnerCount;
+            if (HasEdge(box, corners[i].Corner) && !edgeOf.Contains(outer))
             {
-                first = first < 0 ? i : first;
+                edgeOf.Add(outer);
+                edgeCircuits.Add(corners[i].Circuit);
             }
         }
+    }
 
-        if (first < 0)
+    private void SolveEdges()
+    {
+        for (int block = 0; block < edgeCircuits.Count; block += Width)
         {
-            return;
-        }
-
-        // Lanes without an edge (h = 1) repeat one that has.
-        edgeLanes.Begin(CircuitShape.Of(corners[first * inner].Circuit));
-        for (int i = 0; i < Width; i++)
-        {
-            bool own = i < used && HasEdge(box, corners[i * inner].Corner);
-            edgeLanes.Set(i, corners[(own ? i : first) * inner].Circuit);
-        }
-
-        edgeSolver.Solve(edgeLanes, solution, driveFactor);
-        for (int i = 0; i < used; i++)
-        {
-            if (!HasEdge(box, corners[i * inner].Corner))
+            int used = Math.Min(Width, edgeCircuits.Count - block);
+            edgeLanes.Begin(CircuitShape.Of(edgeCircuits[block]));
+            for (int i = 0; i < used; i++)
             {
-                continue;
+                edgeLanes.Set(i, edgeCircuits[block + i]);
             }
 
-            SinkCircuit circuit = corners[i * inner].Circuit;
-            Solved++;
-            failed[i] = false;
-            if (solution.IsSolved(i) && edgeSolver.Regulates(i))
+            edgeLanes.Repeat(used - 1);
+            edgeSolver.Solve(edgeLanes, solution, driveFactor);
+            for (int i = 0; i < used; i++)
             {
-                edges[i] = solution.Point(circuit, i);
-                continue;
-            }
+                SinkCircuit circuit = edgeCircuits[block + i];
+                Solved++;
+                if (solution.IsSolved(i) && edgeSolver.Regulates(i))
+                {
+                    edges.Add((solution.Point(circuit, i), false));
+                    continue;
+                }
 
-            LeftToScalar++;
-            edges[i] = scalar.SolveEdge(circuit, driveFactor!.Value);
-            failed[i] = scalar.Failure is not null;
+                LeftToScalar++;
+                OperatingPoint? edge = scalar.SolveEdge(circuit, driveFactor!.Value);
+                edges.Add((edge, scalar.Failure is not null));
+            }
         }
     }
 

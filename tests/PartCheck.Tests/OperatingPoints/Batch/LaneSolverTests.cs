@@ -192,9 +192,9 @@ public class LaneSolverTests
         }
 
         double feed = (circuit.FeedVoltage - vb) / circuit.FeedResistance;
-        Near(ib0, sensed, 1e-6, 1e-12 + (1e-8 * emitters));
-        Near(feed - (vb * circuit.BaseConductance) + circuit.BaseLeakage, ic0 + bases, 1e-6, 1e-12 + (1e-8 * Math.Abs(feed)));
-        Near(s.LoadCurrent(lane), collectors + circuit.BaseLeakage, 1e-6, 1e-12 + (1e-8 * emitters));
+        Near(ib0, sensed, 1e-6, 1e-12 + (1e-7 * emitters));
+        Near(feed - (vb * circuit.BaseConductance) + circuit.BaseLeakage, ic0 + bases, 1e-6, 1e-12 + (1e-7 * (Math.Abs(feed) + emitters)));
+        Near(s.LoadCurrent(lane), collectors + circuit.BaseLeakage, 1e-6, 1e-12 + (1e-7 * emitters));
         if (circuit.Load is { IsResistor: true } resistor)
         {
             Near(circuit.Supply - vc, s.LoadCurrent(lane) * resistor.Series, 1e-9, 1e-9);
