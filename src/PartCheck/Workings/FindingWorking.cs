@@ -27,11 +27,7 @@ public static class FindingWorking
         {
             List<WorkingLine> lines = [.. order.Lines.Select(chain.Take)];
             Hold(chain, rule, finding);
-            return new Working(
-                finding,
-                [.. lines.Where(l => l.Line.Kind is DerivationKind.Given or DerivationKind.Solved)],
-                [.. lines.Where(l => l.Line.Kind is DerivationKind.Step or DerivationKind.Note)],
-                [.. lines.Where(l => l.Line.Kind == DerivationKind.Balance)])
+            return new Working(finding, lines[..order.Own], lines[order.Own..])
             {
                 Actual = rule.Actual,
                 Allowed = rule.Allowed,

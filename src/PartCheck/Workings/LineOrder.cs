@@ -34,6 +34,7 @@ internal sealed class LineOrder
             }
         }
 
+        Own = lines.Count;
         if (lines.Any(l => l.Kind == DerivationKind.Solved))
         {
             foreach (DerivationLine balance in book.Lines.Where(l => l.Kind == DerivationKind.Balance))
@@ -45,6 +46,9 @@ internal sealed class LineOrder
 
     /// <summary>The lines, each after what it needs.</summary>
     public IReadOnlyList<DerivationLine> Lines => lines;
+
+    /// <summary>How many of them the rule needs; the rest belongs to the balances.</summary>
+    public int Own { get; }
 
     private static Dictionary<string, DerivationLine> BySymbol(Derivation derivation)
     {

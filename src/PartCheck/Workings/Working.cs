@@ -26,11 +26,9 @@ public sealed record WorkingLine
 
 /// <summary>The derivation of one finding, step by step, so that a person with a calculator comes from the printed figures to the printed figures.</summary>
 /// <param name="Finding">The finding.</param>
-/// <param name="Given">What tables, constants and the corner give, and what the solve found.</param>
-/// <param name="Steps">Formulas and sentences, in order.</param>
-/// <param name="Balances">Equations that the solved figures satisfy.</param>
-public sealed record Working(
-    Finding Finding, IReadOnlyList<WorkingLine> Given, IReadOnlyList<WorkingLine> Steps, IReadOnlyList<WorkingLine> Balances)
+/// <param name="Lines">What is given, what was solved and the steps to the stress ratio, each after what it needs.</param>
+/// <param name="Checks">What else it takes to show that the solved figures satisfy the circuit's equations, and these balances.</param>
+public sealed record Working(Finding Finding, IReadOnlyList<WorkingLine> Lines, IReadOnlyList<WorkingLine> Checks)
 {
     /// <summary>Symbol of the actual value; null: none.</summary>
     public string? Actual { get; init; }
@@ -43,7 +41,7 @@ public sealed record Working(
 
     /// <summary>The printed figure of a symbol; null: it has none.</summary>
     public PrintedFigure? Of(string? symbol) => symbol is null ? null
-        : Steps.Concat(Given).FirstOrDefault(l => l.Line.Symbol == symbol)?.Figure;
+        : Lines.FirstOrDefault(l => l.Line.Symbol == symbol)?.Figure;
 }
 
 /// <summary>A working that does not come to what the solver and the rule said: never printed, an internal error.</summary>
