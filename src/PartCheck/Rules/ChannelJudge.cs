@@ -2,6 +2,7 @@ using System.Globalization;
 using PartCheck.Channels;
 using PartCheck.Derating;
 using PartCheck.OperatingPoints;
+using PartCheck.OperatingPoints.Batch;
 using PartCheck.Parts;
 
 namespace PartCheck.Rules;
@@ -65,6 +66,40 @@ public sealed class ChannelJudge
             total.Merge(chunk);
         }
 
+        return Conclude(total, pin);
+    }
+
+    /// <summary>
+    /// Judges over the corners that a directed search finds worst (<see cref="DirectedCorners"/>): the same ratios and verdicts in a part of the
+    /// states. Of corners with the same ratio it may report another.
+    /// </summary>
+    /// <param name="pin">The channel's pin.</param>
+    /// <param name="cancel">Stops the search.</param>
+    public ReadingJudgement JudgeDirected(PinSource pin, CancellationToken cancel)
+    {
+        double driveFactor = Math.Max(derating.For("drive").Limit ?? 1, 1.2);
+        Accumulator total = new(rules.Count, model.Slots.Count + 1);
+        CornerScores scores = new(rules.Count, pin);
+        DirectedCorners search = new(new CornerBatch(model, pin, driveFactor), state =>
+        {
+            scores.Begin(state);
+            total.Scores = scores;
+            Visit(total, state);
+            return scores.Taken();
+        });
+        int offset = 0;
+        foreach (ChannelBox box in WorstCase.Boxes(model, pin))
+        {
+            search.Search(box, offset, cancel);
+            offset += box.Count;
+        }
+
+        total.Scores = null;
+        return Conclude(total, pin);
+    }
+
+    private ReadingJudgement Conclude(Accumulator total, PinSource pin)
+    {
         foreach (double ambient in (ReadOnlySpan<double>)[model.Channel.Conditions.Ambient.Min.Kelvins, model.Channel.Conditions.Ambient.Max.Kelvins])
         {
             if (WorstCase.PinLow(model, ambient) is { } off)
@@ -91,7 +126,7 @@ public sealed class ChannelJudge
     }
 
     /// <summary>Heat while on of everything on the board that belongs to the channel, the load left out [W].</summary>
-    private static double Heat(SolvedState state)
+    internal static double Heat(SolvedState state)
     {
         double sum = 0;
         foreach (TransistorPoint point in (TransistorPoint[])state.Transistors)
@@ -146,14 +181,14 @@ public sealed class ChannelJudge
             switch (rules[r])
             {
                 case TransistorRule rule:
-                    foreach (TransistorPoint point in (TransistorPoint[])state.Transistors)
+                    TransistorPoint[] transistors = (TransistorPoint[])state.Transistors;
+                    for (int i = 0; i < transistors.Length; i++)
                     {
-                        if (!applies[r, point.Slot])
+                        ref readonly TransistorPoint point = ref transistors[i];
+                        if (applies[r, point.Slot])
                         {
-                            continue;
+                            into.Take(r, point.Slot, i, rule.Evaluate(state, point, model.Channel, rows[r, point.Slot]), state);
                         }
-
-                        into.At(r, point.Slot).Take(rule.Evaluate(state, point, model.Channel, rows[r, point.Slot]), state);
                     }
 
                     break;
@@ -163,7 +198,7 @@ public sealed class ChannelJudge
                         ResistorPoint point = state.Resistors[i];
                         if (applies[r, point.Slot])
                         {
-                            into.At(r, point.Slot).Take(rule.Evaluate(state, point, model.Channel, rows[r, point.Slot]), state);
+                            into.Take(r, point.Slot, i, rule.Evaluate(state, point, model.Channel, rows[r, point.Slot]), state);
                         }
                     }
 
@@ -171,12 +206,12 @@ public sealed class ChannelJudge
                 case LedRule rule:
                     for (int s = model.Slots.FirstLed; s < model.Slots.Count; s++)
                     {
-                        into.At(r, s).Take(rule.Evaluate(state, (LedPart)model.Slots.Of(s)[0].Part, model.Channel, rows[r, s]), state);
+                        into.Take(r, s, s - model.Slots.FirstLed, rule.Evaluate(state, (LedPart)model.Slots.Of(s)[0].Part, model.Channel, rows[r, s]), state);
                     }
 
                     break;
                 case ChannelRule rule when applies[r, channelSlot]:
-                    into.At(r, channelSlot).Take(rule.Evaluate(state, model.Channel, rows[r, channelSlot]), state);
+                    into.Take(r, channelSlot, 0, rule.Evaluate(state, model.Channel, rows[r, channelSlot]), state);
                     break;
             }
         }
@@ -288,6 +323,15 @@ public sealed class ChannelJudge
         public bool ControlHeld { get; set; }
 
         public double[] Hottest { get; } = new double[slots];
+
+        /// <summary>Takes the scores of a directed search; null: none.</summary>
+        public CornerScores? Scores { get; set; }
+
+        public void Take(int rule, int slot, int position, in Stress stress, SolvedState state)
+        {
+            At(rule, slot).Take(stress, state);
+            Scores?.Take(rule, position, stress);
+        }
 
         public Worst At(int rule, int slot) => worst[(rule * slots) + slot] ??= new Worst();
 

@@ -18,6 +18,8 @@ public sealed class DirectedCorners
     private readonly Dictionary<int, double[]> known = [];
     private readonly List<int> wanted = [];
     private readonly List<SolvedState> states = [];
+    private int[] worst = [];
+    private double[] most = [];
 
     /// <summary>Makes a search.</summary>
     /// <param name="batch">Solves corners.</param>
@@ -80,7 +82,11 @@ public sealed class DirectedCorners
         {
             for (int s = 0; s < scores; s++)
             {
-                WantNeighbours(Worst(s), first, dimensions);
+                // A score that says nothing anywhere has no worst corner.
+                if (most[s] > double.NegativeInfinity)
+                {
+                    WantNeighbours(worst[s], first, dimensions);
+                }
             }
         }
         while (Solve(box, offset));
@@ -104,21 +110,25 @@ public sealed class DirectedCorners
     private static double Change(double to, double from) =>
         double.IsFinite(to - from) ? to - from : to > from ? 1e300 : to < from ? -1e300 : 0;
 
-    /// <summary>The worst corner known of a score; the lowest index of those alike.</summary>
-    private int Worst(int score)
+    /// <summary>Keeps a corner's scores and where each is worst; of corners alike the lowest index.</summary>
+    private void Keep(int index, double[] scores)
     {
-        int worst = -1;
-        double most = double.NegativeInfinity;
-        foreach ((int index, double[] values) in known)
+        if (known.Count == 0)
         {
-            if (worst < 0 || values[score] > most || (values[score] == most && index < worst))
-            {
-                worst = index;
-                most = values[score];
-            }
+            worst = new int[scores.Length];
+            most = new double[scores.Length];
+            Array.Fill(most, double.NegativeInfinity);
         }
 
-        return worst;
+        known[index] = scores;
+        for (int s = 0; s < scores.Length; s++)
+        {
+            if (scores[s] > most[s] || (scores[s] == most[s] && index < worst[s]))
+            {
+                worst[s] = index;
+                most[s] = scores[s];
+            }
+        }
     }
 
     private void Want(int index)
@@ -154,7 +164,7 @@ public sealed class DirectedCorners
         batch.Solve(box, System.Runtime.InteropServices.CollectionsMarshal.AsSpan(wanted), offset, states.Add);
         for (int i = 0; i < wanted.Count; i++)
         {
-            known[wanted[i]] = visit(states[i]);
+            Keep(wanted[i], visit(states[i]));
         }
 
         wanted.Clear();
