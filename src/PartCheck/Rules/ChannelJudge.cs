@@ -79,7 +79,7 @@ public sealed class ChannelJudge
     {
         double driveFactor = Math.Max(derating.For("drive").Limit ?? 1, 1.2);
         Accumulator total = new(rules.Count, model.Slots.Count + 1);
-        CornerScores scores = new(rules.Count, pin);
+        CornerScores scores = new(model, rules.Count, pin);
         DirectedCorners search = new(new CornerBatch(model, pin, driveFactor), state =>
         {
             scores.Begin(state);

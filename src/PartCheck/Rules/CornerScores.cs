@@ -12,17 +12,21 @@ internal sealed class CornerScores
     /// <summary>Positions of a state: up to nine transistors, up to two resistors a leg group, feed and pull-down.</summary>
     private const int Positions = 20;
 
+    private const int Transistors = 10;
     private const int ChannelScores = 7;
-    private const int TransistorScores = 15;
+    private const int TransistorScores = 8;
+    private readonly ChannelModel model;
     private readonly double strongVoltage;
     private readonly int ruleScores;
     private double[] scores = [];
 
     /// <summary>Lays out the scores.</summary>
+    /// <param name="model">The channel.</param>
     /// <param name="rules">Rules that read states.</param>
     /// <param name="pin">The channel's pin.</param>
-    public CornerScores(int rules, PinSource pin)
+    public CornerScores(ChannelModel model, int rules, PinSource pin)
     {
+        this.model = model;
         ruleScores = rules * Positions;
         strongVoltage = pin.StrongVoltage;
     }
@@ -30,7 +34,7 @@ internal sealed class CornerScores
     /// <summary>Starts a state: its quantities are scored, its rules come by <see cref="Take"/>.</summary>
     public void Begin(SolvedState state)
     {
-        scores = new double[ruleScores + ChannelScores + (Positions * TransistorScores)];
+        scores = new double[ruleScores + ChannelScores + (Transistors * TransistorScores)];
         Array.Fill(scores, double.NegativeInfinity);
         if (!state.Solved)
         {
@@ -52,31 +56,29 @@ internal sealed class CornerScores
             sum += point.Role == Role.Pass ? point.Count * Share(point) : 0;
         }
 
+        bool several = state.Transistors.Count > 2;
+        bool oddSeen = false;
         for (int i = 0; i < state.Transistors.Count; i++)
         {
             at = ruleScores + ChannelScores + (i * TransistorScores);
             TransistorPoint point = state.Transistors[i];
             scores[at++] = point.Tj;
-            scores[at++] = point.Power;
             scores[at++] = state.LowestHeadroom ? -point.Vce : double.NegativeInfinity;
-            scores[at++] = point.Vce;
-            if (point.Role == Role.Pass && sum > 0)
+
+            // Where the current leaves the gain points of the corner's own end of the window, its guarantee ends.
+            bool odd = !oddSeen && point.Role == Role.Pass && model.Slots.Of(point.Slot)[0].Reference == state.Corner.OddLeg;
+            oddSeen |= odd;
+            TransistorCorner of = point.Role == Role.Control ? state.Corner.Control : odd ? state.Corner.OddPass : state.Corner.Pass;
+            double logIc = Math.Log(Math.Max(point.Ic, 1e-30));
+            int end = of.Hfe == Extreme.Max ? 2 : 0;
+            scores[at + end] = logIc;
+            scores[at + end + 1] = -logIc;
+            at += 4;
+            if (point.Role == Role.Pass && several && sum > 0)
             {
                 scores[at] = Share(point) / sum;
                 scores[at + 1] = -Share(point) / sum;
             }
-
-            // The current at either end of each gain window: there its guarantee ends.
-            at += 2;
-            TransistorCorner of = point.Role == Role.Control ? state.Corner.Control : state.Corner.Pass;
-            int ends = ((of.Hfe == Extreme.Max ? 1 : 0) * 2) + (state.Corner.OddPass.Hfe == Extreme.Max ? 4 : 0);
-            scores[at + ends] = point.Ic;
-            scores[at + ends + 1] = -point.Ic;
-        }
-
-        for (int i = 0; i < state.Resistors.Count; i++)
-        {
-            scores[ruleScores + ChannelScores + (i * TransistorScores) + TransistorScores - 1] = state.Resistors[i].Voltage;
         }
     }
 
