@@ -12,6 +12,7 @@ internal sealed partial class PrintedWorking
     private readonly Dictionary<string, double> symbols = new(StringComparer.Ordinal);
     private string balance = string.Empty;
     private double left;
+    private string leftText = string.Empty;
 
     /// <summary>Steps and balances gone through.</summary>
     public int Steps { get; private set; }
@@ -58,6 +59,7 @@ internal sealed partial class PrintedWorking
     {
         if (text.StartsWith("left: ", StringComparison.Ordinal))
         {
+            leftText = text;
             left = SideOf(text[6..], balance.Split(" = ")[0]);
             return;
         }
@@ -66,8 +68,9 @@ internal sealed partial class PrintedWorking
         {
             double right = SideOf(text[7..], balance.Split(" = ")[1]);
 
-            // Six figures of what is subtracted: volts agree to 50 uV, currents to a thousandth and 2 nA.
-            double allowed = text.EndsWith('V') ? 50e-6 : (1e-3 * Math.Abs(left)) + (text.EndsWith('A') ? 2e-9 : 0);
+            // Six figures of what is subtracted: volts agree to 50 uV, currents to a thousandth, 2 nA and a ten-thousandth of a percent of each term.
+            double terms = Amperes().Matches(text + leftText).Sum(m => Math.Abs(PrintedCalculator.Number(m.Value)));
+            double allowed = text.EndsWith('V') ? 50e-6 : (1e-3 * Math.Abs(left)) + (text.EndsWith('A') ? 2e-9 + (1e-6 * terms) : 0);
             Assert.True(Math.Abs(left - right) <= allowed, $"{balance}: {left} and {right}");
             Balances++;
             return;
@@ -112,6 +115,9 @@ internal sealed partial class PrintedWorking
 
     [GeneratedRegex(@"^    ([A-Za-z][A-Za-z0-9']*) +(-?[0-9]+(?:\.[0-9]+)?(?: (?:%|ppm/K|degC|K/W|K|[pnumkMG]?(?:V/K|W/K|V|A|W|ohm)))?) ")]
     private static partial Regex Figure();
+
+    [GeneratedRegex(@"[0-9.]+ [pnum]?A(?![A-Za-z0-9])")]
+    private static partial Regex Amperes();
 
     [GeneratedRegex(@" \(unrounded [^()]*\)$")]
     private static partial Regex Unrounded();
