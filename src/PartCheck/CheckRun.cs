@@ -348,7 +348,7 @@ public static class CheckRun
             }
 
             IEnumerable<Part> used = channels.SelectMany(c => c.Readings).SelectMany(r => r.Legs
-                .SelectMany(l => new[] { l.Pass, l.Sense, l.Averaging }).Append(r.Control).Append(r.Feed).Append(r.PullDown))
+                .SelectMany(l => new[] { l.Pass, l.Sense, l.Averaging }).Append(r.Control).Append(r.Feed).Append(r.PullDown).Concat(r.Leds))
                 .OfType<Placement>().Select(p => p.Part).Distinct().OrderBy(p => p.PartNumber, StringComparer.Ordinal);
             foreach (Part part in used)
             {

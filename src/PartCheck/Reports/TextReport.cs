@@ -174,12 +174,16 @@ public static class TextReport
             OperatingPoints.TestLimits l = c.TestLimits!;
             Columns80.Wrap(
                 text, $"  {c.Channel} ",
-                $"at {FindingText.Value(l.Supply, "V")}: load {Range(l.LoadCurrent, "A")}; sense {Range(l.SenseVoltage, "V")}; base {Range(l.BaseVoltage, "V")}; collector {Range(l.CollectorVoltage, "V")}",
+                $"at {FindingText.Value(l.Supply, "V")}{Pulsed(c)}: load {Range(l.LoadCurrent, "A")}; sense {Range(l.SenseVoltage, "V")}; base {Range(l.BaseVoltage, "V")}; collector {Range(l.CollectorVoltage, "V")}",
                 4);
         }
 
         text.Append('\n');
     }
+
+    /// <summary>A channel that pulses is measured while on, and is as warm as its largest duty makes it.</summary>
+    private static string Pulsed(ChannelJudgement c) => c.Reading is { Conditions.Duty: < 1 and var duty }
+        ? string.Create(CultureInfo.InvariantCulture, $" while on, duty up to {duty * 100:0.###} %") : string.Empty;
 
     private static string Range(OperatingPoints.ValueRange range, string unit) =>
         $"{FindingText.Value(range.Min, unit, 3)} .. {FindingText.Value(range.Max, unit, 3)}";
@@ -189,7 +193,7 @@ public static class TextReport
         string without = totals.Without.Count == 0 ? string.Empty : $" (without {string.Join(", ", totals.Without)})";
         Columns80.Wrap(
             text, string.Empty,
-            $"Board{without}: load supplies {FindingText.Value(totals.SupplyMin, "A", 3)} .. {FindingText.Value(totals.SupplyMax, "A", 3)}; heat of its parts up to {FindingText.Value(totals.HeatMax, "W", 3)}; hottest "
+            $"Board{without}: load supplies {FindingText.Value(totals.SupplyMin, "A", 3)} .. {FindingText.Value(totals.SupplyMax, "A", 3)}; heat of its parts while on up to {FindingText.Value(totals.HeatMax, "W", 3)}; hottest "
             + string.Join(", ", totals.Hottest.Select(h => $"{h.Reference} {FindingText.Value(h.Tj, "K")}")) + ".",
             2);
     }

@@ -18,7 +18,8 @@ public static class BillRule
     /// <summary>What the rule demands, one line.</summary>
     public const string Title = "Quantity, fitting, package, kind and resistance of each line agree with references and part table";
 
-    private const string Source = "the bill and the part table themselves";
+    /// <summary>Where the rule comes from.</summary>
+    public const string Source = "the bill and the part table themselves";
 
     /// <summary>Judges a bill.</summary>
     public static IReadOnlyList<Finding> Judge(Bill bill, PartTable parts, IReadOnlyList<Channel> channels)

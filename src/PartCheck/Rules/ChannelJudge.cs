@@ -1,3 +1,4 @@
+using System.Globalization;
 using PartCheck.Channels;
 using PartCheck.Derating;
 using PartCheck.OperatingPoints;
@@ -33,7 +34,7 @@ public sealed class ChannelJudge
             for (int s = 0; s <= slots; s++)
             {
                 Part? part = s < slots && model.Slots.Of(s) is { Count: > 0 } placements ? placements[0].Part : null;
-                string? kind = part switch { Transistor => "npn", ResistorPart => "resistor", _ => null };
+                string? kind = part switch { Transistor => "npn", ResistorPart => "resistor", LedPart => "led", _ => null };
                 string? style = (part as ResistorPart)?.Style;
                 rows[r, s] = new RuleRows(derating.For(rules[r].Id, kind, style), derating.For("r-power", kind, style));
                 applies[r, s] = (rules[r], part) switch
@@ -41,6 +42,7 @@ public sealed class ChannelJudge
                     (TransistorRule rule, Transistor transistor) =>
                         rule.AppliesTo(model.Slots.Of(s)[0].Role) && rule.Asked(transistor, model.Channel, rows[r, s]),
                     (ResistorRule rule, ResistorPart resistor) => rule.AppliesTo(resistor),
+                    (LedRule, LedPart) => true,
                     (ChannelRule rule, _) => s == slots && rule.Asked(model.Channel, rows[r, s]),
                     _ => false,
                 };
@@ -88,7 +90,7 @@ public sealed class ChannelJudge
         };
     }
 
-    /// <summary>Heat of everything on the board that belongs to the channel, the load left out [W].</summary>
+    /// <summary>Heat while on of everything on the board that belongs to the channel, the load left out [W].</summary>
     private static double Heat(SolvedState state)
     {
         double sum = 0;
@@ -166,6 +168,13 @@ public sealed class ChannelJudge
                     }
 
                     break;
+                case LedRule rule:
+                    for (int s = model.Slots.FirstLed; s < model.Slots.Count; s++)
+                    {
+                        into.At(r, s).Take(rule.Evaluate(state, (LedPart)model.Slots.Of(s)[0].Part, model.Channel, rows[r, s]), state);
+                    }
+
+                    break;
                 case ChannelRule rule when applies[r, channelSlot]:
                     into.At(r, channelSlot).Take(rule.Evaluate(state, model.Channel, rows[r, channelSlot]), state);
                     break;
@@ -227,11 +236,14 @@ public sealed class ChannelJudge
         {
             (TransistorRule t, Transistor part) => t.DecidingCell(part),
             (ResistorRule t, ResistorPart part) => t.DecidingCell(part),
+            (LedRule t, LedPart part) => t.DecidingCell(part),
             (ChannelRule t, _) => t.DecidingCell(model.Channel, stress),
             _ => null,
         };
         string? text = rule is ResistorVoltageRule && placement?.Part is ResistorPart { WorkingVoltageMax: null, Resistance.Value.Ohms: > 0 }
-            ? "no limiting element voltage given: judged by sqrt(P R) alone" : null;
+            ? "no limiting element voltage given: judged by sqrt(P R) alone"
+            : rule is PowerRule && PulsedHeat.AveragedShare(model.Channel.Conditions) is < 1 and var duty
+            ? string.Create(CultureInfo.InvariantCulture, $"averaged over a duty of {duty * 100:0.###} %") : null;
         return new Finding
         {
             Channel = model.Channel.Name,
@@ -317,7 +329,7 @@ public sealed record ReadingJudgement(
     BoundChannel Channel, IReadOnlyList<Finding> Findings, SolvedState? Nominal, double LoadMin, double LoadMax, double PinMax,
     int Corners, int NotSolved)
 {
-    /// <summary>Largest heat of the channel's parts on the board, the load left out [W].</summary>
+    /// <summary>Largest heat of the channel's parts on the board while on, whatever the duty, the load left out [W].</summary>
     public double HeatMax { get; init; }
 
     /// <summary>The state of <see cref="PinMax"/>; null: the pin delivers nothing.</summary>

@@ -106,10 +106,10 @@ public sealed record ChannelJudgement
     /// <summary>What a good channel measures on the bench; null: not solved.</summary>
     public TestLimits? TestLimits { get; init; }
 
-    /// <summary>Largest heat of the channel's parts on the board, the load left out [W]; null: not solved.</summary>
+    /// <summary>Largest heat of the channel's parts on the board while on, whatever the duty, the load left out [W]; null: not solved.</summary>
     public double? HeatMax { get; init; }
 
-    /// <summary>Each transistor with its highest junction temperature [K], hottest first.</summary>
+    /// <summary>Each transistor with its highest junction temperature, under PWM the peak [K], hottest first.</summary>
     public IReadOnlyList<(string Reference, double Tj)> Hottest { get; init; } = [];
 
     /// <summary>Corners solved, over all states and readings.</summary>

@@ -7,7 +7,7 @@ using PartCheck.Quantities;
 namespace PartCheck.Rules;
 
 /// <summary>
-/// Junction temperature, state on. Allowed: the lowest of Tmax x factor (a multiplication of degrees Celsius), Tmax - offset
+/// Junction temperature, state on, under PWM its peak. Allowed: the lowest of Tmax x factor (a multiplication of degrees Celsius), Tmax - offset
 /// and cap. Ratio (Tj - Ta)/(Tallowed - Ta). A junction that ran away is nonconforming, "at least" where it is held.
 /// </summary>
 public sealed class JunctionRule : TransistorRule

@@ -17,6 +17,9 @@ public static class PinCurrentRule
     /// <summary>What the rule demands, one line.</summary>
     public const string Title = "Current out of a logic pin at most its derated rating, all its feeds together";
 
+    /// <summary>Where the rule comes from.</summary>
+    public const string Source = "rated output current of the logic pin";
+
     /// <summary>Judges one pin.</summary>
     /// <param name="pin">The pin's name.</param>
     /// <param name="feeds">Channels on the pin with the highest current of each.</param>

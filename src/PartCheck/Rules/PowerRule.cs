@@ -5,7 +5,7 @@ using PartCheck.Parts;
 namespace PartCheck.Rules;
 
 /// <summary>
-/// Dissipation, state on, at the ambient where the ratio is worst. Allowed at ambient T:
+/// Dissipation, state on, under PWM from 1 kHz up its average over the period at the largest duty, at the ambient where the ratio is worst. Allowed at ambient T:
 /// factor x min(Power, Power - slope (T - flat), (Tmax - T)/RthJA) [W]; slope from (Tmax - flat) where the table gives none;
 /// nothing from Tmax up, whatever the slope says.
 /// MIL-PRF-19500/255 1.3 states its ratings so: flat at PT, then a line to zero at TJ maximum.
@@ -60,7 +60,7 @@ public sealed class PowerRule : TransistorRule
             rated = 0;
         }
 
-        Stress stress = Stress.AtMostOf(point.Power, rated * rows.Own.Factor);
+        Stress stress = Stress.AtMostOf(point.Power * point.AveragedShare, rated * rows.Own.Factor);
         if (stress.Verdict != Verdict.Conforms)
         {
             return stress;

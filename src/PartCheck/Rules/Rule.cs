@@ -74,6 +74,19 @@ public abstract class ResistorRule : Rule
     public abstract string? DecidingCell(ResistorPart part);
 }
 
+/// <summary>A rule that judges the load's LEDs, where the channel names them.</summary>
+public abstract class LedRule : Rule
+{
+    /// <inheritdoc/>
+    public override bool AlwaysAsked => false;
+
+    /// <summary>Judges one LED in one state.</summary>
+    public abstract Stress Evaluate(SolvedState state, LedPart part, BoundChannel channel, in RuleRows rows);
+
+    /// <summary>The cell of the rating that decides; null: not given.</summary>
+    public abstract string? DecidingCell(LedPart part);
+}
+
 /// <summary>A rule that judges the channel as a whole.</summary>
 public abstract class ChannelRule : Rule
 {

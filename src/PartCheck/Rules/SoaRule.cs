@@ -8,8 +8,9 @@ namespace PartCheck.Rules;
 /// <summary>
 /// The pair (VCE, IC) inside the DC boundary of the safe operating area, state on, where the table gives one. Allowed current [A]:
 /// log-log between the points, the IC rating below the first, nothing above the last; times (Tmax - T)/(Tmax - 25 degC), at most 1,
-/// times factor. T is the ambient, or the case at Tj - P RthJC, never cooler than the ambient (just switched on Tj is the ambient); what
-/// the case reaches is not known without RthJA.
+/// times factor. T is the ambient, or the case at Tj - d P RthJC, never cooler than the ambient (just switched on Tj is the ambient); d is
+/// the duty where the junction's pulses were solved, else 1, so that the case is not taken for cooler than it is. The pair itself is that while
+/// on. What the case reaches is not known without RthJA.
 /// </summary>
 public sealed class SoaRule : TransistorRule
 {
@@ -53,7 +54,7 @@ public sealed class SoaRule : TransistorRule
                 return Stress.NotVerified("RthJC of " + part.PartNumber);
             }
 
-            temperature = Math.Max(temperature, point.Tj - (point.Power * rth.Value.KelvinsPerWatt));
+            temperature = Math.Max(temperature, point.Tj - (point.CaseShare * point.Power * rth.Value.KelvinsPerWatt));
         }
 
         double share = (max.Value.Kelvins - temperature) / (max.Value.Kelvins - PhysicalConstants.RoomTemperature);

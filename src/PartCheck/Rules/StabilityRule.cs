@@ -7,8 +7,9 @@ namespace PartCheck.Rules;
 
 /// <summary>
 /// Thermal stability of legs that share one control, state on: the loop gain of the difference between two legs,
-/// S = d VCE RthJA abs(dVBE/dT) / (Rs Ra/(Rs + Ra) + RE + VT/IC + RB/hFE), at most factor [-]. The ballast is Rs parallel Ra (an
-/// unsensed leg: Rs alone); dVBE/dT is the solved model's at constant IC. A duty below 100 % counts as 100 % (d = 1).
+/// S = d VCE RthJA abs(dVBE/dT) / (Rs Ra/(Rs + Ra) + RE + VT/IC + RB/hFE), at most factor [-]. The ballast is Rs parallel Ra; Rs
+/// alone of a leg that is not sensed and of the only one that is (the control holds that one's current: Ra is no ballast there, and S an
+/// upper bound). dVBE/dT is the solved model's at constant IC; d is the duty where power is averaged (from 1 kHz up), else 1.
 /// </summary>
 public sealed class StabilityRule : TransistorRule
 {
@@ -46,7 +47,7 @@ public sealed class StabilityRule : TransistorRule
             return Stress.AtMostOf(0, rows.Own.Factor);
         }
 
-        double thermal = point.Vce * point.RthJa * Math.Abs(point.VbeSlope);
+        double thermal = point.AveragedShare * point.Vce * point.RthJa * Math.Abs(point.VbeSlope);
         double electrical = point.Ballast + point.EmitterResistance + (PhysicalConstants.ThermalVoltage(point.Tj) / point.Ic)
             + (point.BaseResistance * Math.Max(point.Ib, 0) / point.Ic);
         Stress stress = Stress.AtMostOf(thermal / electrical, rows.Own.Factor);
