@@ -28,6 +28,8 @@ internal static class ConditionSymbols
             .Given("Iref", c.CurrentNominal.Amperes, "A", "current at which the drop holds (Current nominal, or the window's centre)", Cell("Current nominal"))
             .Given("Rload", c.LoadSlope.Ohms, "ohm", "ohmic part of the load", Cell("Load slope"))
             .Given("LEDs", c.Leds, string.Empty, "LEDs in the string", Cell("LEDs"))
+            .Given("d", c.Duty, string.Empty, "largest duty", Cell("Duty max"))
+            .Given("f", c.Frequency?.Hertz ?? 0, "Hz", "PWM frequency", Cell("Frequency"))
             .Given("kq", PhysicalConstants.BoltzmannOverCharge, "V/K", "Boltzmann constant over elementary charge (SI, exact)");
         AddPin(book, basis);
         foreach (LegView leg in legs)
