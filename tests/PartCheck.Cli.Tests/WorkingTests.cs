@@ -91,7 +91,7 @@ public class WorkingTests
         Assert.True(steps.Single(s => s.GetProperty("symbol").GetString() == "Tflat").GetProperty("assumed").GetBoolean());
         JsonElement factor = steps.Single(s => s.GetProperty("symbol").GetString() == "F");
         Assert.Equal("common practice, no source", factor.GetProperty("source").GetString());
-        JsonElement ratio = steps.Single(s => s.GetProperty("symbol").GetString() == working.GetProperty("stressRatio").GetString());
+        JsonElement ratio = steps.Single(s => s.GetProperty("symbol").GetString() == working.GetProperty("ratioSymbol").GetString());
         Assert.Equal("P / Pallowed", ratio.GetProperty("formula").GetString());
         Assert.Contains(" mW / ", ratio.GetProperty("numbers").GetString(), StringComparison.Ordinal);
         Assert.Equal(working.GetProperty("finding").GetProperty("stressRatio").GetDouble(), ratio.GetProperty("result").GetDouble(), 4);

@@ -105,18 +105,18 @@ public sealed class LedCurrentRule : LedRule
         }
 
         steps.Given("IF", part.ForwardCurrentMax!.Value.Amperes, "A", "highest forward current of " + part.PartNumber, part.ForwardCurrentMax.Cell)
-            .Given("Tflat", part.FlatTo.Celsius, "degC", "it holds up to here", part.ForwardCurrentFlatTo?.Cell, assumed: part.ForwardCurrentFlatTo is null)
+            .Given("TLflat", part.FlatTo.Celsius, "degC", "it holds up to here", part.ForwardCurrentFlatTo?.Cell, assumed: part.ForwardCurrentFlatTo is null)
             .Factor(rows.Own);
         string fall = string.Empty;
         if (part.ForwardCurrentSlope is { } slope)
         {
             steps.Given("slope", slope.Value, "A/K", "slope above that", slope.Cell);
-            fall = " - slope x max(0, Ta - Tflat)";
+            fall = " - slope x max(0, Ta - TLflat)";
         }
         else if (part.TjMax is { } max)
         {
-            steps.Given("Tmax", max.Value.Celsius, "degC", "Tj max of " + part.PartNumber, max.Cell);
-            fall = " - IF x max(0, Ta - Tflat) / (Tmax - Tflat)";
+            steps.Given("TLmax", max.Value.Celsius, "degC", "Tj max of " + part.PartNumber, max.Cell);
+            fall = " - IF x max(0, Ta - TLflat) / (TLmax - TLflat)";
         }
 
         bool none = state.Corner.Ambient >= part.TjMax?.Value.Kelvins;
