@@ -1,4 +1,5 @@
 using System.CommandLine;
+using PartCheck.Bills;
 using PartCheck.Derating;
 using PartCheck.Reports;
 using PartCheck.Sheets;
@@ -16,6 +17,7 @@ internal static class CheckCommand
         Option<string?> channels = UsageError.NoOption(new Option<string?>("--channels") { Description = "Channels apart from the board", HelpName = "FILE[:SHEET]" });
         Option<string?> derating = UsageError.NoOption(new Option<string?>("--derating") { Description = "Derating table (default: workshop)", HelpName = "NAME|FILE" });
         Option<string?> pins = UsageError.NoOption(new Option<string?>("--pins") { Description = "Logic pins (default: the board's, else the project's own)", HelpName = "FILE" });
+        Option<string[]> with = UsageError.NoOption(new Option<string[]>("--with") { Description = "Judge the board with other parts, and compare: reference or part number of the bill, part number", HelpName = "LINE=PN,...", AllowMultipleArgumentsPerToken = false });
         Option<string?> columns = UsageError.NoOption(new Option<string?>("--columns") { Description = "Further header spellings", HelpName = "FILE" });
         Option<string?> encoding = UsageError.NoOption(new Option<string?>("--encoding") { Description = "Text encoding of CSV files (default: found out)", HelpName = "NAME" });
         Option<string> format = new("--format") { Description = "text or json", HelpName = "FORMAT", DefaultValueFactory = _ => "text" };
@@ -24,10 +26,16 @@ internal static class CheckCommand
         Option<bool> replace = new("--replace") { Description = "Replace the --out file where it exists" };
         Command command = new("check", "Solve every channel at worst case and judge its parts")
         {
-            boards, parts, bill, channels, derating, pins, columns, encoding, format, file, replace,
+            boards, parts, bill, channels, derating, pins, with, columns, encoding, format, file, replace,
         };
         command.SetAction(async (parse, cancel) =>
         {
+            if (AskedChange.Read(parse.GetValue(with) ?? [], out IReadOnlyList<AskedChange> changes) is { } noChange)
+            {
+                await error.WriteLineAsync("partcheck: " + noChange).ConfigureAwait(false);
+                return ExitCodes.Usage;
+            }
+
             CheckRequest request = new()
             {
                 Boards = parse.GetRequiredValue(boards),
@@ -36,6 +44,7 @@ internal static class CheckCommand
                 Channels = parse.GetValue(channels),
                 Derating = parse.GetValue(derating),
                 Pins = parse.GetValue(pins),
+                With = changes,
                 Columns = parse.GetValue(columns),
                 Encoding = parse.GetValue(encoding),
             };
@@ -53,6 +62,16 @@ internal static class CheckCommand
             }
 
             CheckReport report = CheckRun.Run(request, cancel);
+            if (report.UsageFaults.Count > 0)
+            {
+                foreach (string wrong in report.UsageFaults)
+                {
+                    await error.WriteLineAsync("partcheck: " + UsageError.OneLine(wrong)).ConfigureAwait(false);
+                }
+
+                return ExitCodes.Usage;
+            }
+
             string text = parse.GetValue(format) == "json" ? JsonReport.Write(report) : TextReport.Write(report, colour && target is null);
             if (target is null)
             {
@@ -86,6 +105,11 @@ internal static class CheckCommand
         if (request.Boards.Count > 1 && (request.Bill is not null || request.Channels is not null))
         {
             return "--bill and --channels go with one board.";
+        }
+
+        if (request.Boards.Count > 1 && request.With.Count > 0)
+        {
+            return "--with goes with one board.";
         }
 
         if (request.Derating is { } name && DeratingLibrary.Named(name) is null && !File.Exists(BoardSource.Split(name).Path))

@@ -1,3 +1,4 @@
+using System.Globalization;
 using System.Security.Cryptography;
 using PartCheck.Bills;
 using PartCheck.Channels;
@@ -31,6 +32,9 @@ public sealed record CheckRequest
 
     /// <summary>Logic pins file; null: the board's, else the project's own.</summary>
     public string? Pins { get; init; }
+
+    /// <summary>Other parts to judge the board with, beside the bill as it stands; empty: the bill as it stands.</summary>
+    public IReadOnlyList<AskedChange> With { get; init; } = [];
 
     /// <summary>Further header spellings; null: none.</summary>
     public string? Columns { get; init; }
@@ -68,13 +72,14 @@ public static class CheckRun
         }
 
         List<BoardReport> boards = [];
+        List<string> usage = [];
         foreach (string board in request.Boards)
         {
             cancel.ThrowIfCancellationRequested();
-            boards.Add(new BoardCheck(request, board, source, spellings, given, complaints).Run(cancel));
+            boards.Add(new BoardCheck(request, board, source, spellings, given, complaints, usage).Run(cancel));
         }
 
-        return new CheckReport(boards, complaints.Items, [.. source.Files.Select(Hashed)]);
+        return new CheckReport(boards, complaints.Items, [.. source.Files.Select(Hashed)]) { UsageFaults = usage };
     }
 
     private static string Folder(string file) => Path.GetDirectoryName(Path.GetFullPath(file)) ?? ".";
@@ -87,10 +92,14 @@ public static class CheckRun
 
     /// <summary>One board of a run.</summary>
     private sealed class BoardCheck(
-        CheckRequest request, string board, BoardSource source, ColumnSpellings spellings, List<Part> given, ComplaintList complaints)
+        CheckRequest request, string board, BoardSource source, ColumnSpellings spellings, List<Part> given, ComplaintList complaints,
+        List<string> usage)
     {
         private readonly Dictionary<Transistor, TransistorVariants> variants = new(ReferenceEqualityComparer.Instance);
         private readonly List<Advice> advice = [];
+        private readonly Dictionary<string, ReadingJudgement> judgements = new(StringComparer.Ordinal);
+        private readonly Dictionary<object, int> identities = new(ReferenceEqualityComparer.Instance);
+        private ComplaintList complaints = complaints;
         private IReadOnlyList<DeratingTable> ownDerating = [];
 
         public BoardReport Run(CancellationToken cancel)
@@ -128,13 +137,81 @@ public static class CheckRun
                 return Unread(derating);
             }
 
+            return request.With.Count == 0
+                ? Judged(bill, rows, parts, pins, derating, cancel)
+                : WithChanges(bill, rows, parts, pins, derating, cancel);
+        }
+
+        /// <summary>The board with the parts asked for, compared with the bill as it stands.</summary>
+        private BoardReport WithChanges(
+            Bill bill, IReadOnlyList<ChannelRow> rows, PartTable parts, IReadOnlyList<LogicPin> pins, DeratingTable derating, CancellationToken cancel)
+        {
+            List<LineChange> changes = ReadChanges(bill, rows, parts);
+            if (usage.Count > 0)
+            {
+                return Unread(derating);
+            }
+
+            // What only the replaced parts have wrong is no complaint about the board that was asked for.
+            ComplaintList asked = complaints;
+            complaints = new ComplaintList();
+            BoardReport before = Judged(bill, rows, parts, pins, derating, cancel);
+            complaints = asked;
+            BoardReport after = Judged(BillChanges.Apply(bill, changes), rows, parts, pins, derating, cancel);
+            double? Ohms(string? part) => part is not null && parts.Find(part) is [ResistorPart resistor, ..] ? resistor.Resistance.Value.Ohms : null;
+            return after with
+            {
+                Comparison = BoardComparison.Of(
+                    before, after,
+                    [.. changes.Select(c => new PartChange(c.References, c.Line.PartNumber, c.PartNumber, c.Manufacturer, Ohms(c.Line.PartNumber), Ohms(c.PartNumber)))],
+                    [.. rows.Where(r => changes.Any(c => Serves(r, c.References))).Select(r => r.Name)]),
+            };
+        }
+
+        private List<LineChange> ReadChanges(Bill bill, IReadOnlyList<ChannelRow> rows, PartTable parts)
+        {
+            List<LineChange> changes = [];
+            HashSet<string> changed = new(StringComparer.OrdinalIgnoreCase);
+            foreach (AskedChange asked in request.With)
+            {
+                if (BillChanges.Find(bill, asked.Line, out IReadOnlyList<(BillLine Line, IReadOnlyList<string> References)> found) is { } wrong)
+                {
+                    usage.Add(wrong);
+                }
+                else if (!rows.Any(r => found.Any(f => Serves(r, f.References))))
+                {
+                    usage.Add($"\"{asked.Line}\" serves no channel: nothing here judges it.");
+                }
+
+                if (parts.Named(asked.PartNumber) is not { } part)
+                {
+                    string unread = complaints.Items.Count == 0 ? string.Empty
+                        : "; there are complaints about the inputs, which the run without --with lists";
+                    usage.Add($"\"{asked.PartNumber}\" is not in the part table{NearMisses.Phrase(asked.PartNumber, parts.Parts.Select(p => p.PartNumber))}{unread}.");
+                    continue;
+                }
+
+                foreach ((BillLine line, IReadOnlyList<string> references) in found)
+                {
+                    usage.AddRange(references.Where(r => !changed.Add(r)).Select(r => $"{r} is changed twice."));
+                    changes.Add(new LineChange(line, references, part.PartNumber, part.Manufacturer));
+                }
+            }
+
+            return changes;
+        }
+
+        private static bool Serves(ChannelRow row, IReadOnlyList<string> references) =>
+            RoleNames.Columns.Any(c => row.Of(c.Role).Any(r => references.Contains(r, StringComparer.OrdinalIgnoreCase)));
+
+        private BoardReport Judged(
+            Bill bill, IReadOnlyList<ChannelRow> rows, PartTable parts, IReadOnlyList<LogicPin> pins, DeratingTable derating, CancellationToken cancel)
+        {
             IReadOnlyList<Channel> channels = ChannelBinder.Bind(rows, bill, parts, pins, complaints);
             IReadOnlyList<Finding> billFindings = BillRule.Judge(bill, parts, channels);
             IReadOnlyList<JudgedChannel> judged = JudgeChannels(channels, derating, cancel);
             IReadOnlyList<Finding> pinFindings = JudgePins(judged, derating);
-            AddAdvice(bill, channels);
-            AddCircuitAdvice(channels);
-            return Report(derating, judged, billFindings, pinFindings);
+            return Report(derating, judged, billFindings, pinFindings, [.. advice, .. AlternatesAdvice(bill, channels), .. CircuitAdvice(channels)]);
         }
 
         private DeratingTable RunDerating()
@@ -244,14 +321,41 @@ public static class CheckRun
                 foreach (JudgedChannel feed in feeds)
                 {
                     double others = feeds.Where(f => f != feed).Sum(f => f.AloneCurrent);
-                    feed.Readings.AddRange(feed.Models.Select(m => Judgement(feed, m, others, cancel) with
-                    {
-                        TestLimits = TestLimits.Of(m.Channel, Variants, new PinSource(m.Channel.Logic, others), request.Threads, cancel),
-                    }));
+                    feed.Readings.AddRange(feed.Models.Select(m => Measured(feed, m, others, cancel)));
                 }
             }
 
             return judged;
+        }
+
+        /// <summary>A reading's judgement with its test limits; what another bill of this run has in common with this one is judged once.</summary>
+        private ReadingJudgement Measured(JudgedChannel channel, ChannelModel model, double others, CancellationToken cancel)
+        {
+            string key = string.Create(CultureInfo.InvariantCulture, $"{others:R} {Identity(model.Channel)} {channel.Channel.Name}");
+            if (!judgements.TryGetValue(key, out ReadingJudgement? made))
+            {
+                made = Judgement(channel, model, others, cancel) with
+                {
+                    TestLimits = TestLimits.Of(model.Channel, Variants, new PinSource(model.Channel.Logic, others), request.Threads, cancel),
+                };
+                judgements[key] = made;
+            }
+
+            return made;
+        }
+
+        /// <summary>The lines and part rows of a reading as one text.</summary>
+        private string Identity(BoundChannel channel)
+        {
+            int Of(object thing)
+            {
+                identities.TryAdd(thing, identities.Count);
+                return identities[thing];
+            }
+
+            return string.Join(',', channel.Legs.SelectMany(l => new[] { l.Pass, l.Sense, l.Averaging })
+                .Append(channel.Control).Append(channel.Feed).Append(channel.PullDown)
+                .Select(p => p is null ? "-" : string.Create(CultureInfo.InvariantCulture, $"{Of(p.Line)}:{Of(p.Part)}")));
         }
 
         private ReadingJudgement Judgement(JudgedChannel channel, ChannelModel model, double others, CancellationToken cancel) =>
@@ -306,24 +410,24 @@ public static class CheckRun
             return made;
         }
 
-        private void AddAdvice(Bill bill, IReadOnlyList<Channel> channels)
+        private static IEnumerable<Advice> AlternatesAdvice(Bill bill, IReadOnlyList<Channel> channels)
         {
             foreach (BillLine line in bill.Lines.Where(l => l.Alternates.Count > 0))
             {
                 if (channels.Any(c => c.References.Any(r => line.References.Contains(r, StringComparer.OrdinalIgnoreCase))))
                 {
-                    advice.Add(new Advice(null, line.References[0], $"Alternates {string.Join(", ", line.Alternates)} of this line are not judged by this version."));
+                    yield return new Advice(null, line.References[0], $"Alternates {string.Join(", ", line.Alternates)} of this line are not judged by this version.");
                 }
             }
         }
 
         /// <summary>Remarks on parts and circuits that no rule judges.</summary>
-        private void AddCircuitAdvice(IReadOnlyList<Channel> channels)
+        private static IEnumerable<Advice> CircuitAdvice(IReadOnlyList<Channel> channels)
         {
             List<string> floating = [.. channels.Where(c => c.Readings.Count > 0 && c.Readings[0].PullDown is null).Select(c => c.Name)];
             if (floating.Count > 0)
             {
-                advice.Add(new Advice(null, null, $"{string.Join(", ", floating)}: no pull-down; while the pin floats at reset nothing holds the channel off."));
+                yield return new Advice(null, null, $"{string.Join(", ", floating)}: no pull-down; while the pin floats at reset nothing holds the channel off.");
             }
 
             IEnumerable<Part> used = channels.SelectMany(c => c.Readings).SelectMany(r => r.Legs
@@ -333,18 +437,18 @@ public static class CheckRun
             {
                 if (part.Lifecycle is { } lifecycle && !lifecycle.Equals("active", StringComparison.OrdinalIgnoreCase))
                 {
-                    advice.Add(new Advice(null, null, $"{part.PartNumber}: lifecycle \"{lifecycle}\"."));
+                    yield return new Advice(null, null, $"{part.PartNumber}: lifecycle \"{lifecycle}\".");
                 }
 
                 if (part.Stock is 0)
                 {
-                    advice.Add(new Advice(null, null, $"{part.PartNumber}: none in stock."));
+                    yield return new Advice(null, null, $"{part.PartNumber}: none in stock.");
                 }
 
                 if (part is ResistorPart { Resistance.Value.Ohms: > 0 and var ohms }
                     && !PreferredValues.Contains(PreferredSeries.E24, ohms) && !PreferredValues.Contains(PreferredSeries.E96, ohms))
                 {
-                    advice.Add(new Advice(null, null, $"{part.PartNumber}: {EngineeringNotation.Format(ohms, "ohm")} is neither an E24 nor an E96 value."));
+                    yield return new Advice(null, null, $"{part.PartNumber}: {EngineeringNotation.Format(ohms, "ohm")} is neither an E24 nor an E96 value.");
                 }
             }
         }
@@ -365,7 +469,8 @@ public static class CheckRun
         };
 
         private BoardReport Report(
-            DeratingTable derating, IReadOnlyList<JudgedChannel> judged, IReadOnlyList<Finding> billFindings, IReadOnlyList<Finding> pinFindings)
+            DeratingTable derating, IReadOnlyList<JudgedChannel> judged, IReadOnlyList<Finding> billFindings, IReadOnlyList<Finding> pinFindings,
+            IReadOnlyList<Advice> remarks)
         {
             List<ChannelJudgement> channels = [.. judged.Select(j => ChannelAssembly.Assemble(
                 j.Channel, j.Derating.Name, j.Readings, j.MissingData, [.. billFindings, .. pinFindings],
@@ -390,7 +495,7 @@ public static class CheckRun
                 Rules = RuleBook.Judged,
                 RulesNotJudged = RuleBook.NotJudged,
                 Assumed = assumed,
-                Advice = advice,
+                Advice = remarks,
                 Cautions = Cautions.All,
             };
         }

@@ -48,6 +48,9 @@ public sealed record BoardReport
 
     /// <summary>Safety cautions.</summary>
     public required IReadOnlyList<string> Cautions { get; init; }
+
+    /// <summary>Beside the bill as it stands, where other parts were asked for; null: none were.</summary>
+    public BoardComparison? Comparison { get; init; }
 }
 
 /// <summary>One input file and its hash.</summary>
@@ -57,4 +60,8 @@ public sealed record InputFile(string File, string Sha256);
 
 /// <summary>Everything one run of <c>check</c> found: what the reports print.</summary>
 public sealed record CheckReport(
-    IReadOnlyList<BoardReport> Boards, IReadOnlyList<Complaint> Complaints, IReadOnlyList<InputFile> Inputs);
+    IReadOnlyList<BoardReport> Boards, IReadOnlyList<Complaint> Complaints, IReadOnlyList<InputFile> Inputs)
+{
+    /// <summary>What the question itself asks wrongly (a line that is not on the bill); with any of it nothing was judged.</summary>
+    public IReadOnlyList<string> UsageFaults { get; init; } = [];
+}

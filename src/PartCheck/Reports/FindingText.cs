@@ -67,9 +67,12 @@ internal static class FindingText
     /// <summary>
     /// The stress ratio with two decimals, with more where two would show a broken limit as met exactly; null: none.
     /// </summary>
-    public static string? Ratio(Finding f)
+    public static string? Ratio(Finding f) => Ratio(FindingOrder.Ratio(f));
+
+    /// <summary>A stress ratio as every report shows it; null: none.</summary>
+    public static string? Ratio(double? stressRatio)
     {
-        if (FindingOrder.Ratio(f) is not { } ratio)
+        if (stressRatio is not { } ratio)
         {
             return null;
         }

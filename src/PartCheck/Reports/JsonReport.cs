@@ -43,6 +43,13 @@ public static class JsonReport
         json.Text("board", board.Board);
         json.Text("verdict", VerdictWords.Of(board.Verdict));
         json.Text("derating", board.Derating);
+        if (board.Comparison is { } comparison)
+        {
+            json.WriteStartObject("comparison");
+            JsonComparison.Write(json, comparison);
+            json.WriteEndObject();
+        }
+
         json.List("channels", board.Channels, JsonChannel.Write);
         json.List("findings", FindingOrder.WorstFirst(board), JsonFinding.Write);
         if (board.Totals is { } totals)

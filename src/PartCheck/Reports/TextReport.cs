@@ -49,6 +49,11 @@ public static class TextReport
 
     private static void Board(StringBuilder text, BoardReport board)
     {
+        if (board.Comparison is { } comparison)
+        {
+            ComparisonText.Write(text, comparison);
+        }
+
         Columns80.Wrap(text, string.Empty, $"{board.Board}: {VerdictWords.Of(board.Verdict).ToUpperInvariant()} (derating: {board.Derating})", 2);
         if (board.DeratingNote is { } note)
         {
