@@ -211,7 +211,7 @@ public static class CheckRun
             IReadOnlyList<Finding> billFindings = BillRule.Judge(bill, parts, channels);
             IReadOnlyList<JudgedChannel> judged = JudgeChannels(channels, derating, cancel);
             IReadOnlyList<Finding> pinFindings = JudgePins(judged, derating);
-            return Report(derating, judged, billFindings, pinFindings, [.. advice, .. AlternatesAdvice(bill, channels), .. CircuitAdvice(channels)]);
+            return Report(derating, judged, billFindings, pinFindings, [.. advice, .. CircuitAdvice(channels)]);
         }
 
         private DeratingTable RunDerating()
@@ -388,7 +388,10 @@ public static class CheckRun
             {
                 LogicPin logic = pin.First().Channel.Readings[0].Logic;
                 findings.Add(PinCurrentRule.Judge(
-                    PinName(pin.First().Channel.Readings[0]), [.. pin.Select(j => (j.Channel.Name, j.Readings.Count == 0 ? double.NaN : j.Readings.Max(r => r.PinMax)))], logic, derating));
+                    PinName(pin.First().Channel.Readings[0]), [.. pin.Select(j => (j.Channel.Name, j.Readings.Count == 0 ? double.NaN : j.Readings.Max(r => r.PinMax)))], logic, derating) with
+                {
+                    Mix = [.. pin.Where(j => j.Readings.Count > 0).SelectMany(j => j.Readings.MaxBy(r => r.PinMax)!.Channel.Mix)],
+                });
             }
 
             return findings;
@@ -408,17 +411,6 @@ public static class CheckRun
             }
 
             return made;
-        }
-
-        private static IEnumerable<Advice> AlternatesAdvice(Bill bill, IReadOnlyList<Channel> channels)
-        {
-            foreach (BillLine line in bill.Lines.Where(l => l.Alternates.Count > 0))
-            {
-                if (channels.Any(c => c.References.Any(r => line.References.Contains(r, StringComparer.OrdinalIgnoreCase))))
-                {
-                    yield return new Advice(null, line.References[0], $"Alternates {string.Join(", ", line.Alternates)} of this line are not judged by this version.");
-                }
-            }
         }
 
         /// <summary>Remarks on parts and circuits that no rule judges.</summary>

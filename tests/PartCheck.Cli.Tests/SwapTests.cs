@@ -94,6 +94,57 @@ public class SwapTests
         Assert.StartsWith("CH1 power Q3 OX-WEAK: ", one.GetProperty("comparison").GetProperty("reason").GetString(), StringComparison.Ordinal);
     }
 
+    private static string WithAlternates(string pass, string control = "") => BoardFolder.Bill.Replace("Manufacturer", "Manufacturer,Alternates", StringComparison.Ordinal)
+        .Replace("Q1,TQ-31,1,,SOT-23,Tarnwood", "Q1,TQ-31,1,,SOT-23,Tarnwood," + pass, StringComparison.Ordinal)
+        .Replace("Q2,TQ-30,1,,SOT-23,Tarnwood", "Q2,TQ-30,1,,SOT-23,Tarnwood," + control, StringComparison.Ordinal);
+
+    // Each mix asked for alone gives the figures that the bill with its alternates has to bring together.
+    [Fact]
+    public async Task TheWorstMixOfAlternatesCountsAndIsNamed()
+    {
+        string control = BoardFolder.Parts.Split('\n')[2].Replace("TQ-30", "OX-2", StringComparison.Ordinal).Replace("0.56,0.63,1,", "0.60,0.67,1,", StringComparison.Ordinal);
+        string parts = BoardFolder.Parts + "\n" + Others + control + "\n";
+        using BoardFolder board = new(bill: WithAlternates("OX-WEAK; OX-1", "OX-2"), parts: parts);
+        using BoardFolder plain = new(parts: parts);
+        Run run = await board.Check("--format", "json");
+        Assert.Equal(1, run.Code);
+        JsonElement worst = Power(run);
+        JsonElement alone = Power(await plain.Check("--with", "Q1=OX-WEAK,Q2=OX-2", "--format", "json"));
+        Assert.Equal("OX-WEAK", worst.GetProperty("partNumber").GetString());
+        Assert.Equal(alone.GetProperty("stressRatio").GetDouble(), worst.GetProperty("stressRatio").GetDouble());
+        Assert.Equal(
+            ["Q1 OX-WEAK True", "Q2 OX-2 True"],
+            worst.GetProperty("mix").EnumerateArray().Select(m => $"{m.GetProperty("references")[0].GetString()} {m.GetProperty("partNumber").GetString()} {m.GetProperty("alternate").GetBoolean()}"));
+        Assert.Contains("with OX-WEAK by Tarnwood in Q1; OX-2 by Tarnwood in Q2", (await board.Check()).Flat, StringComparison.Ordinal);
+
+        // The part asked for takes the place of the line's alternates; those of the other line still count.
+        Run asked = await board.Check("--with", "Q1=OX-1", "--format", "json");
+        Assert.Equal(0, asked.Code);
+        Assert.Equal("Q2", Assert.Single(Power(asked).GetProperty("mix").EnumerateArray()).GetProperty("references")[0].GetString());
+    }
+
+    [Theory]
+    [InlineData("OX-1", 0, "CONFORMS")]
+    [InlineData("OX-1, GONE-9", 2, "bill Q1 TQ-31: missing part table row of GONE-9")]
+    [InlineData("OX-BIG", 1, "The bill's package is SOT-23, that of the alternate OX-BIG SOT-89.")]
+    [InlineData("RK-33", 1, "Alternate RK-33: Q1 (pass) is a resistor: a transistor is wanted.")]
+    public async Task AnAlternateIsJudgedLikeThePartItself(string alternates, int code, string text)
+    {
+        using BoardFolder board = new(bill: WithAlternates("\"" + alternates + "\""), parts: BoardFolder.Parts + "\n" + Others);
+        Run run = await board.Check();
+        Assert.True(run.Code == code, $"{run.Code}\n{run.Output}");
+        Assert.Contains(text, run.Flat, StringComparison.Ordinal);
+        Assert.DoesNotContain("not solved", run.Flat, StringComparison.Ordinal);
+        Assert.DoesNotContain("not judged by this version", run.Flat, StringComparison.Ordinal);
+    }
+
+    private static JsonElement Power(Run run)
+    {
+        using JsonDocument document = JsonDocument.Parse(run.Output);
+        return document.RootElement.GetProperty("boards")[0].GetProperty("findings").EnumerateArray()
+            .First(f => f.GetProperty("rule").GetString() == "power" && f.GetProperty("reference").GetString() == "Q1").Clone();
+    }
+
     [Theory]
     [InlineData("Q9=TQ-30", "\"Q9\" is neither a reference nor a part number of the bill; near it: Q1, Q2.")]
     [InlineData("Q1=TQ-3", "\"TQ-3\" is not in the part table; near it: TQ-30, TQ-31.")]

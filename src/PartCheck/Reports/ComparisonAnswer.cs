@@ -42,7 +42,7 @@ internal static class ComparisonAnswer
         IReadOnlyList<Finding> alone = [f];
         string what = f.Verdict == Verdict.NotVerified
             ? "missing " + string.Join(", ", f.Missing)
-            : string.Join("; ", new[] { FindingText.Numbers(f), f.Text?.TrimEnd('.') }.Where(t => !string.IsNullOrEmpty(t)));
+            : string.Join("; ", new[] { FindingText.Numbers(f), f.Text?.TrimEnd('.'), f.Mix.Any(m => m.Alternate) ? FindingText.Mix(f) : null }.Where(t => !string.IsNullOrEmpty(t)));
         return string.Join(' ', new[] { f.Channel, f.Rule, FindingText.Subject(alone) }.Where(t => !string.IsNullOrEmpty(t))) + ": " + what;
     }
 

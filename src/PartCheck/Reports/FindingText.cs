@@ -86,6 +86,10 @@ internal static class FindingText
         ? string.Create(CultureInfo.InvariantCulture, $"{si - Temperature.CelsiusZero:0.0} degC")
         : EngineeringNotation.Format(si, unit ?? string.Empty, digits)).Replace(' ', Columns80.Glue);
 
+    /// <summary>The worst mix of parts in words, e.g. <c>with OX-9 by Oxmoor in Q1, Q3</c>; empty: no line offers a choice.</summary>
+    public static string Mix(Finding f) => f.Mix.Count == 0 ? string.Empty : "with " + string.Join("; ", f.Mix.Select(m =>
+        $"{m.PartNumber}{(m.Manufacturer is { } maker ? " by " + maker : string.Empty)} in {string.Join(", ", m.References)}"));
+
     /// <summary>The corner in words.</summary>
     public static string Corner(Finding f)
     {

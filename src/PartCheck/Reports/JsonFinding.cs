@@ -15,6 +15,17 @@ internal static class JsonFinding
         WriteGroup(json, finding);
         json.Text("partNumber", finding.PartNumber);
         json.Text("manufacturer", finding.Manufacturer);
+        if (finding.Mix.Count > 0)
+        {
+            json.List("mix", finding.Mix, (into, line) =>
+            {
+                into.Texts("references", line.References);
+                into.Text("partNumber", line.PartNumber);
+                into.Text("manufacturer", line.Manufacturer);
+                into.WriteBoolean("alternate", line.Alternate);
+            });
+        }
+
         json.Text("state", finding.State is { } state ? StateWord(state) : null);
         json.Real("actual", finding.Actual);
         if (finding.ActualIsAtLeast)

@@ -104,6 +104,11 @@ public static class TextReport
         {
             Finding f = group[0];
             Columns80.Wrap(text, "  ", Head(group) + ": " + Joined("; ", FindingText.Numbers(f), f.Text), 4);
+            if (FindingText.Mix(f) is { Length: > 0 } mix)
+            {
+                Columns80.Wrap(text, "    ", mix, 6);
+            }
+
             if (FindingText.Corner(f) is { Length: > 0 } corner)
             {
                 Columns80.Wrap(text, "    ", corner, 6);

@@ -45,10 +45,11 @@ public static class BillRule
                     Channel = channel.Name,
                     Rule = Id,
                     Reference = fault.Reference,
-                    Verdict = Verdict.Nonconforming,
+                    Verdict = fault.Missing is null ? Verdict.Nonconforming : Verdict.NotVerified,
                     Source = Source,
                     Cell = fault.Cell,
                     Text = fault.Text,
+                    Missing = fault.Missing is { } lacking ? [lacking] : [],
                 });
             }
         }
@@ -102,6 +103,20 @@ public static class BillRule
                 wrong.Add($"the bill's value is {EngineeringNotation.Format(value.Ohms, "ohm")}, the part table's {EngineeringNotation.Format(resistor.Resistance.Value.Ohms, "ohm")}");
                 (actual, allowed, unit) = (value.Ohms, resistor.Resistance.Value.Ohms, "ohm");
             }
+        }
+
+        foreach (string alternate in line.Alternates)
+        {
+            IReadOnlyList<Part> others = parts.Find(alternate);
+            if (others.Count == 0)
+            {
+                missing.Add("part table row of " + alternate);
+            }
+
+            wrong.AddRange(others.Where(o => line.Package is { } package && o.Package is { } tabled && !PackageName.Agrees(package, tabled))
+                .Select(o => $"the bill's package is {line.Package}, that of the alternate {o.PartNumber} {o.Package}"));
+            wrong.AddRange(others.OfType<ResistorPart>().Where(o => line.Resistance is { } value && Math.Abs(value.Ohms - o.Resistance.Value.Ohms) > 1e-6 * value.Ohms)
+                .Select(o => $"the bill's value is {EngineeringNotation.Format(line.Resistance!.Value.Ohms, "ohm")}, that of the alternate {o.PartNumber} {EngineeringNotation.Format(o.Resistance.Value.Ohms, "ohm")}"));
         }
 
         return new Finding

@@ -20,7 +20,7 @@ public static class ChannelAssembly
         ArgumentNullException.ThrowIfNull(readings);
         ArgumentNullException.ThrowIfNull(boardFindings);
         List<string> gaps = [.. missing];
-        gaps.AddRange(channel.RoleFaults.Select(f => "a bill that serves the role of " + f.Reference));
+        gaps.AddRange(channel.RoleFaults.Where(f => !f.OfAlternate).Select(f => "a bill that serves the role of " + f.Reference));
         List<Finding> findings = [];
         ReadingJudgement? worst = null;
         if (readings.Count > 0)

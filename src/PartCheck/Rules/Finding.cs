@@ -30,6 +30,9 @@ public sealed record Finding
     /// <summary>Manufacturer of the row judged.</summary>
     public string? Manufacturer { get; init; }
 
+    /// <summary>The mix of parts that is the worst, for each line that offers several part numbers or manufacturers; empty: none does.</summary>
+    public IReadOnlyList<MixedLine> Mix { get; init; } = [];
+
     /// <summary>State of the worst corner; null where no state is read.</summary>
     public ChannelState? State { get; init; }
 

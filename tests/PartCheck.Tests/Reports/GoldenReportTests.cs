@@ -124,7 +124,7 @@ public class GoldenReportTests
                     Rules = ["vce", "power", "junction", "drive", "pin-current", "bill"],
                     RulesNotJudged = ["off"],
                     Assumed = [new AssumedValue("TCR", "RK-33", "200 ppm/K", ["BENCH", "SHELF"]), new AssumedValue("LEDs", "BENCH", "6", ["BENCH"])],
-                    Advice = [new Advice("BENCH", "Q1", "Alternates TQ-32 of this line are not judged by this version.")],
+                    Advice = [new Advice("BENCH", "Q1", "A remark on one part, which is never a verdict.")],
                     Cautions = Cautions.All,
                 },
             ],
