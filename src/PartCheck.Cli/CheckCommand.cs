@@ -1,5 +1,6 @@
 using System.CommandLine;
 using PartCheck.Bills;
+using PartCheck.Concessions;
 using PartCheck.Derating;
 using PartCheck.Reports;
 using PartCheck.Sheets;
@@ -18,6 +19,8 @@ internal static class CheckCommand
         Option<string?> derating = UsageError.NoOption(new Option<string?>("--derating") { Description = "Derating table (default: workshop)", HelpName = "NAME|FILE" });
         Option<string?> pins = UsageError.NoOption(new Option<string?>("--pins") { Description = "Logic pins (default: the board's, else the project's own)", HelpName = "FILE" });
         Option<string[]> with = UsageError.NoOption(new Option<string[]>("--with") { Description = "Judge the board with other parts, and compare: reference or part number of the bill, part number", HelpName = "LINE=PN,...", AllowMultipleArgumentsPerToken = false });
+        Option<string?> concessions = UsageError.NoOption(new Option<string?>("--concessions") { Description = "What was accepted in writing (default: the board's own); needs --date", HelpName = "FILE[:SHEET]" });
+        Option<string?> date = UsageError.NoOption(new Option<string?>("--date") { Description = "Day that concessions are held against", HelpName = "YYYY-MM-DD" });
         Option<string?> columns = UsageError.NoOption(new Option<string?>("--columns") { Description = "Further header spellings", HelpName = "FILE" });
         Option<string?> encoding = UsageError.NoOption(new Option<string?>("--encoding") { Description = "Text encoding of CSV files (default: found out)", HelpName = "NAME" });
         Option<string> format = new("--format") { Description = "text or json", HelpName = "FORMAT", DefaultValueFactory = _ => "text" };
@@ -26,13 +29,19 @@ internal static class CheckCommand
         Option<bool> replace = new("--replace") { Description = "Replace the --out file where it exists" };
         Command command = new("check", "Solve every channel at worst case and judge its parts")
         {
-            boards, parts, bill, channels, derating, pins, with, columns, encoding, format, file, replace,
+            boards, parts, bill, channels, derating, pins, with, concessions, date, columns, encoding, format, file, replace,
         };
         command.SetAction(async (parse, cancel) =>
         {
             if (AskedChange.Read(parse.GetValue(with) ?? [], out IReadOnlyList<AskedChange> changes) is { } noChange)
             {
                 await error.WriteLineAsync("partcheck: " + noChange).ConfigureAwait(false);
+                return ExitCodes.Usage;
+            }
+
+            if (parse.GetValue(date) is { } typed && ConcessionReader.DateOf(typed) is null)
+            {
+                await error.WriteLineAsync($"partcheck: --date needs a day of the form YYYY-MM-DD, not {UsageError.OneLine(typed)}.").ConfigureAwait(false);
                 return ExitCodes.Usage;
             }
 
@@ -45,6 +54,8 @@ internal static class CheckCommand
                 Derating = parse.GetValue(derating),
                 Pins = parse.GetValue(pins),
                 With = changes,
+                Concessions = parse.GetValue(concessions),
+                Date = parse.GetValue(date) is { } day ? ConcessionReader.DateOf(day) : null,
                 Columns = parse.GetValue(columns),
                 Encoding = parse.GetValue(encoding),
             };
@@ -107,6 +118,11 @@ internal static class CheckCommand
             return "--bill and --channels go with one board.";
         }
 
+        if (request.Concessions is not null && request.Date is null)
+        {
+            return "--concessions needs --date YYYY-MM-DD: whether one is in force never hangs on the clock.";
+        }
+
         if (request.Boards.Count > 1 && request.With.Count > 0)
         {
             return "--with goes with one board.";
@@ -124,7 +140,7 @@ internal static class CheckCommand
     private static IEnumerable<string> Inputs(CheckRequest request)
     {
         IEnumerable<string> named = request.Boards.Concat(request.Parts)
-            .Concat(new[] { request.Bill, request.Channels, request.Derating, request.Pins, request.Columns }.OfType<string>())
+            .Concat(new[] { request.Bill, request.Channels, request.Derating, request.Pins, request.Columns, request.Concessions }.OfType<string>())
             .Select(f => BoardSource.Split(f).Path);
         return named.SelectMany(f => Directory.Exists(f) ? Directory.EnumerateFiles(f, "*.csv") : [f]);
     }

@@ -29,7 +29,7 @@ internal static class ExitCodes
 
         return FindingSeverity.WorstOf(report.Boards.Select(b => b.Verdict)) switch
         {
-            Verdict.Conforms => 0,
+            Verdict.Conforms or Verdict.Concession => 0,
             Verdict.Nonconforming => 1,
             _ => 2,
         };

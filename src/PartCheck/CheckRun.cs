@@ -2,6 +2,7 @@ using System.Globalization;
 using System.Security.Cryptography;
 using PartCheck.Bills;
 using PartCheck.Channels;
+using PartCheck.Concessions;
 using PartCheck.Derating;
 using PartCheck.OperatingPoints;
 using PartCheck.Parts;
@@ -35,6 +36,12 @@ public sealed record CheckRequest
 
     /// <summary>Other parts to judge the board with, beside the bill as it stands; empty: the bill as it stands.</summary>
     public IReadOnlyList<AskedChange> With { get; init; } = [];
+
+    /// <summary>A concessions table, FILE or FILE:SHEET; null: the board's.</summary>
+    public string? Concessions { get; init; }
+
+    /// <summary>The day that concessions are held against; null: none is given, and a board that has concessions cannot be judged.</summary>
+    public DateOnly? Date { get; init; }
 
     /// <summary>Further header spellings; null: none.</summary>
     public string? Columns { get; init; }
@@ -71,12 +78,14 @@ public static class CheckRun
             }
         }
 
+        IReadOnlyList<Concession>? accepted = request.Concessions is { } table && source.File(table, "Concessions") is { } rows
+            ? ConcessionReader.Read(rows, ofBoard: false, spellings, complaints) : null;
         List<BoardReport> boards = [];
         List<string> usage = [];
         foreach (string board in request.Boards)
         {
             cancel.ThrowIfCancellationRequested();
-            boards.Add(new BoardCheck(request, board, source, spellings, given, complaints, usage).Run(cancel));
+            boards.Add(new BoardCheck(request, board, source, spellings, given, accepted, complaints, usage).Run(cancel));
         }
 
         return new CheckReport(boards, complaints.Items, [.. source.Files.Select(Hashed)]) { UsageFaults = usage };
@@ -92,14 +101,15 @@ public static class CheckRun
 
     /// <summary>One board of a run.</summary>
     private sealed class BoardCheck(
-        CheckRequest request, string board, BoardSource source, ColumnSpellings spellings, List<Part> given, ComplaintList complaints,
-        List<string> usage)
+        CheckRequest request, string board, BoardSource source, ColumnSpellings spellings, List<Part> given,
+        IReadOnlyList<Concession>? accepted, ComplaintList complaints, List<string> usage)
     {
         private readonly Dictionary<Transistor, TransistorVariants> variants = new(ReferenceEqualityComparer.Instance);
         private readonly List<Advice> advice = [];
         private readonly Dictionary<string, ReadingJudgement> judgements = new(StringComparer.Ordinal);
         private readonly Dictionary<object, int> identities = new(ReferenceEqualityComparer.Instance);
         private ComplaintList complaints = complaints;
+        private IReadOnlyList<Concession>? concessions = accepted;
         private IReadOnlyList<DeratingTable> ownDerating = [];
 
         public BoardReport Run(CancellationToken cancel)
@@ -123,9 +133,15 @@ public static class CheckRun
                 derating = request.Derating is null && ownDerating.Count == 1 ? ownDerating[0] : RunDerating();
             }
 
-            if (exists && source.Table(board, "Concessions", required: false) is not null)
+            if (request.Concessions is null && exists && source.Table(board, "Concessions", required: false) is { } concessionSheet)
             {
-                advice.Add(new Advice(null, null, "The board has a concessions table; this version does not apply concessions."));
+                if (request.Date is null)
+                {
+                    usage.Add($"{BoardSource.Shown(board)} has concessions: --date YYYY-MM-DD says for which day.");
+                    return Unread(derating);
+                }
+
+                concessions = ConcessionReader.Read(concessionSheet, ofBoard: true, spellings, complaints);
             }
 
             PartTable parts = ReadParts(exists);
@@ -138,7 +154,7 @@ public static class CheckRun
             }
 
             return request.With.Count == 0
-                ? Judged(bill, rows, parts, pins, derating, cancel)
+                ? Judged(bill, rows, parts, pins, derating, [], cancel)
                 : WithChanges(bill, rows, parts, pins, derating, cancel);
         }
 
@@ -155,9 +171,9 @@ public static class CheckRun
             // What only the replaced parts have wrong is no complaint about the board that was asked for.
             ComplaintList asked = complaints;
             complaints = new ComplaintList();
-            BoardReport before = Judged(bill, rows, parts, pins, derating, cancel);
+            BoardReport before = Judged(bill, rows, parts, pins, derating, [], cancel);
             complaints = asked;
-            BoardReport after = Judged(BillChanges.Apply(bill, changes), rows, parts, pins, derating, cancel);
+            BoardReport after = Judged(BillChanges.Apply(bill, changes), rows, parts, pins, derating, changes, cancel);
             double? Ohms(string? part) => part is not null && parts.Find(part) is [ResistorPart resistor, ..] ? resistor.Resistance.Value.Ohms : null;
             return after with
             {
@@ -205,13 +221,49 @@ public static class CheckRun
             RoleNames.Columns.Any(c => row.Of(c.Role).Any(r => references.Contains(r, StringComparer.OrdinalIgnoreCase)));
 
         private BoardReport Judged(
-            Bill bill, IReadOnlyList<ChannelRow> rows, PartTable parts, IReadOnlyList<LogicPin> pins, DeratingTable derating, CancellationToken cancel)
+            Bill bill, IReadOnlyList<ChannelRow> rows, PartTable parts, IReadOnlyList<LogicPin> pins, DeratingTable derating,
+            IReadOnlyList<LineChange> changes, CancellationToken cancel)
         {
             IReadOnlyList<Channel> channels = ChannelBinder.Bind(rows, bill, parts, pins, complaints);
             IReadOnlyList<Finding> billFindings = BillRule.Judge(bill, parts, channels);
             IReadOnlyList<JudgedChannel> judged = JudgeChannels(channels, derating, cancel);
             IReadOnlyList<Finding> pinFindings = JudgePins(judged, derating);
-            return Report(derating, judged, billFindings, pinFindings, [.. advice, .. CircuitAdvice(channels)]);
+            ConcessionBook book = BookOf(rows, changes);
+            BoardReport report = Report(
+                derating, judged, [.. billFindings.Select(book.Apply)], [.. pinFindings.Select(book.Apply)], book.Apply, [.. advice, .. CircuitAdvice(channels)]);
+            return report with
+            {
+                ConcessionsAsOf = concessions is null ? null : request.Date,
+                Advice = [.. report.Advice, .. ConcessionAdvice(book)],
+            };
+        }
+
+        /// <summary>The board's concessions; those without a part number do not hold for parts put in another's place.</summary>
+        private ConcessionBook BookOf(IReadOnlyList<ChannelRow> rows, IReadOnlyList<LineChange> changes) => new(
+            ConcessionBook.Of(concessions ?? [], Names()), request.Date ?? default,
+            changes.SelectMany(c => c.References).ToHashSet(StringComparer.OrdinalIgnoreCase),
+            rows.Where(r => changes.Any(c => Serves(r, c.References))).Select(r => r.Name).ToHashSet(StringComparer.Ordinal));
+
+        private IEnumerable<Advice> ConcessionAdvice(ConcessionBook book)
+        {
+            foreach (string remark in book.Remarks)
+            {
+                yield return new Advice(null, null, remark);
+            }
+
+            IReadOnlyList<Concession> mine = ConcessionBook.Of(concessions ?? [], Names());
+            List<string> others = [.. (concessions ?? []).Except(mine).Select(c => c.Board!).Distinct(StringComparer.OrdinalIgnoreCase)];
+            if (others.Count > 0)
+            {
+                yield return new Advice(null, null, $"Concessions for other boards are left alone: {string.Join(", ", others)}.");
+            }
+        }
+
+        /// <summary>Names that a concession may give the board: as shown, its own name, its name without extension.</summary>
+        private string[] Names()
+        {
+            string name = Path.GetFileName(Path.TrimEndingDirectorySeparator(Path.GetFullPath(board)));
+            return [BoardSource.Shown(board), name, Path.GetFileNameWithoutExtension(name)];
         }
 
         private DeratingTable RunDerating()
@@ -462,10 +514,10 @@ public static class CheckRun
 
         private BoardReport Report(
             DeratingTable derating, IReadOnlyList<JudgedChannel> judged, IReadOnlyList<Finding> billFindings, IReadOnlyList<Finding> pinFindings,
-            IReadOnlyList<Advice> remarks)
+            Func<ReadingJudgement, ReadingJudgement> conceded, IReadOnlyList<Advice> remarks)
         {
             List<ChannelJudgement> channels = [.. judged.Select(j => ChannelAssembly.Assemble(
-                j.Channel, j.Derating.Name, j.Readings, j.MissingData, [.. billFindings, .. pinFindings],
+                j.Channel, j.Derating.Name, [.. j.Readings.Select(conceded)], j.MissingData, [.. billFindings, .. pinFindings],
                 [.. j.Channel.Assumed, .. j.Models.SelectMany(m => m.Assumed), .. j.Readings.SelectMany(r => r.Assumed)]))];
             List<string> names = [.. channels.Select(c => c.Channel)];
             IReadOnlyList<Finding> all = FindingOrder.WorstFirst(

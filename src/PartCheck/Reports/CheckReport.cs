@@ -25,6 +25,9 @@ public sealed record BoardReport
     /// <summary>What every output that uses the table must say; null: nothing.</summary>
     public string? DeratingNote { get; init; }
 
+    /// <summary>The day that concessions were held against; null: the board has none.</summary>
+    public DateOnly? ConcessionsAsOf { get; init; }
+
     /// <summary>Channels in the sheet's order.</summary>
     public required IReadOnlyList<ChannelJudgement> Channels { get; init; }
 

@@ -43,6 +43,11 @@ public static class JsonReport
         json.Text("board", board.Board);
         json.Text("verdict", VerdictWords.Of(board.Verdict));
         json.Text("derating", board.Derating);
+        if (board.ConcessionsAsOf is { } day)
+        {
+            json.Day("concessionsAsOf", day);
+        }
+
         if (board.Comparison is { } comparison)
         {
             json.WriteStartObject("comparison");

@@ -54,7 +54,7 @@ public static class TextReport
             ComparisonText.Write(text, comparison);
         }
 
-        Columns80.Wrap(text, string.Empty, $"{board.Board}: {VerdictWords.Of(board.Verdict).ToUpperInvariant()} (derating: {board.Derating})", 2);
+        Columns80.Wrap(text, string.Empty, $"{board.Board}: {VerdictWords.Of(board.Verdict).ToUpperInvariant()} (derating: {board.Derating}{AsOf(board)})", 2);
         if (board.DeratingNote is { } note)
         {
             Columns80.Wrap(text, "  ", note, 2);
@@ -69,6 +69,7 @@ public static class TextReport
 
         Nonconforming(text, board.Findings.Where(f => f.Verdict == Verdict.Nonconforming));
         NotVerified(text, board.Findings.Where(f => f.Verdict == Verdict.NotVerified));
+        UnderConcession(text, board.Findings.Where(f => f.Verdict == Verdict.Concession));
         Channels(text, board);
         Conforming(text, board);
         Bench(text, board);
@@ -141,6 +142,31 @@ public static class TextReport
 
         text.Append('\n');
     }
+
+    private static void UnderConcession(StringBuilder text, IEnumerable<Finding> findings)
+    {
+        IReadOnlyList<IReadOnlyList<Finding>> groups = FindingText.Grouped(findings);
+        if (groups.Count == 0)
+        {
+            return;
+        }
+
+        text.Append("Concession\n");
+        foreach (IReadOnlyList<Finding> group in groups)
+        {
+            Finding f = group[0];
+            GrantedConcession granted = f.Concession!;
+            Columns80.Wrap(text, "  ", Head(group) + ": " + Joined("; ", FindingText.Numbers(f), f.Text), 4);
+            string holds = granted.Effectivity is { } effectivity ? "for " + effectivity : "serials or lots not named";
+            Columns80.Wrap(text, "    ", $"accepted by {granted.AcceptedBy}, {Day(granted.Date)} to {Day(granted.Expires)}, {holds}: {granted.Reason} ({granted.Cell})", 6);
+        }
+
+        text.Append('\n');
+    }
+
+    private static string AsOf(BoardReport board) => board.ConcessionsAsOf is { } day ? "; concessions as of " + Day(day) : string.Empty;
+
+    private static string Day(DateOnly day) => day.ToString("yyyy-MM-dd", CultureInfo.InvariantCulture);
 
     private static string Head(IReadOnlyList<Finding> group) => Joined(" ", group[0].Channel, group[0].Rule, FindingText.Subject(group));
 

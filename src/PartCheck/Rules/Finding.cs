@@ -69,6 +69,9 @@ public sealed record Finding
     /// <summary>One sentence, where numbers do not say it.</summary>
     public string? Text { get; init; }
 
+    /// <summary>What it was accepted under, where the verdict is concession.</summary>
+    public GrantedConcession? Concession { get; init; }
+
     /// <summary>What is missing, when not verified.</summary>
     public IReadOnlyList<string> Missing { get; init; } = [];
 }
