@@ -19,6 +19,7 @@ internal static class CheckCommand
         Option<string?> derating = UsageError.NoOption(new Option<string?>("--derating") { Description = "Derating table (default: workshop)", HelpName = "NAME|FILE" });
         Option<string?> pins = UsageError.NoOption(new Option<string?>("--pins") { Description = "Logic pins (default: the board's, else the project's own)", HelpName = "FILE" });
         Option<string[]> with = UsageError.NoOption(new Option<string[]>("--with") { Description = "Judge the board with other parts, and compare: reference or part number of the bill, part number", HelpName = "LINE=PN,...", AllowMultipleArgumentsPerToken = false });
+        Option<string?> assembly = UsageError.NoOption(new Option<string?>("--assembly") { Description = "Judge what is fitted in one assembly: the bill's column Populated NAME", HelpName = "NAME" });
         Option<string?> concessions = UsageError.NoOption(new Option<string?>("--concessions") { Description = "What was accepted in writing (default: the board's own); needs --date", HelpName = "FILE[:SHEET]" });
         Option<string?> date = UsageError.NoOption(new Option<string?>("--date") { Description = "Day that concessions are held against", HelpName = "YYYY-MM-DD" });
         Option<string?> columns = UsageError.NoOption(new Option<string?>("--columns") { Description = "Further header spellings", HelpName = "FILE" });
@@ -29,7 +30,7 @@ internal static class CheckCommand
         Option<bool> replace = new("--replace") { Description = "Replace the --out file where it exists" };
         Command command = new("check", "Solve every channel at worst case and judge its parts")
         {
-            boards, parts, bill, channels, derating, pins, with, concessions, date, columns, encoding, format, file, replace,
+            boards, parts, bill, channels, derating, pins, with, assembly, concessions, date, columns, encoding, format, file, replace,
         };
         command.SetAction(async (parse, cancel) =>
         {
@@ -54,6 +55,7 @@ internal static class CheckCommand
                 Derating = parse.GetValue(derating),
                 Pins = parse.GetValue(pins),
                 With = changes,
+                Assembly = parse.GetValue(assembly),
                 Concessions = parse.GetValue(concessions),
                 Date = parse.GetValue(date) is { } day ? ConcessionReader.DateOf(day) : null,
                 Columns = parse.GetValue(columns),

@@ -37,6 +37,9 @@ public sealed record CheckRequest
     /// <summary>Other parts to judge the board with, beside the bill as it stands; empty: the bill as it stands.</summary>
     public IReadOnlyList<AskedChange> With { get; init; } = [];
 
+    /// <summary>The assembly to judge, as a column <c>Populated NAME</c> of the bill names it; null: the board as its bill stands.</summary>
+    public string? Assembly { get; init; }
+
     /// <summary>A concessions table, FILE or FILE:SHEET; null: the board's.</summary>
     public string? Concessions { get; init; }
 
@@ -146,16 +149,38 @@ public static class CheckRun
 
             PartTable parts = ReadParts(exists);
             IReadOnlyList<LogicPin> pins = ReadPins(exists);
-            Bill? bill = billSheet is null ? null : BillReader.Read(billSheet, spellings, complaints);
+            Bill? bill = billSheet is null ? null : BillReader.Read(billSheet, spellings, complaints, request.Assembly);
             IReadOnlyList<ChannelRow> rows = channelSheet is null ? [] : ChannelReader.Read(channelSheet, bill, pins, spellings, complaints);
             if (bill is null || rows.Count == 0)
             {
                 return Unread(derating);
             }
 
-            return request.With.Count == 0
-                ? Judged(bill, rows, parts, pins, derating, [], cancel)
-                : WithChanges(bill, rows, parts, pins, derating, cancel);
+            if (request.Assembly is { } wanted && bill.Assembly is null)
+            {
+                string has = bill.Assemblies.Count > 0 ? "it has " + string.Join(", ", bill.Assemblies) : $"no column such as \"Populated {wanted}\" names one";
+                usage.Add($"the bill of {BoardSource.Shown(board)} has no assembly \"{wanted}\": {has}.");
+                return Unread(derating);
+            }
+
+            if (request.Assembly is null && bill.Assemblies.Count > 0)
+            {
+                advice.Add(new Advice(null, null, $"The bill names assemblies: {string.Join(", ", bill.Assemblies)}. Their columns are left alone; --assembly judges one."));
+            }
+
+            List<ChannelRow> fitted = [.. rows.Where(r => bill.Assembly is null || !LeftOut(r, bill))];
+            BoardReport report = request.With.Count == 0
+                ? Judged(bill, fitted, parts, pins, derating, [], cancel)
+                : WithChanges(bill, fitted, parts, pins, derating, cancel);
+            return report with { Assembly = bill.Assembly, ChannelsNotFitted = [.. rows.Except(fitted).Select(r => r.Name)] };
+        }
+
+        /// <summary>True where no reference of a channel is fitted: the channel is not there.</summary>
+        private static bool LeftOut(ChannelRow row, Bill bill)
+        {
+            List<string> references = [.. RoleNames.Columns.SelectMany(c => row.Of(c.Role)).Where(r => r != "-")];
+            return references.Count > 0 && references.TrueForAll(reference =>
+                bill.Lines.FirstOrDefault(l => l.References.Contains(reference, StringComparer.OrdinalIgnoreCase)) is { Fitted: false, HasComplaints: false });
         }
 
         /// <summary>The board with the parts asked for, compared with the bill as it stands.</summary>

@@ -28,6 +28,12 @@ public sealed record BoardReport
     /// <summary>The day that concessions were held against; null: the board has none.</summary>
     public DateOnly? ConcessionsAsOf { get; init; }
 
+    /// <summary>The assembly judged; null: the board as its bill stands.</summary>
+    public string? Assembly { get; init; }
+
+    /// <summary>Channels that are not there in the assembly, since none of their parts is fitted: not judged.</summary>
+    public IReadOnlyList<string> ChannelsNotFitted { get; init; } = [];
+
     /// <summary>Channels in the sheet's order.</summary>
     public required IReadOnlyList<ChannelJudgement> Channels { get; init; }
 

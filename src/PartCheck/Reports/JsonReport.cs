@@ -43,6 +43,12 @@ public static class JsonReport
         json.Text("board", board.Board);
         json.Text("verdict", VerdictWords.Of(board.Verdict));
         json.Text("derating", board.Derating);
+        if (board.Assembly is { } assembly)
+        {
+            json.Text("assembly", assembly);
+            json.Texts("channelsNotFitted", board.ChannelsNotFitted);
+        }
+
         if (board.ConcessionsAsOf is { } day)
         {
             json.Day("concessionsAsOf", day);

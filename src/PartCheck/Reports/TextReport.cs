@@ -54,16 +54,21 @@ public static class TextReport
             ComparisonText.Write(text, comparison);
         }
 
-        Columns80.Wrap(text, string.Empty, $"{board.Board}: {VerdictWords.Of(board.Verdict).ToUpperInvariant()} (derating: {board.Derating}{AsOf(board)})", 2);
+        Columns80.Wrap(text, string.Empty, $"{board.Board}: {VerdictWords.Of(board.Verdict).ToUpperInvariant()} (derating: {board.Derating}{(board.Assembly is { } a ? "; assembly: " + a : string.Empty)}{AsOf(board)})", 2);
         if (board.DeratingNote is { } note)
         {
             Columns80.Wrap(text, "  ", note, 2);
         }
 
+        if (board.ChannelsNotFitted.Count > 0)
+        {
+            Columns80.Wrap(text, "  ", $"Not fitted in this assembly, not judged: {string.Join(", ", board.ChannelsNotFitted)}", 4);
+        }
+
         text.Append('\n');
         if (board.Channels.Count == 0)
         {
-            text.Append("  Nothing could be judged: see the complaints.\n\n");
+            text.Append(board.ChannelsNotFitted.Count > 0 ? "  No channel is fitted in this assembly.\n\n" : "  Nothing could be judged: see the complaints.\n\n");
             return;
         }
 
