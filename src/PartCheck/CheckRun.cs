@@ -57,7 +57,7 @@ public sealed record CheckRequest
 }
 
 /// <summary>The run that knows every room: inputs at the left, reports at the right.</summary>
-public static class CheckRun
+public static partial class CheckRun
 {
     /// <summary>The derating table of a run that names none.</summary>
     public const string DefaultDerating = "workshop";
@@ -103,7 +103,7 @@ public static class CheckRun
     }
 
     /// <summary>One board of a run.</summary>
-    private sealed class BoardCheck(
+    private sealed partial class BoardCheck(
         CheckRequest request, string board, BoardSource source, ColumnSpellings spellings, List<Part> given,
         IReadOnlyList<Concession>? accepted, ComplaintList complaints, List<string> usage)
     {
@@ -175,76 +175,6 @@ public static class CheckRun
             return report with { Assembly = bill.Assembly, ChannelsNotFitted = [.. rows.Except(fitted).Select(r => r.Name)] };
         }
 
-        /// <summary>True where no reference of a channel is fitted: the channel is not there.</summary>
-        private static bool LeftOut(ChannelRow row, Bill bill)
-        {
-            List<string> references = [.. RoleNames.Columns.SelectMany(c => row.Of(c.Role)).Where(r => r != "-")];
-            return references.Count > 0 && references.TrueForAll(reference =>
-                bill.Lines.FirstOrDefault(l => l.References.Contains(reference, StringComparer.OrdinalIgnoreCase)) is { Fitted: false, HasComplaints: false });
-        }
-
-        /// <summary>The board with the parts asked for, compared with the bill as it stands.</summary>
-        private BoardReport WithChanges(
-            Bill bill, IReadOnlyList<ChannelRow> rows, PartTable parts, IReadOnlyList<LogicPin> pins, DeratingTable derating, CancellationToken cancel)
-        {
-            List<LineChange> changes = ReadChanges(bill, rows, parts);
-            if (usage.Count > 0)
-            {
-                return Unread(derating);
-            }
-
-            // What only the replaced parts have wrong is no complaint about the board that was asked for.
-            ComplaintList asked = complaints;
-            complaints = new ComplaintList();
-            BoardReport before = Judged(bill, rows, parts, pins, derating, [], cancel);
-            complaints = asked;
-            BoardReport after = Judged(BillChanges.Apply(bill, changes), rows, parts, pins, derating, changes, cancel);
-            double? Ohms(string? part) => part is not null && parts.Find(part) is [ResistorPart resistor, ..] ? resistor.Resistance.Value.Ohms : null;
-            return after with
-            {
-                Comparison = BoardComparison.Of(
-                    before, after,
-                    [.. changes.Select(c => new PartChange(c.References, c.Line.PartNumber, c.PartNumber, c.Manufacturer, Ohms(c.Line.PartNumber), Ohms(c.PartNumber)))],
-                    [.. rows.Where(r => changes.Any(c => Serves(r, c.References))).Select(r => r.Name)]),
-            };
-        }
-
-        private List<LineChange> ReadChanges(Bill bill, IReadOnlyList<ChannelRow> rows, PartTable parts)
-        {
-            List<LineChange> changes = [];
-            HashSet<string> changed = new(StringComparer.OrdinalIgnoreCase);
-            foreach (AskedChange asked in request.With)
-            {
-                if (BillChanges.Find(bill, asked.Line, out IReadOnlyList<(BillLine Line, IReadOnlyList<string> References)> found) is { } wrong)
-                {
-                    usage.Add(wrong);
-                }
-                else if (!rows.Any(r => found.Any(f => Serves(r, f.References))))
-                {
-                    usage.Add($"\"{asked.Line}\" serves no channel: nothing here judges it.");
-                }
-
-                if (parts.Named(asked.PartNumber) is not { } part)
-                {
-                    string unread = complaints.Items.Count == 0 ? string.Empty
-                        : "; there are complaints about the inputs, which the run without --with lists";
-                    usage.Add($"\"{asked.PartNumber}\" is not in the part table{NearMisses.Phrase(asked.PartNumber, parts.Parts.Select(p => p.PartNumber))}{unread}.");
-                    continue;
-                }
-
-                foreach ((BillLine line, IReadOnlyList<string> references) in found)
-                {
-                    usage.AddRange(references.Where(r => !changed.Add(r)).Select(r => $"{r} is changed twice."));
-                    changes.Add(new LineChange(line, references, part.PartNumber, part.Manufacturer));
-                }
-            }
-
-            return changes;
-        }
-
-        private static bool Serves(ChannelRow row, IReadOnlyList<string> references) =>
-            RoleNames.Columns.Any(c => row.Of(c.Role).Any(r => references.Contains(r, StringComparer.OrdinalIgnoreCase)));
-
         private BoardReport Judged(
             Bill bill, IReadOnlyList<ChannelRow> rows, PartTable parts, IReadOnlyList<LogicPin> pins, DeratingTable derating,
             IReadOnlyList<LineChange> changes, CancellationToken cancel)
@@ -261,34 +191,6 @@ public static class CheckRun
                 ConcessionsAsOf = concessions is null ? null : request.Date,
                 Advice = [.. report.Advice, .. ConcessionAdvice(book)],
             };
-        }
-
-        /// <summary>The board's concessions; those without a part number do not hold for parts put in another's place.</summary>
-        private ConcessionBook BookOf(IReadOnlyList<ChannelRow> rows, IReadOnlyList<LineChange> changes) => new(
-            ConcessionBook.Of(concessions ?? [], Names()), request.Date ?? default,
-            changes.SelectMany(c => c.References).ToHashSet(StringComparer.OrdinalIgnoreCase),
-            rows.Where(r => changes.Any(c => Serves(r, c.References))).Select(r => r.Name).ToHashSet(StringComparer.Ordinal));
-
-        private IEnumerable<Advice> ConcessionAdvice(ConcessionBook book)
-        {
-            foreach (string remark in book.Remarks)
-            {
-                yield return new Advice(null, null, remark);
-            }
-
-            IReadOnlyList<Concession> mine = ConcessionBook.Of(concessions ?? [], Names());
-            List<string> others = [.. (concessions ?? []).Except(mine).Select(c => c.Board!).Distinct(StringComparer.OrdinalIgnoreCase)];
-            if (others.Count > 0)
-            {
-                yield return new Advice(null, null, $"Concessions for other boards are left alone: {string.Join(", ", others)}.");
-            }
-        }
-
-        /// <summary>Names that a concession may give the board: as shown, its own name, its name without extension.</summary>
-        private string[] Names()
-        {
-            string name = Path.GetFileName(Path.TrimEndingDirectorySeparator(Path.GetFullPath(board)));
-            return [BoardSource.Shown(board), name, Path.GetFileNameWithoutExtension(name)];
         }
 
         private DeratingTable RunDerating()

@@ -54,7 +54,7 @@ public static class BillChanges
         foreach ((BillLine line, IReadOnlyList<string> references) in found)
         {
             // Elements of one package are one component: no part of it can be replaced alone.
-            if (references.Select(Package).FirstOrDefault(p => line.References.Any(r => Same(Package(r), p) && !references.Contains(r))) is { } split)
+            if (references.Select(ReferenceList.PackageOf).FirstOrDefault(p => line.References.Any(r => Same(ReferenceList.PackageOf(r), p) && !references.Contains(r))) is { } split)
             {
                 found = [];
                 return $"\"{name}\" is one element of {split}: a package is replaced as a whole.";
@@ -84,10 +84,10 @@ public static class BillChanges
             }
 
             // What the quantity was wrong by stays where it was: with the rest of the line, else with its first new part.
-            double? excess = line.Quantity - Placed(line.References);
+            double? excess = line.Quantity - ReferenceList.Components(line.References);
             if (kept.Count > 0)
             {
-                lines.Add(line with { References = kept, Quantity = Placed(kept) + excess });
+                lines.Add(line with { References = kept, Quantity = ReferenceList.Components(kept) + excess });
                 excess = excess is null ? null : 0;
             }
 
@@ -98,7 +98,7 @@ public static class BillChanges
                     References = change.References,
                     PartNumber = change.PartNumber,
                     Manufacturer = change.Manufacturer,
-                    Quantity = Placed(change.References) + excess,
+                    Quantity = ReferenceList.Components(change.References) + excess,
                     Value = null,
                     Resistance = null,
                     Description = null,
@@ -116,11 +116,7 @@ public static class BillChanges
             .Select(l => (Line: l, References: (IReadOnlyList<string>)[.. l.References.Where(r => names.Any(n => Meant(r, n)))]))
             .Where(f => f.References.Count > 0)];
 
-    private static bool Meant(string reference, string name) => Same(reference, name) || Same(Package(reference), name);
-
-    private static int Placed(IEnumerable<string> references) => references.Select(Package).Distinct(StringComparer.OrdinalIgnoreCase).Count();
-
-    private static string Package(string reference) => reference.IndexOf('.', StringComparison.Ordinal) is > 0 and int dot ? reference[..dot] : reference;
+    private static bool Meant(string reference, string name) => Same(reference, name) || Same(ReferenceList.PackageOf(reference), name);
 
     private static bool Same(string? a, string? b) => string.Equals(a, b, StringComparison.OrdinalIgnoreCase);
 }

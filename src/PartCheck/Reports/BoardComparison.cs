@@ -56,7 +56,7 @@ public sealed record BoardComparison
     /// <summary>Verdict of the board with the change.</summary>
     public required Verdict After { get; init; }
 
-    /// <summary>The parts changed, in bill order.</summary>
+    /// <summary>The parts changed, in the order asked.</summary>
     public required IReadOnlyList<PartChange> Changes { get; init; }
 
     /// <summary>Channels that differ, in the sheet's order.</summary>

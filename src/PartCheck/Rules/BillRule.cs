@@ -69,7 +69,7 @@ public static class BillRule
             missing.Add("a bill line without complaints");
         }
 
-        int placed = PlacedComponents(line);
+        int placed = ReferenceList.Components(line.References);
         if (line.Quantity is { } quantity && quantity != placed)
         {
             wrong.Add(string.Create(CultureInfo.InvariantCulture, $"the quantity is {quantity}, the references are {placed}"));
@@ -93,15 +93,10 @@ public static class BillRule
 
         foreach (Part row in rows)
         {
-            if (line.Package is { } package && row.Package is { } tabled && !PackageName.Agrees(package, tabled))
+            wrong.AddRange(Disagreements(line, row, "the part table's"));
+            if (row is ResistorPart resistor && Differs(line, resistor))
             {
-                wrong.Add($"the bill's package is {package}, the part table's {tabled}");
-            }
-
-            if (row is ResistorPart resistor && line.Resistance is { } value && Math.Abs(value.Ohms - resistor.Resistance.Value.Ohms) > 1e-6 * value.Ohms)
-            {
-                wrong.Add($"the bill's value is {EngineeringNotation.Format(value.Ohms, "ohm")}, the part table's {EngineeringNotation.Format(resistor.Resistance.Value.Ohms, "ohm")}");
-                (actual, allowed, unit) = (value.Ohms, resistor.Resistance.Value.Ohms, "ohm");
+                (actual, allowed, unit) = (line.Resistance!.Value.Ohms, resistor.Resistance.Value.Ohms, "ohm");
             }
         }
 
@@ -113,10 +108,7 @@ public static class BillRule
                 missing.Add("part table row of " + alternate);
             }
 
-            wrong.AddRange(others.Where(o => line.Package is { } package && o.Package is { } tabled && !PackageName.Agrees(package, tabled))
-                .Select(o => $"the bill's package is {line.Package}, that of the alternate {o.PartNumber} {o.Package}"));
-            wrong.AddRange(others.OfType<ResistorPart>().Where(o => line.Resistance is { } value && Math.Abs(value.Ohms - o.Resistance.Value.Ohms) > 1e-6 * value.Ohms)
-                .Select(o => $"the bill's value is {EngineeringNotation.Format(line.Resistance!.Value.Ohms, "ohm")}, that of the alternate {o.PartNumber} {EngineeringNotation.Format(o.Resistance.Value.Ohms, "ohm")}"));
+            wrong.AddRange(others.SelectMany(other => Disagreements(line, other, $"that of the alternate {other.PartNumber}")));
         }
 
         return new Finding
@@ -137,11 +129,22 @@ public static class BillRule
         };
     }
 
-    /// <summary>Components to place: elements of one package (<c>Q1.1, Q1.2</c>) are one.</summary>
-    private static int PlacedComponents(BillLine line) => line.References
-        .Select(r => r.IndexOf('.', StringComparison.Ordinal) is > 0 and int dot ? r[..dot] : r)
-        .Distinct(StringComparer.OrdinalIgnoreCase)
-        .Count();
+    /// <summary>Where a line and a part row disagree in package or resistance.</summary>
+    private static IEnumerable<string> Disagreements(BillLine line, Part row, string whose)
+    {
+        if (line.Package is { } package && row.Package is { } tabled && !PackageName.Agrees(package, tabled))
+        {
+            yield return $"the bill's package is {package}, {whose} {tabled}";
+        }
+
+        if (row is ResistorPart resistor && Differs(line, resistor))
+        {
+            yield return $"the bill's value is {EngineeringNotation.Format(line.Resistance!.Value.Ohms, "ohm")}, {whose} {EngineeringNotation.Format(resistor.Resistance.Value.Ohms, "ohm")}";
+        }
+    }
+
+    private static bool Differs(BillLine line, ResistorPart resistor) =>
+        line.Resistance is { } value && Math.Abs(value.Ohms - resistor.Resistance.Value.Ohms) > 1e-6 * value.Ohms;
 
     private static string Sentence(string text) => char.ToUpperInvariant(text[0]) + text[1..] + ".";
 }
