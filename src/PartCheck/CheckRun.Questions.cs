@@ -88,12 +88,12 @@ public static partial class CheckRun
         }
 
         private static bool Serves(ChannelRow row, IReadOnlyList<string> references) =>
-            RoleNames.Columns.Any(c => row.Of(c.Role).Any(r => references.Contains(r, StringComparer.OrdinalIgnoreCase)));
+            RoleNames.Columns.Any(c => row.Placed(c.Role).Any(r => references.Contains(r, StringComparer.OrdinalIgnoreCase)));
 
         /// <summary>True where no reference of a channel is fitted: the channel is not there.</summary>
         private static bool LeftOut(ChannelRow row, Bill bill)
         {
-            List<string> references = [.. RoleNames.Columns.SelectMany(c => row.Of(c.Role)).Where(r => r != "-")];
+            List<string> references = [.. RoleNames.Columns.SelectMany(c => row.Placed(c.Role))];
             return references.Count > 0 && references.TrueForAll(reference =>
                 bill.Lines.FirstOrDefault(l => l.References.Contains(reference, StringComparer.OrdinalIgnoreCase)) is { Fitted: false, HasComplaints: false });
         }

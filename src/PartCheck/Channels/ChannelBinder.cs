@@ -29,7 +29,7 @@ public static class ChannelBinder
         // A row with complaints is not judged and proves nothing about the others.
         ILookup<string, ChannelRow> users = rows
             .Where(row => row.Conditions is not null)
-            .SelectMany(row => RoleNames.Columns.SelectMany(c => row.Of(c.Role)).Where(r => r != "-").Distinct(StringComparer.OrdinalIgnoreCase).Select(reference => (reference, row)))
+            .SelectMany(row => RoleNames.Columns.SelectMany(c => row.Placed(c.Role)).Distinct(StringComparer.OrdinalIgnoreCase).Select(reference => (reference, row)))
             .ToLookup(use => use.reference, use => use.row, StringComparer.OrdinalIgnoreCase);
         return [.. rows.Select(row => BindOne(row, byReference, users, parts, pins, complaints))];
     }
@@ -44,18 +44,18 @@ public static class ChannelBinder
         Dictionary<string, string> usedBy = new(StringComparer.OrdinalIgnoreCase);
         foreach ((Role role, string column) in RoleNames.Columns)
         {
-            foreach (string reference in row.Of(role).Where(r => r != "-"))
+            foreach (string reference in row.Placed(role))
             {
                 if (!usedBy.TryAdd(reference, column))
                 {
-                    faults.Add(new RoleFault(role, reference, $"{reference} serves as {usedBy[reference].ToLowerInvariant()} and as {column.ToLowerInvariant()}.", row.Cells[column]));
+                    faults.Add(new RoleFault(role, reference, $"{reference} serves as {RoleNames.Spoken(usedBy[reference])} and as {RoleNames.Spoken(column)}.", row.Cells[column]));
                     continue;
                 }
 
                 // One part carries the current of one channel: in two it would be judged at half its load.
                 if (users[reference].FirstOrDefault(other => other != row) is { } twin)
                 {
-                    faults.Add(new RoleFault(role, reference, $"{reference} ({column.ToLowerInvariant()}) serves channel {twin.Name} too.", row.Cells[column]));
+                    faults.Add(new RoleFault(role, reference, $"{reference} ({RoleNames.Spoken(column)}) serves channel {twin.Name} too.", row.Cells[column]));
                     continue;
                 }
 
@@ -97,7 +97,7 @@ public static class ChannelBinder
             Missing = missing,
             RoleFaults = faults,
             Assumed = assumed,
-            References = [.. RoleNames.Columns.SelectMany(c => row.Of(c.Role)).Where(r => r != "-")],
+            References = [.. RoleNames.Columns.SelectMany(c => row.Placed(c.Role))],
             Derating = row.Conditions?.Derating,
         };
     }
@@ -109,26 +109,39 @@ public static class ChannelBinder
         void Fault(string text, string cell) => faults.Add(new RoleFault(role, reference, text, cell));
         if (!bill.TryGetValue(reference, out BillLine? line))
         {
-            Fault($"{reference} ({column.ToLowerInvariant()}) is not on the bill.", row.Cells[column]);
+            Fault($"{reference} ({RoleNames.Spoken(column)}) is not on the bill.", row.Cells[column]);
             return;
         }
 
         if (!line.Fitted)
         {
-            Fault($"{reference} ({column.ToLowerInvariant()}) is not fitted: the bill says \"{line.FittedMark?.Value}\".", line.FittedMark?.Cell ?? line.Cell);
+            Fault($"{reference} ({RoleNames.Spoken(column)}) is not fitted: the bill says \"{line.FittedMark?.Value}\".", line.FittedMark?.Cell ?? line.Cell);
             return;
+        }
+
+        // Nothing is solved with an LED's row: without it the channel is judged, and the rule that reads it is not verified.
+        void Absent(string what)
+        {
+            if (role == Role.Led)
+            {
+                choices[line] = [new LedPart { PartNumber = line.PartNumber ?? "no part number", Cell = line.Cell, Missing = what }];
+            }
+            else if (!missing.Contains(what))
+            {
+                missing.Add(what);
+            }
         }
 
         if (line.PartNumber is null)
         {
-            Missing(missing, "part number of " + reference);
+            Absent("part number of " + reference);
             return;
         }
 
         PartChoice own = PartChoice.Of(row, role, reference, line.PartNumber, line.Manufacturer, parts, assumed);
         if (own.Missing is { } lacking)
         {
-            Missing(missing, lacking);
+            Absent(lacking);
             return;
         }
 
@@ -185,10 +198,10 @@ public static class ChannelBinder
         List<Leg> legs = [];
         for (int i = 0; i < pass.Count; i++)
         {
-            bool sensed = averaging.Count == 0 || averaging[i] != "-";
+            bool sensed = averaging.Count == 0 || averaging[i] != RoleNames.NotSensed;
             legs.Add(new Leg(
                 Place(Role.Pass, i, pass[i]), Place(Role.Sense, i, sense[i]),
-                averaging.Count > 0 && sensed ? Place(Role.Averaging, i, averaging[i]) : null, sensed));
+                averaging.Count > 0 && RoleNames.IsReference(averaging[i]) ? Place(Role.Averaging, i, averaging[i]) : null, sensed));
         }
 
         return new BoundChannel
@@ -203,6 +216,7 @@ public static class ChannelBinder
             Feed = Place(Role.Feed, -1, row.Of(Role.Feed)[0]),
             PullDown = row.Of(Role.PullDown) is { Count: > 0 } down ? Place(Role.PullDown, -1, down[0]) : null,
             PullDownAt = row.PullDownAt,
+            Leds = [.. row.Of(Role.Led).Select(r => Place(Role.Led, -1, r))],
             ConditionCells = row.Cells,
         };
     }
@@ -229,14 +243,6 @@ public static class ChannelBinder
             {
                 yield break;
             }
-        }
-    }
-
-    private static void Missing(List<string> missing, string what)
-    {
-        if (!missing.Contains(what))
-        {
-            missing.Add(what);
         }
     }
 }

@@ -53,13 +53,13 @@ internal sealed record PartChoice(IReadOnlyList<Part> Rows, string? Missing = nu
 
     private static PartChoice? Unfit(Part part, Role role, string reference, string number)
     {
-        string column = RoleNames.ColumnOf(role).ToLowerInvariant();
-        bool transistor = role is Role.Pass or Role.Control;
+        string column = RoleNames.Spoken(RoleNames.ColumnOf(role));
+        string wanted = role switch { Role.Pass or Role.Control => "a transistor", Role.Led => "an LED", _ => "a resistor" };
+        string kind = part switch { Transistor => "a transistor", LedPart => "an LED", _ => "a resistor" };
         return part switch
         {
             RefusedPart refused => new PartChoice([], Fault: $"{number} is refused as {column}: {refused.Reason}."),
-            _ when part is Transistor != transistor => new PartChoice(
-                [], Fault: $"{reference} ({column}) is a {(part is Transistor ? "transistor" : "resistor")}: a {(transistor ? "transistor" : "resistor")} is wanted."),
+            _ when kind != wanted => new PartChoice([], Fault: $"{reference} ({column}) is {kind}: {wanted} is wanted."),
             ResistorPart { Resistance.Value.Ohms: 0 } when role != Role.Averaging => new PartChoice(
                 [], Fault: $"{reference} ({column}) has zero ohm: only averaging may.", FaultCell: part.Cell),
             _ => null,

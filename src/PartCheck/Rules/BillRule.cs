@@ -18,7 +18,8 @@ public static class BillRule
     /// <summary>What the rule demands, one line.</summary>
     public const string Title = "Quantity, fitting, package, kind and resistance of each line agree with references and part table";
 
-    private const string Source = "the bill and the part table themselves";
+    /// <summary>Where the rule comes from.</summary>
+    public const string Source = "the bill and the part table themselves";
 
     /// <summary>Judges a bill.</summary>
     public static IReadOnlyList<Finding> Judge(Bill bill, PartTable parts, IReadOnlyList<Channel> channels)
@@ -50,6 +51,7 @@ public static class BillRule
                     Cell = fault.Cell,
                     Text = fault.Text,
                     Missing = fault.Missing is { } lacking ? [lacking] : [],
+                    Derivation = new Derivation().Note(fault.Text, fault.Cell),
                 });
             }
         }
@@ -69,7 +71,18 @@ public static class BillRule
             missing.Add("a bill line without complaints");
         }
 
+        Derivation steps = new();
         int placed = ReferenceList.Components(line.References);
+        steps.Given("references", placed, string.Empty, "components to place: " + string.Join(", ", line.References), line.Cell);
+        if (line.Quantity is { } stated)
+        {
+            steps.Given("quantity", stated, string.Empty, "Quantity of the line", line.Cell).Step("surplus", "quantity - references", string.Empty, "must be 0");
+        }
+        else
+        {
+            steps.Note("The line gives no quantity.");
+        }
+
         if (line.Quantity is { } quantity && quantity != placed)
         {
             wrong.Add(string.Create(CultureInfo.InvariantCulture, $"the quantity is {quantity}, the references are {placed}"));
@@ -93,6 +106,7 @@ public static class BillRule
 
         foreach (Part row in rows)
         {
+            Compare(steps, line, row);
             wrong.AddRange(Disagreements(line, row, "the part table's"));
             if (row is ResistorPart resistor && Differs(line, resistor))
             {
@@ -106,6 +120,11 @@ public static class BillRule
             if (others.Count == 0)
             {
                 missing.Add("part table row of " + alternate);
+            }
+
+            foreach (Part other in others)
+            {
+                Compare(steps, line, other);
             }
 
             wrong.AddRange(others.SelectMany(other => Disagreements(line, other, $"that of the alternate {other.PartNumber}")));
@@ -126,6 +145,7 @@ public static class BillRule
             Cell = line.Cell,
             Text = wrong.Count == 0 ? null : Sentence(string.Join("; ", wrong.Distinct(StringComparer.Ordinal))),
             Missing = wrong.Count > 0 ? [] : missing,
+            Derivation = steps,
         };
     }
 
@@ -145,6 +165,16 @@ public static class BillRule
 
     private static bool Differs(BillLine line, ResistorPart resistor) =>
         line.Resistance is { } value && Math.Abs(value.Ohms - resistor.Resistance.Value.Ohms) > 1e-6 * value.Ohms;
+
+    /// <summary>Writes down what a line is held to in one row of the part table.</summary>
+    private static void Compare(Derivation steps, BillLine line, Part row)
+    {
+        steps.Note($"Part table row of {row.PartNumber}{(row.Manufacturer is { } maker ? " by " + maker : string.Empty)}: package {row.Package ?? "not given"}; the bill says {line.Package ?? "nothing"}.", row.Cell);
+        if (row is ResistorPart resistor && line.Resistance is { } value)
+        {
+            steps.Note($"Resistance {EngineeringNotation.Format(resistor.Resistance.Value.Ohms, "ohm", 6)}; the bill says {EngineeringNotation.Format(value.Ohms, "ohm", 6)}.", resistor.Resistance.Cell);
+        }
+    }
 
     private static string Sentence(string text) => char.ToUpperInvariant(text[0]) + text[1..] + ".";
 }

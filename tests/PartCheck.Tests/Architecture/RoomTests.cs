@@ -19,7 +19,8 @@ public class RoomTests
         ["Derating"] = ["Quantities", "Sheets"],
         ["Rules"] = ["Quantities", "Bills", "Parts", "Channels", "OperatingPoints", "Derating"],
         ["Concessions"] = ["Quantities", "Sheets", "Bills", "Rules"],
-        ["Reports"] = ["Quantities", "Sheets", "Parts", "Channels", "OperatingPoints", "Rules"],
+        ["Workings"] = ["Quantities", "Devices", "Parts", "Channels", "OperatingPoints", "Derating", "Rules"],
+        ["Reports"] = ["Quantities", "Sheets", "Parts", "Channels", "OperatingPoints", "Rules", "Workings"],
     };
 
     [Fact]
