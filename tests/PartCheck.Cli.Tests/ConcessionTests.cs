@@ -38,6 +38,20 @@ public class ConcessionTests
         Assert.EndsWith("concessions.csv!A2", granted.GetProperty("cell").GetString(), StringComparison.Ordinal);
     }
 
+    [Fact]
+    public async Task AWorkingNamesTheConcessionAndWhatCannotBeAskedIsAUsageErrorThereToo()
+    {
+        using BoardFolder board = new(parts: Weak);
+        board.Write("concessions.csv", Header + Accepted);
+        Run run = await Run.Of("working", board.Folder, "CH1", "--rule", "power", "--reference", "Q1", "--date", "2026-03-01");
+        Assert.True(run.Code == 0, run.Output + run.Error);
+        Assert.Contains("CH1 power Q1 TQ-31: CONCESSION; ", run.Flat, StringComparison.Ordinal);
+        Assert.Contains("accepted by A. Wren, 2026-02-01 to 2026-08-31, for lot 7: air is cooler", run.Flat, StringComparison.Ordinal);
+        run = await Run.Of("working", board.Folder, "CH1", "--date", "2026-03-01", "--with", "Q1=TQ-3");
+        Assert.Equal(64, run.Code);
+        Assert.Equal("partcheck: \"TQ-3\" is not in the part table; near it: TQ-30, TQ-31.\n", run.Error);
+    }
+
     [Theory]
     [InlineData("2026-09-01", Accepted, "expired on 2026-08-31, not applied.")]
     [InlineData("2026-01-31", Accepted, "in force from 2026-02-01 only, not applied.")]

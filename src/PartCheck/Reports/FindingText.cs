@@ -92,6 +92,21 @@ internal static class FindingText
     public static string Mix(Finding f) => f.Mix.Count == 0 ? string.Empty : "with " + string.Join("; ", f.Mix.Select(m =>
         $"{m.PartNumber}{(m.Manufacturer is { } maker ? " by " + maker : string.Empty)} in {string.Join(", ", m.References)}"));
 
+    /// <summary>The concession in words: who accepted it, from when to when, for what, why; empty: there is none.</summary>
+    public static string Accepted(Finding f)
+    {
+        if (f.Concession is not { } granted)
+        {
+            return string.Empty;
+        }
+
+        string holds = granted.Effectivity is { } effectivity ? "for " + effectivity : "serials or lots not named";
+        return $"accepted by {granted.AcceptedBy}, {Day(granted.Date)} to {Day(granted.Expires)}, {holds}: {granted.Reason} ({granted.Cell})";
+    }
+
+    /// <summary>A day as ISO 8601 writes it.</summary>
+    public static string Day(DateOnly day) => day.ToString("yyyy-MM-dd", CultureInfo.InvariantCulture);
+
     /// <summary>The corner in words.</summary>
     public static string Corner(Finding f)
     {

@@ -167,18 +167,19 @@ public static class TextReport
         foreach (IReadOnlyList<Finding> group in groups)
         {
             Finding f = group[0];
-            GrantedConcession granted = f.Concession!;
             Columns80.Wrap(text, "  ", Head(group) + ": " + Joined("; ", FindingText.Numbers(f), f.Text), 4);
-            string holds = granted.Effectivity is { } effectivity ? "for " + effectivity : "serials or lots not named";
-            Columns80.Wrap(text, "    ", $"accepted by {granted.AcceptedBy}, {Day(granted.Date)} to {Day(granted.Expires)}, {holds}: {granted.Reason} ({granted.Cell})", 6);
+            if (FindingText.Mix(f) is { Length: > 0 } mix)
+            {
+                Columns80.Wrap(text, "    ", mix, 6);
+            }
+
+            Columns80.Wrap(text, "    ", FindingText.Accepted(f), 6);
         }
 
         text.Append('\n');
     }
 
-    private static string AsOf(BoardReport board) => board.ConcessionsAsOf is { } day ? "; concessions as of " + Day(day) : string.Empty;
-
-    private static string Day(DateOnly day) => day.ToString("yyyy-MM-dd", CultureInfo.InvariantCulture);
+    private static string AsOf(BoardReport board) => board.ConcessionsAsOf is { } day ? "; concessions as of " + FindingText.Day(day) : string.Empty;
 
     private static string Head(IReadOnlyList<Finding> group) => Joined(" ", group[0].Channel, group[0].Rule, FindingText.Subject(group));
 

@@ -16,7 +16,13 @@ public class ConcessionBookTests
 
     private static readonly Finding Power = new()
     {
-        Channel = "CH1", Rule = "power", Reference = "Q1", PartNumber = "TQ-31", StressRatio = 1.2, Verdict = Verdict.Nonconforming, Source = "s",
+        Channel = "CH1",
+        Rule = "power",
+        Reference = "Q1",
+        PartNumber = "TQ-31",
+        StressRatio = 1.2,
+        Verdict = Verdict.Nonconforming,
+        Source = "s",
     };
 
     // The first and the last day are in force, the days beside them are not.
