@@ -30,6 +30,9 @@ public enum Extreme
 
     /// <summary>The odd leg's VBE, one lot's match away from the rest's end of the window.</summary>
     Match,
+
+    /// <summary>Between the ends: a knee, where a ratio peaks inside its range.</summary>
+    Inside,
 }
 
 /// <summary>Ends of a transistor's two windows.</summary>
