@@ -134,6 +134,7 @@ public static class CheckRun
             IReadOnlyList<Finding> pinFindings = JudgePins(judged, derating);
             AddAdvice(bill, channels);
             AddCircuitAdvice(channels);
+            AddFaultAdvice(judged);
             return Report(derating, judged, billFindings, pinFindings);
         }
 
@@ -346,6 +347,28 @@ public static class CheckRun
                 {
                     advice.Add(new Advice(null, null, $"{part.PartNumber}: {EngineeringNotation.Format(ohms, "ohm")} is neither an E24 nor an E96 value."));
                 }
+            }
+        }
+
+        /// <summary>Remarks on what heat and a single fault would do, of each channel's worst reading.</summary>
+        private void AddFaultAdvice(IReadOnlyList<JudgedChannel> judged)
+        {
+            foreach (JudgedChannel channel in judged.Where(j => j.Readings.Count > 0))
+            {
+                int hot = channel.Readings.FindIndex(r => HotNeighbour.Text(channel.Models[channel.Readings.IndexOf(r)], r) is not null);
+                if (hot >= 0)
+                {
+                    advice.Add(new Advice(
+                        channel.Channel.Name, channel.Models[hot].Channel.Control.Reference, HotNeighbour.Text(channel.Models[hot], channel.Readings[hot])!));
+                }
+
+                double supply = channel.Models[0].Channel.Conditions.Supply.Max.Volts;
+                string shorted = channel.Models
+                    .Select(m => ShortedLoad.Judge(m.Channel, Variants, new PinSource(m.Channel.Logic)))
+                    .OrderByDescending(j => j.Count(s => s.Stress.Verdict == Verdict.Nonconforming))
+                    .ThenByDescending(j => j.Max(s => s.Stress.Ratio ?? 0))
+                    .Select(j => ShortedLoad.Text(supply, j)).First();
+                advice.Add(new Advice(channel.Channel.Name, null, shorted));
             }
         }
 

@@ -12,6 +12,8 @@ public sealed class SinkSolver
     private const double VoltageTolerance = 1e-10;
     private const double TemperatureTolerance = 1e-6;
     private const double BalanceTolerance = 1e-9;
+    private const double RoundingBalance = 1e-12;
+    private const double RoundingSteps = 1000;
 
     private readonly SinkEquations equations = new();
     private readonly double[] x = new double[36];
@@ -60,16 +62,22 @@ public sealed class SinkSolver
         ColdStart(circuit);
         bool found = false;
         bool failed = false;
+        double[] good = [.. x];
+        double reached = double.NaN;
         for (double volts = 0.2; volts <= 3.6 && !found; volts += 0.1)
         {
             equations.Lay(circuit, BaseNodeCondition.Driven, factor, heated: false);
             equations.DrivenVoltage = volts;
-            if (!Newton())
+            if (!Newton() && !RaiseDriven(good, reached, volts))
             {
                 failed = true;
                 ColdStart(circuit);
                 continue;
             }
+
+            double below = reached;
+            x.CopyTo(good, 0);
+            reached = volts;
 
             equations.Evaluate(x);
             if (equations.Currents(0).Ic < (factor - 1) * equations.SumBaseCurrent || !Regulates())
@@ -80,7 +88,7 @@ public sealed class SinkSolver
             // From above: the control collects more than asked.
             equations.Lay(circuit, BaseNodeCondition.Edge, factor, heated: false);
             double[] above = [.. x];
-            found = Newton() && Regulates();
+            found = (Newton() && Regulates()) || BracketEdge(circuit, factor, below, volts, above);
             if (!found)
             {
                 failed = true;
@@ -96,6 +104,51 @@ public sealed class SinkSolver
 
         start?.Take(x, equations.Count, circuit);
         return Point(circuit);
+    }
+
+    /// <summary>The driven base node from the last voltage that was solved, in steps that shrink where they fail.</summary>
+    private bool RaiseDriven(double[] good, double reached, double volts)
+    {
+        if (double.IsNaN(reached))
+        {
+            return false;
+        }
+
+        good.CopyTo(x, 0);
+        return Raise(share => equations.DrivenVoltage = reached + (share * (volts - reached)));
+    }
+
+    /// <summary>The edge between a base voltage where the control collects too little and one where it collects enough, by halving.</summary>
+    private bool BracketEdge(SinkCircuit circuit, double factor, double below, double above, double[] enough)
+    {
+        double[] solution = [.. enough];
+        equations.Lay(circuit, BaseNodeCondition.Driven, factor, heated: false);
+        while (above - below > 1e-9)
+        {
+            solution.CopyTo(x, 0);
+            equations.DrivenVoltage = (above + below) / 2;
+            if (!Newton())
+            {
+                return false;
+            }
+
+            equations.Evaluate(x);
+            if (equations.Currents(0).Ic >= (factor - 1) * equations.SumBaseCurrent && Regulates())
+            {
+                above = equations.DrivenVoltage;
+                x.CopyTo(solution, 0);
+            }
+            else
+            {
+                below = equations.DrivenVoltage;
+            }
+        }
+
+        // A step of the condition is no root of it.
+        solution.CopyTo(x, 0);
+        equations.Evaluate(x);
+        double wanted = (factor - 1) * equations.SumBaseCurrent;
+        return !double.IsNaN(below) && Math.Abs(equations.Currents(0).Ic - wanted) <= 1e-6 * wanted;
     }
 
     /// <summary>True where the control's junction conducts well above its leakage.</summary>
@@ -206,6 +259,7 @@ public sealed class SinkSolver
     private bool Newton()
     {
         int n = equations.Count;
+        double largest = double.PositiveInfinity;
         for (int k = 0; k < StepLimit; k++)
         {
             iterations++;
@@ -222,7 +276,7 @@ public sealed class SinkSolver
                 return false;
             }
 
-            bool small = true;
+            largest = 0;
             for (int i = 0; i < n; i++)
             {
                 double limited = Limit(i, x[i], step[i]);
@@ -234,18 +288,20 @@ public sealed class SinkSolver
                     return false;
                 }
 
-                small &= Math.Abs(limited) <= tolerance;
+                largest = Math.Max(largest, Math.Abs(limited) / tolerance);
                 trial[i] = x[i] + limited;
             }
 
             Array.Copy(trial, x, n);
-            if (small && worst <= BalanceTolerance)
+            if (largest <= 1 && worst <= BalanceTolerance)
             {
                 return true;
             }
         }
 
-        return false;
+        // Deep in drop-out an unknown may be set by so small a current that rounding moves it for ever: by 0.1 uV at most, while the
+        // currents balance to the last digits.
+        return largest <= RoundingSteps && lastResidual <= RoundingBalance;
     }
 
     private double WorstResidual()
