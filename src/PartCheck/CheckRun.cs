@@ -134,7 +134,7 @@ public static class CheckRun
             IReadOnlyList<Finding> pinFindings = JudgePins(judged, derating);
             AddAdvice(bill, channels);
             AddCircuitAdvice(channels);
-            AddFaultAdvice(judged);
+            AddFaultAdvice(judged, cancel);
             return Report(derating, judged, billFindings, pinFindings);
         }
 
@@ -351,7 +351,7 @@ public static class CheckRun
         }
 
         /// <summary>Remarks on what heat and a single fault would do, of each channel's worst reading.</summary>
-        private void AddFaultAdvice(IReadOnlyList<JudgedChannel> judged)
+        private void AddFaultAdvice(IReadOnlyList<JudgedChannel> judged, CancellationToken cancel)
         {
             foreach (JudgedChannel channel in judged.Where(j => j.Readings.Count > 0))
             {
@@ -364,7 +364,7 @@ public static class CheckRun
 
                 double supply = channel.Models[0].Channel.Conditions.Supply.Max.Volts;
                 string shorted = channel.Models
-                    .Select(m => ShortedLoad.Judge(m.Channel, Variants, new PinSource(m.Channel.Logic)))
+                    .Select(m => ShortedLoad.Judge(m.Channel, Variants, new PinSource(m.Channel.Logic), request.Threads, cancel))
                     .OrderByDescending(j => j.Count(s => s.Stress.Verdict == Verdict.Nonconforming))
                     .ThenByDescending(j => j.Max(s => s.Stress.Ratio ?? 0))
                     .Select(j => ShortedLoad.Text(supply, j)).First();

@@ -62,22 +62,17 @@ public sealed class SinkSolver
         ColdStart(circuit);
         bool found = false;
         bool failed = false;
-        double[] good = [.. x];
-        double reached = double.NaN;
         for (double volts = 0.2; volts <= 3.6 && !found; volts += 0.1)
         {
             equations.Lay(circuit, BaseNodeCondition.Driven, factor, heated: false);
             equations.DrivenVoltage = volts;
-            if (!Newton() && !RaiseDriven(good, reached, volts))
+            if (!Newton())
             {
                 failed = true;
                 ColdStart(circuit);
                 continue;
             }
 
-            double below = reached;
-            x.CopyTo(good, 0);
-            reached = volts;
 
             equations.Evaluate(x);
             if (equations.Currents(0).Ic < (factor - 1) * equations.SumBaseCurrent || !Regulates())
@@ -88,7 +83,7 @@ public sealed class SinkSolver
             // From above: the control collects more than asked.
             equations.Lay(circuit, BaseNodeCondition.Edge, factor, heated: false);
             double[] above = [.. x];
-            found = (Newton() && Regulates()) || BracketEdge(circuit, factor, below, volts, above);
+            found = Newton() && Regulates();
             if (!found)
             {
                 failed = true;
@@ -104,51 +99,6 @@ public sealed class SinkSolver
 
         start?.Take(x, equations.Count, circuit);
         return Point(circuit);
-    }
-
-    /// <summary>The driven base node from the last voltage that was solved, in steps that shrink where they fail.</summary>
-    private bool RaiseDriven(double[] good, double reached, double volts)
-    {
-        if (double.IsNaN(reached))
-        {
-            return false;
-        }
-
-        good.CopyTo(x, 0);
-        return Raise(share => equations.DrivenVoltage = reached + (share * (volts - reached)));
-    }
-
-    /// <summary>The edge between a base voltage where the control collects too little and one where it collects enough, by halving.</summary>
-    private bool BracketEdge(SinkCircuit circuit, double factor, double below, double above, double[] enough)
-    {
-        double[] solution = [.. enough];
-        equations.Lay(circuit, BaseNodeCondition.Driven, factor, heated: false);
-        while (above - below > 1e-9)
-        {
-            solution.CopyTo(x, 0);
-            equations.DrivenVoltage = (above + below) / 2;
-            if (!Newton())
-            {
-                return false;
-            }
-
-            equations.Evaluate(x);
-            if (equations.Currents(0).Ic >= (factor - 1) * equations.SumBaseCurrent && Regulates())
-            {
-                above = equations.DrivenVoltage;
-                x.CopyTo(solution, 0);
-            }
-            else
-            {
-                below = equations.DrivenVoltage;
-            }
-        }
-
-        // A step of the condition is no root of it.
-        solution.CopyTo(x, 0);
-        equations.Evaluate(x);
-        double wanted = (factor - 1) * equations.SumBaseCurrent;
-        return !double.IsNaN(below) && Math.Abs(equations.Currents(0).Ic - wanted) <= 1e-6 * wanted;
     }
 
     /// <summary>True where the control's junction conducts well above its leakage.</summary>

@@ -15,16 +15,18 @@ public static class ShortedLoad
 {
     /// <summary>What a shorted load drops at the nominal current [V]: nothing that counts, but not nothing for the solver.</summary>
     private const double Drop = 1e-3;
-    private const int Starts = 64;
+
     private static readonly TransistorRule[] Rules = [new VceRule(), new IcRule(), new PowerRule(), new JunctionRule(), new SoaRule()];
 
     /// <summary>Solves a reading with its load shorted.</summary>
     /// <param name="channel">The reading.</param>
     /// <param name="variants">Devices of a transistor's row.</param>
     /// <param name="pin">Its pin.</param>
+    /// <param name="threads">Threads to use; 0: all.</param>
+    /// <param name="cancel">Stops the enumeration.</param>
     /// <returns>What each rating says at its worst, the worst first.</returns>
     public static IReadOnlyList<(string Rule, string Reference, Stress Stress)> Judge(
-        BoundChannel channel, Func<Transistor, TransistorVariants> variants, PinSource pin)
+        BoundChannel channel, Func<Transistor, TransistorVariants> variants, PinSource pin, int threads, CancellationToken cancel)
     {
         ArgumentNullException.ThrowIfNull(channel);
         ChannelConditions c = channel.Conditions;
@@ -34,38 +36,55 @@ public static class ShortedLoad
             variants);
         DeratingTable ratings = DeratingLibrary.Named("ratings") ?? throw new InvalidOperationException("The table of the makers' ratings is missing.");
         KneeSearch search = new(model, pin);
-        List<SolvedState> starts = Solved(model, pin);
-        List<(string, string, Stress)> found = [];
+        List<(TransistorRule Rule, int Slot, RuleRows Rows)> asked = [];
         foreach (TransistorRule rule in Rules)
         {
             RuleRows rows = new(ratings.For(rule.Id, "npn", null), ratings.For("r-power", "npn", null));
             for (int slot = 0; slot <= model.Slots.Control; slot++)
             {
-                if (model.Slots.Of(slot) is not [{ Part: Transistor part } first, ..] || !rule.AppliesTo(first.Role) || !rule.Asked(part, model.Channel, rows))
+                if (model.Slots.Of(slot) is [{ Part: Transistor part } first, ..] && rule.AppliesTo(first.Role) && rule.Asked(part, model.Channel, rows))
                 {
-                    continue;
+                    asked.Add((rule, slot, rows));
                 }
-
-                Worst worst = new();
-                foreach (SolvedState start in starts)
-                {
-                    Take(worst, rule, slot, start, model.Channel, rows);
-                }
-
-                SolvedState? peak = worst.State is null ? null : search.Climb(worst.State, null, state =>
-                {
-                    Worst one = new();
-                    Take(one, rule, slot, state, model.Channel, rows);
-                    return one.State is null ? double.NaN : one.Stress.Ratio ?? double.PositiveInfinity;
-                });
-                if (peak is not null)
-                {
-                    Take(worst, rule, slot, peak, model.Channel, rows);
-                }
-
-                Stress stress = worst.Verdict == Verdict.NotVerified ? Stress.NotVerified(worst.Missing.FirstOrDefault() ?? "a solution") : worst.Stress;
-                found.Add((rule.Id, string.Join(", ", model.Slots.Of(slot).Select(p => p.Reference)), stress));
             }
+        }
+
+        // Every corner, then the knees, as for the channel itself.
+        Worst[] worst = [.. asked.Select(_ => new Worst())];
+        foreach (Worst[] chunk in WorstCase.Enumerate(
+            model, pin, WorstCase.OnBoxes(model, pin), edge: null, threads, () => asked.Select(_ => new Worst()).ToArray(),
+            (into, state) =>
+            {
+                for (int i = 0; i < asked.Count; i++)
+                {
+                    Take(into[i], asked[i].Rule, asked[i].Slot, state, model.Channel, asked[i].Rows);
+                }
+            },
+            cancel))
+        {
+            for (int i = 0; i < asked.Count; i++)
+            {
+                worst[i].Merge(chunk[i]);
+            }
+        }
+
+        List<(string, string, Stress)> found = [];
+        for (int i = 0; i < asked.Count; i++)
+        {
+            (TransistorRule rule, int slot, RuleRows rows) = asked[i];
+            SolvedState? peak = worst[i].State is not { } corner ? null : search.Climb(corner, null, state =>
+            {
+                Worst one = new();
+                Take(one, rule, slot, state, model.Channel, rows);
+                return one.State is null ? double.NaN : one.Stress.Ratio ?? double.PositiveInfinity;
+            });
+            if (peak is not null)
+            {
+                Take(worst[i], rule, slot, peak, model.Channel, rows);
+            }
+
+            Stress stress = worst[i].Verdict == Verdict.NotVerified ? Stress.NotVerified(worst[i].Missing.FirstOrDefault() ?? "a solution") : worst[i].Stress;
+            found.Add((rule.Id, string.Join(", ", model.Slots.Of(slot).Select(p => p.Reference)), stress));
         }
 
         return [.. found.OrderByDescending(f => f.Item3.Verdict == Verdict.Nonconforming).ThenByDescending(f => f.Item3.Ratio ?? double.PositiveInfinity)];
@@ -90,32 +109,14 @@ public static class ShortedLoad
     private static string Size(in Stress stress) =>
         stress.Ratio is { } ratio ? string.Create(CultureInfo.InvariantCulture, $" ({(stress.AtLeast ? "at least " : string.Empty)}{ratio:0.00})") : string.Empty;
 
-    /// <summary>Corners spread over the box, solved: where the climb starts.</summary>
-    private static List<SolvedState> Solved(ChannelModel model, PinSource pin)
-    {
-        List<SolvedState> states = [];
-        int offset = 0;
-        foreach (ChannelBox box in WorstCase.OnBoxes(model, pin))
-        {
-            CornerSolver solver = new(model, pin, null);
-            for (int i = 0; i < Math.Min(Starts, box.Count); i++)
-            {
-                int index = (int)((long)i * (box.Count - 1) / Math.Max(1, Math.Min(Starts, box.Count) - 1));
-                SolvedState state = solver.Solve(box, index, offset);
-                if (state.Solved)
-                {
-                    states.Add(state);
-                }
-            }
-
-            offset += box.Count;
-        }
-
-        return states;
-    }
-
     private static void Take(Worst into, TransistorRule rule, int slot, SolvedState state, BoundChannel channel, in RuleRows rows)
     {
+        if (!state.Solved)
+        {
+            into.Take(Stress.NotVerified("a solution: the solver gave up in a corner (NotSolved)"), state);
+            return;
+        }
+
         foreach (TransistorPoint point in (TransistorPoint[])state.Transistors)
         {
             if (point.Slot == slot)
