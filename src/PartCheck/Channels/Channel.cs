@@ -24,6 +24,9 @@ public enum Role
 
     /// <summary>Pull-down resistor.</summary>
     PullDown,
+
+    /// <summary>LED of the load.</summary>
+    Led,
 }
 
 /// <summary>Where the pull-down resistor sits.</summary>
@@ -53,6 +56,12 @@ public sealed record ChannelConditions
 
     /// <summary>LEDs in the string; 0: a pure resistor.</summary>
     public required int Leds { get; init; }
+
+    /// <summary>Strings of LEDs in parallel.</summary>
+    public int Strings { get; init; } = 1;
+
+    /// <summary>Largest current of one string over the mean of all; null: nobody knows how they share.</summary>
+    public double? StringShareMax { get; init; }
 
     /// <summary>The current window.</summary>
     public required Interval<Current> CurrentWindow { get; init; }
@@ -93,7 +102,7 @@ public sealed record Placement(Role Role, int Leg, string Reference, BillLine Li
 /// <summary>One leg, every role bound.</summary>
 /// <param name="Pass">Pass transistor.</param>
 /// <param name="Sense">Sense resistor.</param>
-/// <param name="Averaging">Averaging resistor; null: none.</param>
+/// <param name="Averaging">Averaging resistor; null: none (the emitter is the control's base node, or the leg is not sensed).</param>
 /// <param name="Sensed">False where the control does not sense this leg (<c>-</c> in Averaging).</param>
 public sealed record Leg(Placement Pass, Placement Sense, Placement? Averaging, bool Sensed)
 {
@@ -139,6 +148,9 @@ public sealed record BoundChannel
 
     /// <summary>Where the pull-down sits.</summary>
     public PullDownAt PullDownAt { get; init; }
+
+    /// <summary>LEDs of the load; empty: the channel names none, and none is judged.</summary>
+    public IReadOnlyList<Placement> Leds { get; init; } = [];
 
     /// <summary>The control transistor's row.</summary>
     public Transistor ControlPart => (Transistor)Control.Part;

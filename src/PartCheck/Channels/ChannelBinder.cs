@@ -29,7 +29,7 @@ public static class ChannelBinder
         // A row with complaints is not judged and proves nothing about the others.
         ILookup<string, ChannelRow> users = rows
             .Where(row => row.Conditions is not null)
-            .SelectMany(row => RoleNames.Columns.SelectMany(c => row.Of(c.Role)).Where(r => r != "-").Distinct(StringComparer.OrdinalIgnoreCase).Select(reference => (reference, row)))
+            .SelectMany(row => RoleNames.Columns.SelectMany(c => row.Placed(c.Role)).Distinct(StringComparer.OrdinalIgnoreCase).Select(reference => (reference, row)))
             .ToLookup(use => use.reference, use => use.row, StringComparer.OrdinalIgnoreCase);
         return [.. rows.Select(row => BindOne(row, byReference, users, parts, pins, complaints))];
     }
@@ -44,18 +44,18 @@ public static class ChannelBinder
         Dictionary<string, string> usedBy = new(StringComparer.OrdinalIgnoreCase);
         foreach ((Role role, string column) in RoleNames.Columns)
         {
-            foreach (string reference in row.Of(role).Where(r => r != "-"))
+            foreach (string reference in row.Placed(role))
             {
                 if (!usedBy.TryAdd(reference, column))
                 {
-                    faults.Add(new RoleFault(role, reference, $"{reference} serves as {usedBy[reference].ToLowerInvariant()} and as {column.ToLowerInvariant()}.", row.Cells[column]));
+                    faults.Add(new RoleFault(role, reference, $"{reference} serves as {RoleNames.Spoken(usedBy[reference])} and as {RoleNames.Spoken(column)}.", row.Cells[column]));
                     continue;
                 }
 
                 // One part carries the current of one channel: in two it would be judged at half its load.
                 if (users[reference].FirstOrDefault(other => other != row) is { } twin)
                 {
-                    faults.Add(new RoleFault(role, reference, $"{reference} ({column.ToLowerInvariant()}) serves channel {twin.Name} too.", row.Cells[column]));
+                    faults.Add(new RoleFault(role, reference, $"{reference} ({RoleNames.Spoken(column)}) serves channel {twin.Name} too.", row.Cells[column]));
                     continue;
                 }
 
@@ -97,7 +97,7 @@ public static class ChannelBinder
             Missing = missing,
             RoleFaults = faults,
             Assumed = assumed,
-            References = [.. RoleNames.Columns.SelectMany(c => row.Of(c.Role)).Where(r => r != "-")],
+            References = [.. RoleNames.Columns.SelectMany(c => row.Placed(c.Role))],
             Derating = row.Conditions?.Derating,
         };
     }
@@ -109,26 +109,39 @@ public static class ChannelBinder
         void Fault(string text, string cell) => faults.Add(new RoleFault(role, reference, text, cell));
         if (!bill.TryGetValue(reference, out BillLine? line))
         {
-            Fault($"{reference} ({column.ToLowerInvariant()}) is not on the bill.", row.Cells[column]);
+            Fault($"{reference} ({RoleNames.Spoken(column)}) is not on the bill.", row.Cells[column]);
             return;
         }
 
         if (!line.Fitted)
         {
-            Fault($"{reference} ({column.ToLowerInvariant()}) is not fitted: the bill says \"{line.FittedMark?.Value}\".", line.FittedMark?.Cell ?? line.Cell);
+            Fault($"{reference} ({RoleNames.Spoken(column)}) is not fitted: the bill says \"{line.FittedMark?.Value}\".", line.FittedMark?.Cell ?? line.Cell);
             return;
+        }
+
+        // Nothing is solved with an LED's row: without it the channel is judged, and the rule that reads it is not verified.
+        void Absent(string what)
+        {
+            if (role == Role.Led)
+            {
+                choices[line] = [new LedPart { PartNumber = line.PartNumber ?? "no part number", Cell = line.Cell, Missing = what }];
+            }
+            else if (!missing.Contains(what))
+            {
+                missing.Add(what);
+            }
         }
 
         if (line.PartNumber is null)
         {
-            Missing(missing, "part number of " + reference);
+            Absent("part number of " + reference);
             return;
         }
 
         IReadOnlyList<Part> found = parts.Find(line.PartNumber);
         if (found.Count == 0)
         {
-            Missing(missing, "part table row of " + line.PartNumber);
+            Absent("part table row of " + line.PartNumber);
             return;
         }
 
@@ -137,7 +150,7 @@ public static class ChannelBinder
             found = [.. found.Where(p => p.Manufacturer is null || string.Equals(p.Manufacturer, maker, StringComparison.OrdinalIgnoreCase))];
             if (found.Count == 0)
             {
-                Missing(missing, $"part table row of {line.PartNumber} by {maker}");
+                Absent($"part table row of {line.PartNumber} by {maker}");
                 return;
             }
         }
@@ -147,7 +160,7 @@ public static class ChannelBinder
             IReadOnlyList<Part> mounted = [.. found.Where(p => p.Mounting is null || string.Equals(p.Mounting, mounting, StringComparison.OrdinalIgnoreCase))];
             if (mounted.Count == 0)
             {
-                Missing(missing, $"part table row of {line.PartNumber} on {mounting}");
+                Absent($"part table row of {line.PartNumber} on {mounting}");
                 return;
             }
 
@@ -159,24 +172,25 @@ public static class ChannelBinder
             assumed.Add(new Assumption("Mounting", line.PartNumber, "the worst of its rows"));
         }
 
-        bool transistor = role is Role.Pass or Role.Control;
+        string wanted = role switch { Role.Pass or Role.Control => "a transistor", Role.Led => "an LED", _ => "a resistor" };
         foreach (Part part in found)
         {
             if (part is RefusedPart refused)
             {
-                Fault($"{line.PartNumber} is refused as {column.ToLowerInvariant()}: {refused.Reason}.", line.Cell);
+                Fault($"{line.PartNumber} is refused as {RoleNames.Spoken(column)}: {refused.Reason}.", line.Cell);
                 return;
             }
 
-            if (part is Transistor != transistor)
+            string kind = part switch { Transistor => "a transistor", LedPart => "an LED", _ => "a resistor" };
+            if (kind != wanted)
             {
-                Fault($"{reference} ({column.ToLowerInvariant()}) is a {(part is Transistor ? "transistor" : "resistor")}: a {(transistor ? "transistor" : "resistor")} is wanted.", line.Cell);
+                Fault($"{reference} ({RoleNames.Spoken(column)}) is {kind}: {wanted} is wanted.", line.Cell);
                 return;
             }
 
             if (part is ResistorPart { Resistance.Value.Ohms: 0 } && role != Role.Averaging)
             {
-                Fault($"{reference} ({column.ToLowerInvariant()}) has zero ohm: only averaging may.", part.Cell);
+                Fault($"{reference} ({RoleNames.Spoken(column)}) has zero ohm: only averaging may.", part.Cell);
                 return;
             }
         }
@@ -198,10 +212,10 @@ public static class ChannelBinder
         List<Leg> legs = [];
         for (int i = 0; i < pass.Count; i++)
         {
-            bool sensed = averaging.Count == 0 || averaging[i] != "-";
+            bool sensed = averaging.Count == 0 || averaging[i] != RoleNames.NotSensed;
             legs.Add(new Leg(
                 Place(Role.Pass, i, pass[i]), Place(Role.Sense, i, sense[i]),
-                averaging.Count > 0 && sensed ? Place(Role.Averaging, i, averaging[i]) : null, sensed));
+                averaging.Count > 0 && RoleNames.IsReference(averaging[i]) ? Place(Role.Averaging, i, averaging[i]) : null, sensed));
         }
 
         return new BoundChannel
@@ -216,6 +230,7 @@ public static class ChannelBinder
             Feed = Place(Role.Feed, -1, row.Of(Role.Feed)[0]),
             PullDown = row.Of(Role.PullDown) is { Count: > 0 } down ? Place(Role.PullDown, -1, down[0]) : null,
             PullDownAt = row.PullDownAt,
+            Leds = [.. row.Of(Role.Led).Select(r => Place(Role.Led, -1, r))],
             ConditionCells = row.Cells,
         };
     }
@@ -242,14 +257,6 @@ public static class ChannelBinder
             {
                 yield break;
             }
-        }
-    }
-
-    private static void Missing(List<string> missing, string what)
-    {
-        if (!missing.Contains(what))
-        {
-            missing.Add(what);
         }
     }
 }

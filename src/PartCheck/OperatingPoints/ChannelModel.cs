@@ -34,6 +34,7 @@ public sealed class ChannelModel
         ControlHeat = PulsedHeat.Of(Control.Part, ControlRth, channel.Conditions);
         Heats = ControlRth is not null && PassRth.All(r => r is not null);
         CouplingGiven = Classes.All(c => c.First.PassPart.Coupling is not null);
+        OneLegSensed = channel.Legs.Count(l => l.Sensed) == 1;
         Load = [LoadAt(channel.Conditions.LoadDrop.Min.Volts), LoadAt(channel.Conditions.LoadDrop.Max.Volts)];
         NominalLoad = LoadAt((channel.Conditions.LoadDrop.Min.Volts + channel.Conditions.LoadDrop.Max.Volts) / 2);
         CollectAssumptions();
@@ -83,6 +84,12 @@ public sealed class ChannelModel
 
     /// <summary>True where the table gives the coupling of every pass transistor.</summary>
     public bool CouplingGiven { get; }
+
+    /// <summary>
+    /// True where the control senses one leg alone. It holds that leg's current, so nothing is averaged: an averaging resistor there carries
+    /// the control's base current and is no ballast.
+    /// </summary>
+    public bool OneLegSensed { get; }
 
     /// <summary>Load at the smallest and the largest drop.</summary>
     public IReadOnlyList<LoadElement> Load { get; }

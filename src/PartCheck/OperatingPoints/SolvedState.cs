@@ -122,7 +122,7 @@ public readonly record struct TransistorPoint(
     /// <summary>Effective base resistance of the device [ohm].</summary>
     public double BaseResistance { get; init; }
 
-    /// <summary>Ballast between this leg and the others: sense parallel averaging, sense alone where not sensed [ohm].</summary>
+    /// <summary>Ballast between this leg and the others: sense parallel averaging; sense alone where not sensed, or sensed alone [ohm].</summary>
     public double Ballast { get; init; }
 
     /// <summary>Thermal resistance junction to ambient at steady power, given or assumed [K/W]; NaN: not to be had.</summary>
@@ -167,7 +167,11 @@ public readonly record struct ResistorPoint(
 /// <param name="SumBaseCurrent">Sum of the pass transistors' base currents there [A].</param>
 /// <param name="Available">What pin level, source resistance, feed and pull-down deliver into the base node there [A].</param>
 /// <param name="Factor">k' = max(drive factor, 1.2).</param>
-public readonly record struct DriveEdge(bool Exists, double BaseVoltage, double SumBaseCurrent, double Available, double Factor);
+public readonly record struct DriveEdge(bool Exists, double BaseVoltage, double SumBaseCurrent, double Available, double Factor)
+{
+    /// <summary>Collector current of the control there [A].</summary>
+    public double ControlCurrent { get; init; }
+}
 
 /// <summary>One solved corner of one channel in one state, SI units: what a rule reads.</summary>
 public sealed class SolvedState

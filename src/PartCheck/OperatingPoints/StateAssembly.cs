@@ -83,6 +83,7 @@ internal static class StateAssembly
         {
             AveragedShare = PulsedHeat.AveragedShare(model.Channel.Conditions),
             CaseShare = heat.CaseShare,
+            BaseResistance = q.BaseResistance,
         };
 
     private static TransistorPoint Leg(ChannelModel model, int c, LegGroup leg, in SolvedTransistor q) =>
@@ -91,7 +92,7 @@ internal static class StateAssembly
             VbeSlope = q.VbeSlope,
             EmitterResistance = leg.Pass.Parameters.Re,
             BaseResistance = q.BaseResistance,
-            Ballast = leg.Sensed ? leg.Sense * leg.Averaging / (leg.Sense + leg.Averaging) : leg.Sense,
+            Ballast = leg.Sensed && !model.OneLegSensed ? leg.Sense * leg.Averaging / (leg.Sense + leg.Averaging) : leg.Sense,
             RthJa = model.PassRth[c] ?? double.NaN,
             SenseVoltage = q.EmitterVoltage,
             SenseResistance = leg.Sense,

@@ -168,6 +168,25 @@ public sealed record ResistorPart : Part
     public override Temperature FlatTo => PowerFlatTo?.Value ?? Temperature.FromCelsius(70);
 }
 
+/// <summary>An LED of a channel's load (Kind <c>led</c>).</summary>
+public sealed record LedPart : Part
+{
+    /// <summary>Highest continuous forward current.</summary>
+    public Cited<Current>? ForwardCurrentMax { get; init; }
+
+    /// <summary>Ambient up to which it holds; null: 25 degC.</summary>
+    public Cited<Temperature>? ForwardCurrentFlatTo { get; init; }
+
+    /// <summary>Slope of the forward current maximum above that [A/K]; null: straight to zero at the highest junction temperature.</summary>
+    public Cited<double>? ForwardCurrentSlope { get; init; }
+
+    /// <summary>What is missing, where this stands for a row that the part table does not have; null: it is a row.</summary>
+    public string? Missing { get; init; }
+
+    /// <summary>The ambient up to which the forward current maximum holds: the load has no power rating here.</summary>
+    public override Temperature FlatTo => ForwardCurrentFlatTo?.Value ?? Temperature.FromCelsius(25);
+}
+
 /// <summary>A part whose kind is known and refused, with the reason.</summary>
 public sealed record RefusedPart : Part
 {

@@ -34,7 +34,7 @@ public sealed class ChannelJudge
             for (int s = 0; s <= slots; s++)
             {
                 Part? part = s < slots && model.Slots.Of(s) is { Count: > 0 } placements ? placements[0].Part : null;
-                string? kind = part switch { Transistor => "npn", ResistorPart => "resistor", _ => null };
+                string? kind = part switch { Transistor => "npn", ResistorPart => "resistor", LedPart => "led", _ => null };
                 string? style = (part as ResistorPart)?.Style;
                 rows[r, s] = new RuleRows(derating.For(rules[r].Id, kind, style), derating.For("r-power", kind, style));
                 applies[r, s] = (rules[r], part) switch
@@ -42,6 +42,7 @@ public sealed class ChannelJudge
                     (TransistorRule rule, Transistor transistor) =>
                         rule.AppliesTo(model.Slots.Of(s)[0].Role) && rule.Asked(transistor, model.Channel, rows[r, s]),
                     (ResistorRule rule, ResistorPart resistor) => rule.AppliesTo(resistor),
+                    (LedRule, LedPart) => true,
                     (ChannelRule rule, _) => s == slots && rule.Asked(model.Channel, rows[r, s]),
                     _ => false,
                 };
@@ -78,9 +79,10 @@ public sealed class ChannelJudge
 
         Climb(total, new KneeSearch(model, pin), driveFactor, threads, cancel);
         SolvedState? nominal = WorstCase.Nominal(model, pin);
-        return new ReadingJudgement(model.Channel, Findings(total), nominal, total.LoadMin, total.LoadMax, total.PinMax, total.Corners, total.NotSolved + (nominal is null ? 1 : 0))
+        return new ReadingJudgement(model.Channel, Findings(total, pin), nominal, total.LoadMin, total.LoadMax, total.PinMax, total.Corners, total.NotSolved + (nominal is null ? 1 : 0))
         {
             HeatMax = total.HeatMax,
+            PinState = total.MostPin,
             Assumed = total.ControlHeld
                 ? [new Assumption("hFE of the control beyond its points", model.Control.Part.PartNumber, "the outermost value held")]
                 : [],
@@ -226,6 +228,9 @@ public sealed class ChannelJudge
                 }
 
                 break;
+            case LedRule rule:
+                into.Take(rule.Evaluate(state, (LedPart)model.Slots.Of(slot)[0].Part, model.Channel, rows[r, slot]), state);
+                break;
             case ChannelRule rule:
                 into.Take(rule.Evaluate(state, model.Channel, rows[r, slot]), state);
                 break;
@@ -273,7 +278,7 @@ public sealed class ChannelJudge
         }
     }
 
-    private List<Finding> Findings(Accumulator total)
+    private List<Finding> Findings(Accumulator total, PinSource pin)
     {
         List<Finding> findings = [];
         for (int r = 0; r < rules.Count; r++)
@@ -288,13 +293,13 @@ public sealed class ChannelJudge
                 Worst worst = total.At(r, s);
                 if (s == model.Slots.Count)
                 {
-                    findings.Add(Make(r, s, worst, null));
+                    findings.Add(Make(r, s, worst, null, pin));
                     continue;
                 }
 
                 foreach (Placement placement in model.Slots.Of(s))
                 {
-                    findings.Add(Make(r, s, worst, placement));
+                    findings.Add(Make(r, s, worst, placement, pin));
                 }
             }
         }
@@ -302,7 +307,7 @@ public sealed class ChannelJudge
         return findings;
     }
 
-    private Finding Make(int r, int s, Worst worst, Placement? placement)
+    private Finding Make(int r, int s, Worst worst, Placement? placement, PinSource pin)
     {
         Rule rule = rules[r];
         Stress stress = worst.Stress;
@@ -311,6 +316,7 @@ public sealed class ChannelJudge
         {
             (TransistorRule t, Transistor part) => t.DecidingCell(part),
             (ResistorRule t, ResistorPart part) => t.DecidingCell(part),
+            (LedRule t, LedPart part) => t.DecidingCell(part),
             (ChannelRule t, _) => t.DecidingCell(model.Channel, stress),
             _ => null,
         };
@@ -337,6 +343,7 @@ public sealed class ChannelJudge
             Cell = cell,
             Text = text,
             Missing = worst.Verdict == Verdict.NotVerified ? [.. worst.Missing.DefaultIfEmpty("a state to judge")] : [],
+            Basis = worst.State is { } state ? new FindingBasis(model, pin, rule, rows[r, s], state, s, stress) : null,
         };
     }
 
@@ -437,6 +444,9 @@ public sealed record ReadingJudgement(
 {
     /// <summary>Largest heat of the channel's parts on the board while on, whatever the duty, the load left out [W].</summary>
     public double HeatMax { get; init; }
+
+    /// <summary>The state of <see cref="PinMax"/>; null: the pin delivers nothing.</summary>
+    public SolvedState? PinState { get; init; }
 
     /// <summary>Each transistor with its highest junction temperature [K].</summary>
     public IReadOnlyList<(string Reference, double Tj)> Hottest { get; init; } = [];

@@ -68,6 +68,12 @@ public sealed record Finding
 
     /// <summary>What is missing, when not verified.</summary>
     public IReadOnlyList<string> Missing { get; init; } = [];
+
+    /// <summary>The state, rule and rows that it was judged from; null: it reads no state, or there was none to judge.</summary>
+    public FindingBasis? Basis { get; init; }
+
+    /// <summary>Its equation with numbers, where it reads no state; null: <see cref="Basis"/> gives it.</summary>
+    public Derivation? Derivation { get; init; }
 }
 
 /// <summary>Currents, voltages and temperatures of the nominal state, and the extremes of the load current.</summary>

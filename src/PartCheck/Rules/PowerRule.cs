@@ -72,5 +72,43 @@ public sealed class PowerRule : TransistorRule
     }
 
     /// <inheritdoc/>
+    public override void Derive(Derivation steps, SolvedState state, in TransistorPoint point, BoundChannel channel, in RuleRows rows, in Stress stress)
+    {
+        Transistor part = point.Part;
+        double ambient = state.Corner.Ambient;
+        steps.Given("Prated#", part.Power!.Value.Watts, "W", "rated power of " + part.PartNumber, part.Power.Cell)
+            .Given("Tflat#", part.FlatTo.Celsius, "degC", "the rated power holds up to here", part.PowerFlatTo?.Cell, assumed: part.PowerFlatTo is null);
+        string line = "Prated#";
+        if (part.TjMax is { } max)
+        {
+            steps.Given("Tmax#", max.Value.Celsius, "degC", "Tj max of " + part.PartNumber, max.Cell);
+        }
+
+        if (part.PowerSlope is { } slope)
+        {
+            steps.Given("slope", slope.Value, "W/K", "slope of the rated power above that", slope.Cell);
+            line = "Prated# - slope x max(0, Ta - Tflat#)";
+        }
+        else if (part.TjMax is { } zero)
+        {
+            line = zero.Value.Kelvins > part.FlatTo.Kelvins ? "Prated# x (1 - max(0, Ta - Tflat#) / (Tmax# - Tflat#))" : "0 W";
+        }
+
+        steps.Step("Pline", line, "W", "rated power at the ambient: flat, then a line");
+        bool thermal = part is { TjMax: not null, RthJa: not null };
+        if (thermal)
+        {
+            steps.Step("Pth", "(Tmax# - Ta) / RthJA#", "W", "what the thermal resistance lets through up to Tj max");
+        }
+
+        bool none = ambient >= part.TjMax?.Value.Kelvins;
+        steps.Factor(rows.Own)
+            .Step(
+                "Pallowed", none ? "0 W" : thermal ? "F x max(0, min(Pline, Pth))" : "F x max(0, Pline)", "W",
+                none ? "nothing: the ambient is at or above Tj max" : "derated power")
+            .AtMost("P#", "Pallowed", stress);
+    }
+
+    /// <inheritdoc/>
     public override string? DecidingCell(Transistor part) => part.Power?.Cell;
 }

@@ -66,6 +66,54 @@ public sealed class SoaRule : TransistorRule
     }
 
     /// <inheritdoc/>
+    public override void Derive(Derivation steps, SolvedState state, in TransistorPoint point, BoundChannel channel, in RuleRows rows, in Stress stress)
+    {
+        Transistor part = point.Part;
+        IReadOnlyList<SoaPoint> points = part.Soa!.Value;
+        string cell = part.Soa.Cell;
+        int right = 0;
+        while (right < points.Count && point.Vce > points[right].Vce.Volts)
+        {
+            right++;
+        }
+
+        if (right == points.Count)
+        {
+            steps.Step("Isoa", "0 A", "A", "nothing: VCE is above the boundary's last point");
+        }
+        else if (points.Count == 1)
+        {
+            steps.Given("Isoa", points[0].Ic.Amperes, "A", "the boundary's only point", cell);
+        }
+        else if (right == 0 && point.Vce < points[0].Vce.Volts)
+        {
+            steps.Given("ICmax", part.Ic!.Value.Amperes, "A", "IC rating: VCE is below the boundary's first point", part.Ic.Cell).Step("Isoa", "ICmax", "A", "boundary at VCE");
+        }
+        else
+        {
+            SoaPoint b = points[Math.Max(right, 1)];
+            SoaPoint a = points[Math.Max(right, 1) - 1];
+            steps.Given("V1", a.Vce.Volts, "V", "boundary, point to the left", cell).Given("I1", a.Ic.Amperes, "A", "its current", cell)
+                .Given("V2", b.Vce.Volts, "V", "boundary, point to the right", cell).Given("I2", b.Ic.Amperes, "A", "its current", cell)
+                .Step("Isoa", "I1 x (I2 / I1) ^ (ln(VCE# / V1) / ln(V2 / V1))", "A", "boundary at VCE, log-log between the points");
+        }
+
+        string at = "Ta";
+        if (part.SoaAtCase)
+        {
+            at = "Tcase";
+            steps.Given("RthJC", part.RthJc!.Value.KelvinsPerWatt, "K/W", "junction to case", part.RthJc.Cell)
+                .Step("Tcase", "max(Ta, Tj# - P# x RthJC)", "degC", "case temperature");
+        }
+
+        steps.Given("Tmax#", part.TjMax!.Value.Celsius, "degC", "Tj max of " + part.PartNumber, part.TjMax.Cell)
+            .Step("share", $"max(0, min(1, (Tmax# - {at}) / (Tmax# - 25 degC)))", string.Empty, "reduction, linear to zero at Tj max")
+            .Factor(rows.Own)
+            .Step("Iallowed", "Isoa x share x F", "A", "derated boundary")
+            .AtMost("IC#", "Iallowed", stress);
+    }
+
+    /// <inheritdoc/>
     public override string? DecidingCell(Transistor part) => part.Soa?.Cell;
 
     /// <summary>The boundary's current at a voltage [A].</summary>

@@ -21,11 +21,40 @@ public sealed class ChannelBinderTests
     }
 
     [Theory]
+    [InlineData("direct, -", true)]
+    [InlineData("-, Direct", false)]
+    public void OneLegMayBeSensedDirectly(string averaging, bool first)
+    {
+        board.Row["Pass"] = "Q1, Q3";
+        board.Row["Sense"] = "R3, R1";
+        board.Row["Averaging"] = averaging;
+        Channel channel = Assert.Single(board.Bind());
+        Assert.Empty(board.Complaints);
+        Assert.All(Assert.Single(channel.Readings).Legs, l => Assert.Null(l.Averaging));
+        Assert.Equal([first, !first], channel.Readings[0].Legs.Select(l => l.Sensed));
+        Assert.Equal(["Q1", "Q3", "R3", "R1", "Q2", "R2"], channel.References);
+    }
+
+    [Theory]
+    [InlineData("direct, direct")]
+    [InlineData("direct, R9")]
+    public void WhereSeveralLegsAreSensedNoneIsDirect(string averaging)
+    {
+        board.Row["Pass"] = "Q1, Q3";
+        board.Row["Sense"] = "R3, R1";
+        board.Row["Averaging"] = averaging;
+        Assert.Empty(Assert.Single(board.Bind()).Readings);
+        Assert.Contains("Only a leg that the control senses alone may be joined to it directly", board.Only(), StringComparison.Ordinal);
+    }
+
+    [Theory]
     [InlineData("Sense", "R77", "R77 (sense) is not on the bill.")]
     [InlineData("Sense", "Q3", "Q3 (sense) is a transistor: a resistor is wanted.")]
     [InlineData("Control", "R8", "R8 (control) is a resistor: a transistor is wanted.")]
     [InlineData("Sense", "R10", "R10 (sense) has zero ohm: only averaging may.")]
     [InlineData("Control", "Q1", "Q1 serves as pass and as control.")]
+    [InlineData("LED", "D1", "D1 (LED) is not on the bill.")]
+    [InlineData("LED", "R3", "R3 (LED) is a resistor: an LED is wanted.")]
     public void ARoleThatTheBillDoesNotServeIsAFault(string column, string reference, string text)
     {
         board.Row[column] = reference;
@@ -33,6 +62,28 @@ public sealed class ChannelBinderTests
         Assert.Equal(text, Assert.Single(channel.RoleFaults).Text);
         Assert.Empty(channel.Readings);
         Assert.Empty(board.Complaints);
+    }
+
+    [Fact]
+    public void AnLedIsNoResistor()
+    {
+        board.Parts[3] = "RK-33|led";
+        Assert.Equal("R1 (sense) is an LED: a resistor is wanted.", Assert.Single(Assert.Single(board.Bind()).RoleFaults).Text);
+    }
+
+    // Nothing is solved with an LED's row: what is missing of it stays with the LED.
+    [Theory]
+    [InlineData("D1|LW-3", "part table row of LW-3")]
+    [InlineData("D1", "part number of D1")]
+    [InlineData("D1|LW-4|Kelbrook", "part table row of LW-4 by Kelbrook")]
+    public void AnLedWithoutItsRowLeavesTheChannelToBeJudged(string line, string missing)
+    {
+        board.Row["LED"] = "D1";
+        board.Bill.Add(line);
+        board.Parts.Add("LW-4|led|Tarnwood");
+        Channel channel = Assert.Single(board.Bind());
+        Assert.Empty(channel.Missing);
+        Assert.Equal(missing, ((PartCheck.Parts.LedPart)Assert.Single(Assert.Single(channel.Readings).Leds).Part).Missing);
     }
 
     [Fact]

@@ -22,6 +22,7 @@ public sealed class DeratingLibraryTests
     [InlineData("stability", "npn", 0.5)]
     [InlineData("r-power", "resistor", 0.5)]
     [InlineData("r-voltage", "resistor", 0.8)]
+    [InlineData("led-current", "led", 0.8)]
     [InlineData("pin-current", null, 0.8)]
     public void TheWorkshopsFactors(string rule, string? kind, double factor)
     {
@@ -116,7 +117,9 @@ public sealed class DeratingLibraryTests
     public void ANumberThatWouldChangeNothingIsAComplaint(string column, string rule, string cell, string text)
     {
         Bills.TypedSheet typed = new();
-        Assert.Empty(DeratingReader.Read(Bills.TypedSheet.Of("d.csv", $"Name|Rule|{column}", $"t|{rule}|{cell}"), typed.Spellings, typed.List));
+        DeratingTable table = Assert.Single(DeratingReader.Read(Bills.TypedSheet.Of("d.csv", $"Name|Rule|{column}", $"t|{rule}|{cell}"), typed.Spellings, typed.List));
+        Assert.True(table.Unknown);
+        Assert.Empty(table.Rows);
         Assert.Contains(typed.Complaints, c => (c.Cell + " " + c.Text).Contains(text, StringComparison.Ordinal));
     }
 

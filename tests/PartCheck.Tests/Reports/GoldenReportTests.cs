@@ -1,10 +1,10 @@
 using System.Globalization;
-using System.Runtime.CompilerServices;
 using PartCheck.Channels;
 using PartCheck.OperatingPoints;
 using PartCheck.Reports;
 using PartCheck.Rules;
 using PartCheck.Sheets;
+using PartCheck.Tests.Golden;
 using Xunit;
 
 namespace PartCheck.Tests.Reports;
@@ -15,12 +15,12 @@ public class GoldenReportTests
     [Theory]
     [InlineData("")]
     [InlineData("de-DE")]
-    public void TextIsTheApprovedOneInAnyCulture(string culture) => In(culture, () => Approved("report.txt", TextReport.Write(Report(), colour: false)));
+    public void TextIsTheApprovedOneInAnyCulture(string culture) => In(culture, () => ApprovedFile.Holds("report.txt", TextReport.Write(Report(), colour: false)));
 
     [Theory]
     [InlineData("")]
     [InlineData("de-DE")]
-    public void JsonIsTheApprovedOneInAnyCulture(string culture) => In(culture, () => Approved("report.json", JsonReport.Write(Report())));
+    public void JsonIsTheApprovedOneInAnyCulture(string culture) => In(culture, () => ApprovedFile.Holds("report.json", JsonReport.Write(Report())));
 
     [Fact]
     public void NoLineIsLongerThanEightyColumns() =>
@@ -130,18 +130,6 @@ public class GoldenReportTests
             ],
             [new Complaint("lamps/board.xlsx", "Channels", 7, "Supply max", "D7", "twelve", "a voltage", "\"twelve\" is no number.") { Channel = "SHELF" }],
             [new InputFile("lamps/board.xlsx", new string('a', 64))]);
-    }
-
-    private static void Approved(string name, string received, [CallerFilePath] string file = "")
-    {
-        string golden = Path.Combine(Path.GetDirectoryName(file)!, "..", "Golden", name);
-        string approved = File.Exists(golden) ? File.ReadAllText(golden) : string.Empty;
-        if (approved != received)
-        {
-            File.WriteAllText(Path.ChangeExtension(golden, ".received" + Path.GetExtension(name)), received);
-        }
-
-        Assert.Equal(approved, received);
     }
 
     private static void In(string culture, Action check)

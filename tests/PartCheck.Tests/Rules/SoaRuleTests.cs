@@ -8,10 +8,8 @@ using Xunit;
 
 namespace PartCheck.Tests.Rules;
 
-public class SoaRuleTests : RuleTests
+public class SoaRuleTests : RuleTests<SoaRule>
 {
-    private static readonly SoaRule Rule = new();
-
     // IC rating 250 mA, DC boundary 5 V: 200 mA, 20 V: 80 mA, 40 V: 20 mA; Tj max 150 degC.
     private static readonly Transistor Part = SampleChannel.Transistor() with
     {
@@ -34,6 +32,8 @@ public class SoaRuleTests : RuleTests
     protected override Stress Above() => Judge(Part, 20, 0.0321, 87.5, 0.8);
 
     protected override Stress WithoutTheRating() => Judge(Part with { TjMax = null }, 10, 0.1);
+
+    protected override bool AskedByNobody() => States.Asks(Rule, States.BareTransistor, SampleChannel.Channel(1));
 
     // 10 V: ln 2/ln 4 = 1/2 of the way: sqrt(200 x 80) = 126.491 mA. 28.2843 V = 20 V x sqrt 2: sqrt(80 x 20) = 40 mA.
     // 8 V: ln 1.6/ln 4 = 0.339036; 200 x exp(-0.916291 x 0.339036) = 200 x 0.732966 = 146.593 mA. Below 5 V the IC rating.
