@@ -221,6 +221,9 @@ public sealed class SolvedState
     /// <summary>Resistors.</summary>
     public required IReadOnlyList<ResistorPoint> Resistors { get; init; }
 
+    /// <summary>The circuit that was solved, as numbers; null: the state was not solved.</summary>
+    public SinkCircuit? Circuit { get; init; }
+
     /// <summary>Edge of regulation (state on, h = 0); null elsewhere.</summary>
     public DriveEdge? Drive { get; init; }
 }
