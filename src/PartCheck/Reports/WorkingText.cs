@@ -78,6 +78,14 @@ public sealed partial class WorkingText
         string whom = TextReport.Joined(" ", f.Channel, f.Rule, FindingText.Subject([f]));
         string missing = f.Missing.Count > 0 ? "missing " + string.Join(", ", f.Missing) : string.Empty;
         Columns80.Wrap(text, string.Empty, $"{whom}: {VerdictWords.Of(f.Verdict).ToUpperInvariant()}" + Led("; ", TextReport.Joined("; ", FindingText.Numbers(f), f.Text, missing)), 2);
+        foreach (string beside in (string[])[FindingText.Mix(f), FindingText.Accepted(f)])
+        {
+            if (beside.Length > 0)
+            {
+                Columns80.Wrap(text, "  ", beside, 4);
+            }
+        }
+
         if (FindingText.Corner(f) is { Length: > 0 } corner)
         {
             Columns80.Wrap(text, "  ", corner, 4);

@@ -93,7 +93,7 @@ internal static class CircuitSymbols
             .Step("Rball" + n, !sensed || basis.Model.OneLegSensed ? $"Rs{n}" : averaged ? $"Rs{n} x Ra{n} / (Rs{n} + Ra{n})" : "0 ohm", "ohm", "ballast of " + who);
     }
 
-    private static string GainEnd(Extreme end) => end switch { Extreme.Min => "hFE min", Extreme.Max => "hFE max", _ => "hFE has one value" };
+    private static string GainEnd(Extreme end) => end switch { Extreme.Min => "hFE min", Extreme.Max => "hFE max", Extreme.Inside => "hFE inside its window", _ => "hFE has one value" };
 
     private static void AddLoad(Derivation book, FindingBasis basis, IReadOnlyList<LegView> legs)
     {
