@@ -109,7 +109,10 @@ public static partial class CheckRun
         BoardReport board = check.Boards[0];
         fault = null;
         IReadOnlyList<Finding> findings = board.Channels.Count == 0 ? [] : selection.Of(board, out fault);
-        return new WorkingReport(check, selection.Name(board) ?? string.Empty, [.. findings.Select(FindingWorking.Of)]);
+        return new WorkingReport(check, selection.Name(board) ?? string.Empty, [.. findings.Select(FindingWorking.Of)])
+        {
+            EveryCheck = selection.Rule is not null || selection.Reference is not null,
+        };
     }
 
     private static string Folder(string file) => Path.GetDirectoryName(Path.GetFullPath(file)) ?? ".";
