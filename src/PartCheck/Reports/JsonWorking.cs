@@ -23,7 +23,7 @@ public static class JsonWorking
             json.Text("board", report.Board.Board);
             json.Text("channel", report.Channel);
             json.Text("verdict", VerdictWords.Of(report.Verdict));
-            json.Text("derating", report.Board.Channels.FirstOrDefault(c => c.Channel == report.Channel)?.Derating ?? report.Board.Derating);
+            json.Text("derating", report.Derating);
             json.Text("deratingNote", report.Board.DeratingNote);
             json.List("workings", report.Workings, WriteOne);
             json.List("assumed", report.Assumed, JsonReport.WriteAssumed);
@@ -42,9 +42,9 @@ public static class JsonWorking
         json.WriteStartObject("finding");
         JsonFinding.Write(json, working.Finding);
         json.WriteEndObject();
-        json.Text("actual", working.Actual);
-        json.Text("allowed", working.Allowed);
-        json.Text("stressRatio", working.Ratio);
+        json.Text("actualSymbol", working.Actual);
+        json.Text("allowedSymbol", working.Allowed);
+        json.Text("ratioSymbol", working.Ratio);
         json.List("steps", working.Lines, WriteLine);
         json.List("checks", working.Checks, WriteLine);
     }

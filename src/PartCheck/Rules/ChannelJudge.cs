@@ -66,7 +66,7 @@ public sealed class ChannelJudge
             total.Merge(chunk);
         }
 
-        return Conclude(total, pin);
+        return Conclude(total, pin, driveFactor, threads, cancel);
     }
 
     /// <summary>
@@ -77,10 +77,10 @@ public sealed class ChannelJudge
     /// <param name="cancel">Stops the search.</param>
     public ReadingJudgement JudgeDirected(PinSource pin, CancellationToken cancel)
     {
-        double driveFactor = Math.Max(derating.For("drive").Limit ?? 1, 1.2);
+        double driveFactor = derating.For("drive").Limit ?? 1;
         Accumulator total = new(rules.Count, model.Slots.Count + 1);
         CornerScores scores = new(model, rules.Count, pin);
-        DirectedCorners search = new(new CornerBatch(model, pin, driveFactor), state =>
+        DirectedCorners search = new(new CornerBatch(model, pin, Math.Max(driveFactor, 1.2)), state =>
         {
             scores.Begin(state);
             total.Scores = scores;
@@ -95,10 +95,11 @@ public sealed class ChannelJudge
         }
 
         total.Scores = null;
-        return Conclude(total, pin);
+        return Conclude(total, pin, driveFactor, 1, cancel);
     }
 
-    private ReadingJudgement Conclude(Accumulator total, PinSource pin)
+    /// <summary>The pin low, the knees inside the box, the nominal state; then the findings.</summary>
+    private ReadingJudgement Conclude(Accumulator total, PinSource pin, double driveFactor, int threads, CancellationToken cancel)
     {
         foreach (double ambient in (ReadOnlySpan<double>)[model.Channel.Conditions.Ambient.Min.Kelvins, model.Channel.Conditions.Ambient.Max.Kelvins])
         {
@@ -112,17 +113,75 @@ public sealed class ChannelJudge
             }
         }
 
+        Climb(total, new KneeSearch(model, pin), driveFactor, threads, cancel);
         SolvedState? nominal = WorstCase.Nominal(model, pin);
         return new ReadingJudgement(model.Channel, Findings(total, pin), nominal, total.LoadMin, total.LoadMax, total.PinMax, total.Corners, total.NotSolved + (nominal is null ? 1 : 0))
         {
             HeatMax = total.HeatMax,
-            PinState = total.PinState,
+            PinState = total.MostPin,
             Assumed = total.ControlHeld
                 ? [new Assumption("hFE of the control beyond its points", model.Control.Part.PartNumber, "the outermost value held")]
                 : [],
             Hottest = [.. Enumerable.Range(0, model.Slots.Count).Where(s => total.Hottest[s] > 0)
                 .SelectMany(s => model.Slots.Of(s).Select(p => (p.Reference, total.Hottest[s])))],
         };
+    }
+
+    /// <summary>From every worst corner to the knee that may be worse still.</summary>
+    private void Climb(Accumulator total, KneeSearch search, double driveFactor, int threads, CancellationToken cancel)
+    {
+        List<(int Rule, int Slot)> keys = [];
+        for (int r = 0; r < rules.Count; r++)
+        {
+            for (int s = 0; s <= model.Slots.Count; s++)
+            {
+                if (applies[r, s] && total.At(r, s).State is not null)
+                {
+                    keys.Add((r, s));
+                }
+            }
+        }
+
+        List<SolvedState?> peaks = [.. Enumerable.Repeat<SolvedState?>(null, keys.Count + 4)];
+        ParallelOptions options = new() { CancellationToken = cancel, MaxDegreeOfParallelism = threads > 0 ? threads : -1 };
+        Parallel.For(0, keys.Count, options, i =>
+        {
+            (int r, int s) = keys[i];
+            double? edge = rules[r] is DriveRule ? Math.Max(driveFactor, 1.2) : null;
+            peaks[i] = search.Climb(total.At(r, s).State!, edge, state => Measure(r, s, state));
+        });
+        for (int i = 0; i < keys.Count; i++)
+        {
+            if (peaks[i] is { } peak)
+            {
+                Take(total.At(keys[i].Rule, keys[i].Slot), keys[i].Rule, keys[i].Slot, peak);
+            }
+        }
+
+        foreach (SolvedState? peak in (ReadOnlySpan<SolvedState?>)[
+            total.LeastLoad is { } least ? search.Climb(least, null, s => -s.LoadCurrent) : null,
+            total.MostLoad is { } most ? search.Climb(most, null, s => s.LoadCurrent) : null,
+            total.MostPin is { } pin ? search.Climb(pin, null, s => s.PinCurrent) : null,
+            total.MostHeat is { } heat ? search.Climb(heat, null, Heat) : null])
+        {
+            if (peak is not null)
+            {
+                total.TakeExtremes(peak, Heat(peak));
+            }
+        }
+    }
+
+    /// <summary>The ratio of a rule at a slot in a state, infinite where it is nonconforming at any size; NaN: not judged there.</summary>
+    private double Measure(int r, int s, SolvedState state)
+    {
+        if (!rules[r].Reads(state))
+        {
+            return double.NaN;
+        }
+
+        Worst worst = new();
+        Take(worst, r, s, state);
+        return worst.State is null ? double.NaN : worst.Stress.Ratio ?? double.PositiveInfinity;
     }
 
     /// <summary>Heat while on of everything on the board that belongs to the channel, the load left out [W].</summary>
@@ -152,22 +211,14 @@ public sealed class ChannelJudge
             return;
         }
 
+        into.TakeExtremes(state, state.State == ChannelState.On ? Heat(state) : 0);
         if (state.State == ChannelState.On)
         {
-            into.LoadMin = Math.Min(into.LoadMin, state.LoadCurrent);
-            into.LoadMax = Math.Max(into.LoadMax, state.LoadCurrent);
-            into.HeatMax = Math.Max(into.HeatMax, Heat(state));
             into.ControlHeld |= !state.ControlGainGuaranteed;
             foreach (TransistorPoint point in (TransistorPoint[])state.Transistors)
             {
                 into.Hottest[point.Slot] = Math.Max(into.Hottest[point.Slot], point.Tj);
             }
-        }
-
-        if (state.PinCurrent > into.PinMax)
-        {
-            into.PinMax = state.PinCurrent;
-            into.PinState = state;
         }
 
         int channelSlot = model.Slots.Count;
@@ -178,43 +229,80 @@ public sealed class ChannelJudge
                 continue;
             }
 
-            switch (rules[r])
+            for (int slot = 0; slot <= channelSlot; slot++)
             {
-                case TransistorRule rule:
-                    TransistorPoint[] transistors = (TransistorPoint[])state.Transistors;
-                    for (int i = 0; i < transistors.Length; i++)
-                    {
-                        ref readonly TransistorPoint point = ref transistors[i];
-                        if (applies[r, point.Slot])
-                        {
-                            into.Take(r, point.Slot, i, rule.Evaluate(state, point, model.Channel, rows[r, point.Slot]), state);
-                        }
-                    }
-
-                    break;
-                case ResistorRule rule:
-                    for (int i = 0; i < state.Resistors.Count; i++)
-                    {
-                        ResistorPoint point = state.Resistors[i];
-                        if (applies[r, point.Slot])
-                        {
-                            into.Take(r, point.Slot, i, rule.Evaluate(state, point, model.Channel, rows[r, point.Slot]), state);
-                        }
-                    }
-
-                    break;
-                case LedRule rule:
-                    for (int s = model.Slots.FirstLed; s < model.Slots.Count; s++)
-                    {
-                        into.Take(r, s, s - model.Slots.FirstLed, rule.Evaluate(state, (LedPart)model.Slots.Of(s)[0].Part, model.Channel, rows[r, s]), state);
-                    }
-
-                    break;
-                case ChannelRule rule when applies[r, channelSlot]:
-                    into.Take(r, channelSlot, 0, rule.Evaluate(state, model.Channel, rows[r, channelSlot]), state);
-                    break;
+                if (applies[r, slot])
+                {
+                    Take(into.At(r, slot), r, slot, state, into.Scores);
+                }
             }
         }
+    }
+
+    /// <summary>What a rule says of every point of a slot.</summary>
+    private void Take(Worst into, int r, int slot, SolvedState state, CornerScores? scores = null)
+    {
+        void Keep(int position, in Stress stress)
+        {
+            into.Take(stress, state);
+            scores?.Take(r, position, stress);
+        }
+
+        switch (rules[r])
+        {
+            case TransistorRule rule:
+                TransistorPoint[] transistors = (TransistorPoint[])state.Transistors;
+                for (int i = 0; i < transistors.Length; i++)
+                {
+                    if (transistors[i].Slot == slot)
+                    {
+                        Keep(i, rule.Evaluate(state, transistors[i], model.Channel, rows[r, slot]));
+                    }
+                }
+
+                break;
+            case ResistorRule rule:
+                for (int i = 0; i < state.Resistors.Count; i++)
+                {
+                    if (state.Resistors[i].Slot == slot)
+                    {
+                        Keep(i, rule.Evaluate(state, state.Resistors[i], model.Channel, rows[r, slot]));
+                    }
+                }
+
+                break;
+            case LedRule rule:
+                Keep(slot - model.Slots.FirstLed, rule.Evaluate(state, (LedPart)model.Slots.Of(slot)[0].Part, model.Channel, rows[r, slot]));
+                break;
+            case ChannelRule rule:
+                Keep(0, rule.Evaluate(state, model.Channel, rows[r, slot]));
+                break;
+        }
+    }
+
+    /// <summary>What every rule says of one state: rule, reference (null: the channel) and stress, worst of the points of a slot.</summary>
+    public IReadOnlyList<(string Rule, string? Reference, Stress Stress)> Evaluate(SolvedState state)
+    {
+        ArgumentNullException.ThrowIfNull(state);
+        List<(string, string?, Stress)> found = [];
+        for (int r = 0; r < rules.Count; r++)
+        {
+            for (int slot = 0; slot <= model.Slots.Count && rules[r].Reads(state); slot++)
+            {
+                Worst worst = new();
+                if (applies[r, slot])
+                {
+                    Take(worst, r, slot, state);
+                }
+
+                if (worst.State is not null)
+                {
+                    found.Add((rules[r].Id, slot == model.Slots.Count ? null : model.Slots.Of(slot)[0].Reference, worst.Stress));
+                }
+            }
+        }
+
+        return found;
     }
 
     /// <summary>A corner without a solution: nothing that reads its state is verified.</summary>
@@ -286,6 +374,7 @@ public sealed class ChannelJudge
             Reference = placement?.Reference,
             PartNumber = placement?.Part.PartNumber,
             Manufacturer = placement?.Part.Manufacturer,
+            Mix = model.Channel.Mix,
             State = worst.State?.State,
             Actual = judged && double.IsFinite(stress.Actual) ? stress.Actual : null,
             ActualIsAtLeast = stress.AtLeast,
@@ -310,15 +399,21 @@ public sealed class ChannelJudge
 
         public int NotSolved { get; set; }
 
-        public double LoadMin { get; set; } = double.PositiveInfinity;
+        public SolvedState? LeastLoad { get; private set; }
 
-        public double LoadMax { get; set; } = double.NegativeInfinity;
+        public SolvedState? MostLoad { get; private set; }
 
-        public double PinMax { get; set; }
+        public SolvedState? MostPin { get; private set; }
 
-        public SolvedState? PinState { get; set; }
+        public SolvedState? MostHeat { get; private set; }
 
-        public double HeatMax { get; set; }
+        public double LoadMin => LeastLoad?.LoadCurrent ?? double.PositiveInfinity;
+
+        public double LoadMax => MostLoad?.LoadCurrent ?? double.NegativeInfinity;
+
+        public double PinMax => Math.Max(0, MostPin?.PinCurrent ?? 0);
+
+        public double HeatMax { get; private set; }
 
         public bool ControlHeld { get; set; }
 
@@ -327,10 +422,22 @@ public sealed class ChannelJudge
         /// <summary>Takes the scores of a directed search; null: none.</summary>
         public CornerScores? Scores { get; set; }
 
-        public void Take(int rule, int slot, int position, in Stress stress, SolvedState state)
+        /// <summary>Load current and heat of the states on, pin current of all.</summary>
+        public void TakeExtremes(SolvedState state, double heat)
         {
-            At(rule, slot).Take(stress, state);
-            Scores?.Take(rule, position, stress);
+            MostPin = MostPin is null || state.PinCurrent > MostPin.PinCurrent ? state : MostPin;
+            if (state.State != ChannelState.On)
+            {
+                return;
+            }
+
+            LeastLoad = LeastLoad is null || state.LoadCurrent < LeastLoad.LoadCurrent ? state : LeastLoad;
+            MostLoad = MostLoad is null || state.LoadCurrent > MostLoad.LoadCurrent ? state : MostLoad;
+            if (MostHeat is null || heat > HeatMax)
+            {
+                MostHeat = state;
+                HeatMax = heat;
+            }
         }
 
         public Worst At(int rule, int slot) => worst[(rule * slots) + slot] ??= new Worst();
@@ -339,10 +446,19 @@ public sealed class ChannelJudge
         {
             Corners += later.Corners;
             NotSolved += later.NotSolved;
-            LoadMin = Math.Min(LoadMin, later.LoadMin);
-            LoadMax = Math.Max(LoadMax, later.LoadMax);
-            (PinMax, PinState) = later.PinMax > PinMax ? (later.PinMax, later.PinState) : (PinMax, PinState);
-            HeatMax = Math.Max(HeatMax, later.HeatMax);
+            foreach (SolvedState? state in (ReadOnlySpan<SolvedState?>)[later.LeastLoad, later.MostLoad, later.MostPin])
+            {
+                if (state is not null)
+                {
+                    TakeExtremes(state, double.NegativeInfinity);
+                }
+            }
+
+            if (later.MostHeat is { } hot)
+            {
+                TakeExtremes(hot, later.HeatMax);
+            }
+
             ControlHeld |= later.ControlHeld;
             for (int s = 0; s < slots; s++)
             {

@@ -83,7 +83,14 @@ internal sealed class CornerScores
     }
 
     /// <summary>Takes a rule's stress at a position.</summary>
-    public void Take(int rule, int position, in Stress stress) => scores[(rule * Positions) + position] = stress.Severity;
+    public void Take(int rule, int position, in Stress stress)
+    {
+        // Positions beyond the room for them (LEDs of many kinds) follow the load current, which is scored by itself.
+        if (position < Positions)
+        {
+            scores[(rule * Positions) + position] = stress.Severity;
+        }
+    }
 
     /// <summary>The scores of the state begun.</summary>
     public double[] Taken() => scores;

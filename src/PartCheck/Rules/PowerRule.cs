@@ -101,12 +101,18 @@ public sealed class PowerRule : TransistorRule
             steps.Step("Pth", "(Tmax# - Ta) / RthJA#", "W", "what the thermal resistance lets through up to Tj max");
         }
 
+        bool averaged = point.AveragedShare != 1;
+        if (averaged)
+        {
+            steps.Step("Pmean", "d x P#", "W", "average over the period, from 1 kHz up");
+        }
+
         bool none = ambient >= part.TjMax?.Value.Kelvins;
         steps.Factor(rows.Own)
             .Step(
                 "Pallowed", none ? "0 W" : thermal ? "F x max(0, min(Pline, Pth))" : "F x max(0, Pline)", "W",
                 none ? "nothing: the ambient is at or above Tj max" : "derated power")
-            .AtMost("P#", "Pallowed", stress);
+            .AtMost(averaged ? "Pmean" : "P#", "Pallowed", stress);
     }
 
     /// <inheritdoc/>

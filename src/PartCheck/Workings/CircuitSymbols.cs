@@ -1,7 +1,6 @@
 using System.Globalization;
 using PartCheck.Channels;
 using PartCheck.OperatingPoints;
-using PartCheck.Quantities;
 using PartCheck.Rules;
 
 namespace PartCheck.Workings;
@@ -23,7 +22,7 @@ internal static class CircuitSymbols
         TransistorPoint control = state.Transistors[^1];
         string who = model.Channel.Control.Reference;
         book.Solved("Vb", state.BaseVoltage, "V", "base node")
-            .Solved("Vx", state.ControlBaseVoltage, "V", $"base of the control {who}: its VBE at its current and temperature")
+            .Solved("Vx", state.ControlBaseVoltage, "V", VxMeaning(model, who, legs))
             .Solved("IC0", control.Ic, "A", "collector current of the control " + who)
             .Solved("IB0", control.Ib, "A", "base current of the control " + who)
             .Step("VCE0", "Vb", "V", $"collector-emitter voltage of {who}: the base node")
@@ -39,8 +38,14 @@ internal static class CircuitSymbols
         }
 
         AddLoad(book, basis, legs);
-        AddTemperatures(book, basis, legs);
+        HeatSymbols.Add(book, basis, legs);
         AddBalances(book, basis, legs, feed);
+    }
+
+    private static string VxMeaning(ChannelModel model, string who, IReadOnlyList<LegView> legs)
+    {
+        string emitters = string.Join(", ", legs.Where(l => model.Classes[l.Class].First.Sensed && model.Averaging[l.Class] is not { Nominal: > 0 }).Select(l => l.Who));
+        return $"base of the control {who}: its VBE at its current and temperature" + (emitters.Length == 0 ? string.Empty : $"; the emitter of {emitters}");
     }
 
     private static void AddLeg(Derivation book, FindingBasis basis, LegView leg, int groups)
@@ -72,7 +77,7 @@ internal static class CircuitSymbols
         book.Step("IE" + n, through, "A", "emitter current of " + who);
         if (state.State == ChannelState.On && q is { Ic: > 0, Ib: > 0 })
         {
-            book.Solved("hFE" + n, q.Ic / q.Ib, string.Empty, $"gain of {who} in this corner, at its current, VCE and temperature")
+            book.Solved("hFE" + n, q.Ic / q.Ib, string.Empty, $"gain of {who} in this corner ({GainEnd(leg.Odd ? state.Corner.OddPass.Hfe : state.Corner.Pass.Hfe)}), at its current, VCE and temperature", q.Part.Hfe?.Cell ?? q.Part.Card?.Cell)
                 .Step("IC" + n, $"IE{n} x hFE{n} / (hFE{n} + 1)", "A", "collector current of " + who)
                 .Step("IB" + n, $"IE{n} / (hFE{n} + 1)", "A", "base current of " + who);
         }
@@ -85,8 +90,10 @@ internal static class CircuitSymbols
             .Step("VBE" + n, $"Vb - VE{n}", "V", "base-emitter voltage of " + who)
             .Step("VCB" + n, "Vc - Vb", "V", "collector-base voltage of " + who)
             .Step("P" + n, $"VCE{n} x IC{n} + VBE{n} x IB{n}", "W", "dissipation of " + who)
-            .Step("Rball" + n, sensed ? averaged ? $"Rs{n} x Ra{n} / (Rs{n} + Ra{n})" : "0 ohm" : $"Rs{n}", "ohm", "ballast of " + who);
+            .Step("Rball" + n, !sensed || basis.Model.OneLegSensed ? $"Rs{n}" : averaged ? $"Rs{n} x Ra{n} / (Rs{n} + Ra{n})" : "0 ohm", "ohm", "ballast of " + who);
     }
+
+    private static string GainEnd(Extreme end) => end switch { Extreme.Min => "hFE min", Extreme.Max => "hFE max", Extreme.Inside => "hFE inside its window", _ => "hFE has one value" };
 
     private static void AddLoad(Derivation book, FindingBasis basis, IReadOnlyList<LegView> legs)
     {
@@ -112,63 +119,6 @@ internal static class CircuitSymbols
         book.Step("nVT", "2 x LEDs x kq x 298.15 K", "V", "slope of the string's exponential: twice the LEDs, VT at 25 degC")
             .Step("Vload", load, "V", "drop of the load at its current")
             .Step("Vc", "Vsupply - Vload", "V", "joined collectors, the low end of the load");
-    }
-
-    private static void AddTemperatures(Derivation book, FindingBasis basis, IReadOnlyList<LegView> legs)
-    {
-        SolvedState state = basis.State;
-        ChannelModel model = basis.Model;
-        bool warm = state.Corner.Heat == 1;
-        List<string> heat = [];
-        int hottest = -1;
-        foreach (LegView leg in legs)
-        {
-            TransistorPoint q = state.Transistors[leg.Index];
-            AddThermal(book, q, leg.N, leg.Who, warm, []);
-            if (hottest < 0 || q.RthJa * q.Power > state.Transistors[hottest].RthJa * state.Transistors[hottest].Power)
-            {
-                hottest = leg.Index;
-            }
-
-            if (warm && model.CouplingGiven && q.Part.Coupling is { } coupling)
-            {
-                book.Given("Kc" + leg.N, coupling.Value.KelvinsPerWatt, "K/W", $"heating of the control by {leg.Who}", coupling.Cell);
-                heat.Add(Times(q.Count, $"Kc{leg.N} x P{leg.N}"));
-            }
-        }
-
-        if (warm && state.Corner.AssumedCoupling is > 0 and var share && hottest >= 0)
-        {
-            string n = legs.First(l => l.Index == hottest).N;
-            book.Given("share", share, string.Empty, "share of the hottest leg's RthJA that heats the control", assumed: true);
-            heat.Add($"share x RthJA{n} x P{n}");
-        }
-
-        AddThermal(book, state.Transistors[^1] with { RthJa = model.ControlRth ?? double.NaN }, "0", model.Channel.Control.Reference, warm, heat);
-    }
-
-    private static void AddThermal(Derivation book, in TransistorPoint q, string n, string who, bool warm, List<string> more)
-    {
-        if (q.Part.RthJa is { } given)
-        {
-            book.Given("RthJA" + n, given.Value.KelvinsPerWatt, "K/W", "thermal resistance of " + q.Part.PartNumber, given.Cell);
-        }
-        else if (!double.IsNaN(q.RthJa))
-        {
-            book.Given("Tmax" + n, q.Part.TjMax!.Value.Celsius, "degC", "Tj max of " + q.Part.PartNumber, q.Part.TjMax.Cell)
-                .Given("Tflat" + n, q.Part.FlatTo.Celsius, "degC", "the rated power holds up to here", q.Part.PowerFlatTo?.Cell, assumed: q.Part.PowerFlatTo is null)
-                .Given("Prated" + n, q.Part.Power!.Value.Watts, "W", "rated power of " + q.Part.PartNumber, q.Part.Power.Cell)
-                .Step("RthJA" + n, $"(Tmax{n} - Tflat{n}) / Prated{n}", "K/W", $"thermal resistance of {q.Part.PartNumber}: none is given (assumed)");
-        }
-
-        if (q.Held)
-        {
-            book.Given("Tj" + n, q.Tj - Temperature.CelsiusZero, "degC", $"junction of {who}, held where it runs away: at least this");
-            return;
-        }
-
-        string formula = !warm ? "Ta" : string.Join(" + ", [$"Ta + RthJA{n} x P{n}", .. more]);
-        book.Step("Tj" + n, formula, "degC", $"junction temperature of {who}{(warm ? string.Empty : ", just switched on")}");
     }
 
     private static void AddBalances(Derivation book, FindingBasis basis, IReadOnlyList<LegView> legs, string feed)
@@ -200,5 +150,5 @@ internal static class CircuitSymbols
         }
     }
 
-    private static string Times(int count, string term) => count == 1 ? term : string.Create(CultureInfo.InvariantCulture, $"{count} x {term}");
+    internal static string Times(int count, string term) => count == 1 ? term : string.Create(CultureInfo.InvariantCulture, $"{count} x {term}");
 }

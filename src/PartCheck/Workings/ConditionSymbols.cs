@@ -21,29 +21,31 @@ internal static class ConditionSymbols
         bool hottest = corner.Ambient == c.Ambient.Max.Kelvins;
         book.Given(
                 "Ta", corner.Ambient - Temperature.CelsiusZero, "degC",
-                coldest || hottest ? "ambient" : "ambient: inside the range, where a rated power starts to fall",
+                coldest || hottest ? "ambient" : "ambient: inside the range, where a rated power starts to fall or the ratio peaks",
                 coldest ? Cell("Ambient min") : hottest ? Cell("Ambient max") : null)
-            .Given("Vsupply", corner.Supply, "V", "load supply", Cell(corner.Supply == c.Supply.Min.Volts ? "Supply min" : "Supply max"))
-            .Given("Vdrop", corner.LoadDrop, "V", "drop of the load at Iref", Cell(corner.LoadDrop == c.LoadDrop.Min.Volts ? "Load drop min" : "Load drop max"))
+            .Given("Vsupply", corner.Supply, "V", "load supply" + Inside(corner.Supply, c.Supply), Cell(corner.Supply == c.Supply.Min.Volts ? "Supply min" : "Supply max"))
+            .Given("Vdrop", corner.LoadDrop, "V", "drop of the load at Iref" + Inside(corner.LoadDrop, c.LoadDrop), Cell(corner.LoadDrop == c.LoadDrop.Min.Volts ? "Load drop min" : "Load drop max"))
             .Given("Iref", c.CurrentNominal.Amperes, "A", "current at which the drop holds (Current nominal, or the window's centre)", Cell("Current nominal"))
             .Given("Rload", c.LoadSlope.Ohms, "ohm", "ohmic part of the load", Cell("Load slope"))
             .Given("LEDs", c.Leds, string.Empty, "LEDs in the string", Cell("LEDs"))
+            .Given("d", c.Duty, string.Empty, "largest duty", Cell("Duty max"))
+            .Given("f", c.Frequency?.Hertz ?? 0, "Hz", "PWM frequency", Cell("Frequency"))
             .Given("kq", PhysicalConstants.BoltzmannOverCharge, "V/K", "Boltzmann constant over elementary charge (SI, exact)");
         AddPin(book, basis);
         foreach (LegView leg in legs)
         {
             Leg first = model.Classes[leg.Class].First;
-            AddResistance(book, "Rs" + leg.N, model.Sense[leg.Class], basis.State, leg.Odd ? corner.OddSense : corner.Sense, $"sense resistor {first.Sense.Part.PartNumber} of {leg.Who}");
+            AddResistance(book, "Rs" + leg.N, model.Sense[leg.Class], basis.State, basis.State.Circuit?.Legs[leg.Index].Sense, leg.Odd ? corner.OddSense : corner.Sense, $"sense resistor {first.Sense.Part.PartNumber} of {leg.Who}");
             if (model.Averaging[leg.Class] is { } averaging)
             {
-                AddResistance(book, "Ra" + leg.N, averaging, basis.State, leg.Odd ? corner.OddAveraging : corner.Averaging, $"averaging resistor {averaging.Part.PartNumber} of {leg.Who}");
+                AddResistance(book, "Ra" + leg.N, averaging, basis.State, basis.State.Circuit?.Legs[leg.Index].Averaging, leg.Odd ? corner.OddAveraging : corner.Averaging, $"averaging resistor {averaging.Part.PartNumber} of {leg.Who}");
             }
         }
 
-        AddResistance(book, "Rf", model.Feed, basis.State, corner.Feed, "feed resistor " + model.Channel.Feed.Reference);
+        AddResistance(book, "Rf", model.Feed, basis.State, basis.State.Circuit?.Feed, corner.Feed, "feed resistor " + model.Channel.Feed.Reference);
         if (model.PullDown is { } down)
         {
-            AddResistance(book, "Rp", down, basis.State, corner.PullDown, "pull-down resistor " + model.Channel.PullDown!.Reference);
+            AddResistance(book, "Rp", down, basis.State, basis.State.Circuit?.PullDown, corner.PullDown, "pull-down resistor " + model.Channel.PullDown!.Reference);
         }
 
         if (model.Channel is { PullDown: not null, PullDownAt: PullDownAt.Pin })
@@ -52,6 +54,9 @@ internal static class ConditionSymbols
                 .Step("Rsource", "Rf + Rpin x Rp / (Rp + Rpin)", "ohm", "resistance of that source, feed included");
         }
     }
+
+    private static string Inside(double volts, Interval<Voltage> range) =>
+        volts > range.Min.Volts && volts < range.Max.Volts ? ", inside its range, where the ratio peaks" : string.Empty;
 
     /// <summary>Voltage and resistance of the pin, from the row's guaranteed levels.</summary>
     private static void AddPin(Derivation book, FindingBasis basis)
@@ -69,6 +74,13 @@ internal static class ConditionSymbols
             }
 
             book.Given("Rpin", corner.PinResistance, "ohm", "its resistance to ground", logic.Cell);
+            return;
+        }
+
+        if (corner.PinLevel != basis.Pin.WeakVoltage && corner.PinLevel != basis.Pin.StrongVoltage)
+        {
+            book.Given("Vpin", corner.PinLevel, "V", "level of the pin, inside its range, where the ratio peaks", logic.Cell)
+                .Given("Rpin", corner.PinResistance, "ohm", "its source resistance there", logic.Cell);
             return;
         }
 
@@ -98,12 +110,18 @@ internal static class ConditionSymbols
     }
 
     /// <summary>R (1 +- tolerance)(1 +- TCR abs(T - 20 degC)) at one end.</summary>
-    private static void AddResistance(Derivation book, string symbol, ResistorRange range, SolvedState state, Extreme end, string who)
+    private static void AddResistance(Derivation book, string symbol, ResistorRange range, SolvedState state, double? solved, Extreme end, string who)
     {
         ResistorPart part = range.Part;
         if (state.Index < 0 || end == Extreme.Typical || range.Nominal == 0)
         {
             book.Given(symbol, range.Nominal, "ohm", who, part.Resistance.Cell);
+            return;
+        }
+
+        if (end == Extreme.Inside)
+        {
+            book.Given(symbol, solved ?? range.Nominal, "ohm", who + ", inside its range, where the ratio peaks", part.Resistance.Cell);
             return;
         }
 

@@ -1,5 +1,6 @@
 using PartCheck.Channels;
 using PartCheck.OperatingPoints;
+using PartCheck.Parts;
 using PartCheck.Quantities;
 using PartCheck.Rules;
 
@@ -49,13 +50,12 @@ public static class FindingWorking
         CircuitSymbols.Add(book, basis, legs);
         Corner corner = state.Corner;
         DeviceSymbols.Add(
-            book, state.Transistors[^1], state.Index < 0 ? model.Control.Nominal : model.Control.At(corner.Control), "0", model.Channel.Control.Reference,
-            DeviceSymbols.EndOf(corner.Control.Vbe), DeviceSymbols.CellOf(model.Control.Part));
+            book, state.Transistors[^1], ControlDevice(model, state), "0", model.Channel.Control.Reference, corner.Control.Vbe, model.Control);
         foreach (LegView leg in legs)
         {
             DeviceSymbols.Add(
                 book, state.Transistors[leg.Index], leg.Device(model, state), leg.N, leg.Who,
-                DeviceSymbols.EndOf(leg.Odd ? corner.OddPass.Vbe : corner.Pass.Vbe), DeviceSymbols.CellOf(model.Pass[leg.Class].Part));
+                leg.Odd ? corner.OddPass.Vbe : corner.Pass.Vbe, model.Pass[leg.Class]);
         }
 
         int point = basis.Point;
@@ -70,6 +70,10 @@ public static class FindingWorking
                 rule = new Derivation(resistance: AddResistor(book, basis, point, legs));
                 of.Derive(rule, state, state.Resistors[point], model.Channel, basis.Rows, basis.Stress);
                 break;
+            case LedRule of:
+                rule = new Derivation();
+                of.Derive(rule, state, (LedPart)model.Slots.Of(basis.Slot)[0].Part, model.Channel, basis.Rows, basis.Stress);
+                break;
             default:
                 rule = new Derivation();
                 ((ChannelRule)basis.Rule).Derive(rule, state, model.Channel, basis.Rows, basis.Stress);
@@ -78,6 +82,12 @@ public static class FindingWorking
 
         return rule;
     }
+
+    /// <summary>The control's device in this corner, or where a ratio peaks inside its windows.</summary>
+    private static Devices.BipolarDevice ControlDevice(ChannelModel model, SolvedState state) =>
+        state.Index < 0 ? model.Control.Nominal
+        : state.Circuit is { } circuit && (state.Corner.Control.Vbe == Extreme.Inside || state.Corner.Control.Hfe == Extreme.Inside) ? circuit.Control
+        : model.Control.At(state.Corner.Control);
 
     /// <summary>Voltage, current and power of the resistor judged.</summary>
     /// <returns>Symbol of its resistance.</returns>
@@ -124,12 +134,12 @@ public static class FindingWorking
 
         if (rule.Actual is { } actual && finding.Actual is { } said)
         {
-            chain.Hold(actual, Shown(said), finding.Rule == "vcb" ? 1 : 0);
+            chain.Hold(actual, Shown(said), Magnitude(finding));
         }
 
         if (rule.Allowed is { } allowed && finding.Allowed is { } limit)
         {
-            chain.Hold(allowed, Shown(limit));
+            chain.Hold(allowed, Shown(limit), Magnitude(finding));
         }
 
         if (rule.Ratio is { } ratio && finding.StressRatio is { } stress)
@@ -137,6 +147,9 @@ public static class FindingWorking
             chain.Hold(ratio, stress, 1e-3);
         }
     }
+
+    /// <summary>Magnitudes of which a millionth is what the solve may leave: 1 nV of a node (more of a difference of two), 0.1 nA, 1 pW, 1 uK.</summary>
+    private static double Magnitude(Finding finding) => finding.Unit switch { "V" => finding.Rule == "vcb" ? 1 : 1e-3, "A" => 1e-4, "W" => 1e-6, _ => 1 };
 
     private static void HoldTransistor(FigureChain chain, in TransistorPoint q, string n)
     {

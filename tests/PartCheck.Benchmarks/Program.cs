@@ -1,0 +1,4 @@
+using BenchmarkDotNet.Running;
+
+// dotnet run -c Release --project tests/PartCheck.Benchmarks -- --filter '*'
+BenchmarkSwitcher.FromAssembly(typeof(Program).Assembly).Run(args);
