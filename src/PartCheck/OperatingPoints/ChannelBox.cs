@@ -74,12 +74,9 @@ public sealed class ChannelBox
         feed = When(model.Feed.Varies);
         pullDown = When(model.PullDown is { Varies: true });
         InnerCount = strong.Length * feed.Length * pullDown.Length;
-        Directed =
-        [
-            strong.Length, feed.Length, pullDown.Length, drops.Length, supplies.Length, oddAveraging.Length, oddSense.Length, oddHfe.Length,
-            oddVbe.Length, averaging.Length, sense.Length, passHfe.Length, passVbe.Length, controlHfe.Length, controlVbe.Length,
-        ];
-        Count = Directed.Aggregate(heats.Length * ambients.Length, (product, length) => checked(product * length));
+        Count = checked(InnerCount * drops.Length * supplies.Length * oddAveraging.Length * oddSense.Length * oddHfe.Length
+            * oddVbe.Length * averaging.Length * sense.Length * passHfe.Length * passVbe.Length * controlHfe.Length
+            * controlVbe.Length * heats.Length * ambients.Length);
     }
 
     /// <summary>On or unfed.</summary>
@@ -93,12 +90,6 @@ public sealed class ChannelBox
 
     /// <summary>Consecutive corners that share all but pin, feed and pull-down.</summary>
     public int InnerCount { get; }
-
-    /// <summary>
-    /// Lengths of the dimensions that a search may direct, fastest first; what is left of <see cref="Count"/> is heat and ambient, whose every
-    /// value is visited.
-    /// </summary>
-    public IReadOnlyList<int> Directed { get; }
 
     /// <summary>The corner at an index.</summary>
     public BoxCorner At(int index)

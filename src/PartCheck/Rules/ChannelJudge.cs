@@ -2,7 +2,6 @@ using System.Globalization;
 using PartCheck.Channels;
 using PartCheck.Derating;
 using PartCheck.OperatingPoints;
-using PartCheck.OperatingPoints.Batch;
 using PartCheck.Parts;
 
 namespace PartCheck.Rules;
@@ -66,41 +65,6 @@ public sealed class ChannelJudge
             total.Merge(chunk);
         }
 
-        return Conclude(total, pin, driveFactor, threads, cancel);
-    }
-
-    /// <summary>
-    /// Judges over the corners that a directed search finds worst (<see cref="DirectedCorners"/>): the same ratios and verdicts in a part of the
-    /// states. Of corners with the same ratio it may report another.
-    /// </summary>
-    /// <param name="pin">The channel's pin.</param>
-    /// <param name="cancel">Stops the search.</param>
-    public ReadingJudgement JudgeDirected(PinSource pin, CancellationToken cancel)
-    {
-        double driveFactor = derating.For("drive").Limit ?? 1;
-        Accumulator total = new(rules.Count, model.Slots.Count + 1);
-        CornerScores scores = new(model, rules.Count, pin);
-        DirectedCorners search = new(new CornerBatch(model, pin, Math.Max(driveFactor, 1.2)), state =>
-        {
-            scores.Begin(state);
-            total.Scores = scores;
-            Visit(total, state);
-            return scores.Taken();
-        });
-        int offset = 0;
-        foreach (ChannelBox box in WorstCase.Boxes(model, pin))
-        {
-            search.Search(box, offset, cancel);
-            offset += box.Count;
-        }
-
-        total.Scores = null;
-        return Conclude(total, pin, driveFactor, 1, cancel);
-    }
-
-    /// <summary>The pin low, the knees inside the box, the nominal state; then the findings.</summary>
-    private ReadingJudgement Conclude(Accumulator total, PinSource pin, double driveFactor, int threads, CancellationToken cancel)
-    {
         foreach (double ambient in (ReadOnlySpan<double>)[model.Channel.Conditions.Ambient.Min.Kelvins, model.Channel.Conditions.Ambient.Max.Kelvins])
         {
             if (WorstCase.PinLow(model, ambient) is { } off)
@@ -185,7 +149,7 @@ public sealed class ChannelJudge
     }
 
     /// <summary>Heat while on of everything on the board that belongs to the channel, the load left out [W].</summary>
-    internal static double Heat(SolvedState state)
+    private static double Heat(SolvedState state)
     {
         double sum = 0;
         foreach (TransistorPoint point in (TransistorPoint[])state.Transistors)
@@ -233,30 +197,23 @@ public sealed class ChannelJudge
             {
                 if (applies[r, slot])
                 {
-                    Take(into.At(r, slot), r, slot, state, into.Scores);
+                    Take(into.At(r, slot), r, slot, state);
                 }
             }
         }
     }
 
     /// <summary>What a rule says of every point of a slot.</summary>
-    private void Take(Worst into, int r, int slot, SolvedState state, CornerScores? scores = null)
+    private void Take(Worst into, int r, int slot, SolvedState state)
     {
-        void Keep(int position, in Stress stress)
-        {
-            into.Take(stress, state);
-            scores?.Take(r, position, stress);
-        }
-
         switch (rules[r])
         {
             case TransistorRule rule:
-                TransistorPoint[] transistors = (TransistorPoint[])state.Transistors;
-                for (int i = 0; i < transistors.Length; i++)
+                foreach (TransistorPoint point in (TransistorPoint[])state.Transistors)
                 {
-                    if (transistors[i].Slot == slot)
+                    if (point.Slot == slot)
                     {
-                        Keep(i, rule.Evaluate(state, transistors[i], model.Channel, rows[r, slot]));
+                        into.Take(rule.Evaluate(state, point, model.Channel, rows[r, slot]), state);
                     }
                 }
 
@@ -266,16 +223,16 @@ public sealed class ChannelJudge
                 {
                     if (state.Resistors[i].Slot == slot)
                     {
-                        Keep(i, rule.Evaluate(state, state.Resistors[i], model.Channel, rows[r, slot]));
+                        into.Take(rule.Evaluate(state, state.Resistors[i], model.Channel, rows[r, slot]), state);
                     }
                 }
 
                 break;
             case LedRule rule:
-                Keep(slot - model.Slots.FirstLed, rule.Evaluate(state, (LedPart)model.Slots.Of(slot)[0].Part, model.Channel, rows[r, slot]));
+                into.Take(rule.Evaluate(state, (LedPart)model.Slots.Of(slot)[0].Part, model.Channel, rows[r, slot]), state);
                 break;
             case ChannelRule rule:
-                Keep(0, rule.Evaluate(state, model.Channel, rows[r, slot]));
+                into.Take(rule.Evaluate(state, model.Channel, rows[r, slot]), state);
                 break;
         }
     }
@@ -418,9 +375,6 @@ public sealed class ChannelJudge
         public bool ControlHeld { get; set; }
 
         public double[] Hottest { get; } = new double[slots];
-
-        /// <summary>Takes the scores of a directed search; null: none.</summary>
-        public CornerScores? Scores { get; set; }
 
         /// <summary>Load current and heat of the states on, pin current of all.</summary>
         public void TakeExtremes(SolvedState state, double heat)

@@ -55,10 +55,10 @@ public readonly record struct Stress(
     /// Orders stresses by how bad they are: nonconforming without a ratio above all, then the higher ratio.
     /// Positive: this one is worse.
     /// </summary>
-    public int Worse(in Stress other) => Severity.CompareTo(other.Severity);
+    public int Worse(in Stress other) => Rank(this).CompareTo(Rank(other));
 
-    /// <summary>The ratio; infinity where a nonconforming stress has none, negative infinity where nothing was judged.</summary>
-    internal double Severity => Ratio ?? (Verdict == Verdict.Nonconforming ? double.PositiveInfinity : double.NegativeInfinity);
+    private static double Rank(in Stress s) =>
+        s.Ratio ?? (s.Verdict == Verdict.Nonconforming ? double.PositiveInfinity : double.NegativeInfinity);
 
     /// <summary>The one comparison: a ratio of exactly 1 conforms, and one that differs from it by rounding alone is 1.</summary>
     private static Stress Of(double actual, double allowed, double ratio)

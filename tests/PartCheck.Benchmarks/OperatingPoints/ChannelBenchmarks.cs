@@ -7,7 +7,7 @@ using PartCheck.Tests.OperatingPoints;
 
 namespace PartCheck.Benchmarks.OperatingPoints;
 
-/// <summary>Time of a channel's whole worst case, every rule judged: all corners one by one, side by side, and the directed ones; one core.</summary>
+/// <summary>Time of a channel's whole worst case, every rule judged: all corners one by one and side by side; one core, and two cores over many channels.</summary>
 [MemoryDiagnoser]
 public class ChannelBenchmarks
 {
@@ -41,7 +41,12 @@ public class ChannelBenchmarks
     [Benchmark]
     public int Enumerated() => judge.Judge(pin, 1, CancellationToken.None).Corners;
 
-    /// <summary>The directed corners solved and judged.</summary>
-    [Benchmark]
-    public int Directed() => judge.JudgeDirected(pin, CancellationToken.None).Corners;
+    /// <summary>Four channels side by side, as many threads as there are cores.</summary>
+    [Benchmark(OperationsPerInvoke = 4)]
+    public int FourChannelsOnAllCores()
+    {
+        int corners = 0;
+        Parallel.For(0, 4, _ => Interlocked.Add(ref corners, judge.Judge(pin, 1, CancellationToken.None).Corners));
+        return corners;
+    }
 }

@@ -1,4 +1,5 @@
 using System.Globalization;
+using CsCheck;
 using PartCheck.Channels;
 using PartCheck.OperatingPoints;
 using PartCheck.Parts;
@@ -23,20 +24,16 @@ public class CornerBatchTests
             channel = channel with { Conditions = channel.Conditions with { LoadDrop = new(Voltage.FromVolts(21), Voltage.FromVolts(24)), OffCurrentMax = Current.FromAmperes(1e-6) } };
         }
 
-        ChannelModel model = new(channel, p => new TransistorVariants(p));
-        PinSource pin = new(channel.Logic);
-        List<SolvedState> batch = Flat(WorstCase.Enumerate(model, pin, 1.5, 1, () => new List<SolvedState>(), (l, s) => l.Add(s), TestContext.Current.CancellationToken));
-        List<SolvedState> one = Flat(WorstCase.EnumerateOneByOne(model, pin, 1.5, 1, () => new List<SolvedState>(), (l, s) => l.Add(s), TestContext.Current.CancellationToken));
-        Assert.Equal(one.Count, batch.Count);
-        Assert.True(one.Count > 1000);
-        for (int i = 0; i < one.Count; i++)
-        {
-            Assert.Equal(one[i].Index, batch[i].Index);
-            Assert.Equal(one[i].Corner, batch[i].Corner);
-            Assert.True(one[i].Solved && batch[i].Solved);
-            Close(one[i], batch[i]);
-        }
+        Compare(channel);
     }
+
+    // Random part data and conditions, from comfortable to impossible.
+    [Theory]
+    [InlineData(1, 0.5, 60)]
+    [InlineData(2, 0.75, 20)]
+    [InlineData(4, 0.85, 6)]
+    public void RandomChannelsToo(int legs, double narrow, int channels) =>
+        Gen.ULong.Sample(seed => Compare(new RandomChannels(seed).Channel(legs, narrow)), iter: channels);
 
     [Fact]
     public void AnyNumberOfThreadsGivesTheSameBits()
@@ -46,6 +43,23 @@ public class CornerBatchTests
         string[] prints = [.. new[] { 1, 2, 3, 8 }.Select(threads => string.Join(' ', Flat(WorstCase.Enumerate(
             model, pin, 1.5, threads, () => new List<long>(), (l, s) => l.Add(BitConverter.DoubleToInt64Bits(s.LoadCurrent + s.BaseVoltage)), TestContext.Current.CancellationToken))))];
         Assert.All(prints, p => Assert.Equal(prints[0], p));
+    }
+
+    private static void Compare(BoundChannel channel)
+    {
+        ChannelModel model = new(channel, p => new TransistorVariants(p));
+        PinSource pin = new(channel.Logic);
+        List<SolvedState> batch = Flat(WorstCase.Enumerate(model, pin, 1.5, 1, () => new List<SolvedState>(), (l, s) => l.Add(s), CancellationToken.None));
+        List<SolvedState> one = Flat(WorstCase.EnumerateOneByOne(model, pin, 1.5, 1, () => new List<SolvedState>(), (l, s) => l.Add(s), CancellationToken.None));
+        Assert.Equal(one.Count, batch.Count);
+        Assert.NotEmpty(one);
+        for (int i = 0; i < one.Count; i++)
+        {
+            Assert.Equal(one[i].Index, batch[i].Index);
+            Assert.Equal(one[i].Corner, batch[i].Corner);
+            Assert.True(one[i].Solved && batch[i].Solved);
+            Close(one[i], batch[i]);
+        }
     }
 
     private static List<T> Flat<T>(IReadOnlyList<List<T>> chunks) => [.. chunks.SelectMany(c => c)];
