@@ -30,6 +30,7 @@ public sealed partial class LaneSolver
     private readonly Response[] ofVbc = new Response[9];
     private readonly Response[] ofKelvins = new Response[9];
     private Lanes load;
+    private Lanes baseSlope;
     private CircuitShape startShape;
     private CircuitLanes c = null!;
     private bool heated;
@@ -39,8 +40,12 @@ public sealed partial class LaneSolver
     /// <summary>Forgets the last solution: the next solve starts cold.</summary>
     public void Forget() => startShape = default;
 
-    /// <summary>True where the control's junction conducts well above its leakage (<see cref="SinkSolver.SolveEdge"/>).</summary>
-    public bool Regulates(int lane) => vbe[0][lane] > 3 * c.Devices[0].ForwardVoltage[lane];
+    /// <summary>
+    /// True where an edge of regulation is the lowest: the control's junction conducts well above its leakage
+    /// (<see cref="SinkSolver.SolveEdge"/>), and what it collects rises past what is asked as the base node rises. Further up, where a pass
+    /// transistor saturates, the same equation may hold once more on the way down.
+    /// </summary>
+    public bool Regulates(int lane) => vbe[0][lane] > 3 * c.Devices[0].ForwardVoltage[lane] && baseSlope[lane] > 0;
 
     /// <summary>Solves the lanes.</summary>
     /// <param name="circuits">The circuits; every lane must hold one.</param>
@@ -132,6 +137,7 @@ public sealed partial class LaneSolver
             controlRow.Vb, controlRow.Vx, controlRow.Vc,
             loadRow.Vb, loadRow.Vx, loadRow.Vc,
             baseRow.Vb, baseRow.Vx, baseRow.Vc);
+        baseSlope = m.M02;
         Lanes vb = -m.First(controlRow.Constant, loadRow.Constant, baseRow.Constant);
         Lanes vx = -m.Second(controlRow.Constant, loadRow.Constant, baseRow.Constant);
         Lanes vc = -m.Third(controlRow.Constant, loadRow.Constant, baseRow.Constant);

@@ -88,7 +88,9 @@ public class LaneSolverTests
             },
             iter: 100);
         TestContext.Current.TestOutputHelper?.WriteLine(string.Create(CultureInfo.InvariantCulture, $"{left} of {states} left to the scalar solver"));
-        Assert.InRange(left, 0, states / 20);
+
+        // Ambient up to 125 degC and 250 K/W: one state in twelve runs away, and a junction that is held is the scalar solver's.
+        Assert.InRange(left, 0, states / 10);
     }
 
     // A lane says nothing of its neighbours: a circuit alone in all lanes gives what it gives among others.
@@ -160,7 +162,7 @@ public class LaneSolverTests
         return left;
     }
 
-    /// <summary>Kirchhoff at the terminals, with the currents of the scalar device equations at the lane's own voltages: 1e-6, or 1 pA.</summary>
+    /// <summary>Kirchhoff at the terminals, and each transistor's currents those of the scalar device equations at the lane's own voltages.</summary>
     private static void Balance(SinkCircuit circuit, LaneSolution s, int lane)
     {
         double vb = s.BaseVoltage(lane);
@@ -214,7 +216,7 @@ public class LaneSolverTests
         Near(q.Ic, ic, 1e-6, floor);
         Near(q.Ib, ib, 1e-6, floor);
         Near(q.Rbb, s.BaseResistance(d, lane), 1e-6, 1e-9);
-        return (q.Ic, q.Ib);
+        return (ic, ib);
     }
 
     /// <summary>1e-7 of a current: the scalar solver stops at steps of 1e-10 of up to 30 V, which is that much of a junction's current; or 0.1 nA.</summary>
