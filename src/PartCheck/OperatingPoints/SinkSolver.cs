@@ -8,6 +8,9 @@ namespace PartCheck.OperatingPoints;
 /// </summary>
 public sealed class SinkSolver
 {
+    /// <summary>Internal base-collector voltage from which an edge of regulation may not be the lowest [V].</summary>
+    internal const double SaturatedFrom = 0.25;
+
     private const int StepLimit = 80;
     private const double VoltageTolerance = 1e-10;
     private const double TemperatureTolerance = 1e-6;
@@ -52,7 +55,7 @@ public sealed class SinkSolver
         held.CopyTo(equations.HeldAt, 0);
         equations.SourceShare = 1;
         equations.Lay(circuit, BaseNodeCondition.Edge, factor, heated: false);
-        if (start is not null && start.Give(x, equations.Count, circuit) && Newton() && Regulates())
+        if (start is not null && start.Give(x, equations.Count, circuit) && Newton() && Regulates() && !Saturates(circuit))
         {
             start.Take(x, equations.Count, circuit);
             return Point(circuit);
@@ -62,8 +65,10 @@ public sealed class SinkSolver
         ColdStart(circuit);
         bool found = false;
         bool failed = false;
-        for (double volts = 0.2; volts <= 3.6 && !found; volts += 0.1)
+        for (int step = 0; step <= 170 && !found; step++)
         {
+            // Fine enough not to step over two roots, one where the control takes over and one where a pass transistor saturates.
+            double volts = 0.2 + (0.02 * step);
             equations.Lay(circuit, BaseNodeCondition.Driven, factor, heated: false);
             equations.DrivenVoltage = volts;
             if (!Newton())
@@ -103,6 +108,23 @@ public sealed class SinkSolver
 
     /// <summary>True where the control's junction conducts well above its leakage.</summary>
     private bool Regulates() => x[0] > 3 * equations.Device(0).ForwardVoltage;
+
+    /// <summary>
+    /// True where a pass transistor's collector junction is forward biased by more than <see cref="SaturatedFrom"/>. Below that, the edge
+    /// is one root; near drop-out a base current that rises in saturation can make three, of which the lowest counts.
+    /// </summary>
+    private bool Saturates(SinkCircuit circuit)
+    {
+        for (int g = 1; g <= circuit.Legs.Count; g++)
+        {
+            if (x[(2 * g) + 1] > SaturatedFrom)
+            {
+                return true;
+            }
+        }
+
+        return false;
+    }
 
     private OperatingPoint? Run(SinkCircuit circuit, StartPoint? start)
     {

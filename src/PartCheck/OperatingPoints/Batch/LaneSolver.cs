@@ -30,7 +30,6 @@ public sealed partial class LaneSolver
     private readonly Response[] ofVbc = new Response[9];
     private readonly Response[] ofKelvins = new Response[9];
     private Lanes load;
-    private Lanes baseSlope;
     private CircuitShape startShape;
     private CircuitLanes c = null!;
     private bool heated;
@@ -41,11 +40,19 @@ public sealed partial class LaneSolver
     public void Forget() => startShape = default;
 
     /// <summary>
-    /// True where an edge of regulation is the lowest: the control's junction conducts well above its leakage
-    /// (<see cref="SinkSolver.SolveEdge"/>), and what it collects rises past what is asked as the base node rises. Further up, where a pass
-    /// transistor saturates, the same equation may hold once more on the way down.
+    /// True where an edge of regulation is surely the lowest: the control's junction conducts well above its leakage and no pass transistor
+    /// saturates (<see cref="SinkSolver.SolveEdge"/>).
     /// </summary>
-    public bool Regulates(int lane) => vbe[0][lane] > 3 * c.Devices[0].ForwardVoltage[lane] && baseSlope[lane] > 0;
+    public bool Regulates(int lane)
+    {
+        bool regulates = vbe[0][lane] > 3 * c.Devices[0].ForwardVoltage[lane];
+        for (int g = 1; g <= c.Shape.Legs; g++)
+        {
+            regulates &= vbc[g][lane] <= SinkSolver.SaturatedFrom;
+        }
+
+        return regulates;
+    }
 
     /// <summary>Solves the lanes.</summary>
     /// <param name="circuits">The circuits; every lane must hold one.</param>
@@ -137,7 +144,6 @@ public sealed partial class LaneSolver
             controlRow.Vb, controlRow.Vx, controlRow.Vc,
             loadRow.Vb, loadRow.Vx, loadRow.Vc,
             baseRow.Vb, baseRow.Vx, baseRow.Vc);
-        baseSlope = m.M02;
         Lanes vb = -m.First(controlRow.Constant, loadRow.Constant, baseRow.Constant);
         Lanes vx = -m.Second(controlRow.Constant, loadRow.Constant, baseRow.Constant);
         Lanes vc = -m.Third(controlRow.Constant, loadRow.Constant, baseRow.Constant);
