@@ -152,6 +152,9 @@ public sealed record BoundChannel
     /// <summary>LEDs of the load; empty: the channel names none, and none is judged.</summary>
     public IReadOnlyList<Placement> Leds { get; init; } = [];
 
+    /// <summary>Transistors that share a package with one of this channel's and serve another channel; empty: none.</summary>
+    public IReadOnlyList<ElementNeighbour> Neighbours { get; init; } = [];
+
     /// <summary>The control transistor's row.</summary>
     public Transistor ControlPart => (Transistor)Control.Part;
 

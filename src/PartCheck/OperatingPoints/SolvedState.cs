@@ -88,6 +88,12 @@ public sealed record Corner
 
     /// <summary>Share of the hottest leg's RthJA that heats the control, where no coupling is given: 0 or 0.2; null: given.</summary>
     public double? AssumedCoupling { get; init; }
+
+    /// <summary>Share of RthJA that passes between elements of one package, where RthJA both is missing: 0 or 1; null: given, or none share one.</summary>
+    public double? AssumedPackageCoupling { get; init; }
+
+    /// <summary>True where elements of other channels in the same packages are on, at their highest dissipation; null: there are none.</summary>
+    public bool? NeighboursOn { get; init; }
 }
 
 /// <summary>One transistor in a solved state, SI units.</summary>
@@ -118,6 +124,9 @@ public readonly record struct TransistorPoint(
 
     /// <summary>Thermal resistance junction to ambient, given or assumed [K/W]; NaN: not to be had.</summary>
     public double RthJa { get; init; }
+
+    /// <summary>Power of all elements of its package [W]; 0: a transistor that shares its package with none.</summary>
+    public double PackagePower { get; init; }
 
     /// <summary>Emitter voltage of a pass transistor, the voltage over its sense resistor [V].</summary>
     public double SenseVoltage { get; init; }

@@ -141,6 +141,7 @@ public static class WorstCase
             ControlHeat = nominal.ControlHeat with { RthJa = 0 },
             Legs = [.. nominal.Legs.Select(l => l with { Heat = l.Heat with { RthJa = 0 }, Coupling = 0 })],
             HottestLegCoupling = 0,
+            Package = [],
         };
         OperatingPoint? point = new SinkSolver().Solve(circuit);
         return point is null ? null : StateAssembly.BuildByLeg(model, ChannelState.Off, corner, circuit, point);

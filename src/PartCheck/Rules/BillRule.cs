@@ -30,10 +30,10 @@ public static class BillRule
         List<Finding> findings = [];
         foreach (BillLine line in bill.Lines)
         {
-            List<string> serves = [.. channels.Where(c => c.References.Any(r => line.References.Contains(r, StringComparer.OrdinalIgnoreCase))).Select(c => c.Name)];
+            List<string> serves = [.. channels.Where(c => c.References.Any(line.Holds)).Select(c => c.Name)];
             if (serves.Count > 0)
             {
-                findings.Add(JudgeLine(line, parts, serves));
+                findings.Add(JudgeLine(line, bill, parts, serves));
             }
         }
 
@@ -57,7 +57,7 @@ public static class BillRule
         return findings;
     }
 
-    private static Finding JudgeLine(BillLine line, PartTable parts, List<string> serves)
+    private static Finding JudgeLine(BillLine line, Bill bill, PartTable parts, List<string> serves)
     {
         List<string> wrong = [];
         List<string> missing = [];
@@ -74,6 +74,8 @@ public static class BillRule
         {
             wrong.Add(string.Create(CultureInfo.InvariantCulture, $"the quantity is {quantity}, the references are {placed}"));
         }
+
+        wrong.AddRange(SplitPackages(line, bill));
 
         IReadOnlyList<Part> rows = line.PartNumber is null ? [] : parts.Find(line.PartNumber);
         if (line.Manufacturer is { } maker && rows.Count > 0)
@@ -96,6 +98,11 @@ public static class BillRule
             if (line.Package is { } package && row.Package is { } tabled && !PackageName.Agrees(package, tabled))
             {
                 wrong.Add($"the bill's package is {package}, the part table's {tabled}");
+            }
+
+            if (row is Transistor transistor && line.References.FirstOrDefault(r => ElementReference.ElementOf(r) is { } n && (n > transistor.Elements || transistor.Elements == 1)) is { } element)
+            {
+                wrong.Add(string.Create(CultureInfo.InvariantCulture, $"{element} names an element that the part does not have, the part table's Elements are {transistor.Elements}"));
             }
 
             if (row is ResistorPart resistor && line.Resistance is { } value && Math.Abs(value.Ohms - resistor.Resistance.Value.Ohms) > 1e-6 * value.Ohms)
@@ -125,9 +132,27 @@ public static class BillRule
 
     /// <summary>Components to place: elements of one package (<c>Q1.1, Q1.2</c>) are one.</summary>
     private static int PlacedComponents(BillLine line) => line.References
-        .Select(r => r.IndexOf('.', StringComparison.Ordinal) is > 0 and int dot ? r[..dot] : r)
+        .Select(ElementReference.PackageOf)
         .Distinct(StringComparer.OrdinalIgnoreCase)
         .Count();
+
+    /// <summary>A package is bought once: its elements stand on one line, and not beside the package itself.</summary>
+    private static IEnumerable<string> SplitPackages(BillLine line, Bill bill)
+    {
+        foreach (string package in line.References.Where(r => ElementReference.ElementOf(r) is not null).Select(ElementReference.PackageOf).Distinct(StringComparer.OrdinalIgnoreCase))
+        {
+            bool IsOf(string reference) => string.Equals(ElementReference.PackageOf(reference), package, StringComparison.OrdinalIgnoreCase);
+            if (line.References.Contains(package, StringComparer.OrdinalIgnoreCase))
+            {
+                yield return $"{package} stands there as a whole and by elements";
+            }
+
+            if (bill.Lines.FirstOrDefault(other => other != line && other.References.Any(IsOf)) is { } twin)
+            {
+                yield return $"{package} stands on another line, too ({twin.Cell})";
+            }
+        }
+    }
 
     private static string Sentence(string text) => char.ToUpperInvariant(text[0]) + text[1..] + ".";
 }

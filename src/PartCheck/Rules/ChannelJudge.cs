@@ -1,3 +1,4 @@
+using PartCheck.Bills;
 using PartCheck.Channels;
 using PartCheck.Derating;
 using PartCheck.OperatingPoints;
@@ -83,6 +84,9 @@ public sealed class ChannelJudge
             Assumed = total.ControlHeld
                 ? [new Assumption("hFE of the control beyond its points", model.Control.Part.PartNumber, "the outermost value held")]
                 : [],
+            MostPower = Enumerable.Range(0, model.Slots.Count).Where(s => total.Hottest[s] > 0)
+                .SelectMany(s => model.Slots.Of(s).Select(p => (p.Reference, Watts: total.MostPower[s])))
+                .ToDictionary(p => p.Reference, p => p.Watts, StringComparer.OrdinalIgnoreCase),
             Hottest = [.. Enumerable.Range(0, model.Slots.Count).Where(s => total.Hottest[s] > 0)
                 .SelectMany(s => model.Slots.Of(s).Select(p => (p.Reference, total.Hottest[s])))],
         };
@@ -124,6 +128,7 @@ public sealed class ChannelJudge
             foreach (TransistorPoint point in (TransistorPoint[])state.Transistors)
             {
                 into.Hottest[point.Slot] = Math.Max(into.Hottest[point.Slot], point.Tj);
+                into.MostPower[point.Slot] = Math.Max(into.MostPower[point.Slot], point.Power);
             }
         }
 
@@ -234,7 +239,9 @@ public sealed class ChannelJudge
             _ => null,
         };
         string? text = rule is ResistorVoltageRule && placement?.Part is ResistorPart { WorkingVoltageMax: null, Resistance.Value.Ohms: > 0 }
-            ? "no limiting element voltage given: judged by sqrt(P R) alone" : null;
+            ? "no limiting element voltage given: judged by sqrt(P R) alone"
+            : stress.Package && placement is not null
+            ? $"the whole package {ElementReference.PackageOf(placement.Reference)}, its elements together" : null;
         return new Finding
         {
             Channel = model.Channel.Name,
@@ -277,6 +284,8 @@ public sealed class ChannelJudge
 
         public double[] Hottest { get; } = new double[slots];
 
+        public double[] MostPower { get; } = new double[slots];
+
         public Worst At(int rule, int slot) => worst[(rule * slots) + slot] ??= new Worst();
 
         public void Merge(Accumulator later)
@@ -291,6 +300,7 @@ public sealed class ChannelJudge
             for (int s = 0; s < slots; s++)
             {
                 Hottest[s] = Math.Max(Hottest[s], later.Hottest[s]);
+                MostPower[s] = Math.Max(MostPower[s], later.MostPower[s]);
             }
 
             for (int i = 0; i < worst.Length; i++)
@@ -322,6 +332,9 @@ public sealed record ReadingJudgement(
 
     /// <summary>Each transistor with its highest junction temperature [K].</summary>
     public IReadOnlyList<(string Reference, double Tj)> Hottest { get; init; } = [];
+
+    /// <summary>Highest dissipation of each transistor, state on [W], by reference.</summary>
+    public IReadOnlyDictionary<string, double> MostPower { get; init; } = new Dictionary<string, double>();
 
     /// <summary>What a good channel measures on the bench; null: not solved.</summary>
     public TestLimits? TestLimits { get; init; }
