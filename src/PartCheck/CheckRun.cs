@@ -8,6 +8,7 @@ using PartCheck.Quantities;
 using PartCheck.Reports;
 using PartCheck.Rules;
 using PartCheck.Sheets;
+using PartCheck.Workings;
 
 namespace PartCheck;
 
@@ -75,6 +76,23 @@ public static class CheckRun
         }
 
         return new CheckReport(boards, complaints.Items, [.. source.Files.Select(Hashed)]);
+    }
+
+    /// <summary>Works out findings of one channel of one board, step by step.</summary>
+    /// <param name="request">What is asked; one board.</param>
+    /// <param name="selection">Which findings.</param>
+    /// <param name="fault">What the selection names and there is not; null: nothing is amiss.</param>
+    /// <param name="cancel">Stops the run.</param>
+    public static WorkingReport Work(CheckRequest request, WorkingSelection selection, out string? fault, CancellationToken cancel = default)
+    {
+        ArgumentNullException.ThrowIfNull(request);
+        ArgumentNullException.ThrowIfNull(selection);
+        ArgumentOutOfRangeException.ThrowIfNotEqual(request.Boards.Count, 1, nameof(request));
+        CheckReport check = Run(request, cancel);
+        BoardReport board = check.Boards[0];
+        fault = null;
+        IReadOnlyList<Finding> findings = board.Channels.Count == 0 ? [] : selection.Of(board, out fault);
+        return new WorkingReport(check, selection.Name(board) ?? string.Empty, [.. findings.Select(FindingWorking.Of)]);
     }
 
     private static string Folder(string file) => Path.GetDirectoryName(Path.GetFullPath(file)) ?? ".";
@@ -297,7 +315,7 @@ public static class CheckRun
             {
                 LogicPin logic = pin.First().Channel.Readings[0].Logic;
                 findings.Add(PinCurrentRule.Judge(
-                    PinName(pin.First().Channel.Readings[0]), [.. pin.Select(j => (j.Channel.Name, j.Readings.Count == 0 ? double.NaN : j.Readings.Max(r => r.PinMax)))], logic, derating));
+                    PinName(pin.First().Channel.Readings[0]), [.. pin.Select(j => PinFeed.Of(j.Channel.Name, j.Readings))], logic, derating));
             }
 
             return findings;

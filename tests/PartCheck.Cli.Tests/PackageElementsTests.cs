@@ -61,6 +61,35 @@ public class PackageElementsTests
         Assert.Equal("dissipation of Q1.2 in channel CH2", junction.GetProperty("missing")[0].GetString());
     }
 
+    // The derivation of every finding comes to the figures that were judged, the heat between elements and channels included.
+    [Theory]
+    [InlineData("Q1.1", "Q1.2", "350,250")]
+    [InlineData("Q1.1", "Q1.2", ",")]
+    public async Task TheWorkingReproducesWhatWasJudged(string one, string other, string both)
+    {
+        using BoardFolder board = Board(one, other, both);
+        Run run = await Run.Of("working", board.Folder, "CH1");
+        Assert.True(run.Code != 70 && run.Error.Length == 0, run.Error + run.Output);
+        Assert.Contains("CH1 junction Q1.1", run.Flat, StringComparison.Ordinal);
+        Assert.Contains("what elements of other channels in the package of Q1.1 add", run.Flat, StringComparison.Ordinal);
+        Assert.Contains("power of all elements of the package", run.Flat, StringComparison.Ordinal);
+    }
+
+    // Pass and control in one package; two legs of one package of which the first alone is sensed.
+    [Theory]
+    [InlineData("CH1,11.4,12.6,8.5,9.5,3,12,28,P5,0,45,Q1.1,R1,Q1.2,R2,", "Kpby0")]
+    [InlineData("CH1,11.4,12.6,8.5,9.5,3,24,56,P5,0,45,\"Q1.1, Q1.2\",\"R1, R3\",Q2,R5,\"direct, -\"", "Kp1by2")]
+    public async Task TheWorkingReproducesHeatInsideAChannel(string row, string symbol)
+    {
+        using BoardFolder board = Board("Q1.1", "Q1.2");
+        board.Write("bom.csv", File.ReadAllText(board.At("bom.csv")) + "R5,RK-1K5,1,0603\n");
+        board.Write("parts.csv", File.ReadAllText(board.At("parts.csv")) + "RK-1K5,resistor,Kelbrook,0603,,,,100,,,155,,,,,,,,,,1k5,1%,100,75,,,\n");
+        board.Write("channels.csv", BoardFolder.Channels.ReplaceLineEndings("\n").Split('\n')[0] + ",Averaging\n" + row + "\n");
+        Run run = await Run.Of("working", board.Folder, "CH1");
+        Assert.True(run.Code is 0 or 1 or 2 && run.Error.Length == 0, run.Error + run.Output);
+        Assert.Contains(symbol, run.Output, StringComparison.Ordinal);
+    }
+
     private static BoardFolder Board(string one, string other, string both = "350,250", string elements = "2", string feed = "R4")
     {
         string[] parts = BoardFolder.Parts.ReplaceLineEndings("\n").Split('\n');

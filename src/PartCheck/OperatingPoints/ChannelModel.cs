@@ -38,6 +38,8 @@ public sealed class ChannelModel
         PullDown = channel.PullDown is null ? null : new ResistorRange((ResistorPart)channel.PullDown.Part);
         PassRth = [.. Pass.Select(p => Rth(p.Part))];
         ControlRth = Rth(Control.Part);
+        PassHeat = [.. Pass.Select((p, i) => PulsedHeat.Of(p.Part, PassRth[i], channel.Conditions))];
+        ControlHeat = PulsedHeat.Of(Control.Part, ControlRth, channel.Conditions);
         Heats = ControlRth is not null && PassRth.All(r => r is not null);
         CouplingGiven = Enumerable.Range(0, channel.Legs.Count).All(i => channel.Legs[i].PassPart.Coupling is not null || Package.WithControl(i));
         OneLegSensed = channel.Legs.Count(l => l.Sensed) == 1;
@@ -77,11 +79,17 @@ public sealed class ChannelModel
     /// <summary>Pull-down resistor; null: none.</summary>
     public ResistorRange? PullDown { get; }
 
-    /// <summary>Thermal resistance of the pass transistors [K/W], by leg class; null: not to be had.</summary>
+    /// <summary>Thermal resistance of the pass transistors at steady power [K/W], by leg class; null: not to be had.</summary>
     public IReadOnlyList<double?> PassRth { get; }
 
-    /// <summary>Thermal resistance of the control [K/W]; null: not to be had.</summary>
+    /// <summary>Thermal resistance of the control at steady power [K/W]; null: not to be had.</summary>
     public double? ControlRth { get; }
+
+    /// <summary>How the pass transistors heat themselves at the channel's duty, by leg class.</summary>
+    public IReadOnlyList<PulsedHeat> PassHeat { get; }
+
+    /// <summary>How the control heats itself at the channel's duty.</summary>
+    public PulsedHeat ControlHeat { get; }
 
     /// <summary>True where every transistor's thermal resistance is known, so that h = 1 can be solved.</summary>
     public bool Heats { get; }
@@ -163,9 +171,7 @@ public sealed class ChannelModel
             assumed.Add(new Assumption("TCR", r.Part.PartNumber, "200 ppm/K"));
         }
 
-        if (Channel.Conditions.Duty < 1)
-        {
-            assumed.Add(new Assumption("Duty", Channel.Name, "solved and judged as 100 %"));
-        }
+        assumed.AddRange(Pass.Append(Control).Zip(PassHeat.Append(ControlHeat), (t, heat) => PulsedHeat.AssumptionOf(heat, t.Part, Channel))
+            .OfType<Assumption>().Distinct());
     }
 }

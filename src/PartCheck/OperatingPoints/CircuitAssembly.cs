@@ -22,7 +22,7 @@ internal static class CircuitAssembly
             BipolarDevice pass = !cell.Odd ? model.Pass[c].At(corner.Pass)
                 : corner.OddPass.Vbe == Extreme.Match ? model.Pass[c].Matched(corner.Pass.Vbe, corner.OddPass.Hfe)
                 : model.Pass[c].At(corner.OddPass);
-            JunctionHeat heat = Heat(model, cell.Legs[0] + 1, model.PassRth[c], h, ambient, neighbours ? share : null);
+            JunctionHeat heat = Heat(model, cell.Legs[0] + 1, model.PassHeat[c], h, ambient, neighbours ? share : null);
             groups.Add(Group(model, cell, pass, cell.Odd ? corner.OddSense : corner.Sense, cell.Odd ? corner.OddAveraging : corner.Averaging, h, ambient, heat));
         }
 
@@ -36,7 +36,7 @@ internal static class CircuitAssembly
             Supply = corner.Supply,
             Load = state == ChannelState.Unfed ? null : model.Load[drop],
             Control = model.Control.At(corner.Control),
-            ControlHeat = Heat(model, 0, model.ControlRth, h, ambient, neighbours ? share : null),
+            ControlHeat = Heat(model, 0, model.ControlHeat, h, ambient, neighbours ? share : null),
             Legs = groups,
             HottestLegCoupling = h * (corner.AssumedCoupling ?? 0),
             Package = Couplings(model, cells, h, share),
@@ -59,8 +59,8 @@ internal static class CircuitAssembly
             cells.Add(new LegCell(c, false, [index]));
             groups.Add(new LegGroup(
                 1, model.Pass[c].Nominal, model.Sense[c].Nominal, model.Averaging[c]?.Nominal ?? 0, leg.Sensed,
-                Heat(model, index + 1, model.PassRth[c], h, ambient, null),
-                model.Package.WithControl(index) ? 0 : h * (leg.PassPart.Coupling?.Value.KelvinsPerWatt ?? 0)));
+                Heat(model, index + 1, model.PassHeat[c], h, ambient, null),
+                model.Package.WithControl(index) ? 0 : h * Coupling(model, c)));
         }
 
         ChannelConditions conditions = model.Channel.Conditions;
@@ -74,7 +74,7 @@ internal static class CircuitAssembly
             Supply = (conditions.Supply.Min.Volts + conditions.Supply.Max.Volts) / 2,
             Load = model.NominalLoad,
             Control = model.Control.Nominal,
-            ControlHeat = Heat(model, 0, model.ControlRth, h, ambient, null),
+            ControlHeat = Heat(model, 0, model.ControlHeat, h, ambient, null),
             Legs = groups,
             HottestLegCoupling = model.CouplingGiven ? 0 : h * ChannelModel.AssumedCouplingShare / 2,
             Package = Couplings(model, cells, h, 0.5),
@@ -108,12 +108,12 @@ internal static class CircuitAssembly
         {
             // Every leg of a cell has the same around it: the first stands for all.
             IReadOnlyList<int> partners = model.Package.Partners(d == 0 ? 0 : cells[d - 1].Legs[0] + 1);
-            double? rth = d == 0 ? model.ControlRth : model.PassRth[cells[d - 1].Class];
+            PulsedHeat heat = d == 0 ? model.ControlHeat : model.PassHeat[cells[d - 1].Class];
             Transistor part = d == 0 ? model.Control.Part : model.Pass[cells[d - 1].Class].Part;
             for (int by = 0; by <= cells.Count && partners.Count > 0; by++)
             {
                 int beside = partners.Count(p => by == 0 ? p == 0 : p > 0 && cells[by - 1].Legs.Contains(p - 1));
-                double coupling = h * beside * PackageHeat.Coupling(part, rth ?? 0, share);
+                double coupling = h * beside * heat.Share * PackageHeat.Coupling(part, heat.Steady ?? 0, share);
                 if (coupling > 0)
                 {
                     couplings.Add(new PackageCoupling(d, by, coupling));
@@ -131,15 +131,19 @@ internal static class CircuitAssembly
         Leg leg = model.Classes[c].First;
         return new LegGroup(
             cell.Legs.Count, pass, model.Sense[c].At(sense, ambient), model.Averaging[c]?.At(averaging, ambient) ?? 0, leg.Sensed, heat,
-            model.CouplingGiven && !model.Package.WithControl(cell.Legs[0]) ? h * leg.PassPart.Coupling!.Value.KelvinsPerWatt : 0);
+            model.CouplingGiven && !model.Package.WithControl(cell.Legs[0]) ? h * Coupling(model, c) : 0);
     }
 
     /// <summary>Surroundings of a device (0 the control, from 1 the legs); a neighbour share: elements of other channels are on and warm it.</summary>
-    private static JunctionHeat Heat(ChannelModel model, int device, double? rth, double h, double ambient, double? neighbourShare)
+    private static JunctionHeat Heat(ChannelModel model, int device, PulsedHeat heat, double h, double ambient, double? neighbourShare)
     {
         Transistor part = device == 0 ? model.Control.Part : model.Channel.Legs[device - 1].PassPart;
         double warmed = neighbourShare is { } share && model.Package.NeighbourPower(device) is > 0 and double power
-            ? PackageHeat.Coupling(part, rth ?? 0, share) * power : 0;
-        return new(ambient + warmed, h * (rth ?? 0), ChannelModel.RunawayLimit(part));
+            ? PackageHeat.Coupling(part, heat.Steady ?? 0, share) * power : 0;
+        return new(ambient + warmed, h * (heat.Effective ?? 0), ChannelModel.RunawayLimit(part));
     }
+
+    /// <summary>Heating of the control by a leg's power while on, the duty counted as in the leg's own heating [K/W]; 0: not given.</summary>
+    private static double Coupling(ChannelModel model, int c) =>
+        model.PassHeat[c].Share * (model.Pass[c].Part.Coupling?.Value.KelvinsPerWatt ?? 0);
 }

@@ -94,6 +94,6 @@ public sealed class CornerSolver
 
         double available = ((circuit.FeedVoltage - edge.BaseVoltage) / circuit.FeedResistance)
             - (edge.BaseVoltage * circuit.BaseConductance);
-        return new DriveEdge(edge.BaseVoltage < circuit.PinVoltage, edge.BaseVoltage, sum, available, factor);
+        return new DriveEdge(edge.BaseVoltage < circuit.PinVoltage, edge.BaseVoltage, sum, available, factor) { ControlCurrent = edge.Control.Ic };
     }
 }

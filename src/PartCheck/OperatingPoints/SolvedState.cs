@@ -104,12 +104,18 @@ public sealed record Corner
 /// <param name="Vcb">Collector-base voltage at the terminals [V].</param>
 /// <param name="Ic">Collector current [A].</param>
 /// <param name="Ib">Base current [A].</param>
-/// <param name="Power">Dissipation [W].</param>
-/// <param name="Tj">Junction temperature [K].</param>
+/// <param name="Power">Dissipation while on [W].</param>
+/// <param name="Tj">Junction temperature, under PWM its peak [K].</param>
 /// <param name="Held">True where Tj ran away and is held at its bound: it is "at least" this.</param>
 public readonly record struct TransistorPoint(
     int Slot, Role Role, Transistor Part, double Vce, double Vcb, double Ic, double Ib, double Power, double Tj, bool Held)
 {
+    /// <summary>Share of the power that a rating of steady power reads: the duty from 1 kHz up, else 1 [-].</summary>
+    public double AveragedShare { get; init; } = 1;
+
+    /// <summary>Share of the power that surely warms the case: the duty where pulses were solved, else 1 [-].</summary>
+    public double CaseShare { get; init; } = 1;
+
     /// <summary>Slope of VBE with temperature at constant collector current, of the solved model [V/K].</summary>
     public double VbeSlope { get; init; }
 
@@ -122,10 +128,10 @@ public readonly record struct TransistorPoint(
     /// <summary>Ballast between this leg and the others: sense parallel averaging; sense alone where not sensed, or sensed alone [ohm].</summary>
     public double Ballast { get; init; }
 
-    /// <summary>Thermal resistance junction to ambient, given or assumed [K/W]; NaN: not to be had.</summary>
+    /// <summary>Thermal resistance junction to ambient at steady power, given or assumed [K/W]; NaN: not to be had.</summary>
     public double RthJa { get; init; }
 
-    /// <summary>Power of all elements of its package [W]; 0: a transistor that shares its package with none.</summary>
+    /// <summary>Power of all elements of its package, averaged where <c>power</c> averages [W]; 0: a transistor that shares its package with none.</summary>
     public double PackagePower { get; init; }
 
     /// <summary>Emitter voltage of a pass transistor, the voltage over its sense resistor [V].</summary>
@@ -167,7 +173,11 @@ public readonly record struct ResistorPoint(
 /// <param name="SumBaseCurrent">Sum of the pass transistors' base currents there [A].</param>
 /// <param name="Available">What pin level, source resistance, feed and pull-down deliver into the base node there [A].</param>
 /// <param name="Factor">k' = max(drive factor, 1.2).</param>
-public readonly record struct DriveEdge(bool Exists, double BaseVoltage, double SumBaseCurrent, double Available, double Factor);
+public readonly record struct DriveEdge(bool Exists, double BaseVoltage, double SumBaseCurrent, double Available, double Factor)
+{
+    /// <summary>Collector current of the control there [A].</summary>
+    public double ControlCurrent { get; init; }
+}
 
 /// <summary>One solved corner of one channel in one state, SI units: what a rule reads.</summary>
 public sealed class SolvedState
@@ -216,6 +226,12 @@ public sealed class SolvedState
 
     /// <summary>Resistors.</summary>
     public required IReadOnlyList<ResistorPoint> Resistors { get; init; }
+
+    /// <summary>Heating between transistors of one package; 0 is the control, from 1 the transistors in order. Empty: none share one.</summary>
+    public IReadOnlyList<PackageCoupling> Package { get; init; } = [];
+
+    /// <summary>By how much elements of other channels warm each device, the control first [K]; empty: nothing does.</summary>
+    public IReadOnlyList<double> Warmed { get; init; } = [];
 
     /// <summary>Edge of regulation (state on, h = 0); null elsewhere.</summary>
     public DriveEdge? Drive { get; init; }

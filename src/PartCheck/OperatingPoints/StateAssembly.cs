@@ -23,7 +23,7 @@ internal static class StateAssembly
             AddLeg(resistors, model, c, circuit.Legs[g], q, point, g);
         }
 
-        transistors[^1] = Transistor(model.Slots.Control, Role.Control, model.Control.Part, point.Control);
+        transistors[^1] = Transistor(model, model.Slots.Control, Role.Control, model.Control.Part, model.ControlHeat, point.Control);
         AddPackages(transistors, model, cells, at.Corner.NeighboursOn ?? false);
         AddShared(resistors, model, circuit, point);
         return new SolvedState
@@ -42,6 +42,8 @@ internal static class StateAssembly
             LowestHeadroom = at.LowestHeadroom && state == ChannelState.On,
             Transistors = transistors,
             Resistors = resistors,
+            Package = circuit.Package,
+            Warmed = Warmed(circuit, at.Corner.Ambient),
             Drive = drive,
         };
     }
@@ -58,7 +60,7 @@ internal static class StateAssembly
             AddLeg(resistors, model, c, circuit.Legs[g], point.Legs[g], point, g);
         }
 
-        transistors[^1] = Transistor(model.Slots.Control, Role.Control, model.Control.Part, point.Control);
+        transistors[^1] = Transistor(model, model.Slots.Control, Role.Control, model.Control.Part, model.ControlHeat, point.Control);
         AddShared(resistors, model, circuit, point);
         return new SolvedState
         {
@@ -72,10 +74,19 @@ internal static class StateAssembly
             PinCurrent = point.PinCurrent,
             Transistors = transistors,
             Resistors = resistors,
+            Package = circuit.Package,
+            Warmed = Warmed(circuit, corner.Ambient),
         };
     }
 
-    /// <summary>Gives each transistor that shares its package the power of all its elements.</summary>
+    /// <summary>By how much elements of other channels warm each device; empty: nothing does.</summary>
+    private static double[] Warmed(SinkCircuit circuit, double ambient)
+    {
+        double[] rises = [circuit.ControlHeat.Base - ambient, .. circuit.Legs.Select(l => l.Heat.Base - ambient)];
+        return rises.Any(r => r > 0) ? rises : [];
+    }
+
+    /// <summary>Gives each transistor that shares its package the power of all its elements, averaged where <c>power</c> averages.</summary>
     private static void AddPackages(TransistorPoint[] points, ChannelModel model, IReadOnlyList<LegCell> cells, bool neighboursOn)
     {
         for (int g = 0; g < points.Length && model.Package.Shares; g++)
@@ -83,12 +94,12 @@ internal static class StateAssembly
             int device = g == cells.Count ? 0 : cells[g].Legs[0] + 1;
             if (model.Package.IsShared(device))
             {
-                double sum = points[g].Power + (neighboursOn ? model.Package.NeighbourPower(device) : 0);
+                double sum = (points[g].Power * points[g].AveragedShare) + (neighboursOn ? model.Package.NeighbourPower(device) : 0);
                 foreach (int partner in model.Package.Partners(device))
                 {
                     for (int by = 0; by < points.Length; by++)
                     {
-                        sum += (by == cells.Count ? partner == 0 : partner > 0 && cells[by].Legs.Contains(partner - 1)) ? points[by].Power : 0;
+                        sum += (by == cells.Count ? partner == 0 : partner > 0 && cells[by].Legs.Contains(partner - 1)) ? points[by].Power * points[by].AveragedShare : 0;
                     }
                 }
 
@@ -97,11 +108,16 @@ internal static class StateAssembly
         }
     }
 
-    private static TransistorPoint Transistor(int slot, Role role, Transistor part, in SolvedTransistor q) =>
-        new(slot, role, part, q.Vce, q.CollectorVoltage - q.BaseVoltage, q.Ic, q.Ib, q.Power, q.Tj, q.Held);
+    private static TransistorPoint Transistor(ChannelModel model, int slot, Role role, Transistor part, PulsedHeat heat, in SolvedTransistor q) =>
+        new(slot, role, part, q.Vce, q.CollectorVoltage - q.BaseVoltage, q.Ic, q.Ib, q.Power, q.Tj, q.Held)
+        {
+            AveragedShare = PulsedHeat.AveragedShare(model.Channel.Conditions),
+            CaseShare = heat.CaseShare,
+            BaseResistance = q.BaseResistance,
+        };
 
     private static TransistorPoint Leg(ChannelModel model, int c, LegGroup leg, in SolvedTransistor q) =>
-        Transistor(Slots.Pass(c), Role.Pass, model.Pass[c].Part, q) with
+        Transistor(model, Slots.Pass(c), Role.Pass, model.Pass[c].Part, model.PassHeat[c], q) with
         {
             VbeSlope = q.VbeSlope,
             EmitterResistance = leg.Pass.Parameters.Re,

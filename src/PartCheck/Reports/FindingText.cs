@@ -17,6 +17,8 @@ internal static class FindingText
             Channels = null,
             Missing = [],
             Cell = null,
+            Basis = null,
+            Derivation = null,
             Text = f.Text + string.Join("|", f.Missing) + string.Join(",", f.References ?? []) + string.Join(",", f.Channels ?? []),
         }).Select(g => (IReadOnlyList<Finding>)[.. g])];
 

@@ -11,7 +11,7 @@ namespace PartCheck.Reports;
 /// </summary>
 public static class JsonReport
 {
-    private static readonly JsonWriterOptions Options = new()
+    internal static readonly JsonWriterOptions Options = new()
     {
         Indented = true,
         IndentSize = 1,
@@ -87,7 +87,7 @@ public static class JsonReport
         json.Texts("without", totals.Without);
     }
 
-    private static void WriteAssumed(Utf8JsonWriter json, AssumedValue assumed)
+    internal static void WriteAssumed(Utf8JsonWriter json, AssumedValue assumed)
     {
         json.Text("what", assumed.What);
         json.Text("of", assumed.Of);
@@ -102,7 +102,7 @@ public static class JsonReport
         json.Text("text", advice.Text);
     }
 
-    private static void WriteComplaint(Utf8JsonWriter json, Complaint complaint)
+    internal static void WriteComplaint(Utf8JsonWriter json, Complaint complaint)
     {
         json.Text("file", complaint.File);
         json.Text("sheet", complaint.Sheet);
@@ -114,7 +114,7 @@ public static class JsonReport
         json.Text("text", complaint.Text);
     }
 
-    private static void WriteInput(Utf8JsonWriter json, InputFile input)
+    internal static void WriteInput(Utf8JsonWriter json, InputFile input)
     {
         json.Text("file", input.File);
         json.Text("sha256", input.Sha256);

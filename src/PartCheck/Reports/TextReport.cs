@@ -23,28 +23,35 @@ public static class TextReport
             Board(text, board with { Findings = FindingOrder.WorstFirst(board) });
         }
 
-        if (report.Complaints.Count > 0)
-        {
-            text.Append(CultureInfo.InvariantCulture, $"Complaints ({report.Complaints.Count}): what could not be read\n");
-            foreach (Complaint c in report.Complaints)
-            {
-                Columns80.Wrap(text, "  ", Place(c) + ": " + c.Text, 4);
-                if (c.Found is not null || c.Wanted is not null)
-                {
-                    string found = c.Found is null ? string.Empty : $"found \"{c.Found}\"" + (c.Wanted is null ? string.Empty : ", ");
-                    Columns80.Wrap(text, "    ", found + (c.Wanted is null ? string.Empty : "wanted " + c.Wanted), 6);
-                }
-            }
-
-            text.Append('\n');
-        }
-
+        Complaints(text, report.Complaints);
         foreach (string caution in report.Boards.SelectMany(b => b.Cautions).Distinct(StringComparer.Ordinal))
         {
             Columns80.Wrap(text, "! ", caution, 2);
         }
 
         return colour ? Coloured(text.ToString()) : text.ToString();
+    }
+
+    /// <summary>Appends what could not be read.</summary>
+    internal static void Complaints(StringBuilder text, IReadOnlyList<Complaint> complaints)
+    {
+        if (complaints.Count == 0)
+        {
+            return;
+        }
+
+        text.Append(CultureInfo.InvariantCulture, $"Complaints ({complaints.Count}): what could not be read\n");
+        foreach (Complaint c in complaints)
+        {
+            Columns80.Wrap(text, "  ", Place(c) + ": " + c.Text, 4);
+            if (c.Found is not null || c.Wanted is not null)
+            {
+                string found = c.Found is null ? string.Empty : $"found \"{c.Found}\"" + (c.Wanted is null ? string.Empty : ", ");
+                Columns80.Wrap(text, "    ", found + (c.Wanted is null ? string.Empty : "wanted " + c.Wanted), 6);
+            }
+        }
+
+        text.Append('\n');
     }
 
     private static void Board(StringBuilder text, BoardReport board)
@@ -134,7 +141,7 @@ public static class TextReport
 
     private static string Head(IReadOnlyList<Finding> group) => Joined(" ", group[0].Channel, group[0].Rule, FindingText.Subject(group));
 
-    private static string Joined(string between, params string?[] parts) => string.Join(between, parts.Where(p => !string.IsNullOrEmpty(p)));
+    internal static string Joined(string between, params string?[] parts) => string.Join(between, parts.Where(p => !string.IsNullOrEmpty(p)));
 
     private static void Channels(StringBuilder text, BoardReport board)
     {
@@ -167,12 +174,16 @@ public static class TextReport
             OperatingPoints.TestLimits l = c.TestLimits!;
             Columns80.Wrap(
                 text, $"  {c.Channel} ",
-                $"at {FindingText.Value(l.Supply, "V")}: load {Range(l.LoadCurrent, "A")}; sense {Range(l.SenseVoltage, "V")}; base {Range(l.BaseVoltage, "V")}; collector {Range(l.CollectorVoltage, "V")}",
+                $"at {FindingText.Value(l.Supply, "V")}{Pulsed(c)}: load {Range(l.LoadCurrent, "A")}; sense {Range(l.SenseVoltage, "V")}; base {Range(l.BaseVoltage, "V")}; collector {Range(l.CollectorVoltage, "V")}",
                 4);
         }
 
         text.Append('\n');
     }
+
+    /// <summary>A channel that pulses is measured while on, and is as warm as its largest duty makes it.</summary>
+    private static string Pulsed(ChannelJudgement c) => c.Reading is { Conditions.Duty: < 1 and var duty }
+        ? string.Create(CultureInfo.InvariantCulture, $" while on, duty up to {duty * 100:0.###} %") : string.Empty;
 
     private static string Range(OperatingPoints.ValueRange range, string unit) =>
         $"{FindingText.Value(range.Min, unit, 3)} .. {FindingText.Value(range.Max, unit, 3)}";
@@ -182,7 +193,7 @@ public static class TextReport
         string without = totals.Without.Count == 0 ? string.Empty : $" (without {string.Join(", ", totals.Without)})";
         Columns80.Wrap(
             text, string.Empty,
-            $"Board{without}: load supplies {FindingText.Value(totals.SupplyMin, "A", 3)} .. {FindingText.Value(totals.SupplyMax, "A", 3)}; heat of its parts up to {FindingText.Value(totals.HeatMax, "W", 3)}; hottest "
+            $"Board{without}: load supplies {FindingText.Value(totals.SupplyMin, "A", 3)} .. {FindingText.Value(totals.SupplyMax, "A", 3)}; heat of its parts while on up to {FindingText.Value(totals.HeatMax, "W", 3)}; hottest "
             + string.Join(", ", totals.Hottest.Select(h => $"{h.Reference} {FindingText.Value(h.Tj, "K")}")) + ".",
             2);
     }

@@ -50,6 +50,7 @@ public static class BillRule
                     Source = Source,
                     Cell = fault.Cell,
                     Text = fault.Text,
+                    Derivation = new Derivation().Note(fault.Text, fault.Cell),
                 });
             }
         }
@@ -69,7 +70,18 @@ public static class BillRule
             missing.Add("a bill line without complaints");
         }
 
+        Derivation steps = new();
         int placed = PlacedComponents(line);
+        steps.Given("references", placed, string.Empty, "components to place: " + string.Join(", ", line.References), line.Cell);
+        if (line.Quantity is { } stated)
+        {
+            steps.Given("quantity", stated, string.Empty, "Quantity of the line", line.Cell).Step("surplus", "quantity - references", string.Empty, "must be 0");
+        }
+        else
+        {
+            steps.Note("The line gives no quantity.");
+        }
+
         if (line.Quantity is { } quantity && quantity != placed)
         {
             wrong.Add(string.Create(CultureInfo.InvariantCulture, $"the quantity is {quantity}, the references are {placed}"));
@@ -95,6 +107,7 @@ public static class BillRule
 
         foreach (Part row in rows)
         {
+            Compare(steps, line, row);
             if (line.Package is { } package && row.Package is { } tabled && !PackageName.Agrees(package, tabled))
             {
                 wrong.Add($"the bill's package is {package}, the part table's {tabled}");
@@ -127,7 +140,18 @@ public static class BillRule
             Cell = line.Cell,
             Text = wrong.Count == 0 ? null : Sentence(string.Join("; ", wrong.Distinct(StringComparer.Ordinal))),
             Missing = wrong.Count > 0 ? [] : missing,
+            Derivation = steps,
         };
+    }
+
+    /// <summary>Writes down what a line is held to in one row of the part table.</summary>
+    private static void Compare(Derivation steps, BillLine line, Part row)
+    {
+        steps.Note($"Part table row of {row.PartNumber}{(row.Manufacturer is { } maker ? " by " + maker : string.Empty)}: package {row.Package ?? "not given"}; the bill says {line.Package ?? "nothing"}.", row.Cell);
+        if (row is ResistorPart resistor && line.Resistance is { } value)
+        {
+            steps.Note($"Resistance {EngineeringNotation.Format(resistor.Resistance.Value.Ohms, "ohm", 6)}; the bill says {EngineeringNotation.Format(value.Ohms, "ohm", 6)}.", resistor.Resistance.Cell);
+        }
     }
 
     /// <summary>Components to place: elements of one package (<c>Q1.1, Q1.2</c>) are one.</summary>

@@ -1,3 +1,4 @@
+using System.Globalization;
 using PartCheck.Bills;
 using PartCheck.Channels;
 using PartCheck.Derating;
@@ -78,9 +79,10 @@ public sealed class ChannelJudge
         }
 
         SolvedState? nominal = WorstCase.Nominal(model, pin);
-        return new ReadingJudgement(model.Channel, Findings(total), nominal, total.LoadMin, total.LoadMax, total.PinMax, total.Corners, total.NotSolved + (nominal is null ? 1 : 0))
+        return new ReadingJudgement(model.Channel, Findings(total, pin), nominal, total.LoadMin, total.LoadMax, total.PinMax, total.Corners, total.NotSolved + (nominal is null ? 1 : 0))
         {
             HeatMax = total.HeatMax,
+            PinState = total.PinState,
             Assumed = total.ControlHeld
                 ? [new Assumption("hFE of the control beyond its points", model.Control.Part.PartNumber, "the outermost value held")]
                 : [],
@@ -92,7 +94,7 @@ public sealed class ChannelJudge
         };
     }
 
-    /// <summary>Heat of everything on the board that belongs to the channel, the load left out [W].</summary>
+    /// <summary>Heat while on of everything on the board that belongs to the channel, the load left out [W].</summary>
     private static double Heat(SolvedState state)
     {
         double sum = 0;
@@ -128,11 +130,16 @@ public sealed class ChannelJudge
             foreach (TransistorPoint point in (TransistorPoint[])state.Transistors)
             {
                 into.Hottest[point.Slot] = Math.Max(into.Hottest[point.Slot], point.Tj);
-                into.MostPower[point.Slot] = Math.Max(into.MostPower[point.Slot], point.Power);
+                into.MostPower[point.Slot] = Math.Max(into.MostPower[point.Slot], point.Power * point.AveragedShare);
             }
         }
 
-        into.PinMax = Math.Max(into.PinMax, state.PinCurrent);
+        if (state.PinCurrent > into.PinMax)
+        {
+            into.PinMax = state.PinCurrent;
+            into.PinState = state;
+        }
+
         int channelSlot = model.Slots.Count;
         for (int r = 0; r < rules.Count; r++)
         {
@@ -196,7 +203,7 @@ public sealed class ChannelJudge
         }
     }
 
-    private List<Finding> Findings(Accumulator total)
+    private List<Finding> Findings(Accumulator total, PinSource pin)
     {
         List<Finding> findings = [];
         for (int r = 0; r < rules.Count; r++)
@@ -211,13 +218,13 @@ public sealed class ChannelJudge
                 Worst worst = total.At(r, s);
                 if (s == model.Slots.Count)
                 {
-                    findings.Add(Make(r, s, worst, null));
+                    findings.Add(Make(r, s, worst, null, pin));
                     continue;
                 }
 
                 foreach (Placement placement in model.Slots.Of(s))
                 {
-                    findings.Add(Make(r, s, worst, placement));
+                    findings.Add(Make(r, s, worst, placement, pin));
                 }
             }
         }
@@ -225,7 +232,23 @@ public sealed class ChannelJudge
         return findings;
     }
 
-    private Finding Make(int r, int s, Worst worst, Placement? placement)
+    private string Averaged(bool package, Placement? placement)
+    {
+        List<string> words = [];
+        if (package && placement is not null)
+        {
+            words.Add($"the whole package {ElementReference.PackageOf(placement.Reference)}, its elements together");
+        }
+
+        if (PulsedHeat.AveragedShare(model.Channel.Conditions) is < 1 and var duty)
+        {
+            words.Add(string.Create(CultureInfo.InvariantCulture, $"averaged over a duty of {duty * 100:0.###} %"));
+        }
+
+        return string.Join("; ", words);
+    }
+
+    private Finding Make(int r, int s, Worst worst, Placement? placement, PinSource pin)
     {
         Rule rule = rules[r];
         Stress stress = worst.Stress;
@@ -240,8 +263,7 @@ public sealed class ChannelJudge
         };
         string? text = rule is ResistorVoltageRule && placement?.Part is ResistorPart { WorkingVoltageMax: null, Resistance.Value.Ohms: > 0 }
             ? "no limiting element voltage given: judged by sqrt(P R) alone"
-            : stress.Package && placement is not null
-            ? $"the whole package {ElementReference.PackageOf(placement.Reference)}, its elements together" : null;
+            : rule is PowerRule && Averaged(stress.Package, placement) is { Length: > 0 } words ? words : null;
         return new Finding
         {
             Channel = model.Channel.Name,
@@ -261,6 +283,7 @@ public sealed class ChannelJudge
             Cell = cell,
             Text = text,
             Missing = worst.Verdict == Verdict.NotVerified ? [.. worst.Missing.DefaultIfEmpty("a state to judge")] : [],
+            Basis = worst.State is { } state ? new FindingBasis(model, pin, rule, rows[r, s], state, s, stress) : null,
         };
     }
 
@@ -278,6 +301,8 @@ public sealed class ChannelJudge
 
         public double PinMax { get; set; }
 
+        public SolvedState? PinState { get; set; }
+
         public double HeatMax { get; set; }
 
         public bool ControlHeld { get; set; }
@@ -294,7 +319,7 @@ public sealed class ChannelJudge
             NotSolved += later.NotSolved;
             LoadMin = Math.Min(LoadMin, later.LoadMin);
             LoadMax = Math.Max(LoadMax, later.LoadMax);
-            PinMax = Math.Max(PinMax, later.PinMax);
+            (PinMax, PinState) = later.PinMax > PinMax ? (later.PinMax, later.PinState) : (PinMax, PinState);
             HeatMax = Math.Max(HeatMax, later.HeatMax);
             ControlHeld |= later.ControlHeld;
             for (int s = 0; s < slots; s++)
@@ -327,13 +352,16 @@ public sealed record ReadingJudgement(
     BoundChannel Channel, IReadOnlyList<Finding> Findings, SolvedState? Nominal, double LoadMin, double LoadMax, double PinMax,
     int Corners, int NotSolved)
 {
-    /// <summary>Largest heat of the channel's parts on the board, the load left out [W].</summary>
+    /// <summary>Largest heat of the channel's parts on the board while on, whatever the duty, the load left out [W].</summary>
     public double HeatMax { get; init; }
+
+    /// <summary>The state of <see cref="PinMax"/>; null: the pin delivers nothing.</summary>
+    public SolvedState? PinState { get; init; }
 
     /// <summary>Each transistor with its highest junction temperature [K].</summary>
     public IReadOnlyList<(string Reference, double Tj)> Hottest { get; init; } = [];
 
-    /// <summary>Highest dissipation of each transistor, state on [W], by reference.</summary>
+    /// <summary>Highest dissipation of each transistor, state on, averaged where <c>power</c> averages [W], by reference.</summary>
     public IReadOnlyDictionary<string, double> MostPower { get; init; } = new Dictionary<string, double>();
 
     /// <summary>What a good channel measures on the bench; null: not solved.</summary>

@@ -68,6 +68,12 @@ public sealed record Finding
 
     /// <summary>What is missing, when not verified.</summary>
     public IReadOnlyList<string> Missing { get; init; } = [];
+
+    /// <summary>The state, rule and rows that it was judged from; null: it reads no state, or there was none to judge.</summary>
+    public FindingBasis? Basis { get; init; }
+
+    /// <summary>Its equation with numbers, where it reads no state; null: <see cref="Basis"/> gives it.</summary>
+    public Derivation? Derivation { get; init; }
 }
 
 /// <summary>Currents, voltages and temperatures of the nominal state, and the extremes of the load current.</summary>
@@ -100,10 +106,10 @@ public sealed record ChannelJudgement
     /// <summary>What a good channel measures on the bench; null: not solved.</summary>
     public TestLimits? TestLimits { get; init; }
 
-    /// <summary>Largest heat of the channel's parts on the board, the load left out [W]; null: not solved.</summary>
+    /// <summary>Largest heat of the channel's parts on the board while on, whatever the duty, the load left out [W]; null: not solved.</summary>
     public double? HeatMax { get; init; }
 
-    /// <summary>Each transistor with its highest junction temperature [K], hottest first.</summary>
+    /// <summary>Each transistor with its highest junction temperature, under PWM the peak [K], hottest first.</summary>
     public IReadOnlyList<(string Reference, double Tj)> Hottest { get; init; } = [];
 
     /// <summary>Corners solved, over all states and readings.</summary>

@@ -82,6 +82,41 @@ public sealed class LedCurrentRule : LedRule
     }
 
     /// <inheritdoc/>
+    public override void Derive(Derivation steps, SolvedState state, LedPart part, BoundChannel channel, in RuleRows rows, in Stress stress)
+    {
+        ChannelConditions c = channel.Conditions;
+        string actual = "I";
+        if (c.Strings > 1)
+        {
+            bool even = stress.AtLeast;
+            double share = even ? 1 : Math.Min(c.Strings, c.StringShareMax ?? c.Strings);
+            steps.Given("strings", c.Strings, string.Empty, "strings in parallel", channel.ConditionCells.GetValueOrDefault("Strings"))
+                .Given("sharemax", share, string.Empty, even ? "even shares: at least this" : "largest share of a string over the mean", channel.ConditionCells.GetValueOrDefault("String share max"), assumed: c.StringShareMax is null)
+                .Step("ILED", "I / strings x sharemax", "A", "current of the string that takes most");
+            actual = "ILED";
+        }
+
+        steps.Given("IF", part.ForwardCurrentMax!.Value.Amperes, "A", "highest forward current of " + part.PartNumber, part.ForwardCurrentMax.Cell)
+            .Given("Tflat", part.FlatTo.Celsius, "degC", "it holds up to here", part.ForwardCurrentFlatTo?.Cell, assumed: part.ForwardCurrentFlatTo is null);
+        string line = "IF";
+        if (part.TjMax is { } max)
+        {
+            steps.Given("Tmax", max.Value.Celsius, "degC", "Tj max of " + part.PartNumber, max.Cell);
+            line = "IF x (1 - max(0, Ta - Tflat) / (Tmax - Tflat))";
+        }
+
+        if (part.ForwardCurrentSlope is { } slope)
+        {
+            steps.Given("slope", slope.Value, "A/K", "slope above that", slope.Cell);
+            line = "IF - slope x max(0, Ta - Tflat)";
+        }
+
+        bool none = state.Corner.Ambient >= part.TjMax?.Value.Kelvins;
+        steps.Factor(rows.Own).Step("Iallowed", none ? "0 A" : $"F x max(0, {line})", "A", none ? "nothing: the ambient is at or above Tj max" : "derated forward current at the ambient")
+            .AtMost(actual, "Iallowed", stress);
+    }
+
+    /// <inheritdoc/>
     public override string? DecidingCell(LedPart part)
     {
         ArgumentNullException.ThrowIfNull(part);

@@ -5,7 +5,8 @@ using PartCheck.Parts;
 namespace PartCheck.Rules;
 
 /// <summary>
-/// Dissipation, state on, at the ambient where the ratio is worst. Allowed at ambient T:
+/// Dissipation, state on, under PWM from 1 kHz up its average over the period at the largest duty, at the ambient where the ratio is worst.
+/// Allowed at ambient T:
 /// factor x min(Power, Power - slope (T - flat), (Tmax - T)/RthJA) [W]; slope from (Tmax - flat) where the table gives none;
 /// nothing from Tmax up, whatever the slope says. Where several transistors of a package are on, the sum of their powers is held in
 /// the same way to Power both (missing: Power) and to (Tmax - T)/RthJA both; the larger ratio counts.
@@ -34,7 +35,7 @@ public sealed class PowerRule : TransistorRule
             return Stress.NotVerified("Power of " + part.PartNumber);
         }
 
-        Stress stress = OfOne(part, power.Value.Watts, part.PowerSlope?.Value, part.RthJa?.Value.KelvinsPerWatt, point.Power, state, rows);
+        Stress stress = OfOne(part, power.Value.Watts, part.PowerSlope?.Value, part.RthJa?.Value.KelvinsPerWatt, point.Power * point.AveragedShare, state, rows);
         if (stress.Verdict != Verdict.NotVerified && point.PackagePower > 0)
         {
             double both = part.PowerBoth?.Value.Watts ?? power.Value.Watts;
@@ -51,6 +52,31 @@ public sealed class PowerRule : TransistorRule
         // With RthJA but no Tj max the third limit is unknown: what is known can refuse, but not clear.
         string? missing = part is { RthJa: not null, TjMax: null } ? "Tj max of " + part.PartNumber : MissingData.Heat(state);
         return missing is null ? stress : Stress.NotVerified(missing);
+    }
+
+    /// <inheritdoc/>
+    public override void Derive(Derivation steps, SolvedState state, in TransistorPoint point, BoundChannel channel, in RuleRows rows, in Stress stress)
+    {
+        Transistor part = point.Part;
+        string actual = "P#";
+        if (stress.Package)
+        {
+            steps.Solved("Ppack#", point.PackagePower, "W", "power of all elements of the package, averaged over the period where it counts as an average")
+                .Given("Prated#", (part.PowerBoth ?? part.Power!).Value.Watts, "W", "rated power of the package of " + part.PartNumber, (part.PowerBoth ?? part.Power!).Cell, assumed: part.PowerBoth is null);
+            actual = "Ppack#";
+        }
+        else
+        {
+            steps.Given("Prated#", part.Power!.Value.Watts, "W", "rated power of " + part.PartNumber, part.Power.Cell);
+            if (point.AveragedShare < 1)
+            {
+                steps.Given("duty", point.AveragedShare, string.Empty, "largest duty, from 1 kHz up").Step("Pavg#", "P# x duty", "W", "its average over the period");
+                actual = "Pavg#";
+            }
+        }
+
+        DeriveAllowed(steps, part, state.Corner.Ambient, rows, stress.Package);
+        steps.AtMost(actual, "Pallowed", stress);
     }
 
     /// <inheritdoc/>
@@ -86,5 +112,44 @@ public sealed class PowerRule : TransistorRule
         }
 
         return Stress.AtMostOf(actual, rated * rows.Own.Factor);
+    }
+
+    private static void DeriveAllowed(Derivation steps, Transistor part, double ambient, in RuleRows rows, bool package)
+    {
+        steps.Given("Tflat#", part.FlatTo.Celsius, "degC", "the rated power holds up to here", part.PowerFlatTo?.Cell, assumed: part.PowerFlatTo is null);
+        string line = "Prated#";
+        if (part.TjMax is { } max)
+        {
+            steps.Given("Tmax#", max.Value.Celsius, "degC", "Tj max of " + part.PartNumber, max.Cell);
+        }
+
+        if (part.PowerSlope is { } slope)
+        {
+            double share = package && part is { PowerBoth: { } both, Power: { } one } ? both.Value.Watts / one.Value.Watts : 1;
+            steps.Given("slope", slope.Value * share, "W/K", share == 1 ? "slope of the rated power above that" : "slope above that, as much steeper as the package's power is larger", slope.Cell);
+            line = "Prated# - slope x max(0, Ta - Tflat#)";
+        }
+        else if (part.TjMax is { } zero)
+        {
+            line = zero.Value.Kelvins > part.FlatTo.Kelvins ? "Prated# x (1 - max(0, Ta - Tflat#) / (Tmax# - Tflat#))" : "0 W";
+        }
+
+        steps.Step("Pline", line, "W", "rated power at the ambient: flat, then a line");
+        bool thermal = part.TjMax is not null && (package ? part.RthJaBoth : part.RthJa) is not null;
+        if (thermal && package)
+        {
+            steps.Given("RthBoth#", part.RthJaBoth!.Value.KelvinsPerWatt, "K/W", "thermal resistance with all elements on, over the sum of their powers", part.RthJaBoth.Cell);
+        }
+
+        if (thermal)
+        {
+            steps.Step("Pth", package ? "(Tmax# - Ta) / RthBoth#" : "(Tmax# - Ta) / RthJA#", "W", "what the thermal resistance lets through up to Tj max");
+        }
+
+        bool none = ambient >= part.TjMax?.Value.Kelvins;
+        steps.Factor(rows.Own)
+            .Step(
+                "Pallowed", none ? "0 W" : thermal ? "F x max(0, min(Pline, Pth))" : "F x max(0, Pline)", "W",
+                none ? "nothing: the ambient is at or above Tj max" : "derated power");
     }
 }

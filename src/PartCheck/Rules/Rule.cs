@@ -48,6 +48,9 @@ public abstract class TransistorRule : Rule
     /// <summary>Judges one transistor in one state.</summary>
     public abstract Stress Evaluate(SolvedState state, in TransistorPoint point, BoundChannel channel, in RuleRows rows);
 
+    /// <summary>Writes the equation down with its numbers, for a state that <see cref="Evaluate"/> judged: the same equation, as a person reads it.</summary>
+    public abstract void Derive(Derivation steps, SolvedState state, in TransistorPoint point, BoundChannel channel, in RuleRows rows, in Stress stress);
+
     /// <summary>The cell of the rating that decides; null: not given.</summary>
     public abstract string? DecidingCell(Transistor part);
 }
@@ -64,6 +67,9 @@ public abstract class ResistorRule : Rule
     /// <summary>Judges one resistor in one state.</summary>
     public abstract Stress Evaluate(SolvedState state, in ResistorPoint point, BoundChannel channel, in RuleRows rows);
 
+    /// <summary>Writes the equation down with its numbers, for a state that <see cref="Evaluate"/> judged: the same equation, as a person reads it.</summary>
+    public abstract void Derive(Derivation steps, SolvedState state, in ResistorPoint point, BoundChannel channel, in RuleRows rows, in Stress stress);
+
     /// <summary>The cell of the rating that decides; null: not given.</summary>
     public abstract string? DecidingCell(ResistorPart part);
 }
@@ -77,6 +83,9 @@ public abstract class LedRule : Rule
     /// <summary>Judges one LED in one state.</summary>
     public abstract Stress Evaluate(SolvedState state, LedPart part, BoundChannel channel, in RuleRows rows);
 
+    /// <summary>Writes the equation down with its numbers, for a state that <see cref="Evaluate"/> judged: the same equation, as a person reads it.</summary>
+    public abstract void Derive(Derivation steps, SolvedState state, LedPart part, BoundChannel channel, in RuleRows rows, in Stress stress);
+
     /// <summary>The cell of the rating that decides; null: not given.</summary>
     public abstract string? DecidingCell(LedPart part);
 }
@@ -89,6 +98,9 @@ public abstract class ChannelRule : Rule
 
     /// <summary>Judges the channel in one state.</summary>
     public abstract Stress Evaluate(SolvedState state, BoundChannel channel, in RuleRows rows);
+
+    /// <summary>Writes the equation down with its numbers, for a state that <see cref="Evaluate"/> judged: the same equation, as a person reads it.</summary>
+    public abstract void Derive(Derivation steps, SolvedState state, BoundChannel channel, in RuleRows rows, in Stress stress);
 
     /// <summary>The cell of the limit that decides; null: not given.</summary>
     /// <param name="channel">The channel.</param>

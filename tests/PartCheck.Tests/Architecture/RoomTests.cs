@@ -18,7 +18,8 @@ public class RoomTests
         ["OperatingPoints"] = ["Quantities", "Devices", "Parts", "Channels"],
         ["Derating"] = ["Quantities", "Sheets"],
         ["Rules"] = ["Quantities", "Bills", "Parts", "Channels", "OperatingPoints", "Derating"],
-        ["Reports"] = ["Quantities", "Sheets", "Parts", "Channels", "OperatingPoints", "Rules"],
+        ["Workings"] = ["Quantities", "Devices", "Parts", "Channels", "OperatingPoints", "Derating", "Rules"],
+        ["Reports"] = ["Quantities", "Sheets", "Parts", "Channels", "OperatingPoints", "Rules", "Workings"],
     };
 
     [Fact]

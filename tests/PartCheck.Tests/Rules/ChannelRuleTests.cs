@@ -191,7 +191,7 @@ public class PinCurrentRuleTests : RuleTests
     [InlineData(0.0081, Verdict.Nonconforming)]
     public void AllFeedsOfAPinCountTogether(double each, Verdict verdict)
     {
-        Finding finding = PinCurrentRule.Judge("P1", [("A", each), ("B", each)], Pin(0.02), Table);
+        Finding finding = PinCurrentRule.Judge("P1", [new("A", each), new("B", each)], Pin(0.02), Table);
         Assert.Equal(verdict, finding.Verdict);
         Assert.Equal(2 * each, finding.Actual!.Value, 12);
         Assert.Equal(0.016, finding.Allowed!.Value, 12);
@@ -200,16 +200,16 @@ public class PinCurrentRuleTests : RuleTests
     [Fact]
     public void AMissingRatingOrFeedIsNotVerified()
     {
-        Finding rating = PinCurrentRule.Judge("P1", [("A", 0.001)], Pin(null), Table);
+        Finding rating = PinCurrentRule.Judge("P1", [new("A", 0.001)], Pin(null), Table);
         Assert.Equal(Verdict.NotVerified, rating.Verdict);
         Assert.Equal(["Pin current max of CTRL-5"], rating.Missing);
-        Assert.Equal(Verdict.NotVerified, PinCurrentRule.Judge("P1", [("A", 0.001), ("B", double.NaN)], Pin(0.02), Table).Verdict);
-        Assert.Equal(Verdict.Nonconforming, PinCurrentRule.Judge("P1", [("A", 0.03), ("B", double.NaN)], Pin(0.02), Table).Verdict);
+        Assert.Equal(Verdict.NotVerified, PinCurrentRule.Judge("P1", [new("A", 0.001), new("B", double.NaN)], Pin(0.02), Table).Verdict);
+        Assert.Equal(Verdict.Nonconforming, PinCurrentRule.Judge("P1", [new("A", 0.03), new("B", double.NaN)], Pin(0.02), Table).Verdict);
     }
 
     private static Stress Judge(double amperes, double? rating)
     {
-        Finding finding = PinCurrentRule.Judge("P1", [("A", amperes)], Pin(rating), Table);
+        Finding finding = PinCurrentRule.Judge("P1", [new("A", amperes)], Pin(rating), Table);
         return new Stress(
             finding.Actual ?? double.NaN, finding.Allowed ?? double.NaN, finding.StressRatio, finding.Verdict, finding.Missing is [string first, ..] ? first : null);
     }

@@ -1,4 +1,5 @@
 using PartCheck.Channels;
+using PartCheck.OperatingPoints;
 using PartCheck.Parts;
 using PartCheck.Quantities;
 using PartCheck.Rules;
@@ -68,6 +69,17 @@ public class SoaRuleTests : RuleTests<SoaRule>
     // Tj 125 degC less 0.2 W x 80 K/W = 109 degC: (150 - 109)/125 = 0.328 of 200 mA.
     [Fact]
     public void AtCaseTheJunctionLessItsOwnRiseCounts() => Assert.Equal(0.0656, JudgeAtCase(AtCase, 125, 0.2).Allowed, 9);
+
+    // On a quarter of the time: Tj 125 degC less 0.25 x 0.2 W x 80 K/W = 121 degC, (150 - 121)/125 = 0.232 of 200 mA. With all of the
+    // power the case would be taken for 109 degC. The pair is that while on.
+    [Fact]
+    public void UnderPwmTheCaseIsNotTakenForCoolerThanItIs()
+    {
+        TransistorPoint pass = States.Pass(AtCase, vce: 5, ic: 0.01, power: 0.2, tj: 125) with { CaseShare = 0.25, AveragedShare = 0.25 };
+        Stress stress = States.Judge(Rule, States.Of(pass, celsius: 55));
+        Assert.Equal(0.0464, stress.Allowed, 9);
+        Assert.Equal(0.01, stress.Actual, 12);
+    }
 
     // Just switched on, Tj is the ambient of 55 degC: the case is there, too, not at 55 - 16 = 39 degC: 0.76 of 200 mA.
     [Fact]

@@ -55,6 +55,11 @@ public class StabilityRuleTests : RuleTests<StabilityRule>
         Assert.Equal(1.70706, stress.Ratio!.Value, 5);
     }
 
+    // Half the time on, from 1 kHz up: half of 0.853530 is 0.426765. Whatever the peak, below 1 kHz the share is 1.
+    [Fact]
+    public void AveragedPowerHeatsByItsDuty() =>
+        Assert.Equal(0.42677, States.Judge(Rule, States.Of(Leg(1) with { AveragedShare = 0.5 })).Actual, 4);
+
     [Fact]
     public void ALegWithoutCurrentIsStable() => Assert.Equal(0, States.Judge(Rule, States.Of(Leg(0) with { Ic = 0, Ib = 0 })).Ratio!.Value, 12);
 

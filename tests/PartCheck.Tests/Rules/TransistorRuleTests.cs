@@ -94,6 +94,18 @@ public class PowerRuleTests : RuleTests<PowerRule>
 
     protected override Stress Above() => Judge(Slash255, 0.31, 100);
 
+    // 0.6 W while on at 37.5 degC, of 0.5 W: too much; averaged over a duty of 60 % from 1 kHz up it is 0.36 W: ratio 0.72.
+    [Theory]
+    [InlineData(1, 1.2, Verdict.Nonconforming)]
+    [InlineData(0.6, 0.72, Verdict.Conforms)]
+    public void UnderPwmTheAverageIsJudged(double share, double ratio, Verdict verdict)
+    {
+        Stress stress = States.Judge(Rule, States.Of(States.Pass(Slash255, power: 0.6) with { AveragedShare = share }, celsius: 37.5));
+        Assert.Equal(ratio, stress.Ratio!.Value, 9);
+        Assert.Equal(0.6 * share, stress.Actual, 12);
+        Assert.Equal(verdict, stress.Verdict);
+    }
+
     protected override Stress WithoutTheRating() => Judge(Slash255 with { Power = null }, 0.1, 25);
 
     protected override bool AskedByNobody() => States.Asks(Rule, States.BareTransistor, SampleChannel.Channel(1));
