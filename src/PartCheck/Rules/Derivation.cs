@@ -100,7 +100,14 @@ public sealed class Derivation
     {
         lines.Add(new DerivationLine
         {
-            Kind = DerivationKind.Given, Symbol = Filled(symbol), Value = value, Unit = unit, Meaning = meaning, Cell = cell, Source = source, Assumed = assumed,
+            Kind = DerivationKind.Given,
+            Symbol = Filled(symbol),
+            Value = value,
+            Unit = unit,
+            Meaning = meaning,
+            Cell = cell,
+            Source = source,
+            Assumed = assumed,
         });
         return this;
     }

@@ -32,7 +32,11 @@ internal sealed class FigureChain
                 HoldBalance(line, left, right);
                 return new WorkingLine
                 {
-                    Line = line, Figure = left.Figure, Numbers = left.Numbers, RightFigure = right.Figure, RightNumbers = right.Numbers,
+                    Line = line,
+                    Figure = left.Figure,
+                    Numbers = left.Numbers,
+                    RightFigure = right.Figure,
+                    RightNumbers = right.Numbers,
                 };
             default:
                 return new WorkingLine { Line = line };

@@ -30,7 +30,13 @@ internal sealed record FormulaToken(FormulaTokenKind Kind, string Text, string B
     /// <summary>Units that stand after the numbers of a rule's formulas, with their sizes.</summary>
     private static readonly Dictionary<string, double> Units = new(StringComparer.Ordinal)
     {
-        ["V"] = 1, ["A"] = 1, ["W"] = 1, ["ohm"] = 1, ["K"] = 1, ["degC"] = 1, ["%"] = 0.01,
+        ["V"] = 1,
+        ["A"] = 1,
+        ["W"] = 1,
+        ["ohm"] = 1,
+        ["K"] = 1,
+        ["degC"] = 1,
+        ["%"] = 0.01,
     };
 
     /// <summary>The parts of a formula.</summary>

@@ -149,6 +149,22 @@ public class PackageHeatTests
         Assert.Equal(both is null, model.Assumed.Any(a => a is { What: "RthJA both", Of: "TQ-2" }));
     }
 
+    // At 2 kHz and a duty of 25 % without Zth points the average power heats: a quarter of the 200 K/W while on, and the package is judged by
+    // a quarter of what its elements take while on.
+    [Fact]
+    public void UnderPwmTheAverageHeatsTheOtherElement()
+    {
+        BoundChannel channel = Channel(Dual(350), "Q1.1", "Q1.2");
+        channel = channel with { Conditions = channel.Conditions with { Duty = 0.25, Frequency = Frequency.FromHertz(2000) } };
+        ChannelModel model = Model(channel);
+        PinSource pin = new(channel.Logic);
+        ChannelBox box = WorstCase.Boxes(model, pin)[0];
+        int hot = Enumerable.Range(0, box.Count).First(i => box.At(i).Corner.Heat == 1);
+        Assert.Equal([50.0, 50.0], box.At(hot).Circuit.Package.Select(p => p.Rth));
+        SolvedState s = new CornerSolver(model, pin, null).Solve(box, hot);
+        Assert.Equal(0.25 * (s.Transistors[0].Power + s.Transistors[1].Power), s.Transistors[0].PackagePower, 9);
+    }
+
     [Fact]
     public void ANeighbourWhoseChannelIsNotSolvedIsMissing()
     {

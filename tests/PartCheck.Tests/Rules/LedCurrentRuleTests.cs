@@ -103,7 +103,9 @@ public class LedCurrentRuleTests : RuleTests<LedCurrentRule>
     {
         LedPart part = White with
         {
-            ForwardCurrentFlatTo = States.Cite(Temperature.FromCelsius(40)), ForwardCurrentSlope = null, TjMax = States.Cite(Temperature.FromCelsius(60)),
+            ForwardCurrentFlatTo = States.Cite(Temperature.FromCelsius(40)),
+            ForwardCurrentSlope = null,
+            TjMax = States.Cite(Temperature.FromCelsius(60)),
         };
         BoundChannel channel = SampleChannel.Channel(1);
         List<Finding> findings = EndToEnd(channel with { Leds = [Place("D1", part), Place("D2", part), Place("D3", White)] });
