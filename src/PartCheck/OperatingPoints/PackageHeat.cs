@@ -32,7 +32,8 @@ public sealed class PackageHeat
         HasNeighbours = powers is not null && channel.Neighbours.Count > 0;
         Missing = HasNeighbours && channel.Neighbours.FirstOrDefault(n => !double.IsFinite(powers!.GetValueOrDefault(n.Other, double.NaN))) is { } unknown
             ? $"dissipation of {unknown.Other} in channel {unknown.Channel}" : null;
-        Shares = HasNeighbours || partners.Any(p => p.Count > 0);
+        HasPartners = partners.Any(p => p.Count > 0);
+        Shares = HasNeighbours || HasPartners;
         Given = Sharing.All(p => p.RthJaBoth is not null);
     }
 
@@ -41,6 +42,9 @@ public sealed class PackageHeat
 
     /// <summary>What is not known of an element in another channel; null: nothing.</summary>
     public string? Missing { get; }
+
+    /// <summary>True where transistors of this channel share a package.</summary>
+    public bool HasPartners { get; }
 
     /// <summary>True where any transistor of the channel shares its package with one that is on.</summary>
     public bool Shares { get; }

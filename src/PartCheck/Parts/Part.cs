@@ -136,8 +136,8 @@ public sealed record Transistor : Part
     /// <summary>The user's model card, already held to the part's own windows.</summary>
     public Cited<ModelCard>? Card { get; init; }
 
-    /// <summary>Pin order such as <c>BEC</c>.</summary>
-    public string? Pins { get; init; }
+    /// <summary>What the leads are, in order; null: not known.</summary>
+    public LeadOrder? Pins { get; init; }
 
     /// <summary>Transistors in one package.</summary>
     public int Elements { get; init; } = 1;

@@ -69,8 +69,8 @@ public sealed partial class LaneSolver
             baseRow.Constant += weight * count * q.Ib;
             if (final)
             {
-                Lanes volts = Vector512.Abs(ve) + Vector512.Abs(inside) + Vector512.Abs(collector) + Lanes.One;
-                balanced &= Balanced(ofEmitter, volts) & Balanced(ofCollector, volts);
+                balanced &= Vector512.LessThanOrEqual(Vector512.Abs(ofEmitter), Vector512.Create(EmitterBalance))
+                    & Vector512.LessThanOrEqual(Vector512.Abs(ofCollector), Vector512.Create(CollectorBalance));
                 controlScale += counted * (Vector512.Abs(ie) + Vector512.Abs(throughSense));
                 loadScale += count * (Vector512.Abs(q.Ic) + Vector512.Abs(q.Ib));
                 baseScale += count * Vector512.Abs(q.Ib);
@@ -95,7 +95,7 @@ public sealed partial class LaneSolver
 
     /// <summary>As the scalar solver: below 10 fA (10 fV) rounding of the voltages decides.</summary>
     private static Lanes Balanced(Lanes residual, Lanes scale) => Vector512.LessThanOrEqual(
-        Vector512.Abs(residual), Vector512.Max(scale * BalanceTolerance, Vector512.Create(1e-14)));
+        Vector512.Abs(residual), Vector512.MaxNative(scale * BalanceTolerance, Vector512.Create(1e-14)));
 
     private void CloseBaseNode(in TransistorCurrents q0, ref Lanes scale)
     {
@@ -131,8 +131,7 @@ public sealed partial class LaneSolver
         }
         else
         {
-            Lanes u = Vector512.Min((load - c.ReferenceDrop) * c.InverseEmission, Vector512.Create(200.0));
-            Lanes exponential = Vector512.Exp(u);
+            Lanes exponential = ElementaryFunctions.Exp((load - c.ReferenceDrop) * c.InverseEmission);
             slope = c.LoadScale * exponential * c.InverseEmission;
             loadCurrent = c.LoadScale * (exponential - c.LoadFloor);
         }

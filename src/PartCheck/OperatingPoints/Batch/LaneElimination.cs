@@ -1,4 +1,5 @@
 using System.Runtime.Intrinsics;
+using static PartCheck.OperatingPoints.Batch.ElementaryFunctions;
 using Lanes = System.Runtime.Intrinsics.Vector512<double>;
 
 namespace PartCheck.OperatingPoints.Batch;
@@ -20,12 +21,12 @@ public sealed partial class LaneSolver
         Lanes sensed = c.Sensed(g);
         Lanes ieA = q.IcVbe + q.IbVbe;
         Lanes ieB = q.IcVbc + q.IbVbc;
-        Lanes insideA = -((q.IbVbe * q.Rbb) + (q.Ib * q.RbbVbe));
-        Lanes insideB = -((q.IbVbc * q.Rbb) + (q.Ib * q.RbbVbc));
+        Lanes insideA = -Sum(q.IbVbe, q.Rbb, q.Ib, q.RbbVbe);
+        Lanes insideB = -Sum(q.IbVbc, q.Rbb, q.Ib, q.RbbVbc);
         Lanes veA = insideA - Lanes.One - (ieA * re);
         Lanes veB = insideB - (ieB * re);
-        Lanes eA = (share * veA) - (averaging * ieA);
-        Lanes eB = (share * veB) - (averaging * ieB);
+        Lanes eA = Difference(share, veA, averaging, ieA);
+        Lanes eB = Difference(share, veB, averaging, ieB);
         Lanes cA = insideA + (rc * q.IcVbe);
         Lanes cB = insideB + (rc * q.IcVbc) - Lanes.One;
         ref Response a = ref ofVbe[g];
@@ -34,16 +35,16 @@ public sealed partial class LaneSolver
         Lanes veT = Lanes.Zero;
         if (!heated)
         {
-            Lanes inverse = Lanes.One / ((eA * cB) - (eB * cA));
+            Lanes inverse = Lanes.One / Difference(eA, cB, eB, cA);
             Lanes p = cB * inverse;
             Lanes s = cA * inverse;
             Lanes r = eB * inverse;
             Lanes t = eA * inverse;
-            a.Constant = (r * ofCollector) - (p * ofEmitter);
+            a.Constant = Difference(r, ofCollector, p, ofEmitter);
             a.Vb = r - (share * p);
             a.Vx = sensed * p;
             a.Vc = -r;
-            b.Constant = (s * ofEmitter) - (t * ofCollector);
+            b.Constant = Difference(s, ofEmitter, t, ofCollector);
             b.Vb = (share * s) - t;
             b.Vx = -(sensed * s);
             b.Vc = t;
@@ -51,7 +52,7 @@ public sealed partial class LaneSolver
         else
         {
             ieT = q.IcT + q.IbT;
-            Lanes insideT = -((q.IbT * q.Rbb) + (q.Ib * q.RbbT));
+            Lanes insideT = -Sum(q.IbT, q.Rbb, q.Ib, q.RbbT);
             veT = insideT - (ieT * re);
             HeatedLeg(g, share, sensed, ofEmitter, ofCollector, eA, eB, (share * veT) - (averaging * ieT), cA, cB, insideT + (rc * q.IcT), veA, veB, veT);
         }
@@ -137,17 +138,18 @@ public sealed partial class LaneSolver
         ref Response b = ref ofVbc[0];
         a = default;
         b = default;
-        Response ic;
-        Response ib;
         if (!heated)
         {
-            Lanes inverse = Lanes.One / ((vbA * vxB) - (vbB * vxA));
+            Lanes inverse = Lanes.One / Difference(vbA, vxB, vbB, vxA);
             a.Vb = vxB * inverse;
             a.Vx = -(vbB * inverse);
             b.Vb = -(vxA * inverse);
             b.Vx = vbA * inverse;
-            ic = Response.Of(q.IcVbe, a, q.IcVbc, b);
-            ib = Response.Of(q.IbVbe, a, q.IbVbc, b);
+            controlRow.Vb -= Sum(q.IbVbe, a.Vb, q.IbVbc, b.Vb);
+            controlRow.Vx -= Sum(q.IbVbe, a.Vx, q.IbVbc, b.Vx);
+            Lanes sign = edge is null ? -Lanes.One : Lanes.One;
+            baseRow.Vb += sign * Sum(q.IcVbe, a.Vb, q.IcVbc, b.Vb);
+            baseRow.Vx += sign * Sum(q.IcVbe, a.Vx, q.IcVbc, b.Vx);
         }
         else
         {
@@ -173,14 +175,13 @@ public sealed partial class LaneSolver
             t.Vb = m.M20;
             t.Vx = m.M21;
             t.Add(m.M22, heat);
-            ic = Response.Of(q.IcVbe, a, q.IcVbc, b);
-            ib = Response.Of(q.IbVbe, a, q.IbVbc, b);
+            Response ic = Response.Of(q.IcVbe, a, q.IcVbc, b);
+            Response ib = Response.Of(q.IbVbe, a, q.IbVbc, b);
             ic.Add(q.IcT, t);
             ib.Add(q.IbT, t);
+            controlRow.Add(-Lanes.One, ib);
+            baseRow.Add(-Lanes.One, ic);
         }
-
-        controlRow.Add(-Lanes.One, ib);
-        baseRow.Add(edge is null ? -Lanes.One : Lanes.One, ic);
     }
 
     /// <summary>Lanes where every junction stands where its power puts it.</summary>

@@ -12,11 +12,14 @@ public sealed class LaneSolution
     private const int DeviceFields = 6;
     private readonly double[] values = new double[(ChannelFields + (9 * DeviceFields)) * Width];
 
-    /// <summary>Lanes that are solved; the others are left to the scalar solver.</summary>
-    public int Solved { get; set; }
+    /// <summary>Lanes that are solved, a bit each; the others are left to the scalar solver.</summary>
+    public int Solved { get; internal set; }
 
     /// <summary>Newton steps of the slowest lane.</summary>
-    public int Iterations { get; set; }
+    public int Iterations { get; internal set; }
+
+    /// <summary>True where a lane is solved.</summary>
+    public bool IsSolved(int lane) => ((Solved >> lane) & 1) != 0;
 
     public double BaseVoltage(int lane) => values[lane];
 
@@ -89,7 +92,10 @@ public sealed class LaneSolution
             LoadCurrent = LoadCurrent(lane),
             FeedCurrent = feed,
             PinCurrent = feed + (atPin ? pinNode / circuit.PullDown : 0),
-            Control = new SolvedTransistor(Ic(0, lane), Ib(0, lane), vx, vb, 0, Temperature(0, lane), false),
+            Control = new SolvedTransistor(Ic(0, lane), Ib(0, lane), vx, vb, 0, Temperature(0, lane), false)
+            {
+                BaseResistance = BaseResistance(0, lane),
+            },
             Legs = legs,
             AveragingCurrents = averaging,
             Iterations = Iterations,

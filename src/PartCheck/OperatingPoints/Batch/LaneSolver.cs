@@ -11,16 +11,19 @@ namespace PartCheck.OperatingPoints.Batch;
 /// </summary>
 public sealed partial class LaneSolver
 {
+    private const int AllLanes = (1 << TransistorLanes.Width) - 1;
     private const int StepLimit = 40;
     private const double VoltageTolerance = 2e-7;
     private const double TemperatureTolerance = 2e-5;
     private const double BalanceTolerance = 1e-9;
+    private const double EmitterBalance = 1e-12;
+    private const double CollectorBalance = 1e-10;
 
     private readonly Lanes[] vbe = new Lanes[9];
     private readonly Lanes[] vbc = new Lanes[9];
     private readonly Lanes[] kelvins = new Lanes[9];
     private readonly Lanes[] ambient = new Lanes[9];
-    private readonly Lanes[] charge = new Lanes[9];
+    private readonly Lanes[] logCurrent = new Lanes[9];
     private readonly TransistorCurrents[] currents = new TransistorCurrents[9];
     private readonly Lanes[] emitter = new Lanes[9];
     private readonly Response[] ofVbe = new Response[9];
@@ -30,10 +33,14 @@ public sealed partial class LaneSolver
     private CircuitShape startShape;
     private CircuitLanes c = null!;
     private bool heated;
+    private bool crowded;
     private double? edge;
 
     /// <summary>Forgets the last solution: the next solve starts cold.</summary>
     public void Forget() => startShape = default;
+
+    /// <summary>True where the control's junction conducts well above its leakage (<see cref="SinkSolver.SolveEdge"/>).</summary>
+    public bool Regulates(int lane) => vbe[0][lane] > 3 * c.Devices[0].ForwardVoltage[lane];
 
     /// <summary>Solves the lanes.</summary>
     /// <param name="circuits">The circuits; every lane must hold one.</param>
@@ -45,45 +52,37 @@ public sealed partial class LaneSolver
         edge = edgeFactor;
         heated = circuits.Heated && edgeFactor is null;
         Start();
-        Lanes open = Lanes.AllBitsSet;
-        Lanes failed = Lanes.Zero;
         Lanes balanced = Lanes.Zero;
         int iterations = 0;
-        for (; iterations < StepLimit && open != Lanes.Zero; iterations++)
+        while (balanced.ExtractMostSignificantBits() != AllLanes && iterations < StepLimit)
         {
             Assemble(final: false);
-            Step(out Lanes moving, out Lanes lost);
-            failed |= lost;
-            open = Vector512.AndNot(moving, failed);
-            if (open == Lanes.Zero)
+            iterations++;
+            if (Step() == Lanes.Zero || iterations == StepLimit)
             {
+                // A lane that is lost (not a number) moves no more, but it does not balance.
                 balanced = Assemble(final: true);
-                open = Vector512.AndNot(~balanced, failed);
             }
-        }
-
-        if (open != Lanes.Zero)
-        {
-            balanced = Vector512.AndNot(Assemble(final: true), open);
         }
 
         for (int d = 0; d <= c.Shape.Legs; d++)
         {
             balanced &= Vector512.LessThanOrEqual(kelvins[d], c.Limit(d));
             into.Store(d, currents[d], d == 0 ? Lanes.Zero : emitter[d], kelvins[d]);
-            charge[d] = c.Devices[d].LogSaturation;
+            logCurrent[d] = (vbe[d] / c.Devices[d].ForwardVoltage) + c.Devices[d].LogSaturation;
         }
 
         into.Store(baseVoltage, controlBase, collector, loadCurrent);
-        into.Solved = (int)Vector512.AndNot(balanced, failed).ExtractMostSignificantBits();
+        into.Solved = (int)balanced.ExtractMostSignificantBits();
         into.Iterations = iterations;
-        startShape = into.Solved == 0xFF ? c.Shape : default;
+        startShape = into.Solved == AllLanes ? c.Shape : default;
     }
 
     /// <summary>From the last solution, each junction at its old current; else cold, as the scalar solver starts.</summary>
     private void Start()
     {
         int legs = c.Shape.Legs;
+        crowded = false;
         bool warm = startShape == c.Shape && legs > 0;
         if (!warm)
         {
@@ -96,12 +95,12 @@ public sealed partial class LaneSolver
             kelvins[d] = warm && heated ? kelvins[d] + c.BaseTemperature(d) - ambient[d] : c.BaseTemperature(d);
             ambient[d] = c.BaseTemperature(d);
 
-            Lanes before = device.ForwardVoltage;
             device.Bring(kelvins[d]);
+            crowded |= device.IsCrowded;
             if (warm)
             {
                 // The same current in another device, or at another temperature.
-                Lanes moved = (device.ForwardVoltage * ((vbe[d] / before) + charge[d] - device.LogSaturation)) - vbe[d];
+                Lanes moved = (device.ForwardVoltage * (logCurrent[d] - device.LogSaturation)) - vbe[d];
                 vbe[d] += moved;
                 vbc[d] += moved;
             }
@@ -126,30 +125,38 @@ public sealed partial class LaneSolver
         load = c.Shape.Fed ? drop : start;
     }
 
-    /// <summary>Solves for the node voltages, then every unknown takes its limited step.</summary>
-    private void Step(out Lanes moving, out Lanes lost)
+    /// <summary>Solves for the node voltages, then every unknown takes its limited step. Returns the lanes that still move.</summary>
+    private Lanes Step()
     {
         Inverse3 m = Inverse3.Of(
             controlRow.Vb, controlRow.Vx, controlRow.Vc,
             loadRow.Vb, loadRow.Vx, loadRow.Vc,
             baseRow.Vb, baseRow.Vx, baseRow.Vc);
-        Lanes vb = -((m.M00 * controlRow.Constant) + (m.M01 * loadRow.Constant) + (m.M02 * baseRow.Constant));
-        Lanes vx = -((m.M10 * controlRow.Constant) + (m.M11 * loadRow.Constant) + (m.M12 * baseRow.Constant));
-        Lanes vc = -((m.M20 * controlRow.Constant) + (m.M21 * loadRow.Constant) + (m.M22 * baseRow.Constant));
-        moving = Lanes.Zero;
-        Lanes sum = Lanes.Zero;
+        Lanes vb = -m.First(controlRow.Constant, loadRow.Constant, baseRow.Constant);
+        Lanes vx = -m.Second(controlRow.Constant, loadRow.Constant, baseRow.Constant);
+        Lanes vc = -m.Third(controlRow.Constant, loadRow.Constant, baseRow.Constant);
+        Lanes largest = Lanes.Zero;
+        Lanes warmest = Lanes.Zero;
         for (int d = 0; d <= c.Shape.Legs; d++)
         {
             TransistorLanes device = c.Devices[d];
-            vbe[d] += Bounded(vbe[d], ofVbe[d].At(vb, vx, vc), device.ForwardVoltage, device, ref moving, ref sum);
-            vbc[d] += Bounded(vbc[d], ofVbc[d].At(vb, vx, vc), device.ReverseVoltage, device, ref moving, ref sum);
+            Lanes forward = ofVbe[d].At(vb, vx, vc);
+            Lanes reverse = ofVbc[d].At(vb, vx, vc);
+            Lanes limit = device.ForwardVoltage * 2.0;
+            if (Vector512.GreaterThanAny(Vector512.Abs(forward), limit) || Vector512.GreaterThanAny(Vector512.Abs(reverse), limit))
+            {
+                forward = Junction(vbe[d], forward, device.ForwardVoltage, device.Critical(device.ForwardVoltage));
+                reverse = Junction(vbc[d], reverse, device.ReverseVoltage, device.Critical(device.ReverseVoltage));
+            }
+
+            vbe[d] += forward;
+            vbc[d] += reverse;
+            largest = Vector512.MaxNative(largest, Vector512.MaxNative(Vector512.Abs(forward), Vector512.Abs(reverse)));
             if (heated)
             {
-                Lanes step = Vector512.Max(Vector512.Min(ofKelvins[d].At(vb, vx, vc), Vector512.Create(40.0)), Vector512.Create(-40.0));
-                Lanes next = Vector512.Max(Vector512.Min(kelvins[d] + step, Vector512.Create(900.0)), Vector512.Create(100.0));
-                moving |= Vector512.GreaterThan(Vector512.Abs(step), Vector512.Create(TemperatureTolerance));
-                sum += step;
-                kelvins[d] = next;
+                Lanes step = Vector512.MaxNative(Vector512.MinNative(ofKelvins[d].At(vb, vx, vc), Vector512.Create(40.0)), Vector512.Create(-40.0));
+                kelvins[d] = Vector512.MaxNative(Vector512.MinNative(kelvins[d] + step, Vector512.Create(900.0)), Vector512.Create(100.0));
+                warmest = Vector512.MaxNative(warmest, Vector512.Abs(step));
             }
         }
 
@@ -159,23 +166,14 @@ public sealed partial class LaneSolver
             shift = Junction(load, shift, c.Emission, c.LoadCritical);
         }
 
-        moving |= Vector512.GreaterThan(Vector512.Abs(shift), (Lanes.One + Vector512.Abs(load)) * VoltageTolerance);
-        sum += shift;
         load += shift;
-        lost = ~Vector512.LessThan(Vector512.Abs(sum), Vector512.Create(1e12));
-    }
+        largest = Vector512.MaxNative(largest, Vector512.Abs(shift));
 
-    private static Lanes Bounded(Lanes old, Lanes step, Lanes scale, TransistorLanes device, ref Lanes moving, ref Lanes sum)
-    {
-        if (Vector512.GreaterThanAny(Vector512.Abs(step), scale * 2.0))
-        {
-            Lanes critical = scale * (Vector512.Log(scale * (1 / Math.Sqrt(2))) - device.LogSaturation);
-            step = Junction(old, step, scale, critical);
-        }
-
-        moving |= Vector512.GreaterThan(Vector512.Abs(step), (Lanes.One + Vector512.Abs(old)) * VoltageTolerance);
-        sum += step;
-        return step;
+        // The slope of a crowded base resistance is left to iteration: there the steps die out by a factor, not by squares.
+        double tolerance = crowded ? VoltageTolerance / 1000 : VoltageTolerance;
+        Lanes still = Vector512.LessThanOrEqual(largest, Vector512.Create(tolerance))
+            & Vector512.LessThanOrEqual(warmest, Vector512.Create(TemperatureTolerance));
+        return ~still;
     }
 
     /// <summary>The logarithmic limit of <see cref="SinkSolver"/>.</summary>
@@ -191,9 +189,9 @@ public sealed partial class LaneSolver
         Lanes argument = Lanes.One + (step / scale);
         Lanes forward = Vector512.ConditionalSelect(
             Vector512.GreaterThan(argument, Lanes.Zero),
-            scale * Vector512.Log(Vector512.Max(argument, Vector512.Create(1e-300))),
+            scale * ElementaryFunctions.Log(Vector512.Max(argument, Vector512.Create(1e-300))),
             Vector512.Max(critical, old - (scale * 10.0)) - old);
-        Lanes fromBelow = (scale * Vector512.Log(Vector512.Max(next / scale, Vector512.Create(1.01)))) - old;
+        Lanes fromBelow = (scale * ElementaryFunctions.Log(Vector512.Max(next / scale, Vector512.Create(1.01)))) - old;
         return Vector512.ConditionalSelect(
             limited, Vector512.ConditionalSelect(Vector512.GreaterThan(old, Lanes.Zero), forward, fromBelow), step);
     }

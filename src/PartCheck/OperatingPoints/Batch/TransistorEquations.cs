@@ -1,6 +1,8 @@
 using System.Runtime.CompilerServices;
 using System.Runtime.InteropServices;
 using System.Runtime.Intrinsics;
+using System.Runtime.Intrinsics.X86;
+using static PartCheck.OperatingPoints.Batch.ElementaryFunctions;
 using Lanes = System.Runtime.Intrinsics.Vector512<double>;
 
 namespace PartCheck.OperatingPoints.Batch;
@@ -33,13 +35,11 @@ internal sealed partial class TransistorLanes
     public void Evaluate(Lanes vbe, Lanes vbc, bool slopes, out TransistorCurrents r)
     {
         Lanes one = Lanes.One;
-        Lanes beU = vbe * inverseNf;
-        Lanes bcU = vbc * inverseNr;
-        Lanes beX = Exponential(beU);
-        Lanes bcX = Exponential(bcU);
-        Lanes beI = isat * LessOne(beU, beX);
+        Lanes beX = Exp(vbe * inverseNf);
+        Lanes bcX = Exp(vbc * inverseNr);
+        Lanes beI = isat * (beX - one);
         Lanes beG = isat * beX * inverseNf;
-        Lanes bcI = isat * LessOne(bcU, bcX);
+        Lanes bcI = isat * (bcX - one);
         Lanes bcG = isat * bcX * inverseNr;
 
         Lanes inverseVaf = Constant(TransistorField.InverseVaf);
@@ -47,14 +47,14 @@ internal sealed partial class TransistorLanes
         Lanes inverseIkf = Constant(TransistorField.InverseIkf);
         Lanes q1 = one / (one - (vbc * inverseVaf) - (vbe * inverseVar));
         Lanes inverseIkr = Constant(TransistorField.InverseIkr);
-        Lanes sum = (beI * inverseIkf) + (bcI * inverseIkr);
-        Lanes argument = Vector512.Max(one + (sum * 4.0), Vector512.Create(1e-30));
+        Lanes sum = Sum(beI, inverseIkf, bcI, inverseIkr);
+        Lanes argument = Vector512.MaxNative(one + (sum * 4.0), Vector512.Create(1e-30));
         Lanes root;
         Lanes rootSlope;
         if (hasNkf)
         {
             Lanes nkf = Constant(TransistorField.Nkf);
-            root = Vector512.Exp(nkf * Vector512.Log(argument));
+            root = Exp(nkf * Log(argument));
             rootSlope = nkf * 4.0 * root / argument;
         }
         else
@@ -65,9 +65,10 @@ internal sealed partial class TransistorLanes
 
         Lanes half = q1 * 0.5;
         Lanes qb = half * (one + root);
+        Lanes charge = qb * q1;
         Lanes perRoot = half * rootSlope;
-        Lanes qbBe = (qb * q1 * inverseVar) + (perRoot * beG * inverseIkf);
-        Lanes qbBc = (qb * q1 * inverseVaf) + (perRoot * bcG * inverseIkr);
+        Lanes qbBe = Sum(charge, inverseVar, perRoot * beG, inverseIkf);
+        Lanes qbBc = Sum(charge, inverseVaf, perRoot * bcG, inverseIkr);
         Lanes inverseQb = one / qb;
         Lanes transport = (beI - bcI) * inverseQb;
         Lanes reverse = bcI * inverseBr;
@@ -90,9 +91,8 @@ internal sealed partial class TransistorLanes
 
         if (hasIsc)
         {
-            Lanes u = vbc * inverseNc;
-            Lanes x = Exponential(u);
-            Lanes current = isc * LessOne(u, x);
+            Lanes x = Exp(vbc * inverseNc);
+            Lanes current = isc * (x - one);
             Lanes conductance = isc * x * inverseNc;
             reverse += current;
             reverseBc += conductance;
@@ -105,9 +105,8 @@ internal sealed partial class TransistorLanes
 
         if (hasIse)
         {
-            Lanes u = vbe * inverseNe;
-            Lanes x = Exponential(u);
-            Lanes current = ise * LessOne(u, x);
+            Lanes x = Exp(vbe * inverseNe);
+            Lanes current = ise * (x - one);
             Lanes conductance = ise * x * inverseNe;
             forward += current;
             forwardBe += conductance;
@@ -119,15 +118,15 @@ internal sealed partial class TransistorLanes
         }
 
         r.Ic = transport - reverse;
-        r.IcVbe = (beG - (transport * qbBe)) * inverseQb;
-        r.IcVbc = ((-bcG - (transport * qbBc)) * inverseQb) - reverseBc;
+        r.IcVbe = Vector512.FusedMultiplyAdd(-transport, qbBe, beG) * inverseQb;
+        r.IcVbc = -Vector512.FusedMultiplyAdd(Vector512.FusedMultiplyAdd(transport, qbBc, bcG), inverseQb, reverseBc);
         r.IcT = slopes ? ((beT - bcT - (transport * qbT)) * inverseQb) - reverseT : Lanes.Zero;
 
         Lanes factor = Gain(r.Ic, out Lanes factorSlope);
         Lanes through = forward * factorSlope;
-        r.Ib = (factor * forward) + reverse;
-        r.IbVbe = (factor * forwardBe) + (through * r.IcVbe);
-        r.IbVbc = reverseBc + (through * r.IcVbc);
+        r.Ib = Vector512.FusedMultiplyAdd(factor, forward, reverse);
+        r.IbVbe = Sum(factor, forwardBe, through, r.IcVbe);
+        r.IbVbc = Vector512.FusedMultiplyAdd(through, r.IcVbc, reverseBc);
         r.IbT = slopes ? (factor * forwardT) + reverseT + (through * r.IcT) : Lanes.Zero;
 
         r.Rbb = Constant(TransistorField.Rbm);
@@ -155,19 +154,6 @@ internal sealed partial class TransistorLanes
         }
     }
 
-    /// <summary>exp, held at 200 like the scalar equations' and at -700, where it is nothing.</summary>
-    [MethodImpl(MethodImplOptions.AggressiveInlining)]
-    private static Lanes Exponential(Lanes u) =>
-        Vector512.Exp(Vector512.Min(Vector512.Max(u, Vector512.Create(-700.0)), Vector512.Create(200.0)));
-
-    /// <summary>exp(u) - 1 without cancellation near zero.</summary>
-    [MethodImpl(MethodImplOptions.AggressiveInlining)]
-    private static Lanes LessOne(Lanes u, Lanes exponential)
-    {
-        Lanes small = Vector512.LessThan(Vector512.Abs(u), Vector512.Create(1e-5));
-        return Vector512.ConditionalSelect(small, u * (Lanes.One + (u * 0.5)), exponential - Lanes.One);
-    }
-
     /// <summary>The gain factor and its slope, each lane from its own table (<see cref="Devices.GainFactor"/>).</summary>
     private Lanes Gain(Lanes ic, out Lanes slope)
     {
@@ -177,23 +163,28 @@ internal sealed partial class TransistorLanes
             return FirstCubics();
         }
 
-        Lanes bounded = Vector512.Max(ic, Vector512.Create(1e-300));
+        Lanes bounded = Vector512.MaxNative(ic, Vector512.Create(1e-300));
         Lanes perLog = Constant(TransistorField.GainPointsPerLog);
         Lanes last = Constant(TransistorField.GainLast);
-        Lanes position = (Vector512.Log(bounded) - Constant(TransistorField.GainFirstLog)) * perLog;
+        Lanes position = (Log(bounded) - Constant(TransistorField.GainFirstLog)) * perLog;
         Lanes inside = Vector512.GreaterThan(position, Lanes.Zero) & Vector512.LessThan(position, last);
         if (inside == Lanes.Zero && Vector512.LessThanOrEqualAll(position, Lanes.Zero))
         {
             return FirstCubics();
         }
 
-        position = Vector512.Min(Vector512.Max(position, Lanes.Zero), last);
-        Lanes cell = Vector512.Min(Vector512.Floor(position), last - Lanes.One);
+        position = Vector512.MinNative(Vector512.MaxNative(position, Lanes.Zero), last);
+        Lanes cell = Vector512.MinNative(Vector512.Floor(position), last - Lanes.One);
         Lanes t = position - cell;
         Vector512<long> at = Vector512.ConvertToInt64(cell);
         Cells(at, out Lanes c0, out Lanes c1, out Lanes c2, out Lanes c3);
-        slope = (c1 + (t * ((c2 * 2.0) + (c3 * 3.0 * t)))) * perLog / bounded & inside;
-        return c0 + (t * (c1 + (t * (c2 + (c3 * t)))));
+        Lanes quadratic = Vector512.FusedMultiplyAdd(c3, t, c2);
+        Lanes secant = Vector512.FusedMultiplyAdd(quadratic, t, c1);
+
+        // The cubic's slope: c1 + 2 c2 t + 3 c3 t^2.
+        Lanes tangent = Vector512.FusedMultiplyAdd(Vector512.FusedMultiplyAdd(c3, t, quadratic), t, secant);
+        slope = tangent * perLog / bounded & inside;
+        return Vector512.FusedMultiplyAdd(secant, t, c0);
     }
 
     private Lanes FirstCubics() => Vector512.Create(
@@ -218,6 +209,19 @@ internal sealed partial class TransistorLanes
         Vector256<double> r0, Vector256<double> r1, Vector256<double> r2, Vector256<double> r3,
         out Vector256<double> c0, out Vector256<double> c1, out Vector256<double> c2, out Vector256<double> c3)
     {
+        if (Avx.IsSupported)
+        {
+            Vector256<double> low01 = Avx.UnpackLow(r0, r1);
+            Vector256<double> high01 = Avx.UnpackHigh(r0, r1);
+            Vector256<double> low23 = Avx.UnpackLow(r2, r3);
+            Vector256<double> high23 = Avx.UnpackHigh(r2, r3);
+            c0 = Avx.Permute2x128(low01, low23, 0x20);
+            c1 = Avx.Permute2x128(high01, high23, 0x20);
+            c2 = Avx.Permute2x128(low01, low23, 0x31);
+            c3 = Avx.Permute2x128(high01, high23, 0x31);
+            return;
+        }
+
         c0 = Vector256.Create(r0[0], r1[0], r2[0], r3[0]);
         c1 = Vector256.Create(r0[1], r1[1], r2[1], r3[1]);
         c2 = Vector256.Create(r0[2], r1[2], r2[2], r3[2]);

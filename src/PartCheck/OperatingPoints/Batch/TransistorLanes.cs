@@ -55,6 +55,9 @@ internal sealed partial class TransistorLanes
     /// <summary>Junction temperature [K].</summary>
     public Lanes Temperature => temperature;
 
+    /// <summary>True where current crowding counts in some lane.</summary>
+    public bool IsCrowded => hasCrowding;
+
     /// <summary>Emitter resistance [ohm].</summary>
     public Lanes Re => Constant(TransistorField.Re);
 
@@ -102,12 +105,12 @@ internal sealed partial class TransistorLanes
         Lanes inverse = one / kelvins;
         inverseTemperature = inverse;
         Lanes vt = kelvins * PhysicalConstants.BoltzmannOverCharge;
-        Lanes logRatio = Vector512.Log(kelvins * (1 / PhysicalConstants.RoomTemperature));
+        Lanes logRatio = ElementaryFunctions.Log(kelvins * (1 / PhysicalConstants.RoomTemperature));
         Lanes gap = Constant(TransistorField.EnergyGap);
         Lanes xti = Constant(TransistorField.Xti);
         Lanes logIs = (xti * logRatio) + (gap * (Vector512.Create(1 / PhysicalConstants.RoomTemperature) - inverse));
         LogSaturation = Constant(TransistorField.LogIs) + logIs;
-        isat = Constant(TransistorField.Is) * Vector512.Exp(logIs);
+        isat = Constant(TransistorField.Is) * ElementaryFunctions.Exp(logIs);
         ForwardVoltage = Constant(TransistorField.Nf) * vt;
         ReverseVoltage = Constant(TransistorField.Nr) * vt;
         Lanes inverseVt = one / vt;
@@ -124,9 +127,9 @@ internal sealed partial class TransistorLanes
                 Vector512.LessThan(kelvins, Vector512.Create(PhysicalConstants.RoomTemperature)),
                 Constant(TransistorField.XtbCold), Constant(TransistorField.XtbHot));
             Lanes xtbReverse = Constant(TransistorField.XtbReverse);
-            inverseForward = Vector512.Exp(-(xtb * logRatio));
+            inverseForward = ElementaryFunctions.Exp(-(xtb * logRatio));
             inverseReverse = xtb == xtbReverse ? inverseForward
-                : xtbReverse == Lanes.Zero ? one : Vector512.Exp(-(xtbReverse * logRatio));
+                : xtbReverse == Lanes.Zero ? one : ElementaryFunctions.Exp(-(xtbReverse * logRatio));
             dlnBf = xtb * inverse;
             dlnBr = xtbReverse * inverse;
         }
@@ -137,16 +140,19 @@ internal sealed partial class TransistorLanes
         {
             Lanes ne = Constant(TransistorField.InverseNe);
             inverseNe = ne * inverseVt;
-            ise = Constant(TransistorField.Ise) * Vector512.Exp(logIs * ne) * inverseForward;
+            ise = Constant(TransistorField.Ise) * ElementaryFunctions.Exp(logIs * ne) * inverseForward;
         }
 
         if (hasIsc)
         {
             Lanes nc = Constant(TransistorField.InverseNc);
             inverseNc = nc * inverseVt;
-            isc = Constant(TransistorField.Isc) * Vector512.Exp(logIs * nc) * inverseReverse;
+            isc = Constant(TransistorField.Isc) * ElementaryFunctions.Exp(logIs * nc) * inverseReverse;
         }
     }
+
+    /// <summary>Voltage above which a junction's steps are limited: scale ln(scale/(sqrt 2 IS)) [V].</summary>
+    public Lanes Critical(Lanes scale) => scale * (ElementaryFunctions.Log(scale * (1 / Math.Sqrt(2))) - LogSaturation);
 
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     private Lanes Constant(int field) =>
