@@ -1,4 +1,3 @@
-using PartCheck.Bills;
 using PartCheck.Channels;
 using PartCheck.Parts;
 
@@ -81,6 +80,5 @@ public sealed class PackageHeat
     }
 
     private static bool SamePackage(Placement a, Placement b) =>
-        a.Part is Transistor { Elements: > 1 } && ElementReference.ElementOf(a.Reference) is not null
-        && string.Equals(ElementReference.PackageOf(a.Reference), ElementReference.PackageOf(b.Reference), StringComparison.OrdinalIgnoreCase);
+        a is { Part: Transistor { Elements: > 1 }, Element: not null } && string.Equals(a.Package, b.Package, StringComparison.OrdinalIgnoreCase);
 }

@@ -1,5 +1,4 @@
 using System.Globalization;
-using PartCheck.Bills;
 using PartCheck.Channels;
 using PartCheck.Derating;
 using PartCheck.OperatingPoints;
@@ -237,7 +236,7 @@ public sealed class ChannelJudge
         List<string> words = [];
         if (package && placement is not null)
         {
-            words.Add($"the whole package {ElementReference.PackageOf(placement.Reference)}, its elements together");
+            words.Add($"the whole package {placement.Package}, its elements together");
         }
 
         if (PulsedHeat.AveragedShare(model.Channel.Conditions) is < 1 and var duty)
