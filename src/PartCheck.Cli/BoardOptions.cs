@@ -1,5 +1,8 @@
 using System.CommandLine;
+using PartCheck.Bills;
+using PartCheck.Concessions;
 using PartCheck.Derating;
+using PartCheck.Reports;
 using PartCheck.Sheets;
 
 namespace PartCheck.Cli;
@@ -12,6 +15,10 @@ internal sealed class BoardOptions
     private readonly Option<string?> channels = UsageError.NoOption(new Option<string?>("--channels") { Description = "Channels apart from the board", HelpName = "FILE[:SHEET]" });
     private readonly Option<string?> derating = UsageError.NoOption(new Option<string?>("--derating") { Description = "Derating table (default: workshop)", HelpName = "NAME|FILE" });
     private readonly Option<string?> pins = UsageError.NoOption(new Option<string?>("--pins") { Description = "Logic pins (default: the board's, else the project's own)", HelpName = "FILE" });
+    private readonly Option<string[]> with = UsageError.NoOption(new Option<string[]>("--with") { Description = "Judge the board with other parts, and compare: reference or part number of the bill, part number", HelpName = "LINE=PN,...", AllowMultipleArgumentsPerToken = false });
+    private readonly Option<string?> assembly = UsageError.NoOption(new Option<string?>("--assembly") { Description = "Judge what is fitted in one assembly: the bill's column Populated NAME", HelpName = "NAME" });
+    private readonly Option<string?> concessions = UsageError.NoOption(new Option<string?>("--concessions") { Description = "What was accepted in writing (default: the board's own); needs --date", HelpName = "FILE[:SHEET]" });
+    private readonly Option<string?> date = UsageError.NoOption(new Option<string?>("--date") { Description = "Day that concessions are held against", HelpName = "YYYY-MM-DD" });
     private readonly Option<string?> columns = UsageError.NoOption(new Option<string?>("--columns") { Description = "Further header spellings", HelpName = "FILE" });
     private readonly Option<string?> encoding = UsageError.NoOption(new Option<string?>("--encoding") { Description = "Text encoding of CSV files (default: found out)", HelpName = "NAME" });
     private readonly Option<string> format = new("--format") { Description = "text or json", HelpName = "FORMAT", DefaultValueFactory = _ => "text" };
@@ -23,7 +30,7 @@ internal sealed class BoardOptions
     /// <summary>Gives a command these options.</summary>
     public Command On(Command command)
     {
-        foreach (Option option in (Option[])[parts, bill, channels, derating, pins, columns, encoding, format, file, replace])
+        foreach (Option option in (Option[])[parts, bill, channels, derating, pins, with, assembly, concessions, date, columns, encoding, format, file, replace])
         {
             command.Options.Add(option);
         }
@@ -40,6 +47,10 @@ internal sealed class BoardOptions
         Channels = parse.GetValue(channels),
         Derating = parse.GetValue(derating),
         Pins = parse.GetValue(pins),
+        With = AskedChange.Read(parse.GetValue(with) ?? [], out IReadOnlyList<AskedChange> changes) is null ? changes : [],
+        Assembly = parse.GetValue(assembly),
+        Concessions = parse.GetValue(concessions),
+        Date = parse.GetValue(date) is { } day ? ConcessionReader.DateOf(day) : null,
         Columns = parse.GetValue(columns),
         Encoding = parse.GetValue(encoding),
     };
@@ -54,7 +65,7 @@ internal sealed class BoardOptions
     /// <returns>The exit code; null: nothing is amiss.</returns>
     public async Task<int?> RefusedAsync(ParseResult parse, CheckRequest request, TextWriter error)
     {
-        if (UsageFault(request) is { } fault)
+        if ((Unread(parse) ?? UsageFault(request)) is { } fault)
         {
             await error.WriteLineAsync("partcheck: " + fault).ConfigureAwait(false);
             return ExitCodes.Usage;
@@ -67,6 +78,18 @@ internal sealed class BoardOptions
         }
 
         return null;
+    }
+
+    /// <summary>Refuses after the run what the boards do not have: a line, a part, an assembly; says all of it.</summary>
+    /// <returns>The exit code; null: nothing is amiss.</returns>
+    public static async Task<int?> MisaskedAsync(CheckReport report, TextWriter error)
+    {
+        foreach (string wrong in report.UsageFaults)
+        {
+            await error.WriteLineAsync("partcheck: " + UsageError.OneLine(wrong)).ConfigureAwait(false);
+        }
+
+        return report.UsageFaults.Count > 0 ? ExitCodes.Usage : null;
     }
 
     /// <summary>Writes the report where it is to go.</summary>
@@ -102,11 +125,26 @@ internal sealed class BoardOptions
         return code;
     }
 
+    /// <summary>What cannot be read of changes and day; null: all can.</summary>
+    private string? Unread(ParseResult parse) => AskedChange.Read(parse.GetValue(with) ?? [], out _)
+        ?? (parse.GetValue(date) is { } typed && ConcessionReader.DateOf(typed) is null
+            ? $"--date needs a day of the form YYYY-MM-DD, not {UsageError.OneLine(typed)}." : null);
+
     private static string? UsageFault(CheckRequest request)
     {
         if (request.Boards.Count > 1 && (request.Bill is not null || request.Channels is not null))
         {
             return "--bill and --channels go with one board.";
+        }
+
+        if (request.Concessions is not null && request.Date is null)
+        {
+            return "--concessions needs --date YYYY-MM-DD: whether one is in force never hangs on the clock.";
+        }
+
+        if (request.Boards.Count > 1 && request.With.Count > 0)
+        {
+            return "--with goes with one board.";
         }
 
         if (request.Derating is { } name && DeratingLibrary.Named(name) is null && !File.Exists(BoardSource.Split(name).Path))
@@ -121,7 +159,7 @@ internal sealed class BoardOptions
     private static IEnumerable<string> Inputs(CheckRequest request)
     {
         IEnumerable<string> named = request.Boards.Concat(request.Parts)
-            .Concat(new[] { request.Bill, request.Channels, request.Derating, request.Pins, request.Columns }.OfType<string>())
+            .Concat(new[] { request.Bill, request.Channels, request.Derating, request.Pins, request.Columns, request.Concessions }.OfType<string>())
             .Select(f => BoardSource.Split(f).Path);
         return named.SelectMany(f => Directory.Exists(f) ? Directory.EnumerateFiles(f, "*.csv") : [f]);
     }

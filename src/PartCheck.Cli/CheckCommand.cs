@@ -20,6 +20,11 @@ internal static class CheckCommand
             }
 
             CheckReport report = CheckRun.Run(request, cancel);
+            if (await BoardOptions.MisaskedAsync(report, error).ConfigureAwait(false) is { } misasked)
+            {
+                return misasked;
+            }
+
             string text = options.Json(parse) ? JsonReport.Write(report) : TextReport.Write(report, colour && options.ToOutput(parse));
             return await options.WriteAsync(parse, text, ExitCodes.Of(report), output, error).ConfigureAwait(false);
         });

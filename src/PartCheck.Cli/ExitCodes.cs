@@ -32,7 +32,7 @@ internal static class ExitCodes
 
         return verdict switch
         {
-            Verdict.Conforms => 0,
+            Verdict.Conforms or Verdict.Concession => 0,
             Verdict.Nonconforming => 1,
             _ => 2,
         };

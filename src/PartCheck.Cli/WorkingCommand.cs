@@ -24,6 +24,11 @@ internal static class WorkingCommand
 
             WorkingSelection selection = new(parse.GetRequiredValue(channel), parse.GetValue(rule), parse.GetValue(reference));
             WorkingReport report = CheckRun.Work(request, selection, out string? fault, cancel);
+            if (await BoardOptions.MisaskedAsync(report.Check, error).ConfigureAwait(false) is { } misasked)
+            {
+                return misasked;
+            }
+
             if (fault is not null)
             {
                 await error.WriteLineAsync("partcheck: " + UsageError.OneLine(fault)).ConfigureAwait(false);

@@ -58,4 +58,11 @@ public sealed record BillLine
 /// <summary>A bill of materials.</summary>
 /// <param name="Name">File name as given.</param>
 /// <param name="Lines">Its lines, in order.</param>
-public sealed record Bill(string Name, IReadOnlyList<BillLine> Lines);
+public sealed record Bill(string Name, IReadOnlyList<BillLine> Lines)
+{
+    /// <summary>Assemblies that columns such as <c>Populated LITE</c> name, in the order of the columns.</summary>
+    public IReadOnlyList<string> Assemblies { get; init; } = [];
+
+    /// <summary>The assembly that was asked for and found, as its header writes it; null: none.</summary>
+    public string? Assembly { get; init; }
+}

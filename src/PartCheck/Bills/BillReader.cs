@@ -27,21 +27,32 @@ public static class BillReader
     ];
 
     /// <summary>The bill of a sheet; null where it has none.</summary>
-    public static Bill? Read(SheetData sheet, ColumnSpellings spellings, ComplaintList complaints)
+    /// <param name="sheet">The sheet.</param>
+    /// <param name="spellings">Header spellings.</param>
+    /// <param name="complaints">Where complaints go.</param>
+    /// <param name="assembly">
+    /// The assembly whose columns say what is fitted; one that the bill does not name leaves <see cref="Bill.Assembly"/> null.
+    /// </param>
+    public static Bill? Read(SheetData sheet, ColumnSpellings spellings, ComplaintList complaints, string? assembly = null)
     {
         ArgumentNullException.ThrowIfNull(sheet);
         ArgumentNullException.ThrowIfNull(complaints);
-        Table? table = Table.Find(sheet, "BOM", Columns, spellings, complaints);
+        IReadOnlyList<AssemblyColumn> named = Table.Find(sheet, "BOM", Columns, spellings, new ComplaintList()) is { } bare
+            ? AssemblyColumn.Of(sheet, bare.HeaderRow, spellings) : [];
+        List<AssemblyColumn> asked = assembly is null ? [] : [.. named.Where(n => n.Is(assembly))];
+        Table? table = Table.Find(sheet, "BOM", [.. Columns, .. asked.Select(a => new ColumnSpec(a.Header, ColumnKind.Text))], spellings, complaints);
         if (table is null)
         {
             return null;
         }
 
+        HashSet<TableRow> open = BlankMarks(table, asked);
+
         List<BillLine> lines = [];
         Dictionary<string, int> seen = new(StringComparer.OrdinalIgnoreCase);
         foreach (TableRow row in table.Rows)
         {
-            if (ReadLine(row, sheet.DecimalComma) is not { } line)
+            if (ReadLine(row, sheet.DecimalComma, asked) is not { } line)
             {
                 continue;
             }
@@ -61,7 +72,7 @@ public static class BillReader
                 }
             }
 
-            lines.Add(row.HasComplaints ? line with { HasComplaints = true } : line);
+            lines.Add(row.HasComplaints || open.Contains(row) ? line with { HasComplaints = true } : line);
         }
 
         if (lines.Count == 0)
@@ -72,10 +83,34 @@ public static class BillReader
             return null;
         }
 
-        return new Bill(sheet.File, lines);
+        return new Bill(sheet.File, lines)
+        {
+            Assemblies = [.. named.Where(n => n.Plausible || asked.Contains(n)).Select(n => n.Assembly).Distinct(StringComparer.OrdinalIgnoreCase)],
+            Assembly = asked.Count == 0 ? null : asked[0].Assembly,
+        };
     }
 
-    private static BillLine? ReadLine(TableRow row, bool decimalComma)
+    /// <summary>
+    /// Rows that a column of yes-marks alone leaves blank: whether a blank means not fitted, nobody can tell. One complaint for the column.
+    /// </summary>
+    private static HashSet<TableRow> BlankMarks(Table table, IReadOnlyList<AssemblyColumn> asked)
+    {
+        HashSet<TableRow> open = [];
+        foreach (AssemblyColumn column in asked.Where(a => a.YesMeansFitted))
+        {
+            List<TableRow> blank = [.. table.Rows.Where(r => r.Text("References") is not null && r.Text(column.Header) is null)];
+            List<bool?> said = [.. table.Rows.Select(r => r.Text(column.Header) is { } text ? FittedMarks.Statement(text, true) : null)];
+            if (blank.Count > 0 && said.Contains(true) && !said.Contains(false))
+            {
+                blank[0].Complain(column.Header, "yes or no in every row", $"{column.Header} marks what is fitted and says of no line that it is not: whether its blank cells mean that cannot be told.");
+                open.UnionWith(blank);
+            }
+        }
+
+        return open;
+    }
+
+    private static BillLine? ReadLine(TableRow row, bool decimalComma, IReadOnlyList<AssemblyColumn> assembly)
     {
         if (row.Text("References") is not { } text)
         {
@@ -88,7 +123,7 @@ public static class BillReader
         }
 
         string? value = row.Text("Value");
-        (bool fitted, Cited<string>? mark) = FittedMarks.Read(row, value);
+        (bool fitted, Cited<string>? mark) = FittedMarks.Read(row, value, assembly);
         Resistance? ohms = value is not null
             && QuantityParser.TryParse(value, QuantityKind.Resistance, decimalComma, null, out QuantityReading reading)
             && reading.Si >= 0 ? Resistance.FromOhms(reading.Si) : null;

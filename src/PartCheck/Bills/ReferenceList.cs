@@ -13,6 +13,13 @@ public static partial class ReferenceList
     /// <summary>Longest range that is written out.</summary>
     public const int LongestRange = 10_000;
 
+    /// <summary>Components to place: elements of one package (<c>Q1.1, Q1.2</c>) are one.</summary>
+    public static int Components(IEnumerable<string> references)
+    {
+        ArgumentNullException.ThrowIfNull(references);
+        return references.Select(ElementReference.PackageOf).Distinct(StringComparer.OrdinalIgnoreCase).Count();
+    }
+
     /// <summary>The references of a cell.</summary>
     /// <param name="text">The cell's text.</param>
     /// <param name="references">The references, ranges written out.</param>

@@ -156,6 +156,9 @@ public sealed record BoundChannel
     /// <summary>Where the pull-down sits.</summary>
     public PullDownAt PullDownAt { get; init; }
 
+    /// <summary>Which part this reading takes for each line that offers several part numbers or manufacturers; empty: none does.</summary>
+    public IReadOnlyList<MixedLine> Mix { get; init; } = [];
+
     /// <summary>LEDs of the load; empty: the channel names none, and none is judged.</summary>
     public IReadOnlyList<Placement> Leds { get; init; } = [];
 
@@ -168,6 +171,13 @@ public sealed record BoundChannel
     /// <summary>Cell of a condition's column (by the column's own name, e.g. <c>Current min</c>), for findings; may be empty.</summary>
     public IReadOnlyDictionary<string, string> ConditionCells { get; init; } = new Dictionary<string, string>();
 }
+
+/// <summary>What one mix of parts takes for a bill line that offers several.</summary>
+/// <param name="References">References of the line that the channel names.</param>
+/// <param name="PartNumber">Part number taken.</param>
+/// <param name="Manufacturer">Its manufacturer; null: the table names none.</param>
+/// <param name="Alternate">True where it is an approved alternate of the line, not its own part number.</param>
+public sealed record MixedLine(IReadOnlyList<string> References, string PartNumber, string? Manufacturer, bool Alternate);
 
 /// <summary>A value that the tables did not give and a stated default filled.</summary>
 /// <param name="What">Which value, e.g. <c>TCR</c>.</param>
@@ -184,7 +194,7 @@ public sealed record Channel
     /// <summary>File and cell of the name.</summary>
     public required string Cell { get; init; }
 
-    /// <summary>One bound channel for every combination of part rows over its lines; empty where it cannot be judged.</summary>
+    /// <summary>One bound channel for every combination of part rows, alternates included, over its lines; empty where it cannot be judged.</summary>
     public required IReadOnlyList<BoundChannel> Readings { get; init; }
 
     /// <summary>Data that is missing, when <see cref="Readings"/> is empty: e.g. "part table row of ZX-117".</summary>
@@ -208,4 +218,11 @@ public sealed record Channel
 /// <param name="Reference">The reference that the channel names.</param>
 /// <param name="Text">What is wrong, one sentence.</param>
 /// <param name="Cell">The cell that says so.</param>
-public sealed record RoleFault(Role Role, string Reference, string Text, string Cell);
+public sealed record RoleFault(Role Role, string Reference, string Text, string Cell)
+{
+    /// <summary>True where an approved alternate cannot play the role: the channel's other mixes are judged all the same.</summary>
+    public bool OfAlternate { get; init; }
+
+    /// <summary>Data that the alternate lacks: the finding is then not verified instead of nonconforming; null: none.</summary>
+    public string? Missing { get; init; }
+}

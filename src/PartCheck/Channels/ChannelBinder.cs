@@ -98,21 +98,21 @@ public static class ChannelBinder
 
         LogicPin? pin = pins.FirstOrDefault(p => string.Equals(p.Name, row.Logic, StringComparison.OrdinalIgnoreCase));
         List<BoundChannel> readings = [];
-        if (faults.Count == 0 && missing.Count == 0 && pin is not null)
+        if (faults.TrueForAll(f => f.OfAlternate) && missing.Count == 0 && pin is not null)
         {
             long count = choices.Values.Aggregate(1L, (n, c) => Math.Min(n * c.Count, 1L << 40));
             if (count > MostReadings)
             {
                 string[] cite = row.Cell.Split('!');
-                string text = string.Create(CultureInfo.InvariantCulture, $"The bill's part numbers have {count} combinations of rows in the part table for this channel, more than {MostReadings}: name the manufacturers on the bill.");
-                complaints.Add(new Complaint(cite[0], cite.Length > 2 ? cite[1] : null, null, "Channel", cite[^1], row.Name, "manufacturers on the bill", text) { Channel = row.Name });
-                missing.Add("manufacturers on the bill");
+                string text = string.Create(CultureInfo.InvariantCulture, $"The part numbers and alternates on the bill have {count} combinations of rows in the part table for this channel, more than {MostReadings}: name the manufacturers on the bill, or ask for one alternate at a time (--with).");
+                complaints.Add(new Complaint(cite[0], cite.Length > 2 ? cite[1] : null, null, "Channel", cite[^1], row.Name, "manufacturers on the bill, or fewer alternates", text) { Channel = row.Name });
+                missing.Add("manufacturers on the bill, or fewer alternates");
             }
             else
             {
                 foreach (Dictionary<BillLine, Part> reading in Combinations([.. choices]))
                 {
-                    readings.Add(Reading(row, pin, bill, reading) with { Neighbours = PackageElements.Neighbours(row, all) });
+                    readings.Add(Reading(row, pin, bill, reading) with { Mix = Mix(row, choices, reading), Neighbours = PackageElements.Neighbours(row, all) });
                 }
             }
         }
@@ -166,64 +166,50 @@ public static class ChannelBinder
             return;
         }
 
-        IReadOnlyList<Part> found = parts.Find(line.PartNumber);
-        if (found.Count == 0)
+        PartChoice own = PartChoice.Of(row, role, reference, line.PartNumber, line.Manufacturer, parts, assumed);
+        if (own.Missing is { } lacking)
         {
-            Absent("part table row of " + line.PartNumber);
+            Absent(lacking);
             return;
         }
 
-        if (line.Manufacturer is { } maker)
+        if (own.Fault is { } wrong)
         {
-            found = [.. found.Where(p => p.Manufacturer is null || string.Equals(p.Manufacturer, maker, StringComparison.OrdinalIgnoreCase))];
-            if (found.Count == 0)
+            Fault(wrong, own.FaultCell ?? line.Cell);
+            return;
+        }
+
+        // One purchase fills a line: every reference of it carries the same part, its own or one alternate.
+        List<Part> rows = [.. own.Rows];
+        foreach (string alternate in AlternatesOf(line).Where(a => parts.Find(a).Count > 0))
+        {
+            PartChoice other = PartChoice.Of(row, role, reference, alternate, null, parts, assumed);
+            rows.AddRange(other.Rows);
+            if (other.Rows.Count == 0)
             {
-                Absent($"part table row of {line.PartNumber} by {maker}");
-                return;
+                faults.Add(new RoleFault(role, reference, $"Alternate {alternate}: {other.Fault ?? "its row is not for this mounting."}", other.FaultCell ?? line.Cell)
+                {
+                    OfAlternate = true,
+                    Missing = other.Missing,
+                });
             }
         }
 
-        if (row.Conditions?.Mounting is { } mounting)
-        {
-            IReadOnlyList<Part> mounted = [.. found.Where(p => p.Mounting is null || string.Equals(p.Mounting, mounting, StringComparison.OrdinalIgnoreCase))];
-            if (mounted.Count == 0)
-            {
-                Absent($"part table row of {line.PartNumber} on {mounting}");
-                return;
-            }
+        choices[line] = choices.TryGetValue(line, out IReadOnlyList<Part>? earlier) ? [.. rows.Where(r => earlier.Any(e => ReferenceEquals(e, r)))] : rows;
+    }
 
-            found = mounted;
-        }
-        else if (found.Select(p => p.Mounting ?? string.Empty).Distinct(StringComparer.OrdinalIgnoreCase).Count() > 1
-            && !assumed.Any(a => a.What == "Mounting" && a.Of == line.PartNumber))
-        {
-            assumed.Add(new Assumption("Mounting", line.PartNumber, "the worst of its rows"));
-        }
+    /// <summary>Alternates of a line, each once, its own part number left out.</summary>
+    private static IEnumerable<string> AlternatesOf(BillLine line) => line.Alternates
+        .Distinct(StringComparer.OrdinalIgnoreCase).Where(a => !string.Equals(a, line.PartNumber, StringComparison.OrdinalIgnoreCase));
 
-        string wanted = role switch { Role.Pass or Role.Control => "a transistor", Role.Led => "an LED", _ => "a resistor" };
-        foreach (Part part in found)
-        {
-            if (part is RefusedPart refused)
-            {
-                Fault($"{line.PartNumber} is refused as {RoleNames.Spoken(column)}: {refused.Reason}.", line.Cell);
-                return;
-            }
-
-            string kind = part switch { Transistor => "a transistor", LedPart => "an LED", _ => "a resistor" };
-            if (kind != wanted)
-            {
-                Fault($"{reference} ({RoleNames.Spoken(column)}) is {kind}: {wanted} is wanted.", line.Cell);
-                return;
-            }
-
-            if (part is ResistorPart { Resistance.Value.Ohms: 0 } && role != Role.Averaging)
-            {
-                Fault($"{reference} ({RoleNames.Spoken(column)}) has zero ohm: only averaging may.", part.Cell);
-                return;
-            }
-        }
-
-        choices[line] = found;
+    /// <summary>What a reading takes for the lines that offer several part numbers or manufacturers, in bill order.</summary>
+    private static List<MixedLine> Mix(ChannelRow row, IReadOnlyDictionary<BillLine, IReadOnlyList<Part>> choices, Dictionary<BillLine, Part> taken)
+    {
+        HashSet<string> named = new(RoleNames.Columns.SelectMany(c => row.Of(c.Role)), StringComparer.OrdinalIgnoreCase);
+        return [.. choices.Where(c => c.Value.Select(p => (p.PartNumber, p.Manufacturer)).Distinct().Count() > 1)
+            .Select(c => new MixedLine(
+                [.. c.Key.References.Where(r => named.Contains(r) || named.Any(n => string.Equals(ElementReference.PackageOf(n), r, StringComparison.OrdinalIgnoreCase)))], taken[c.Key].PartNumber, taken[c.Key].Manufacturer,
+                !string.Equals(taken[c.Key].PartNumber, c.Key.PartNumber, StringComparison.OrdinalIgnoreCase)))];
     }
 
     private static BoundChannel Reading(ChannelRow row, LogicPin pin, Dictionary<string, BillLine> bill, Dictionary<BillLine, Part> parts)

@@ -43,6 +43,24 @@ public static class JsonReport
         json.Text("board", board.Board);
         json.Text("verdict", VerdictWords.Of(board.Verdict));
         json.Text("derating", board.Derating);
+        if (board.Assembly is { } assembly)
+        {
+            json.Text("assembly", assembly);
+            json.Texts("channelsNotFitted", board.ChannelsNotFitted);
+        }
+
+        if (board.ConcessionsAsOf is { } day)
+        {
+            json.Day("concessionsAsOf", day);
+        }
+
+        if (board.Comparison is { } comparison)
+        {
+            json.WriteStartObject("comparison");
+            JsonComparison.Write(json, comparison);
+            json.WriteEndObject();
+        }
+
         json.List("channels", board.Channels, JsonChannel.Write);
         json.List("findings", FindingOrder.WorstFirst(board), JsonFinding.Write);
         if (board.Totals is { } totals)

@@ -23,7 +23,7 @@ public static class JsonWorking
             json.Text("board", report.Board.Board);
             json.Text("channel", report.Channel);
             json.Text("verdict", VerdictWords.Of(report.Verdict));
-            json.Text("derating", report.Board.Channels.FirstOrDefault(c => c.Channel == report.Channel)?.Derating ?? report.Board.Derating);
+            json.Text("derating", report.Derating);
             json.Text("deratingNote", report.Board.DeratingNote);
             json.List("workings", report.Workings, WriteOne);
             json.List("assumed", report.Assumed, JsonReport.WriteAssumed);

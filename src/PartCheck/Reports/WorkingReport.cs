@@ -9,8 +9,14 @@ namespace PartCheck.Reports;
 /// <param name="Workings">The workings, worst finding first.</param>
 public sealed record WorkingReport(CheckReport Check, string Channel, IReadOnlyList<Working> Workings)
 {
+    /// <summary>True: the text shows the check of the solved figures of every working, else of the first.</summary>
+    public bool EveryCheck { get; init; } = true;
+
     /// <summary>The board.</summary>
     public BoardReport Board => Check.Boards[0];
+
+    /// <summary>Name of the channel's derating table.</summary>
+    public string Derating => Board.Channels.FirstOrDefault(c => c.Channel == Channel)?.Derating ?? Board.Derating;
 
     /// <summary>Worst verdict of the findings shown.</summary>
     public Verdict Verdict => FindingSeverity.WorstOf(Workings.Select(w => w.Finding.Verdict));

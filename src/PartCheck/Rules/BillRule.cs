@@ -46,10 +46,11 @@ public static class BillRule
                     Channel = channel.Name,
                     Rule = Id,
                     Reference = fault.Reference,
-                    Verdict = Verdict.Nonconforming,
+                    Verdict = fault.Missing is null ? Verdict.Nonconforming : Verdict.NotVerified,
                     Source = Source,
                     Cell = fault.Cell,
                     Text = fault.Text,
+                    Missing = fault.Missing is { } lacking ? [lacking] : [],
                     Derivation = new Derivation().Note(fault.Text, fault.Cell),
                 });
             }
@@ -71,7 +72,7 @@ public static class BillRule
         }
 
         Derivation steps = new();
-        int placed = PlacedComponents(line);
+        int placed = ReferenceList.Components(line.References);
         steps.Given("references", placed, string.Empty, "components to place: " + string.Join(", ", line.References), line.Cell);
         if (line.Quantity is { } stated)
         {
@@ -108,21 +109,27 @@ public static class BillRule
         foreach (Part row in rows)
         {
             Compare(steps, line, row);
-            if (line.Package is { } package && row.Package is { } tabled && !PackageName.Agrees(package, tabled))
+            wrong.AddRange(Disagreements(line, row, "the part table's"));
+            if (row is ResistorPart resistor && Differs(line, resistor))
             {
-                wrong.Add($"the bill's package is {package}, the part table's {tabled}");
+                (actual, allowed, unit) = (line.Resistance!.Value.Ohms, resistor.Resistance.Value.Ohms, "ohm");
+            }
+        }
+
+        foreach (string alternate in line.Alternates)
+        {
+            IReadOnlyList<Part> others = parts.Find(alternate);
+            if (others.Count == 0)
+            {
+                missing.Add("part table row of " + alternate);
             }
 
-            if (row is Transistor transistor && line.References.FirstOrDefault(r => ElementReference.ElementOf(r) is { } n && (n > transistor.Elements || transistor.Elements == 1)) is { } element)
+            foreach (Part other in others)
             {
-                wrong.Add(string.Create(CultureInfo.InvariantCulture, $"{element} names an element that the part does not have, the part table's Elements are {transistor.Elements}"));
+                Compare(steps, line, other);
             }
 
-            if (row is ResistorPart resistor && line.Resistance is { } value && Math.Abs(value.Ohms - resistor.Resistance.Value.Ohms) > 1e-6 * value.Ohms)
-            {
-                wrong.Add($"the bill's value is {EngineeringNotation.Format(value.Ohms, "ohm")}, the part table's {EngineeringNotation.Format(resistor.Resistance.Value.Ohms, "ohm")}");
-                (actual, allowed, unit) = (value.Ohms, resistor.Resistance.Value.Ohms, "ohm");
-            }
+            wrong.AddRange(others.SelectMany(other => Disagreements(line, other, $"that of the alternate {other.PartNumber}")));
         }
 
         return new Finding
@@ -144,6 +151,28 @@ public static class BillRule
         };
     }
 
+    /// <summary>Where a line and a part row disagree in package or resistance.</summary>
+    private static IEnumerable<string> Disagreements(BillLine line, Part row, string whose)
+    {
+        if (line.Package is { } package && row.Package is { } tabled && !PackageName.Agrees(package, tabled))
+        {
+            yield return $"the bill's package is {package}, {whose} {tabled}";
+        }
+
+        if (row is Transistor transistor && line.References.FirstOrDefault(r => ElementReference.ElementOf(r) is { } n && (n > transistor.Elements || transistor.Elements == 1)) is { } element)
+        {
+            yield return string.Create(CultureInfo.InvariantCulture, $"{element} names an element that the part does not have, {whose} Elements are {transistor.Elements}");
+        }
+
+        if (row is ResistorPart resistor && Differs(line, resistor))
+        {
+            yield return $"the bill's value is {EngineeringNotation.Format(line.Resistance!.Value.Ohms, "ohm")}, {whose} {EngineeringNotation.Format(resistor.Resistance.Value.Ohms, "ohm")}";
+        }
+    }
+
+    private static bool Differs(BillLine line, ResistorPart resistor) =>
+        line.Resistance is { } value && Math.Abs(value.Ohms - resistor.Resistance.Value.Ohms) > 1e-6 * value.Ohms;
+
     /// <summary>Writes down what a line is held to in one row of the part table.</summary>
     private static void Compare(Derivation steps, BillLine line, Part row)
     {
@@ -153,12 +182,6 @@ public static class BillRule
             steps.Note($"Resistance {EngineeringNotation.Format(resistor.Resistance.Value.Ohms, "ohm", 6)}; the bill says {EngineeringNotation.Format(value.Ohms, "ohm", 6)}.", resistor.Resistance.Cell);
         }
     }
-
-    /// <summary>Components to place: elements of one package (<c>Q1.1, Q1.2</c>) are one.</summary>
-    private static int PlacedComponents(BillLine line) => line.References
-        .Select(ElementReference.PackageOf)
-        .Distinct(StringComparer.OrdinalIgnoreCase)
-        .Count();
 
     /// <summary>A package is bought once: its elements stand on one line, and not beside the package itself.</summary>
     private static IEnumerable<string> SplitPackages(BillLine line, Bill bill)

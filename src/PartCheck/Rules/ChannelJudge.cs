@@ -270,6 +270,7 @@ public sealed class ChannelJudge
             Reference = placement?.Reference,
             PartNumber = placement?.Part.PartNumber,
             Manufacturer = placement?.Part.Manufacturer,
+            Mix = model.Channel.Mix,
             State = worst.State?.State,
             Actual = judged && double.IsFinite(stress.Actual) ? stress.Actual : null,
             ActualIsAtLeast = stress.AtLeast,

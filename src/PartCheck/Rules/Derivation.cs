@@ -113,9 +113,9 @@ public sealed class Derivation
     }
 
     /// <summary>A value of the non-linear solve.</summary>
-    public Derivation Solved(string symbol, double value, string unit, string meaning)
+    public Derivation Solved(string symbol, double value, string unit, string meaning, string? cell = null)
     {
-        lines.Add(new DerivationLine { Kind = DerivationKind.Solved, Symbol = Filled(symbol), Value = value, Unit = unit, Meaning = meaning });
+        lines.Add(new DerivationLine { Kind = DerivationKind.Solved, Symbol = Filled(symbol), Value = value, Unit = unit, Meaning = meaning, Cell = cell });
         return this;
     }
 

@@ -30,6 +30,9 @@ public sealed record Finding
     /// <summary>Manufacturer of the row judged.</summary>
     public string? Manufacturer { get; init; }
 
+    /// <summary>The mix of parts that is the worst, for each line that offers several part numbers or manufacturers; empty: none does.</summary>
+    public IReadOnlyList<MixedLine> Mix { get; init; } = [];
+
     /// <summary>State of the worst corner; null where no state is read.</summary>
     public ChannelState? State { get; init; }
 
@@ -65,6 +68,9 @@ public sealed record Finding
 
     /// <summary>One sentence, where numbers do not say it.</summary>
     public string? Text { get; init; }
+
+    /// <summary>What it was accepted under, where the verdict is concession.</summary>
+    public GrantedConcession? Concession { get; init; }
 
     /// <summary>What is missing, when not verified.</summary>
     public IReadOnlyList<string> Missing { get; init; } = [];

@@ -23,7 +23,7 @@ internal static class CircuitSymbols
         TransistorPoint control = state.Transistors[^1];
         string who = model.Channel.Control.Reference;
         book.Solved("Vb", state.BaseVoltage, "V", "base node")
-            .Solved("Vx", state.ControlBaseVoltage, "V", $"base of the control {who}: its VBE at its current and temperature")
+            .Solved("Vx", state.ControlBaseVoltage, "V", VxMeaning(model, who, legs))
             .Solved("IC0", control.Ic, "A", "collector current of the control " + who)
             .Solved("IB0", control.Ib, "A", "base current of the control " + who)
             .Step("VCE0", "Vb", "V", $"collector-emitter voltage of {who}: the base node")
@@ -41,6 +41,12 @@ internal static class CircuitSymbols
         AddLoad(book, basis, legs);
         AddTemperatures(book, basis, legs);
         AddBalances(book, basis, legs, feed);
+    }
+
+    private static string VxMeaning(ChannelModel model, string who, IReadOnlyList<LegView> legs)
+    {
+        string emitters = string.Join(", ", legs.Where(l => model.Classes[l.Class].First.Sensed && model.Averaging[l.Class] is not { Nominal: > 0 }).Select(l => l.Who));
+        return $"base of the control {who}: its VBE at its current and temperature" + (emitters.Length == 0 ? string.Empty : $"; the emitter of {emitters}");
     }
 
     private static void AddLeg(Derivation book, FindingBasis basis, LegView leg, int groups)
@@ -72,7 +78,7 @@ internal static class CircuitSymbols
         book.Step("IE" + n, through, "A", "emitter current of " + who);
         if (state.State == ChannelState.On && q is { Ic: > 0, Ib: > 0 })
         {
-            book.Solved("hFE" + n, q.Ic / q.Ib, string.Empty, $"gain of {who} in this corner, at its current, VCE and temperature")
+            book.Solved("hFE" + n, q.Ic / q.Ib, string.Empty, $"gain of {who} in this corner ({GainEnd(leg.Odd ? state.Corner.OddPass.Hfe : state.Corner.Pass.Hfe)}), at its current, VCE and temperature", q.Part.Hfe?.Cell ?? q.Part.Card?.Cell)
                 .Step("IC" + n, $"IE{n} x hFE{n} / (hFE{n} + 1)", "A", "collector current of " + who)
                 .Step("IB" + n, $"IE{n} / (hFE{n} + 1)", "A", "base current of " + who);
         }
@@ -87,6 +93,8 @@ internal static class CircuitSymbols
             .Step("P" + n, $"VCE{n} x IC{n} + VBE{n} x IB{n}", "W", "dissipation of " + who)
             .Step("Rball" + n, sensed && !basis.Model.OneLegSensed ? averaged ? $"Rs{n} x Ra{n} / (Rs{n} + Ra{n})" : "0 ohm" : $"Rs{n}", "ohm", "ballast of " + who);
     }
+
+    private static string GainEnd(Extreme end) => end switch { Extreme.Min => "hFE min", Extreme.Max => "hFE max", _ => "hFE has one value" };
 
     private static void AddLoad(Derivation book, FindingBasis basis, IReadOnlyList<LegView> legs)
     {
@@ -141,8 +149,8 @@ internal static class CircuitSymbols
         if (warm && state.Corner.AssumedCoupling is > 0 and var share && hottest >= 0)
         {
             string n = legs.First(l => l.Index == hottest).N;
-            book.Given("share", share, string.Empty, "share of the hottest leg's RthJA that heats the control", assumed: true);
-            heat.Add($"share x RthJA{n} x P{n}");
+            book.Given("Kshare", share, string.Empty, "share of the hottest leg's RthJA that heats the control", assumed: true);
+            heat.Add($"Kshare x RthJA{n} x P{n}");
         }
 
         string control = model.Channel.Control.Reference;

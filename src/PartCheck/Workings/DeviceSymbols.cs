@@ -25,12 +25,15 @@ internal static class DeviceSymbols
     /// <param name="device">Its device in this corner.</param>
     /// <param name="n">What stands after its symbols.</param>
     /// <param name="who">Its reference, in words.</param>
-    /// <param name="end">End of the VBE window, in words.</param>
-    /// <param name="cell">Cell of the window; null: not given.</param>
-    public static void Add(Derivation book, in TransistorPoint q, BipolarDevice device, string n, string who, string end, string? cell)
+    /// <param name="end">End of the VBE window that the corner takes.</param>
+    /// <param name="variants">The row's devices, which say what was assumed.</param>
+    public static void Add(Derivation book, in TransistorPoint q, BipolarDevice device, string n, string who, Extreme end, TransistorVariants variants)
     {
         BipolarParameters p = device.Parameters;
-        book.Given("RE" + n, p.Re, "ohm", "emitter resistance of the model of " + who)
+        string? card = q.Part.Card?.Cell;
+        bool none = card is null;
+        bool window = variants.Assumed.Any(a => a.What == "VBE window");
+        book.Given("RE" + n, p.Re, "ohm", "emitter resistance of the model of " + who, card)
             .Solved("Rbb" + n, q.BaseResistance, "ohm", "effective base resistance of the model of " + who)
             .Step("VT" + n, $"kq x (Tj{n} + 273.15 K)", "V", "thermal voltage of " + who);
         BipolarAtTemperature hot = device.At(q.Tj);
@@ -41,9 +44,9 @@ internal static class DeviceSymbols
         }
 
         string drops = (q.BaseResistance > 0 ? $" - IB{n} x Rbb{n}" : string.Empty) + (p.Re > 0 ? $" - (IC{n} + IB{n}) x RE{n}" : string.Empty);
-        book.Given("ISr" + n, device.Is, "A", $"saturation current of {who} at 25 degC, {end}", cell)
-            .Given("EG" + n, p.Eg, "V", "energy gap of the model")
-            .Given("XTI" + n, p.Xti, string.Empty, "temperature exponent of the model")
+        book.Given("ISr" + n, device.Is, "A", $"saturation current of {who} at 25 degC, {EndOf(end)}", q.Part.Vbe?.Cell ?? card, assumed: window)
+            .Given("EG" + n, p.Eg, "V", none ? "energy gap: the SPICE default" : "energy gap", card, assumed: none)
+            .Given("XTI" + n, p.Xti, string.Empty, none ? "temperature exponent of IS: the SPICE default" : "temperature exponent of IS", card, assumed: none)
             .Step(
                 "IS" + n, $"ISr{n} x ((Tj{n} + 273.15 K) / 298.15 K) ^ XTI{n} x exp(EG{n} / VT{n} x ((Tj{n} + 273.15 K) / 298.15 K - 1))", "A",
                 $"saturation current of {who} at its junction temperature")
@@ -52,23 +55,19 @@ internal static class DeviceSymbols
         string law = $"VT{n} x ln(IC{n}{(charge.Length > 0 ? " x " + charge : string.Empty)} / IS{n} + 1)";
         if (p.Nf != 1)
         {
-            book.Given("NF" + n, p.Nf, string.Empty, "emission coefficient of the model");
+            book.Given("NF" + n, p.Nf, string.Empty, "emission coefficient of the model", card);
         }
 
         book.Balance("vbe" + n, (p.Nf == 1 ? string.Empty : $"NF{n} x ") + law, "V", $"{who}: VBE at its current and temperature");
     }
 
-    /// <summary>The window's end of a corner in words.</summary>
-    public static string EndOf(Extreme end) => end switch
+    private static string EndOf(Extreme end) => end switch
     {
         Extreme.Min => "such that VBE takes the window's smallest value",
         Extreme.Max => "such that VBE takes the window's largest value",
         Extreme.Match => "such that VBE lies one lot's match off the rest",
         _ => "of the window's only value",
     };
-
-    /// <summary>The cell of a transistor's VBE window, or of its card.</summary>
-    public static string? CellOf(Transistor part) => part.Vbe?.Cell ?? part.Card?.Cell;
 
     /// <summary>Adds the base charge and returns its symbol; empty: it is 1.</summary>
     private static string Charge(Derivation book, in TransistorPoint q, BipolarDevice device, string n, string who)
@@ -81,14 +80,14 @@ internal static class DeviceSymbols
         if (!double.IsInfinity(p.Vaf))
         {
             string internals = (q.BaseResistance > 0 ? $" - IB{n} x Rbb{n}" : string.Empty) + (p.Rc > 0 ? $" + IC{n} x RC{n}" : string.Empty);
-            book.Given("VAF" + n, p.Vaf, "V", "forward Early voltage").Given("RC" + n, p.Rc, "ohm", "collector resistance of the model")
+            book.Given("VAF" + n, p.Vaf, "V", "forward Early voltage", q.Part.Card?.Cell ?? q.Part.Vaf?.Cell).Given("RC" + n, p.Rc, "ohm", "collector resistance of the model", q.Part.Card?.Cell)
                 .Step("vbc" + n, $"VBE{n} - VCE{n}" + internals, "V", "internal base-collector voltage");
             early += $" - vbc{n} / VAF{n}";
         }
 
         if (!double.IsInfinity(p.Var))
         {
-            book.Given("VAR" + n, p.Var, "V", "reverse Early voltage");
+            book.Given("VAR" + n, p.Var, "V", "reverse Early voltage", q.Part.Card?.Cell);
             early += $" - vbe{n} / VAR{n}";
         }
 
@@ -102,7 +101,7 @@ internal static class DeviceSymbols
             return early.Length > 0 ? "qe" + n : string.Empty;
         }
 
-        book.Given("IKF" + n, p.Ikf, "A", "knee current of the model");
+        book.Given("IKF" + n, p.Ikf, "A", q.Part.Card is null ? "knee current, fitted to the hFE points" : "knee current of the model", q.Part.Card?.Cell ?? q.Part.Hfe?.Cell);
         double charge = q1;
         for (int i = 0; i < 500; i++)
         {

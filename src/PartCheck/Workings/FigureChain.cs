@@ -79,8 +79,8 @@ internal sealed class FigureChain
             throw new NotReproducedException($"{name}: {text} has no value.");
         }
 
-        PrintedFigure figure = PrintedFigure.Of(printed, unit);
-        double slack = figure.Half;
+        double noise = 0;
+        double spread = 0;
         foreach (string symbol in formula.Symbols)
         {
             Entry moved = entries[symbol];
@@ -88,11 +88,15 @@ internal sealed class FigureChain
             double most = Math.Max(Math.Abs(Shifted(moved.Slack) - printed), Math.Abs(Shifted(-moved.Slack) - printed));
 
             // Where a shift has no value (the logarithm of nothing) the figure may be anything.
-            slack += double.IsFinite(most) ? 1.1 * most : double.PositiveInfinity;
+            spread += double.IsFinite(most) ? 1.1 * most : double.PositiveInfinity;
+            noise += Math.Abs(Shifted(1e-13 * Math.Abs(moved.Printed)) - printed);
         }
 
+        // A sum that cancels to the last bit is nothing, as a calculator shows it.
+        PrintedFigure figure = PrintedFigure.Of(Math.Abs(printed) <= noise ? 0 : printed, unit);
+
         // Double precision, and what the slopes leave out.
-        slack += 1e-9 * Math.Abs(printed);
+        double slack = figure.Half + spread + noise + (1e-9 * Math.Abs(printed));
         if (!(Math.Abs(exact - figure.Value) <= slack))
         {
             throw new NotReproducedException(string.Create(

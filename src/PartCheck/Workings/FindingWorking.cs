@@ -51,12 +51,12 @@ public static class FindingWorking
         Corner corner = state.Corner;
         DeviceSymbols.Add(
             book, state.Transistors[^1], state.Index < 0 ? model.Control.Nominal : model.Control.At(corner.Control), "0", model.Channel.Control.Reference,
-            DeviceSymbols.EndOf(corner.Control.Vbe), DeviceSymbols.CellOf(model.Control.Part));
+            corner.Control.Vbe, model.Control);
         foreach (LegView leg in legs)
         {
             DeviceSymbols.Add(
                 book, state.Transistors[leg.Index], leg.Device(model, state), leg.N, leg.Who,
-                DeviceSymbols.EndOf(leg.Odd ? corner.OddPass.Vbe : corner.Pass.Vbe), DeviceSymbols.CellOf(model.Pass[leg.Class].Part));
+                leg.Odd ? corner.OddPass.Vbe : corner.Pass.Vbe, model.Pass[leg.Class]);
         }
 
         int point = basis.Point;
@@ -129,12 +129,12 @@ public static class FindingWorking
 
         if (rule.Actual is { } actual && finding.Actual is { } said)
         {
-            chain.Hold(actual, Shown(said), finding.Rule == "vcb" ? 1 : 0);
+            chain.Hold(actual, Shown(said), Magnitude(finding));
         }
 
         if (rule.Allowed is { } allowed && finding.Allowed is { } limit)
         {
-            chain.Hold(allowed, Shown(limit));
+            chain.Hold(allowed, Shown(limit), Magnitude(finding));
         }
 
         if (rule.Ratio is { } ratio && finding.StressRatio is { } stress)
@@ -142,6 +142,9 @@ public static class FindingWorking
             chain.Hold(ratio, stress, 1e-3);
         }
     }
+
+    /// <summary>Magnitudes of which a millionth is what the solve may leave: 1 nV of a node (more of a difference of two), 0.1 nA, 1 pW, 1 uK.</summary>
+    private static double Magnitude(Finding finding) => finding.Unit switch { "V" => finding.Rule == "vcb" ? 1 : 1e-3, "A" => 1e-4, "W" => 1e-6, _ => 1 };
 
     private static void HoldTransistor(FigureChain chain, in TransistorPoint q, string n)
     {

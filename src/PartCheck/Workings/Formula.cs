@@ -1,3 +1,4 @@
+using System.Collections.Concurrent;
 using System.Globalization;
 using System.Text;
 
@@ -9,6 +10,9 @@ namespace PartCheck.Workings;
 /// </summary>
 public sealed class Formula
 {
+    /// <summary>Rules have few formulas and many findings: each is read once.</summary>
+    private static readonly ConcurrentDictionary<string, Formula> Read = new(StringComparer.Ordinal);
+
     private readonly List<FormulaToken> tokens;
     private readonly Func<Func<string, double>, double> evaluate;
     private int at;
@@ -37,7 +41,7 @@ public sealed class Formula
     public static Formula Parse(string text)
     {
         ArgumentException.ThrowIfNullOrWhiteSpace(text);
-        return new Formula(text);
+        return Read.GetOrAdd(text, static t => new Formula(t));
     }
 
     /// <summary>The value for given values of the symbols.</summary>

@@ -30,7 +30,7 @@ internal sealed record LegView(int Index, int Class, bool Odd, string N, string 
             string[] references = [.. model.Classes[c].Legs.Select(l => l.Pass.Reference)];
             string who = state.Index < 0 && state.Transistors.Count > 2 ? model.Channel.Legs[i].Pass.Reference
                 : odd ? state.Corner.OddLeg! + ", the odd leg"
-                : state.Corner.OddLeg is { } other && references.Contains(other) ? "each other leg of " + string.Join(", ", references)
+                : state.Corner.OddLeg is { } other && references.Contains(other) ? "the rest of " + string.Join(", ", references)
                 : string.Join(", ", references);
             legs.Add(new LegView(i, c, odd, Derivation.SubjectOf(state, i), who));
         }

@@ -4,12 +4,14 @@ namespace PartCheck.Workings;
 
 /// <summary>
 /// Which lines a rule's derivation needs, each after those that its formula names: the rule's own, and of the operating point's book what
-/// they call for. Where a solved value is among them, the balances that it satisfies follow.
+/// they call for. A step that is but another name of a value (the base node is the control's collector) is not written: the value takes its
+/// place. Where a solved value is among them, the balances that it satisfies follow.
 /// </summary>
 internal sealed class LineOrder
 {
     private readonly Dictionary<string, DerivationLine> own;
     private readonly Dictionary<string, DerivationLine> known;
+    private readonly Dictionary<string, string> aliases = new(StringComparer.Ordinal);
     private readonly HashSet<string> done = new(StringComparer.Ordinal);
     private readonly HashSet<string> open = new(StringComparer.Ordinal);
     private readonly List<DerivationLine> lines = [];
@@ -21,12 +23,26 @@ internal sealed class LineOrder
     {
         own = BySymbol(rule);
         known = BySymbol(book);
+        foreach (DerivationLine line in own.Values)
+        {
+            if (known.TryGetValue(line.Symbol, out DerivationLine? other) && (line.Value, line.Formula) != (other.Value, other.Formula))
+            {
+                throw new InvalidOperationException($"The rule and the operating point both call something \"{line.Symbol}\".");
+            }
+        }
+
+        string?[] judged = [rule.Actual, rule.Allowed];
+        foreach (DerivationLine line in known.Values.Where(l => l.Kind == DerivationKind.Step && known.ContainsKey(l.Formula) && !judged.Contains(l.Symbol)).ToList())
+        {
+            aliases[line.Symbol] = line.Formula;
+        }
+
         foreach (DerivationLine line in rule.Lines)
         {
             Take(line);
         }
 
-        foreach (string? symbol in (string?[])[rule.Actual, rule.Allowed])
+        foreach (string? symbol in judged)
         {
             if (symbol is not null)
             {
@@ -61,6 +77,20 @@ internal sealed class LineOrder
         return found;
     }
 
+    /// <summary>The formula with every symbol that is but another name of a second one replaced by that.</summary>
+    private string Named(string formula) => formula.Length == 0 ? formula : Formula.Parse(formula).With(Name);
+
+    private string Name(string symbol)
+    {
+        string name = symbol;
+        while (!own.ContainsKey(name) && aliases.TryGetValue(name, out string? other))
+        {
+            name = other;
+        }
+
+        return name;
+    }
+
     private void Take(string symbol)
     {
         if (done.Contains(symbol))
@@ -76,8 +106,9 @@ internal sealed class LineOrder
         Take(line);
     }
 
-    private void Take(DerivationLine line)
+    private void Take(DerivationLine taken)
     {
+        DerivationLine line = taken with { Formula = Named(taken.Formula), Right = Named(taken.Right) };
         if (line.Symbol.Length > 0 && done.Contains(line.Symbol))
         {
             return;

@@ -18,6 +18,7 @@ public class RoomTests
         ["OperatingPoints"] = ["Quantities", "Devices", "Parts", "Channels"],
         ["Derating"] = ["Quantities", "Sheets"],
         ["Rules"] = ["Quantities", "Bills", "Parts", "Channels", "OperatingPoints", "Derating"],
+        ["Concessions"] = ["Quantities", "Sheets", "Bills", "Rules"],
         ["Workings"] = ["Quantities", "Devices", "Parts", "Channels", "OperatingPoints", "Derating", "Rules"],
         ["Reports"] = ["Quantities", "Sheets", "Parts", "Channels", "OperatingPoints", "Rules", "Workings"],
     };

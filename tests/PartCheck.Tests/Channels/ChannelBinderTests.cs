@@ -234,8 +234,53 @@ public sealed class ChannelBinderTests
         {
             Assert.Equal("CH1", Assert.Single(board.Complaints).Channel);
             Assert.Contains("272 combinations", board.Only(), StringComparison.Ordinal);
-            Assert.Equal(["manufacturers on the bill"], channel.Missing);
+            Assert.Equal(["manufacturers on the bill, or fewer alternates"], channel.Missing);
         }
+    }
+
+    // Two parts on each of two lines: four mixes, the bill's own parts first.
+    [Fact]
+    public void EveryMixOfAlternatesOverTheLinesIsAReadingAndNamesItself()
+    {
+        GiveAlternates("OX-9", "OX-8; ox-8, TQ-30");
+        IReadOnlyList<BoundChannel> readings = Assert.Single(board.Bind()).Readings;
+        Assert.Equal(
+            ["TQ-31 TQ-30", "OX-9 TQ-30", "TQ-31 OX-8", "OX-9 OX-8"], readings.Select(r => $"{r.Legs[0].PassPart.PartNumber} {r.ControlPart.PartNumber}"));
+        Assert.Equal(
+            ["Q1 TQ-31 False, Q2 TQ-30 False", "Q1 OX-9 True, Q2 TQ-30 False", "Q1 TQ-31 False, Q2 OX-8 True", "Q1 OX-9 True, Q2 OX-8 True"],
+            readings.Select(r => string.Join(", ", r.Mix.Select(m => $"{string.Join('+', m.References)} {m.PartNumber} {m.Alternate}"))));
+    }
+
+    [Fact]
+    public void AlternatesOfAnyManufacturerCountAndAChannelWithoutAChoiceHasNoMix()
+    {
+        Assert.Empty(Assert.Single(Assert.Single(board.Bind()).Readings).Mix);
+        GiveAlternates("OX-9", string.Empty);
+        board.Bill[1] = "Q1, Q3|TQ-31|Tarnwood||||OX-9";
+        board.Parts.Add("OX-9|npn|Tarnwood");
+        Assert.Equal([null, "Oxmoor", "Tarnwood"], Assert.Single(board.Bind()).Readings.Select(r => r.Mix[0].Alternate ? r.Mix[0].Manufacturer : null));
+    }
+
+    [Fact]
+    public void AnAlternateThatCannotPlayTheRoleIsAFaultOfItsOwnAndTheRestIsBound()
+    {
+        GiveAlternates("RK-33", string.Empty);
+        Channel channel = Assert.Single(board.Bind());
+        Assert.Single(channel.Readings);
+        RoleFault fault = Assert.Single(channel.RoleFaults);
+        Assert.Equal(("Alternate RK-33: Q1 (pass) is a resistor: a transistor is wanted.", true), (fault.Text, fault.OfAlternate));
+        Assert.Null(fault.Missing);
+    }
+
+    [Fact]
+    public void AnAlternateWithoutARowForTheMountingIsNotVerified()
+    {
+        GiveAlternates("OX-9", string.Empty);
+        board.Parts[^2] = "OX-9|npn|Oxmoor|FR4";
+        board.Row["Mounting"] = "ceramic";
+        Channel channel = Assert.Single(board.Bind());
+        Assert.Single(channel.Readings);
+        Assert.Equal("part table row of OX-9 on ceramic", Assert.Single(channel.RoleFaults).Missing);
     }
 
     [Fact]
@@ -265,6 +310,15 @@ public sealed class ChannelBinderTests
         board.Row["Feed"] = "R3";
         Assert.Empty(Assert.Single(board.Bind()).Readings);
         Assert.Contains("The channel's feed is R3 here and R2 by the bill's column Role.", board.Only(), StringComparison.Ordinal);
+    }
+
+    private void GiveAlternates(string pass, string control)
+    {
+        board.Bill[0] += "|Alternates";
+        board.Bill[1] = "Q1, Q3|TQ-31|||||" + pass;
+        board.Bill[2] = "Q2|TQ-30|||||" + control;
+        board.Parts.Add("OX-9|npn|Oxmoor");
+        board.Parts.Add("OX-8|npn|Oxmoor");
     }
 
     private void GiveRoles()

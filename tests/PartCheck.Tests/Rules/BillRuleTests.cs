@@ -102,6 +102,33 @@ public class BillRuleTests : ExactRuleTests
     }
 
     [Fact]
+    public void AnAlternateThatTheTableDoesNotHaveIsNotVerified()
+    {
+        Finding finding = Assert.Single(Judge(Senses with { Alternates = ["RK-33", "RK-98", "RK-99"] }));
+        Assert.Equal(Verdict.NotVerified, finding.Verdict);
+        Assert.Equal(["part table row of RK-98", "part table row of RK-99"], finding.Missing);
+    }
+
+    [Fact]
+    public void AnAlternateInAnotherPackageOrOfAnotherValueIsNonconforming()
+    {
+        BillLine line = new() { References = ["R1"], PartNumber = "RK-33", Resistance = Resistance.FromOhms(33), Package = "0603", Alternates = ["TQ-31", "RK-47"], Cell = "bom.csv!A2" };
+        PartTable table = new([SampleChannel.Transistor(), SampleChannel.Resistor(33) with { Package = "0603" }, SampleChannel.Resistor(47) with { Package = "0603" }]);
+        Finding finding = Assert.Single(BillRule.Judge(new Bill("bom.csv", [line]), table, [Channel()]));
+        Assert.Equal(Verdict.Nonconforming, finding.Verdict);
+        Assert.Equal("The bill's package is 0603, that of the alternate TQ-31 SOT-23; the bill's value is 33 ohm, that of the alternate RK-47 47 ohm.", finding.Text);
+    }
+
+    [Fact]
+    public void AnAlternateThatLacksDataInItsRoleIsNotVerified()
+    {
+        RoleFault fault = new(Role.Feed, "R9", "Alternate RK-1: its row is not for this mounting.", "bom.csv!A9") { OfAlternate = true, Missing = "part table row of RK-1 on FR4" };
+        Finding finding = Assert.Single(BillRule.Judge(new Bill("bom.csv", []), Table, [Channel() with { RoleFaults = [fault] }]));
+        Assert.Equal(Verdict.NotVerified, finding.Verdict);
+        Assert.Equal(["part table row of RK-1 on FR4"], finding.Missing);
+    }
+
+    [Fact]
     public void ARoleThatTheBillDoesNotServeIsAFindingOfItsChannel()
     {
         RoleFault fault = new(Role.Feed, "R9", "R9 is not on the bill.", "channels.csv!M2");
