@@ -97,18 +97,18 @@ public sealed class LedCurrentRule : LedRule
         }
 
         steps.Given("IF", part.ForwardCurrentMax!.Value.Amperes, "A", "highest forward current of " + part.PartNumber, part.ForwardCurrentMax.Cell)
-            .Given("Tflat", part.FlatTo.Celsius, "degC", "it holds up to here", part.ForwardCurrentFlatTo?.Cell, assumed: part.ForwardCurrentFlatTo is null);
+            .Given("TflatLED", part.FlatTo.Celsius, "degC", "it holds up to here", part.ForwardCurrentFlatTo?.Cell, assumed: part.ForwardCurrentFlatTo is null);
         string line = "IF";
         if (part.TjMax is { } max)
         {
-            steps.Given("Tmax", max.Value.Celsius, "degC", "Tj max of " + part.PartNumber, max.Cell);
-            line = "IF x (1 - max(0, Ta - Tflat) / (Tmax - Tflat))";
+            steps.Given("TmaxLED", max.Value.Celsius, "degC", "Tj max of " + part.PartNumber, max.Cell);
+            line = "IF x (1 - max(0, Ta - TflatLED) / (TmaxLED - TflatLED))";
         }
 
         if (part.ForwardCurrentSlope is { } slope)
         {
             steps.Given("slope", slope.Value, "A/K", "slope above that", slope.Cell);
-            line = "IF - slope x max(0, Ta - Tflat)";
+            line = "IF - slope x max(0, Ta - TflatLED)";
         }
 
         bool none = state.Corner.Ambient >= part.TjMax?.Value.Kelvins;

@@ -62,7 +62,7 @@ public sealed class PowerRule : TransistorRule
         if (stress.Package)
         {
             steps.Solved("Ppack#", point.PackagePower, "W", "power of all elements of the package, averaged over the period where it counts as an average")
-                .Given("Prated#", (part.PowerBoth ?? part.Power!).Value.Watts, "W", "rated power of the package of " + part.PartNumber, (part.PowerBoth ?? part.Power!).Cell, assumed: part.PowerBoth is null);
+                .Given("Pratedall#", (part.PowerBoth ?? part.Power!).Value.Watts, "W", "rated power of the package of " + part.PartNumber, (part.PowerBoth ?? part.Power!).Cell, assumed: part.PowerBoth is null);
             actual = "Ppack#";
         }
         else
@@ -117,7 +117,8 @@ public sealed class PowerRule : TransistorRule
     private static void DeriveAllowed(Derivation steps, Transistor part, double ambient, in RuleRows rows, bool package)
     {
         steps.Given("Tflat#", part.FlatTo.Celsius, "degC", "the rated power holds up to here", part.PowerFlatTo?.Cell, assumed: part.PowerFlatTo is null);
-        string line = "Prated#";
+        string rated = package ? "Pratedall#" : "Prated#";
+        string line = rated;
         if (part.TjMax is { } max)
         {
             steps.Given("Tmax#", max.Value.Celsius, "degC", "Tj max of " + part.PartNumber, max.Cell);
@@ -127,11 +128,11 @@ public sealed class PowerRule : TransistorRule
         {
             double share = package && part is { PowerBoth: { } both, Power: { } one } ? both.Value.Watts / one.Value.Watts : 1;
             steps.Given("slope", slope.Value * share, "W/K", share == 1 ? "slope of the rated power above that" : "slope above that, as much steeper as the package's power is larger", slope.Cell);
-            line = "Prated# - slope x max(0, Ta - Tflat#)";
+            line = rated + " - slope x max(0, Ta - Tflat#)";
         }
         else if (part.TjMax is { } zero)
         {
-            line = zero.Value.Kelvins > part.FlatTo.Kelvins ? "Prated# x (1 - max(0, Ta - Tflat#) / (Tmax# - Tflat#))" : "0 W";
+            line = zero.Value.Kelvins > part.FlatTo.Kelvins ? rated + " x (1 - max(0, Ta - Tflat#) / (Tmax# - Tflat#))" : "0 W";
         }
 
         steps.Step("Pline", line, "W", "rated power at the ambient: flat, then a line");
