@@ -306,18 +306,31 @@ public static partial class CheckRun
                 }
             }
 
-            // Feeds on one pin lower each other's level: first each alone, then with what the others draw.
-            foreach (IGrouping<string, JudgedChannel> pin in judged.Where(j => j.Models.Count > 0).GroupBy(PinKey, StringComparer.OrdinalIgnoreCase))
+            // Feeds on one pin lower each other's level, elements of one package warm each other: first each channel alone, then with
+            // what the others draw and dissipate.
+            List<IGrouping<string, JudgedChannel>> pins = [.. judged.Where(j => j.Models.Count > 0).GroupBy(PinKey, StringComparer.OrdinalIgnoreCase)];
+            Dictionary<string, double> powers = new(StringComparer.OrdinalIgnoreCase);
+            foreach (JudgedChannel feed in pins.SelectMany(p => p).Where(f => f.HasNeighbours || pins.Any(p => p.Count() > 1 && p.Contains(f))))
+            {
+                List<ReadingJudgement> alone = [.. feed.Models.Select(m => Judgement(feed, m, 0, cancel))];
+                feed.AloneCurrent = alone.Max(r => r.PinMax);
+                foreach ((string reference, double watts) in alone.SelectMany(r => r.MostPower))
+                {
+                    powers[reference] = Math.Max(powers.GetValueOrDefault(reference), watts);
+                }
+            }
+
+            foreach (JudgedChannel feed in judged.Where(j => j.HasNeighbours))
+            {
+                List<ChannelModel> warmed = [.. feed.Models.Select(m => new ChannelModel(m.Channel, Variants, powers))];
+                feed.Models.Clear();
+                feed.Models.AddRange(warmed);
+                feed.MissingNeighbour = warmed.Select(m => m.Package.Missing).FirstOrDefault(m => m is not null);
+            }
+
+            foreach (IGrouping<string, JudgedChannel> pin in pins)
             {
                 List<JudgedChannel> feeds = [.. pin];
-                if (feeds.Count > 1)
-                {
-                    foreach (JudgedChannel feed in feeds)
-                    {
-                        feed.AloneCurrent = feed.Models.Max(m => Judgement(feed, m, 0, cancel).PinMax);
-                    }
-                }
-
                 foreach (JudgedChannel feed in feeds)
                 {
                     double others = feeds.Where(f => f != feed).Sum(f => f.AloneCurrent);
@@ -530,10 +543,15 @@ public static partial class CheckRun
 
         public double AloneCurrent { get; set; }
 
+        public bool HasNeighbours => Models.Exists(m => m.Channel.Neighbours.Count > 0);
+
+        public string? MissingNeighbour { get; set; }
+
         public IReadOnlyList<string> MissingData =>
         [
             .. channel.Missing,
             .. CardFault is null ? (string[])[] : [$"a right model card of {CardFault.Part.PartNumber}"],
+            .. MissingNeighbour is null ? (string[])[] : [MissingNeighbour],
             .. derating.Unknown ? (string[])[$"derating table {derating.Name}"] : [],
         ];
     }

@@ -49,6 +49,10 @@ public sealed record BillLine
 
     /// <summary>File and cell of the references.</summary>
     public required string Cell { get; init; }
+
+    /// <summary>True where the line holds a reference, or the package of which the reference is an element.</summary>
+    public bool Holds(string reference) => References.Contains(reference, StringComparer.OrdinalIgnoreCase)
+        || References.Contains(ElementReference.PackageOf(reference), StringComparer.OrdinalIgnoreCase);
 }
 
 /// <summary>A bill of materials.</summary>
