@@ -106,7 +106,7 @@ public static class CheckRun
                 return Unread(derating);
             }
 
-            SheetData? billSheet = request.Bill is { } b ? source.File(b, "BOM") : source.Table(board, "BOM", required: true);
+            SheetData? billSheet = request.Bill is { } b ? BillOf(b) : source.Table(board, "BOM", required: true);
             SheetData? channelSheet = request.Channels is { } c ? source.File(c, "Channels") : source.Table(board, "Channels", required: true);
             if (exists && source.Table(board, "Derating", required: false) is { } deratingSheet)
             {
@@ -128,6 +128,7 @@ public static class CheckRun
                 return Unread(derating);
             }
 
+            bill = WithDoubts(bill, rows);
             IReadOnlyList<Channel> channels = ChannelBinder.Bind(rows, bill, parts, pins, complaints);
             IReadOnlyList<Finding> billFindings = BillRule.Judge(bill, parts, channels);
             IReadOnlyList<JudgedChannel> judged = JudgeChannels(channels, derating, cancel);
@@ -135,6 +136,30 @@ public static class CheckRun
             AddAdvice(bill, channels);
             AddCircuitAdvice(channels);
             return Report(derating, judged, billFindings, pinFindings);
+        }
+
+        private SheetData? BillOf(string argument)
+        {
+            List<string> notes = [];
+            SheetData? sheet = BillFile.SheetOf(source, argument, spellings, notes, complaints);
+            advice.AddRange(notes.Select(note => new Advice(null, null, note)));
+            return sheet;
+        }
+
+        /// <summary>What is doubtful in a line that serves a channel is a complaint; a quantity is the rule <c>bill</c>'s own matter.</summary>
+        private Bill WithDoubts(Bill bill, IReadOnlyList<ChannelRow> rows)
+        {
+            HashSet<string> serving = new(
+                rows.SelectMany(row => RoleNames.Columns.SelectMany(c => row.Of(c.Role))), StringComparer.OrdinalIgnoreCase);
+            List<BillLine> lines = [];
+            foreach (BillLine line in bill.Lines)
+            {
+                List<Complaint> doubts = line.References.Any(serving.Contains) ? [.. line.Doubts.Where(d => !d.IsCount)] : [];
+                doubts.ForEach(complaints.Add);
+                lines.Add(doubts.Count > 0 ? line with { HasComplaints = true } : line);
+            }
+
+            return bill with { Lines = lines };
         }
 
         private DeratingTable RunDerating()

@@ -1,4 +1,5 @@
 using PartCheck.Quantities;
+using PartCheck.Sheets;
 
 namespace PartCheck.Bills;
 
@@ -7,6 +8,12 @@ public sealed record BillLine
 {
     /// <summary>Reference designators in the order of the cell, ranges written out.</summary>
     public required IReadOnlyList<string> References { get; init; }
+
+    /// <summary>Components to place: elements of one package (<c>Q1.1, Q1.2</c>) are one.</summary>
+    public int Placed => References
+        .Select(r => r.IndexOf('.', StringComparison.Ordinal) is > 0 and int dot ? r[..dot] : r)
+        .Distinct(StringComparer.OrdinalIgnoreCase)
+        .Count();
 
     /// <summary>The part number; null where the cell is blank.</summary>
     public string? PartNumber { get; init; }
@@ -47,11 +54,27 @@ public sealed record BillLine
     /// <summary>True where something in the line could not be read or contradicts another line: it is not verified.</summary>
     public bool HasComplaints { get; init; }
 
+    /// <summary>
+    /// What contradicts itself in the line, or was lost before the file was saved. It is no matter while the line serves no channel;
+    /// a line that does is not verified.
+    /// </summary>
+    public IReadOnlyList<Complaint> Doubts { get; init; } = [];
+
     /// <summary>File and cell of the references.</summary>
     public required string Cell { get; init; }
+
+    /// <summary>The sheet of the line; null for CSV.</summary>
+    public string? Sheet { get; init; }
+
+    /// <summary>One-based row of the line.</summary>
+    public int Row { get; init; }
 }
 
 /// <summary>A bill of materials.</summary>
 /// <param name="Name">File name as given.</param>
 /// <param name="Lines">Its lines, in order.</param>
-public sealed record Bill(string Name, IReadOnlyList<BillLine> Lines);
+public sealed record Bill(string Name, IReadOnlyList<BillLine> Lines)
+{
+    /// <summary>The tables that the lines stand in.</summary>
+    public IReadOnlyList<BillTable> Tables { get; init; } = [];
+}

@@ -7,15 +7,18 @@ namespace PartCheck.Bills;
 /// <summary>Cells to a bill of materials.</summary>
 public static class BillReader
 {
+    /// <summary>Most references of one bill.</summary>
+    public const int MostReferences = 200_000;
+
     private static readonly LineValidator Rules = new();
 
     /// <summary>Columns of the table.</summary>
     public static IReadOnlyList<ColumnSpec> Columns { get; } =
     [
-        new("References", ColumnKind.Text, Required: true),
+        new("References", ColumnKind.Text, Required: true) { Proof = ReferenceShape.AreReferences },
         new("Part number", ColumnKind.Text),
         new("Quantity", ColumnKind.Number),
-        new("Value", ColumnKind.Text),
+        new("Value", ColumnKind.Text) { Proof = ReferenceShape.AreValues },
         new("Package", ColumnKind.Text),
         new("Manufacturer", ColumnKind.Text),
         new("Description", ColumnKind.Text),
@@ -37,34 +40,18 @@ public static class BillReader
             return null;
         }
 
-        List<BillLine> lines = [];
-        Dictionary<string, int> seen = new(StringComparer.OrdinalIgnoreCase);
-        foreach (TableRow row in table.Rows)
+        BillAssembly bill = new(complaints);
+        List<Table> tables = [];
+        for (Table? next = table; next is not null; next = next.Below is { } below ? Table.Find(below, "BOM", Columns, spellings, complaints) : null)
         {
-            if (ReadLine(row, sheet.DecimalComma) is not { } line)
+            tables.Add(next);
+            foreach (IGrouping<int, TableRow> block in next.Rows.GroupBy(row => row.Block))
             {
-                continue;
+                bill.Add([.. block.Select(row => (row, ReadLine(row, sheet))).Where(read => read.Item2 is not null).Select(read => (read.row, read.Item2!))]);
             }
-
-            row.Check(Rules, line);
-            foreach (string reference in line.References)
-            {
-                if (!seen.TryAdd(reference, lines.Count))
-                {
-                    int other = seen[reference];
-                    string cell = other < lines.Count ? lines[other].Cell : line.Cell;
-                    row.Complain("References", "each reference once", $"{reference} stands on the bill twice; the other place is {cell}.");
-                    if (other < lines.Count)
-                    {
-                        lines[other] = lines[other] with { HasComplaints = true };
-                    }
-                }
-            }
-
-            lines.Add(row.HasComplaints ? line with { HasComplaints = true } : line);
         }
 
-        if (lines.Count == 0)
+        if (bill.Lines.Count == 0)
         {
             complaints.Add(new Complaint(
                 sheet.File, sheet.Sheet, null, null, null, null, "at least one bill line", "The bill has a header row and no lines.")
@@ -72,13 +59,25 @@ public static class BillReader
             return null;
         }
 
-        return new Bill(sheet.File, lines);
+        return new Bill(sheet.File, bill.Lines) { Tables = [.. tables.Select((t, i) => BillTables.Of(t, i == 0, bill.Lines))] };
     }
 
-    private static BillLine? ReadLine(TableRow row, bool decimalComma)
+    private static BillLine? ReadLine(TableRow row, SheetData sheet)
     {
         if (row.Text("References") is not { } text)
         {
+            // A cell without a value has been complained about.
+            if (!row.HasComplaints)
+            {
+                row.Skip("no references");
+            }
+
+            return null;
+        }
+
+        if (row.ContinuesAbove("References") && row.Text("Part number") is { } second)
+        {
+            row.Complain("Part number", "one row for one line", $"The references are merged with the row above: \"{second}\" is a second part number of that line, and is not read; write it in a column Alternates.");
             return null;
         }
 
@@ -89,16 +88,13 @@ public static class BillReader
 
         string? value = row.Text("Value");
         (bool fitted, Cited<string>? mark) = FittedMarks.Read(row, value);
-        Resistance? ohms = value is not null
-            && QuantityParser.TryParse(value, QuantityKind.Resistance, decimalComma, null, out QuantityReading reading)
-            && reading.Si >= 0 ? Resistance.FromOhms(reading.Si) : null;
-        return new BillLine
+        BillLine line = new()
         {
             References = references,
             PartNumber = row.Text("Part number"),
             Quantity = row.Number("Quantity")?.Value,
             Value = value,
-            Resistance = ohms,
+            Resistance = ResistanceOf(row, value, sheet.DecimalComma),
             Package = row.Text("Package"),
             Manufacturer = row.Text("Manufacturer"),
             Description = row.Text("Description"),
@@ -108,7 +104,20 @@ public static class BillReader
             Channel = row.Text("Channel"),
             Role = row.Text("Role"),
             Cell = row.Cite("References"),
+            Sheet = sheet.Sheet,
+            Row = row.Row,
         };
+        row.Check(Rules, line);
+        return line with { Doubts = BillDoubts.Of(row, line, sheet) };
+    }
+
+    /// <summary>The resistance of the value; where the line has no value, of its part number or its description.</summary>
+    private static Resistance? ResistanceOf(TableRow row, string? value, bool decimalComma)
+    {
+        double? ohms = value is not null ? ResistanceText.OfValue(value, decimalComma)
+            : (row.Text("Part number") is { } number ? ResistanceText.OfValue(number, decimalComma) : null)
+                ?? (row.Text("Description") is { } description ? ResistanceText.OfDescription(description, decimalComma) : null);
+        return ohms is { } found ? Resistance.FromOhms(found) : null;
     }
 
     private sealed class LineValidator : AbstractValidator<BillLine>

@@ -24,9 +24,15 @@ public static partial class ReferenceList
         references = found;
         string normal = Dashes().Replace(text.Normalize(NormalizationForm.FormKC), "-");
         normal = BlanksAroundDash().Replace(normal, "-");
+        normal = BlankInside().Replace(normal, string.Empty);
         string prefix = string.Empty;
         foreach (string token in normal.Split([',', ';', ' ', '\t', '\n', '\r', '/', '\u00A0'], StringSplitOptions.RemoveEmptyEntries))
         {
+            if (found.Count > LongestRange)
+            {
+                return $"The cell names more than {LongestRange.ToString(CultureInfo.InvariantCulture)} references.";
+            }
+
             string item = char.IsAsciiDigit(token[0]) && prefix.Length > 0 ? prefix + token : token;
             Match range = Range().Match(item);
             if (!range.Success)
@@ -69,6 +75,10 @@ public static partial class ReferenceList
 
     [GeneratedRegex("[\u2010-\u2015\u2212~]|\\.\\.+")]
     private static partial Regex Dashes();
+
+    // "C  2, C  3": blanks between letters and number.
+    [GeneratedRegex(@"(?<=(?:^|[,;/\s])[A-Za-z]{1,3})[ \t\u00A0]+(?=[0-9]+(?:$|[,;/\s-]))")]
+    private static partial Regex BlankInside();
 
     [GeneratedRegex(@"\s*-\s*")]
     private static partial Regex BlanksAroundDash();

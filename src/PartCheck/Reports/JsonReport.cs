@@ -11,7 +11,7 @@ namespace PartCheck.Reports;
 /// </summary>
 public static class JsonReport
 {
-    private static readonly JsonWriterOptions Options = new()
+    internal static readonly JsonWriterOptions Options = new()
     {
         Indented = true,
         IndentSize = 1,
@@ -102,7 +102,7 @@ public static class JsonReport
         json.Text("text", advice.Text);
     }
 
-    private static void WriteComplaint(Utf8JsonWriter json, Complaint complaint)
+    internal static void WriteComplaint(Utf8JsonWriter json, Complaint complaint)
     {
         json.Text("file", complaint.File);
         json.Text("sheet", complaint.Sheet);

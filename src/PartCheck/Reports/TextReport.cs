@@ -23,22 +23,7 @@ public static class TextReport
             Board(text, board with { Findings = FindingOrder.WorstFirst(board) });
         }
 
-        if (report.Complaints.Count > 0)
-        {
-            text.Append(CultureInfo.InvariantCulture, $"Complaints ({report.Complaints.Count}): what could not be read\n");
-            foreach (Complaint c in report.Complaints)
-            {
-                Columns80.Wrap(text, "  ", Place(c) + ": " + c.Text, 4);
-                if (c.Found is not null || c.Wanted is not null)
-                {
-                    string found = c.Found is null ? string.Empty : $"found \"{c.Found}\"" + (c.Wanted is null ? string.Empty : ", ");
-                    Columns80.Wrap(text, "    ", found + (c.Wanted is null ? string.Empty : "wanted " + c.Wanted), 6);
-                }
-            }
-
-            text.Append('\n');
-        }
-
+        ComplaintText.Append(text, report.Complaints);
         foreach (string caution in report.Boards.SelectMany(b => b.Cautions).Distinct(StringComparer.Ordinal))
         {
             Columns80.Wrap(text, "! ", caution, 2);
@@ -234,9 +219,6 @@ public static class TextReport
         value.Channels.Count == board.Channels.Count && board.Channels.Count > 1 ? " (every channel)"
         : value.Channels.Count == 1 && value.Channels[0] == value.Of ? string.Empty
         : " (" + string.Join(", ", value.Channels) + ")";
-
-    private static string Place(Complaint c) =>
-        string.Join("!", new[] { c.File, c.Sheet, c.Cell }.OfType<string>()) + (c.Column is null ? string.Empty : $" [{c.Column}]");
 
     private static string Coloured(string text) => text
         .Replace("NONCONFORMING", "\u001b[31mNONCONFORMING\u001b[0m", StringComparison.Ordinal)

@@ -68,10 +68,9 @@ public static class BillRule
             missing.Add("a bill line without complaints");
         }
 
-        int placed = PlacedComponents(line);
-        if (line.Quantity is { } quantity && quantity != placed)
+        if (line.Quantity is { } quantity && quantity != line.Placed)
         {
-            wrong.Add(string.Create(CultureInfo.InvariantCulture, $"the quantity is {quantity}, the references are {placed}"));
+            wrong.Add(string.Create(CultureInfo.InvariantCulture, $"the quantity is {quantity}, the references are {line.Placed}"));
         }
 
         IReadOnlyList<Part> rows = line.PartNumber is null ? [] : parts.Find(line.PartNumber);
@@ -121,12 +120,6 @@ public static class BillRule
             Missing = wrong.Count > 0 ? [] : missing,
         };
     }
-
-    /// <summary>Components to place: elements of one package (<c>Q1.1, Q1.2</c>) are one.</summary>
-    private static int PlacedComponents(BillLine line) => line.References
-        .Select(r => r.IndexOf('.', StringComparison.Ordinal) is > 0 and int dot ? r[..dot] : r)
-        .Distinct(StringComparer.OrdinalIgnoreCase)
-        .Count();
 
     private static string Sentence(string text) => char.ToUpperInvariant(text[0]) + text[1..] + ".";
 }
