@@ -11,13 +11,22 @@ internal static class OutputFile
     /// <param name="inputs">Files that are being read and must not be replaced.</param>
     public static string? Refusal(string path, bool replace, IEnumerable<string> inputs)
     {
-        string full = Path.GetFullPath(path);
+        string full;
+        try
+        {
+            full = FileIdentity.Of(path);
+        }
+        catch (Exception e) when (e is IOException or UnauthorizedAccessException)
+        {
+            return $"{path} cannot be created: its links lead nowhere.";
+        }
+
         if (Directory.Exists(full))
         {
             return $"{path} is a folder.";
         }
 
-        if (inputs.Any(i => string.Equals(Path.GetFullPath(i), full, StringComparison.Ordinal)))
+        if (inputs.Where(File.Exists).Any(i => string.Equals(FileIdentity.Of(i), full, FileIdentity.Comparison)))
         {
             return $"{path} is an input of this run.";
         }
@@ -25,6 +34,11 @@ internal static class OutputFile
         if (File.Exists(full) && !replace)
         {
             return $"{path} exists; --replace allows to replace it.";
+        }
+
+        if (File.Exists(full) && !FileIdentity.IsOrdinary(path))
+        {
+            return $"{path} is no ordinary file that may be written, and is not replaced.";
         }
 
         try
@@ -38,13 +52,13 @@ internal static class OutputFile
         }
     }
 
-    /// <summary>Writes a file; an exception leaves the target as it was.</summary>
+    /// <summary>Writes a file; an exception leaves the target as it was. A link stays a link: the file it leads to is replaced.</summary>
     /// <param name="path">The target.</param>
     /// <param name="text">What it holds.</param>
     /// <param name="replace">True where an existing file may be replaced.</param>
     public static async Task WriteAsync(string path, string text, bool replace)
     {
-        string full = Path.GetFullPath(path);
+        string full = FileIdentity.Of(path);
         string beside = Beside(full);
         try
         {

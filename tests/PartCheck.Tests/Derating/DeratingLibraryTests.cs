@@ -116,7 +116,9 @@ public sealed class DeratingLibraryTests
     public void ANumberThatWouldChangeNothingIsAComplaint(string column, string rule, string cell, string text)
     {
         Bills.TypedSheet typed = new();
-        Assert.Empty(DeratingReader.Read(Bills.TypedSheet.Of("d.csv", $"Name|Rule|{column}", $"t|{rule}|{cell}"), typed.Spellings, typed.List));
+        DeratingTable table = Assert.Single(DeratingReader.Read(Bills.TypedSheet.Of("d.csv", $"Name|Rule|{column}", $"t|{rule}|{cell}"), typed.Spellings, typed.List));
+        Assert.True(table.Unknown);
+        Assert.Empty(table.Rows);
         Assert.Contains(typed.Complaints, c => (c.Cell + " " + c.Text).Contains(text, StringComparison.Ordinal));
     }
 
