@@ -54,29 +54,7 @@ internal static class CheckCommand
 
             CheckReport report = CheckRun.Run(request, cancel);
             string text = parse.GetValue(format) == "json" ? JsonReport.Write(report) : TextReport.Write(report, colour && target is null);
-            if (target is null)
-            {
-                return await CommandLine.WrittenAsync(output, text).ConfigureAwait(false)
-                    ? ExitCodes.Of(report)
-                    : await CommandLine.UnwritableAsync(error).ConfigureAwait(false);
-            }
-
-            try
-            {
-                await OutputFile.WriteAsync(target, text, replace: parse.GetValue(replace)).ConfigureAwait(false);
-            }
-            catch (IOException) when (!parse.GetValue(replace) && File.Exists(target))
-            {
-                await error.WriteLineAsync($"partcheck: {target} came into being during the run; --replace allows to replace it.").ConfigureAwait(false);
-                return ExitCodes.CannotCreate;
-            }
-            catch (Exception e) when (e is IOException or UnauthorizedAccessException)
-            {
-                await error.WriteLineAsync($"partcheck: {target} could not be written; nothing was changed.").ConfigureAwait(false);
-                return ExitCodes.WriteFailure;
-            }
-
-            return ExitCodes.Of(report);
+            return await Delivery.SendAsync(text, target, parse.GetValue(replace), ExitCodes.Of(report), output, error).ConfigureAwait(false);
         });
         return command;
     }

@@ -26,31 +26,40 @@ internal static partial class BillDoubts
             doubts.Add(row.ComplaintOf("Quantity", "as many as references", text) with { IsCount = true });
         }
 
-        if (sheet.Sheet is null && row.BeyondHeader is { } beyond)
+        if (row.Text("Notes") is { } notes && line.Fitted && FittedMarks.IsInside(notes))
         {
-            Doubt("References", "as many fields as headers", $"\"{beyond.Text}\" in column {beyond.Column} stands right of the last header: a comma without quotes has most likely moved the fields of this row.");
+            Doubt("Notes", "a mark alone in its cell, or a column Fitted", $"The note \"{notes}\" speaks of not fitting, and what it means for this line cannot be told.");
+        }
+
+        if (row.BeyondHeader is { } beyond)
+        {
+            Doubt("References", "as many fields as headers", $"\"{beyond.Text}\" in column {beyond.Letters} stands right of the last header: a comma without quotes has most likely moved the fields of this row.");
         }
 
         foreach (string column in Texts)
         {
-            if (row.Text(column) is { } text && text.Contains('\uFFFD', StringComparison.Ordinal))
+            if (row.Text(column) is not { } text)
+            {
+                continue;
+            }
+
+            if (text.Contains('\uFFFD', StringComparison.Ordinal))
             {
                 Doubt(column, "a text without lost characters", $"A character of \"{text}\" was lost before the file was saved.");
             }
-
-            if (column != "Description" && column != "Manufacturer" && row.IsDate(column))
+            else if (column is "Value" or "Description" && ResistanceText.LostSign(text) is { } lost)
             {
-                Doubt(column, "a text", $"\"{row.Text(column)}\" is a date: a spreadsheet has most likely made it of a text.");
+                Doubt(column, "a resistance such as 4k7", $"The sign after \"{lost}\" was lost before the file was saved; it may have been an ohm sign.");
+            }
+
+            if (column is not "Description" and not "Manufacturer" && row.IsDate(column))
+            {
+                Doubt(column, "a text", $"\"{text}\" is a date: a spreadsheet has most likely made it of a text.");
             }
         }
 
         if (line.Value is { } value)
         {
-            if (ResistanceText.LostSign(value) is { } lost)
-            {
-                Doubt("Value", "a resistance such as 4k7", $"The sign after \"{lost.TrimEnd('?', '\uFFFD').TrimEnd()}\" was lost before the file was saved; it may have been an ohm sign.");
-            }
-
             Contradictions(line, value, sheet.DecimalComma, Doubt);
         }
 
@@ -59,7 +68,7 @@ internal static partial class BillDoubts
 
     private static void Contradictions(BillLine line, string value, bool decimalComma, Action<string, string, string> doubt)
     {
-        if (line.Resistance is { } resistance && SaysOhms().IsMatch(value))
+        if (line.Resistance is { } resistance && ResistanceText.SaysOhms(value))
         {
             string shown = EngineeringNotation.Format(resistance.Ohms, "ohm");
             if (line.Description is { } description && ResistanceText.OfDescription(description, decimalComma) is { } told
@@ -99,9 +108,6 @@ internal static partial class BillDoubts
     }
 
     private static string Plain(string text) => string.Concat(text.ToUpperInvariant().Where(char.IsAsciiLetterOrDigit));
-
-    [GeneratedRegex(@"[RrkKM\u03A9\u2126]|[Oo]hm", RegexOptions.CultureInvariant)]
-    private static partial Regex SaysOhms();
 
     [GeneratedRegex(@"^(?:[0-9][SN][A-Z]?[0-9]{3,4}|[A-Z]{2,5}[0-9]{3,5})[A-Z0-9]{0,6}(?:[-/][A-Z0-9]{1,8}){0,2}$", RegexOptions.CultureInvariant | RegexOptions.IgnoreCase)]
     private static partial Regex TypeNumber();

@@ -24,6 +24,7 @@ public static class BillReader
         new("Description", ColumnKind.Text),
         new("Fitted", ColumnKind.Text),
         new("Do not fit", ColumnKind.Text),
+        new("Notes", ColumnKind.Text),
         new("Alternates", ColumnKind.Text),
         new("Channel", ColumnKind.Text),
         new("Role", ColumnKind.Text),
@@ -40,7 +41,7 @@ public static class BillReader
             return null;
         }
 
-        BillAssembly bill = new(complaints);
+        BillAssembly bill = new();
         List<Table> tables = [];
         for (Table? next = table; next is not null; next = next.Below is { } below ? Table.Find(below, "BOM", Columns, spellings, complaints) : null)
         {
@@ -64,7 +65,7 @@ public static class BillReader
 
     private static BillLine? ReadLine(TableRow row, SheetData sheet)
     {
-        if (row.Text("References") is not { } text)
+        if (row.Text("References") is not { } text || text.Trim('-', '\u2013', '\u2014', ' ').Length == 0)
         {
             // A cell without a value has been complained about.
             if (!row.HasComplaints)
@@ -115,7 +116,8 @@ public static class BillReader
     private static Resistance? ResistanceOf(TableRow row, string? value, bool decimalComma)
     {
         double? ohms = value is not null ? ResistanceText.OfValue(value, decimalComma)
-            : (row.Text("Part number") is { } number ? ResistanceText.OfValue(number, decimalComma) : null)
+            : (row.Text("Part number") is { } number && (ResistanceText.SaysOhms(number) || row.HeaderOf("Part number").Contains("value", StringComparison.OrdinalIgnoreCase))
+                    ? ResistanceText.OfValue(number, decimalComma) : null)
                 ?? (row.Text("Description") is { } description ? ResistanceText.OfDescription(description, decimalComma) : null);
         return ohms is { } found ? Resistance.FromOhms(found) : null;
     }

@@ -15,6 +15,12 @@ internal static partial class ResistanceText
     /// <param name="decimalComma">True where the file writes decimals with a comma.</param>
     internal static double? OfValue(string text, bool decimalComma)
     {
+        // 100n and 10u are capacitances and inductances with their unit left out.
+        if (BelowMilli().IsMatch(text))
+        {
+            return null;
+        }
+
         if (QuantityParser.TryParse(text, QuantityKind.Resistance, decimalComma, null, out QuantityReading reading))
         {
             return reading.Si >= 0 ? reading.Si : null;
@@ -29,8 +35,11 @@ internal static partial class ResistanceText
     internal static double? OfDescription(string text, bool decimalComma) =>
         Resistor().IsMatch(text) && !NoFixedResistor().IsMatch(text) ? Only(Found(text, decimalComma)) : null;
 
+    /// <summary>True where a text names a resistance by a sign or letter and not by digits alone.</summary>
+    internal static bool SaysOhms(string text) => Ohms().IsMatch(text);
+
     /// <summary>The text whose ohm sign was lost before the file was saved (<c>10k?</c>); null: it was not.</summary>
-    internal static string? LostSign(string text) => Lost().Match(text) is { Success: true } match ? match.Value.Trim() : null;
+    internal static string? LostSign(string text) => Lost().Match(text) is { Success: true } match ? match.Value.Trim().TrimEnd('?', '\uFFFD').TrimEnd() : null;
 
     /// <summary>
     /// True where a resistor's part number (one that names a chip size) can mean the resistance: by its RKM group (IEC 60062) or, after
@@ -108,8 +117,14 @@ internal static partial class ResistanceText
     [GeneratedRegex(@"\b(?:dcr|impedance|ferrite|beads?|inductors?|choke|crystal|diode|transistor|mosfet|capacitors?|cap|arrays?|networks?|trimmers?|potentiometers?|ntc|thermistors?|varistors?|relays?|esr|speakers?|buzzers?|impedanz)\b", RegexOptions.CultureInvariant | RegexOptions.IgnoreCase)]
     private static partial Regex NoFixedResistor();
 
-    [GeneratedRegex(@"^\s*[0-9]+(?:[.,][0-9]+)?\s*[kKMmRr]?[0-9]*\s*[?\uFFFD](?=$|[\s,;/])", RegexOptions.CultureInvariant)]
+    [GeneratedRegex(@"^\s*[0-9]*(?:[.,][0-9]+)?\s*[pnu\u00B5\u03BC]\s*$", RegexOptions.CultureInvariant)]
+    private static partial Regex BelowMilli();
+
+    [GeneratedRegex(@"(?:^\s*[0-9]+(?:[.,][0-9]+)?\s*[kKMmRr]?[0-9]*\s*|(?<![A-Za-z0-9.])[0-9]+(?:[.,][0-9]+)?[kKM])[?\uFFFD](?=$|[\s,;/])", RegexOptions.CultureInvariant)]
     private static partial Regex Lost();
+
+    [GeneratedRegex(@"[RrkKM\u03A9\u2126]|[Oo]hm", RegexOptions.CultureInvariant)]
+    private static partial Regex Ohms();
 
     [GeneratedRegex(@"(?:01005|0201|0402|0603|0805|1206|1210|1812|2010|2512)", RegexOptions.CultureInvariant)]
     private static partial Regex Size();

@@ -31,6 +31,7 @@ internal static partial class CsvSheet
 
         char separator = Separator.Of(text, out string body);
         List<IReadOnlyList<SheetCell>> rows = [];
+        Dictionary<int, int> fields = [];
         List<(CsvMalformedReason Reason, int Row)> malformed = [];
         int row = 0;
         int cells = 0;
@@ -57,6 +58,7 @@ internal static partial class CsvSheet
 
                 if (found.Count > 0)
                 {
+                    fields[row] = reader.Current.FieldCount;
                     rows.Add(found);
                 }
             }
@@ -84,7 +86,7 @@ internal static partial class CsvSheet
         }
 
         bool decimalComma = separator != ',' && DecimalSign.IsComma(rows);
-        return [new SheetData(shownName, null, decimalComma, rows) { Encoding = decoded.Encoding, Separator = Separator.NameOf(separator) }];
+        return [new SheetData(shownName, null, decimalComma, rows) { Encoding = decoded.Encoding, Separator = Separator.NameOf(separator), Fields = fields }];
 
         void Complain(int at, string sentence, bool fatal) =>
             complaints.Add(new Complaint(shownName, null, at, null, CellAddress.Of(at, 1), null, "quotes in pairs", sentence) { Fatal = fatal });

@@ -52,6 +52,9 @@ public sealed record SheetData(string File, string? Sheet, bool DecimalComma, IR
     /// <summary>What separates the fields: <c>comma</c>, <c>semicolon</c> or <c>tab</c>; null for a workbook.</summary>
     public string? Separator { get; init; }
 
+    /// <summary>Fields of each row of a separated text, blank ones included; null for a workbook.</summary>
+    internal IReadOnlyDictionary<int, int>? Fields { get; init; }
+
     /// <summary>True for the rows below a second header row of a sheet.</summary>
     internal bool IsRest { get; init; }
 

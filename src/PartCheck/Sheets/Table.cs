@@ -21,7 +21,6 @@ public sealed class Table
         HeaderRow = header.Row;
         Complaints = complaints;
         columns = header.Columns;
-        LastHeaderColumn = header.Cells[^1].Column;
     }
 
     /// <summary>Data rows in order (section, totals and repeated header rows left out).</summary>
@@ -32,9 +31,6 @@ public sealed class Table
 
     /// <summary>One-based row of the header.</summary>
     public int HeaderRow { get; }
-
-    /// <summary>One-based column of the last header.</summary>
-    public int LastHeaderColumn { get; }
 
     /// <summary>The columns found, in the sheet's order: own name, header as it stands there, one-based column.</summary>
     public IReadOnlyList<(string Name, string Header, int Index)> Columns =>

@@ -50,9 +50,11 @@ public sealed class TableRow
     public bool ContinuesAbove(string column) =>
         table.ColumnOf(column) is { } found && table.Sheet.Layout.MergedFrom(Row, found.Index) is not null;
 
-    /// <summary>The first text that stands right of every header, with its column's letters; null: none.</summary>
-    public (string Text, string Column)? BeyondHeader =>
-        cells[^1].Column > table.LastHeaderColumn ? (cells[^1].Text, CellAddress.LettersOf(cells[^1].Column)) : null;
+    /// <summary>In a separated text, the last field where the row has more fields than its header, with its column's letters; null: it has not.</summary>
+    public (string Text, string Letters)? BeyondHeader =>
+        table.Sheet.Fields is { } fields && cells[^1].Column > fields.GetValueOrDefault(table.HeaderRow)
+            ? (cells[^1].Text, CellAddress.LettersOf(cells[^1].Column))
+            : null;
 
     /// <summary>Leaves the row out, with the reason.</summary>
     public void Skip(string why) => table.Skip(cells, why);
@@ -84,6 +86,9 @@ public sealed class TableRow
             reading.Trouble, HeaderOf(column), text.Trim(), reading.Wanted, table.Sheet.DecimalComma));
         return null;
     }
+
+    /// <summary>The header of a column as it stands in the sheet; the column's own name where the sheet has no such column.</summary>
+    public string HeaderOf(string column) => table.HeaderOf(column) ?? column;
 
     /// <summary>File and cell of a column in this row (the row's first cell where the sheet has no such column).</summary>
     public string Cite(string column) => table.Sheet.Cite(Row, IndexOf(column));
@@ -160,6 +165,4 @@ public sealed class TableRow
     }
 
     private int IndexOf(string column) => table.ColumnOf(column)?.Index ?? cells[0].Column;
-
-    private string HeaderOf(string column) => table.HeaderOf(column) ?? column;
 }

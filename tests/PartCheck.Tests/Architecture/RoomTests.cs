@@ -18,7 +18,7 @@ public class RoomTests
         ["OperatingPoints"] = ["Quantities", "Devices", "Parts", "Channels"],
         ["Derating"] = ["Quantities", "Sheets"],
         ["Rules"] = ["Quantities", "Bills", "Parts", "Channels", "OperatingPoints", "Derating"],
-        ["Reports"] = ["Quantities", "Sheets", "Parts", "Channels", "OperatingPoints", "Rules"],
+        ["Reports"] = ["Quantities", "Sheets", "Bills", "Parts", "Channels", "OperatingPoints", "Rules"],
     };
 
     [Fact]
