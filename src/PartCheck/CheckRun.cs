@@ -134,6 +134,7 @@ public static class CheckRun
             IReadOnlyList<JudgedChannel> judged = JudgeChannels(channels, derating, cancel);
             IReadOnlyList<Finding> pinFindings = JudgePins(judged, derating);
             AddAdvice(bill, channels);
+            AddNearMisses(bill, parts, channels);
             AddCircuitAdvice(channels);
             return Report(derating, judged, billFindings, pinFindings);
         }
@@ -338,6 +339,19 @@ public static class CheckRun
                 if (channels.Any(c => c.References.Any(r => line.References.Contains(r, StringComparer.OrdinalIgnoreCase))))
                 {
                     advice.Add(new Advice(null, line.References[0], $"Alternates {string.Join(", ", line.Alternates)} of this line are not judged by this version."));
+                }
+            }
+        }
+
+        /// <summary>A mistyped part number is looked for in the part table: suggested, never taken.</summary>
+        private void AddNearMisses(Bill bill, PartTable parts, IReadOnlyList<Channel> channels)
+        {
+            HashSet<string> serving = new(channels.SelectMany(c => c.References), StringComparer.OrdinalIgnoreCase);
+            foreach (BillLine line in bill.Lines.Where(l => l.PartNumber is { } number && parts.Find(number).Count == 0 && l.References.Any(serving.Contains)))
+            {
+                if (PartNearMiss.Of(parts, line.PartNumber!) is { Count: > 0 } near)
+                {
+                    advice.Add(new Advice(null, line.References[0], $"The part table has no row {line.PartNumber}; is {string.Join(" or ", near)} meant?"));
                 }
             }
         }

@@ -55,7 +55,8 @@ internal sealed class BillAssembly
 
         foreach (string reference in line.References)
         {
-            if (!seen.TryAdd(reference, lines.Count))
+            // A text of several words is no designator: cables and cases may come twice.
+            if (!seen.TryAdd(reference, lines.Count) && !reference.Contains(' ', StringComparison.Ordinal))
             {
                 int other = seen[reference];
                 string cell = other < lines.Count ? lines[other].Cell : line.Cell;
