@@ -85,23 +85,28 @@ internal static class EncodingEvidence
         return word;
     }
 
-    /// <summary>Japanese: kana, the common characters of JIS level 1, full-width forms and signs make up nearly all above ASCII.</summary>
+    /// <summary>
+    /// Japanese: kana, characters, full-width forms and signs make up nearly all above ASCII, and two of them stand side by side (an
+    /// accented letter before a Latin one decodes as a single character).
+    /// </summary>
     private static bool FitsJapanese(string text)
     {
         int common = 0;
         int other = 0;
+        int run = 0;
+        bool word = false;
         foreach (char c in text)
         {
-            if (c < 0x80)
+            bool written = c is (>= '\u3000' and <= '\u30FF') or (>= '\uFF01' and <= '\uFF5E') or (>= '\u4E00' and <= '\u9FFF');
+            run = written ? run + 1 : 0;
+            word |= run >= 2;
+            if (c >= 0x80)
             {
-                continue;
+                bool sign = c is '\u00B1' or '\u00B0' or '\u00B5' or '\u03BC' or '\u03A9' or '\u2103' or '\u2126' or '\u00D7';
+                _ = written || sign ? common++ : other++;
             }
-
-            bool usual = c is (>= '\u3000' and <= '\u30FF') or (>= '\uFF01' and <= '\uFF5E') or (>= '\u4E00' and <= '\u9FFF')
-                or '\u00B1' or '\u00B0' or '\u00B5' or '\u03BC' or '\u03A9' or '\u2103' or '\u2126' or '\u00D7';
-            _ = usual ? common++ : other++;
         }
 
-        return common > 0 && common >= LeastCommon * (common + other);
+        return word && common >= LeastCommon * (common + other);
     }
 }

@@ -35,13 +35,15 @@ internal sealed partial class RowKinds
 {
     private readonly TableHeader header;
     private readonly HeaderMatcher matcher;
+    private readonly SheetLayout layout;
     private readonly HashSet<int> known;
     private readonly HashSet<int> requiredColumns;
     private readonly bool partNumbers;
     private readonly bool bill;
 
-    internal RowKinds(TableHeader header, HeaderMatcher matcher, string tableName)
+    internal RowKinds(TableHeader header, HeaderMatcher matcher, string tableName, SheetLayout layout)
     {
+        this.layout = layout;
         this.header = header;
         this.matcher = matcher;
         known = [.. header.Columns.Values.Select(column => column.Index)];
@@ -84,7 +86,7 @@ internal sealed partial class RowKinds
     /// </summary>
     private bool IsSection(IReadOnlyList<SheetCell> row)
     {
-        if (row is not [{ Number: null } only])
+        if (row is not [{ Number: null } only] || requiredColumns.Any(column => layout.MergedFrom(only.Row, column) is not null))
         {
             return false;
         }

@@ -54,7 +54,7 @@ public sealed class SheetLayout
     public bool HidesColumn(int column) => HiddenColumns.Any(run => column >= run.First && column <= run.Last);
 
     /// <summary>The row in which a column's cell begins that is merged downwards over this row; null: none, or it begins here.</summary>
-    internal int? MergedFrom(int row, int column)
+    public int? MergedFrom(int row, int column)
     {
         if (!mergedByColumn.TryGetValue(column, out List<MergedRange>? ranges))
         {

@@ -80,7 +80,7 @@ public sealed class Table
                 ComplaintTexts.HeaderUnit(column.Header, wanted)));
         }
 
-        table.ReadRows(best, new RowKinds(best, matcher, tableName), tableName);
+        table.ReadRows(best, new RowKinds(best, matcher, tableName, sheet.Layout), tableName);
         return table;
     }
 

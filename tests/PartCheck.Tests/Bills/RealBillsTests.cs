@@ -93,7 +93,7 @@ public partial class RealBillsTests
     private static partial Regex Resistors();
 
     // One more stands under R that the person left out of the count.
-    [GeneratedRegex(@"fixed \+ R[0-9]+ trimmer|\(R[0-9]+ = varistor[^)]*not counted")]
+    [GeneratedRegex(@"resistors [0-9]+ fixed \+ R[0-9]+ trimmer|\(R[0-9]+ = varistor[^)]*not counted")]
     private static partial Regex NotCounted();
 
     [GeneratedRegex("^R[0-9]")]
