@@ -1,4 +1,3 @@
-using System.Globalization;
 using PartCheck.Sheets;
 
 namespace PartCheck.Bills;
@@ -11,7 +10,6 @@ internal sealed class BillAssembly
 {
     private readonly List<BillLine> lines = [];
     private readonly Dictionary<string, int> seen = new(StringComparer.OrdinalIgnoreCase);
-    private bool full;
 
     /// <summary>The lines so far.</summary>
     internal List<BillLine> Lines => lines;
@@ -39,20 +37,6 @@ internal sealed class BillAssembly
 
     private void AddLine(TableRow row, BillLine line)
     {
-        if (full)
-        {
-            return;
-        }
-
-        if (seen.Count + line.References.Count > BillReader.MostReferences)
-        {
-            full = true;
-            row.Complain(
-                "References", "a bill of fewer parts",
-                $"The bill has more than {BillReader.MostReferences.ToString(CultureInfo.InvariantCulture)} references: this row and those below are not read.");
-            return;
-        }
-
         foreach (string reference in line.References)
         {
             // A text of several words is no designator: cables and cases may come twice.

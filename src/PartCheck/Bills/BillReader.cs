@@ -1,3 +1,4 @@
+using System.Globalization;
 using FluentValidation;
 using PartCheck.Quantities;
 using PartCheck.Sheets;
@@ -9,6 +10,8 @@ public static class BillReader
 {
     /// <summary>Most references of one bill.</summary>
     public const int MostReferences = 200_000;
+
+    private const int MostTables = 20;
 
     private static readonly LineValidator Rules = new();
 
@@ -43,12 +46,42 @@ public static class BillReader
 
         BillAssembly bill = new();
         List<Table> tables = [];
-        for (Table? next = table; next is not null; next = next.Below is { } below ? Table.Find(below, "BOM", Columns, spellings, complaints) : null)
+        int references = 0;
+        for (Table? next = table; next is not null; next = Following(next, spellings, complaints))
         {
             tables.Add(next);
-            foreach (IGrouping<int, TableRow> block in next.Rows.GroupBy(row => row.Block))
+            List<(TableRow Row, BillLine Line)> read = [];
+            foreach (TableRow row in next.Rows)
             {
-                bill.Add([.. block.Select(row => (row, ReadLine(row, sheet))).Where(read => read.Item2 is not null).Select(read => (read.row, read.Item2!))]);
+                if (read.Count > 0 && read[^1].Row.Block != row.Block)
+                {
+                    bill.Add(read);
+                    read = [];
+                }
+
+                if (ReadLine(row, sheet) is { } line)
+                {
+                    references += line.References.Count;
+                    if (references > MostReferences)
+                    {
+                        row.Complain("References", "a bill of fewer parts", ComplaintOfLength("references", MostReferences));
+                        break;
+                    }
+
+                    read.Add((row, line));
+                }
+            }
+
+            bill.Add(read);
+            if (references > MostReferences)
+            {
+                break;
+            }
+
+            if (tables.Count == MostTables && next.Below is not null)
+            {
+                complaints.Add(new Complaint(sheet.File, sheet.Sheet, null, null, null, null, "one table in one sheet", ComplaintOfLength("tables", MostTables)));
+                break;
             }
         }
 
@@ -62,6 +95,12 @@ public static class BillReader
 
         return new Bill(sheet.File, bill.Lines) { Tables = [.. tables.Select((t, i) => BillTables.Of(t, i == 0, bill.Lines))] };
     }
+
+    private static Table? Following(Table table, ColumnSpellings spellings, ComplaintList complaints) =>
+        table.Below is { } below ? Table.Find(below, "BOM", Columns, spellings, complaints) : null;
+
+    private static string ComplaintOfLength(string what, int most) =>
+        $"The bill has more than {most.ToString(CultureInfo.InvariantCulture)} {what}: what follows is not read.";
 
     private static BillLine? ReadLine(TableRow row, SheetData sheet)
     {

@@ -30,6 +30,7 @@ public static partial class ReferenceList
         {
             if (found.Count > LongestRange)
             {
+                found.RemoveRange(LongestRange, found.Count - LongestRange);
                 return $"The cell names more than {LongestRange.ToString(CultureInfo.InvariantCulture)} references.";
             }
 

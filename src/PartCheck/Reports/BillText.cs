@@ -13,6 +13,7 @@ public static class BillText
     private const int RowWidth = 8;
     private const int ReferencesShown = 60;
     private const int TextShown = 40;
+    private const int LinesShown = 5000;
 
     /// <summary>Writes what was read.</summary>
     public static string Write(BillReading reading)
@@ -38,9 +39,14 @@ public static class BillText
         if (lines.Count > 0)
         {
             text.Append("Lines\n");
-            foreach (BillLine line in lines)
+            foreach (BillLine line in lines.Take(LinesShown))
             {
                 Line(text, line);
+            }
+
+            if (lines.Count > LinesShown)
+            {
+                text.Append(CultureInfo.InvariantCulture, $"  ... and {lines.Count - LinesShown} lines more; --format json lists them all\n");
             }
 
             text.Append('\n');

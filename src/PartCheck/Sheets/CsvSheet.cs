@@ -7,7 +7,7 @@ namespace PartCheck.Sheets;
 internal static partial class CsvSheet
 {
     private const int LongestRecord = 1 << 20;
-    private const int MostCells = 4_000_000;
+    private const int MostCells = 2_000_000;
 
     /// <summary>The one sheet; an empty list with a fatal complaint where the text cannot be read.</summary>
     internal static IReadOnlyList<SheetData> Read(byte[] bytes, string shownName, string? encoding, ComplaintList complaints)
@@ -53,7 +53,7 @@ internal static partial class CsvSheet
                 cells += found.Count;
                 if (cells > MostCells)
                 {
-                    return SheetFile.Refuse(shownName, ComplaintTexts.TooLarge("4 million cells are the most"), complaints);
+                    return SheetFile.Refuse(shownName, ComplaintTexts.TooLarge("2 million cells are the most"), complaints);
                 }
 
                 if (found.Count > 0)

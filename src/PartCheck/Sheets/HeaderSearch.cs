@@ -8,6 +8,7 @@ namespace PartCheck.Sheets;
 internal sealed class HeaderSearch
 {
     private const int MostProofs = 200;
+    private const int MostRowsLookedAt = 2000;
 
     private readonly SheetData sheet;
     private readonly HeaderMatcher matcher;
@@ -65,7 +66,7 @@ internal sealed class HeaderSearch
         foreach (TableColumn column in matcher.Doubtful(header.Cells).Where(c => !columns.ContainsKey(c.Spec.Name)))
         {
             List<SheetCell> below = [.. sheet.Rows
-                .Where(row => row[0].Row > header.LastRow)
+                .Where(row => row[0].Row > header.LastRow).Take(MostRowsLookedAt)
                 .Select(row => row.FirstOrDefault(cell => cell.Column == column.Index)).OfType<SheetCell>().Take(MostProofs)];
             if (!taken.Contains(column.Index) && below.Count > 0 && !columns.ContainsKey(column.Spec.Name) && column.Spec.Proof!([.. below.Select(c => c.Text)]))
             {

@@ -10,7 +10,7 @@ internal sealed partial class XlsxCells
 {
     private const int LastRow = 1_048_576;
     private const int LastColumn = 16_384;
-    private const int MostCells = 4_000_000;
+    private const int MostCells = 2_000_000;
     private const int MostRanges = 100_000;
 
     private readonly List<string> shared;
@@ -72,7 +72,7 @@ internal sealed partial class XlsxCells
                         Add(cell);
                         if (++cells > MostCells)
                         {
-                            throw new InvalidDataException("it has more than 4 million cells.");
+                            throw new InvalidDataException("it has more than 2 million cells.");
                         }
                     }
 

@@ -218,6 +218,31 @@ public class BillFileTests : SheetsFixture
             reading.Complaints.Select(c => c.Cell + " " + c.Text));
     }
 
+    // 21 cells of 10 000 references each: the bill stops at 200 000.
+    [Fact]
+    public void AnEndlessBillIsCutAndSaid()
+    {
+        BillReading reading = Text("Ref,MPN\n" + string.Concat(Enumerable.Range(1, 30).Select(i => $"R{i}0001-R{i + 1}0000,RK\n")));
+        Assert.Equal(20, reading.Bill!.Lines.Count);
+        Assert.Equal("The bill has more than 200000 references: what follows is not read.", Assert.Single(reading.Complaints).Text);
+    }
+
+    [Fact]
+    public void TablesWithoutEndAreCutAndSaid()
+    {
+        BillReading reading = Text(string.Concat(Enumerable.Range(1, 30).Select(i => i % 2 == 0 ? $"Ref,MPN\nR{i},RK\n" : $"MPN,Ref\nRK,R{i}\n")));
+        Assert.Equal(20, reading.Bill!.Lines.Count);
+        Assert.Equal("The bill has more than 20 tables: what follows is not read.", Assert.Single(reading.Complaints).Text);
+    }
+
+    [Fact]
+    public void AThousandComplaintsAreListedAndTheRestCounted()
+    {
+        BillReading reading = Text("Ref,Qty\n" + string.Concat(Enumerable.Range(1, 1500).Select(i => $"R{i},many\n")));
+        Assert.Equal(1001, reading.Complaints.Count);
+        Assert.Equal("500 further complaints are not listed: put these right first.", reading.Complaints[^1].Text);
+    }
+
     [Fact]
     public void AMissingFileIsNoInput() => Assert.True(Assert.Single(BillFile.Read(At("nowhere.csv"), null, null).Complaints).NoInput);
 
