@@ -23,6 +23,7 @@ public static class CommandLine
             {
                 CheckCommand.Build(output, error, colour),
                 BillCommand.Build(output, error),
+                TemplateCommand.Build(output, error),
             };
             ParseResult parsed = root.Parse(args);
             if (UsageError.Of(parsed) is { } usage)
