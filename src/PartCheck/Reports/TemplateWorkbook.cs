@@ -13,6 +13,7 @@ public static class TemplateWorkbook
     private const string Folder = "partdata/template/";
     private const int RowsWithLists = 500;
     private const int LeastWidth = 9;
+    private const int MostColumnsOfAPage = 15;
 
     private static readonly DateTime Made = new(2000, 1, 1, 0, 0, 0, DateTimeKind.Utc);
 
@@ -56,6 +57,7 @@ public static class TemplateWorkbook
                 }
 
                 IXLCell cell = sheet.Cell(r + 2, c + 1);
+                cell.Style.Alignment.Horizontal = XLAlignmentHorizontalValues.Left;
                 if (column.Unit.Length > 0 && double.TryParse(value, NumberStyles.Float, CultureInfo.InvariantCulture, out double number))
                 {
                     cell.SetValue(number);
@@ -80,9 +82,15 @@ public static class TemplateWorkbook
             }
         }
 
-        sheet.SheetView.FreezeRows(1);
+        // A wide sheet is printed over several pages, each with the name of the row.
+        sheet.SheetView.Freeze(1, 1);
         sheet.PageSetup.PageOrientation = XLPageOrientation.Landscape;
-        sheet.PageSetup.FitToPages(1, 0);
+        sheet.PageSetup.SetRowsToRepeatAtTop(1, 1);
+        sheet.PageSetup.SetColumnsToRepeatAtLeft(1, 1);
+        if (columns.Count <= MostColumnsOfAPage)
+        {
+            sheet.PageSetup.FitToPages(1, 0);
+        }
     }
 
     /// <summary>The example's value of a column, whatever unit its file uses: the header of the file goes before the template's.</summary>
