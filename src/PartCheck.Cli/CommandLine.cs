@@ -24,6 +24,7 @@ public static class CommandLine
                 CheckCommand.Build(output, error, colour),
                 BillCommand.Build(output, error),
                 TemplateCommand.Build(output, error),
+                WorkingCommand.Build(output, error),
             };
             ParseResult parsed = root.Parse(args);
             if (UsageError.Of(parsed) is { } usage)

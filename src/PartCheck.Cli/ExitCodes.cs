@@ -16,16 +16,19 @@ internal static class ExitCodes
     public const int Interrupted = 130;
 
     /// <summary>The code of a report: 66, 65, then 1, 2, 0.</summary>
-    public static int Of(CheckReport report)
+    public static int Of(CheckReport report) => Of(report, FindingSeverity.WorstOf(report.Boards.Select(b => b.Verdict)));
+
+    /// <summary>The code of a run whose verdict is that of what it shows.</summary>
+    public static int Of(CheckReport report, Verdict verdict)
     {
         if (Of(report.Complaints) is var trouble and not 0)
         {
             return trouble;
         }
 
-        return FindingSeverity.WorstOf(report.Boards.Select(b => b.Verdict)) switch
+        return verdict switch
         {
-            Verdict.Conforms => 0,
+            Verdict.Conforms or Verdict.Concession => 0,
             Verdict.Nonconforming => 1,
             _ => 2,
         };

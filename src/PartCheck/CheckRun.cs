@@ -1,6 +1,8 @@
+using System.Globalization;
 using System.Security.Cryptography;
 using PartCheck.Bills;
 using PartCheck.Channels;
+using PartCheck.Concessions;
 using PartCheck.Derating;
 using PartCheck.OperatingPoints;
 using PartCheck.Parts;
@@ -8,6 +10,7 @@ using PartCheck.Quantities;
 using PartCheck.Reports;
 using PartCheck.Rules;
 using PartCheck.Sheets;
+using PartCheck.Workings;
 
 namespace PartCheck;
 
@@ -32,6 +35,18 @@ public sealed record CheckRequest
     /// <summary>Logic pins file; null: the board's, else the project's own.</summary>
     public string? Pins { get; init; }
 
+    /// <summary>Other parts to judge the board with, beside the bill as it stands; empty: the bill as it stands.</summary>
+    public IReadOnlyList<AskedChange> With { get; init; } = [];
+
+    /// <summary>The assembly to judge, as a column <c>Populated NAME</c> of the bill names it; null: the board as its bill stands.</summary>
+    public string? Assembly { get; init; }
+
+    /// <summary>A concessions table, FILE or FILE:SHEET; null: the board's.</summary>
+    public string? Concessions { get; init; }
+
+    /// <summary>The day that concessions are held against; null: none is given, and a board that has concessions cannot be judged.</summary>
+    public DateOnly? Date { get; init; }
+
     /// <summary>Further header spellings; null: none.</summary>
     public string? Columns { get; init; }
 
@@ -43,7 +58,7 @@ public sealed record CheckRequest
 }
 
 /// <summary>The run that knows every room: inputs at the left, reports at the right.</summary>
-public static class CheckRun
+public static partial class CheckRun
 {
     /// <summary>The derating table of a run that names none.</summary>
     public const string DefaultDerating = "workshop";
@@ -67,14 +82,37 @@ public static class CheckRun
             }
         }
 
+        IReadOnlyList<Concession>? accepted = request.Concessions is { } table && source.File(table, "Concessions") is { } rows
+            ? ConcessionReader.Read(rows, ofBoard: false, spellings, complaints) : null;
         List<BoardReport> boards = [];
+        List<string> usage = [];
         foreach (string board in request.Boards)
         {
             cancel.ThrowIfCancellationRequested();
-            boards.Add(new BoardCheck(request, board, source, spellings, given, complaints).Run(cancel));
+            boards.Add(new BoardCheck(request, board, source, spellings, given, accepted, complaints, usage).Run(cancel));
         }
 
-        return new CheckReport(boards, complaints.Items, [.. source.Files.Select(Hashed)]);
+        return new CheckReport(boards, complaints.Items, [.. source.Files.Select(Hashed)]) { UsageFaults = usage };
+    }
+
+    /// <summary>Works out findings of one channel of one board, step by step.</summary>
+    /// <param name="request">What is asked; one board.</param>
+    /// <param name="selection">Which findings.</param>
+    /// <param name="fault">What the selection names and there is not; null: nothing is amiss.</param>
+    /// <param name="cancel">Stops the run.</param>
+    public static WorkingReport Work(CheckRequest request, WorkingSelection selection, out string? fault, CancellationToken cancel = default)
+    {
+        ArgumentNullException.ThrowIfNull(request);
+        ArgumentNullException.ThrowIfNull(selection);
+        ArgumentOutOfRangeException.ThrowIfNotEqual(request.Boards.Count, 1, nameof(request));
+        CheckReport check = Run(request, cancel);
+        BoardReport board = check.Boards[0];
+        fault = null;
+        IReadOnlyList<Finding> findings = board.Channels.Count == 0 ? [] : selection.Of(board, out fault);
+        return new WorkingReport(check, selection.Name(board) ?? string.Empty, [.. findings.Select(FindingWorking.Of)])
+        {
+            EveryCheck = selection.Rule is not null || selection.Reference is not null,
+        };
     }
 
     private static string Folder(string file) => Path.GetDirectoryName(Path.GetFullPath(file)) ?? ".";
@@ -86,11 +124,16 @@ public static class CheckRun
     }
 
     /// <summary>One board of a run.</summary>
-    private sealed class BoardCheck(
-        CheckRequest request, string board, BoardSource source, ColumnSpellings spellings, List<Part> given, ComplaintList complaints)
+    private sealed partial class BoardCheck(
+        CheckRequest request, string board, BoardSource source, ColumnSpellings spellings, List<Part> given,
+        IReadOnlyList<Concession>? accepted, ComplaintList complaints, List<string> usage)
     {
         private readonly Dictionary<Transistor, TransistorVariants> variants = new(ReferenceEqualityComparer.Instance);
         private readonly List<Advice> advice = [];
+        private readonly Dictionary<string, ReadingJudgement> judgements = new(StringComparer.Ordinal);
+        private readonly Dictionary<object, int> identities = new(ReferenceEqualityComparer.Instance);
+        private ComplaintList complaints = complaints;
+        private IReadOnlyList<Concession>? concessions = accepted;
         private IReadOnlyList<DeratingTable> ownDerating = [];
 
         public BoardReport Run(CancellationToken cancel)
@@ -114,14 +157,20 @@ public static class CheckRun
                 derating = request.Derating is null && ownDerating.Count == 1 ? ownDerating[0] : RunDerating();
             }
 
-            if (exists && source.Table(board, "Concessions", required: false) is not null)
+            if (request.Concessions is null && exists && source.Table(board, "Concessions", required: false) is { } concessionSheet)
             {
-                advice.Add(new Advice(null, null, "The board has a concessions table; this version does not apply concessions."));
+                if (request.Date is null)
+                {
+                    usage.Add($"{BoardSource.Shown(board)} has concessions: --date YYYY-MM-DD says for which day.");
+                    return Unread(derating);
+                }
+
+                concessions = ConcessionReader.Read(concessionSheet, ofBoard: true, spellings, complaints);
             }
 
             PartTable parts = ReadParts(exists);
             IReadOnlyList<LogicPin> pins = ReadPins(exists);
-            Bill? bill = billSheet is null ? null : BillReader.Read(billSheet, spellings, complaints);
+            Bill? bill = billSheet is null ? null : BillReader.Read(billSheet, spellings, complaints, request.Assembly);
             IReadOnlyList<ChannelRow> rows = channelSheet is null ? [] : ChannelReader.Read(channelSheet, bill, pins, spellings, complaints);
             if (bill is null || rows.Count == 0)
             {
@@ -129,14 +178,41 @@ public static class CheckRun
             }
 
             bill = WithDoubts(bill, rows);
+            if (request.Assembly is { } wanted && bill.Assembly is null)
+            {
+                string has = bill.Assemblies.Count > 0 ? "it has " + string.Join(", ", bill.Assemblies) : $"no column such as \"Populated {wanted}\" names one";
+                usage.Add($"the bill of {BoardSource.Shown(board)} has no assembly \"{wanted}\": {has}.");
+                return Unread(derating);
+            }
+
+            if (request.Assembly is null && bill.Assemblies.Count > 0)
+            {
+                advice.Add(new Advice(null, null, $"The bill names assemblies: {string.Join(", ", bill.Assemblies)}. Their columns are left alone; --assembly judges one."));
+            }
+
+            List<ChannelRow> fitted = [.. rows.Where(r => bill.Assembly is null || !LeftOut(r, bill))];
+            BoardReport report = request.With.Count == 0
+                ? Judged(bill, fitted, parts, pins, derating, [], cancel)
+                : WithChanges(bill, fitted, parts, pins, derating, cancel);
+            return report with { Assembly = bill.Assembly, ChannelsNotFitted = [.. rows.Except(fitted).Select(r => r.Name)] };
+        }
+
+        private BoardReport Judged(
+            Bill bill, IReadOnlyList<ChannelRow> rows, PartTable parts, IReadOnlyList<LogicPin> pins, DeratingTable derating,
+            IReadOnlyList<LineChange> changes, CancellationToken cancel)
+        {
             IReadOnlyList<Channel> channels = ChannelBinder.Bind(rows, bill, parts, pins, complaints);
             IReadOnlyList<Finding> billFindings = BillRule.Judge(bill, parts, channels);
             IReadOnlyList<JudgedChannel> judged = JudgeChannels(channels, derating, cancel);
             IReadOnlyList<Finding> pinFindings = JudgePins(judged, derating);
-            AddAdvice(bill, channels);
-            AddNearMisses(bill, parts, channels);
-            AddCircuitAdvice(channels);
-            return Report(derating, judged, billFindings, pinFindings);
+            ConcessionBook book = BookOf(rows, changes);
+            BoardReport report = Report(
+                derating, judged, [.. billFindings.Select(book.Apply)], [.. pinFindings.Select(book.Apply)], book.Apply, [.. advice, .. MistypedAdvice(bill, parts, channels), .. CircuitAdvice(channels)]);
+            return report with
+            {
+                ConcessionsAsOf = concessions is null ? null : request.Date,
+                Advice = [.. report.Advice, .. ConcessionAdvice(book)],
+            };
         }
 
         private SheetData? BillOf(string argument)
@@ -270,14 +346,41 @@ public static class CheckRun
                 foreach (JudgedChannel feed in feeds)
                 {
                     double others = feeds.Where(f => f != feed).Sum(f => f.AloneCurrent);
-                    feed.Readings.AddRange(feed.Models.Select(m => Judgement(feed, m, others, cancel) with
-                    {
-                        TestLimits = TestLimits.Of(m.Channel, Variants, new PinSource(m.Channel.Logic, others), request.Threads, cancel),
-                    }));
+                    feed.Readings.AddRange(feed.Models.Select(m => Measured(feed, m, others, cancel)));
                 }
             }
 
             return judged;
+        }
+
+        /// <summary>A reading's judgement with its test limits; what another bill of this run has in common with this one is judged once.</summary>
+        private ReadingJudgement Measured(JudgedChannel channel, ChannelModel model, double others, CancellationToken cancel)
+        {
+            string key = string.Create(CultureInfo.InvariantCulture, $"{others:R} {Identity(model.Channel)} {channel.Channel.Name}");
+            if (!judgements.TryGetValue(key, out ReadingJudgement? made))
+            {
+                made = Judgement(channel, model, others, cancel) with
+                {
+                    TestLimits = TestLimits.Of(model.Channel, Variants, new PinSource(model.Channel.Logic, others), request.Threads, cancel),
+                };
+                judgements[key] = made;
+            }
+
+            return made;
+        }
+
+        /// <summary>The lines and part rows of a reading as one text.</summary>
+        private string Identity(BoundChannel channel)
+        {
+            int Of(object thing)
+            {
+                identities.TryAdd(thing, identities.Count);
+                return identities[thing];
+            }
+
+            return string.Join(',', channel.Legs.SelectMany(l => new[] { l.Pass, l.Sense, l.Averaging })
+                .Append(channel.Control).Append(channel.Feed).Append(channel.PullDown).Concat(channel.Leds)
+                .Select(p => p is null ? "-" : string.Create(CultureInfo.InvariantCulture, $"{Of(p.Line)}:{Of(p.Part)}")));
         }
 
         private ReadingJudgement Judgement(JudgedChannel channel, ChannelModel model, double others, CancellationToken cancel) =>
@@ -310,7 +413,10 @@ public static class CheckRun
             {
                 LogicPin logic = pin.First().Channel.Readings[0].Logic;
                 findings.Add(PinCurrentRule.Judge(
-                    PinName(pin.First().Channel.Readings[0]), [.. pin.Select(j => (j.Channel.Name, j.Readings.Count == 0 ? double.NaN : j.Readings.Max(r => r.PinMax)))], logic, derating));
+                    PinName(pin.First().Channel.Readings[0]), [.. pin.Select(j => PinFeed.Of(j.Channel.Name, j.Readings))], logic, derating) with
+                {
+                    Mix = [.. pin.Where(j => j.Readings.Count > 0).SelectMany(j => j.Readings.MaxBy(r => r.PinMax)!.Channel.Mix)],
+                });
             }
 
             return findings;
@@ -332,58 +438,47 @@ public static class CheckRun
             return made;
         }
 
-        private void AddAdvice(Bill bill, IReadOnlyList<Channel> channels)
-        {
-            foreach (BillLine line in bill.Lines.Where(l => l.Alternates.Count > 0))
-            {
-                if (channels.Any(c => c.References.Any(r => line.References.Contains(r, StringComparer.OrdinalIgnoreCase))))
-                {
-                    advice.Add(new Advice(null, line.References[0], $"Alternates {string.Join(", ", line.Alternates)} of this line are not judged by this version."));
-                }
-            }
-        }
-
-        /// <summary>A mistyped part number is looked for in the part table: suggested, never taken.</summary>
-        private void AddNearMisses(Bill bill, PartTable parts, IReadOnlyList<Channel> channels)
+        /// <summary>A part number that the table does not have is looked for by its near misses: suggested, never taken.</summary>
+        private static IEnumerable<Advice> MistypedAdvice(Bill bill, PartTable parts, IReadOnlyList<Channel> channels)
         {
             HashSet<string> serving = new(channels.SelectMany(c => c.References), StringComparer.OrdinalIgnoreCase);
             foreach (BillLine line in bill.Lines.Where(l => l.PartNumber is { } number && parts.Find(number).Count == 0 && l.References.Any(serving.Contains)))
             {
-                if (PartNearMiss.Of(parts, line.PartNumber!) is { Count: > 0 } near)
+                if (NearMisses.Of(line.PartNumber!, parts.Parts.Select(p => p.PartNumber)) is { Count: > 0 } near)
                 {
-                    advice.Add(new Advice(null, line.References[0], $"The part table has no row {line.PartNumber}; is {string.Join(" or ", near)} meant?"));
+                    yield return new Advice(null, line.References[0], $"The part table has no row {line.PartNumber}; is {string.Join(" or ", near)} meant?");
                 }
             }
         }
 
         /// <summary>Remarks on parts and circuits that no rule judges.</summary>
-        private void AddCircuitAdvice(IReadOnlyList<Channel> channels)
+        private static IEnumerable<Advice> CircuitAdvice(IReadOnlyList<Channel> channels)
         {
             List<string> floating = [.. channels.Where(c => c.Readings.Count > 0 && c.Readings[0].PullDown is null).Select(c => c.Name)];
             if (floating.Count > 0)
             {
-                advice.Add(new Advice(null, null, $"{string.Join(", ", floating)}: no pull-down; while the pin floats at reset nothing holds the channel off."));
+                yield return new Advice(null, null, $"{string.Join(", ", floating)}: no pull-down; while the pin floats at reset nothing holds the channel off.");
             }
 
             IEnumerable<Part> used = channels.SelectMany(c => c.Readings).SelectMany(r => r.Legs
-                .SelectMany(l => new[] { l.Pass, l.Sense, l.Averaging }).Append(r.Control).Append(r.Feed).Append(r.PullDown))
+                .SelectMany(l => new[] { l.Pass, l.Sense, l.Averaging }).Append(r.Control).Append(r.Feed).Append(r.PullDown).Concat(r.Leds))
                 .OfType<Placement>().Select(p => p.Part).Distinct().OrderBy(p => p.PartNumber, StringComparer.Ordinal);
             foreach (Part part in used)
             {
                 if (part.Lifecycle is { } lifecycle && !lifecycle.Equals("active", StringComparison.OrdinalIgnoreCase))
                 {
-                    advice.Add(new Advice(null, null, $"{part.PartNumber}: lifecycle \"{lifecycle}\"."));
+                    yield return new Advice(null, null, $"{part.PartNumber}: lifecycle \"{lifecycle}\".");
                 }
 
                 if (part.Stock is 0)
                 {
-                    advice.Add(new Advice(null, null, $"{part.PartNumber}: none in stock."));
+                    yield return new Advice(null, null, $"{part.PartNumber}: none in stock.");
                 }
 
                 if (part is ResistorPart { Resistance.Value.Ohms: > 0 and var ohms }
                     && !PreferredValues.Contains(PreferredSeries.E24, ohms) && !PreferredValues.Contains(PreferredSeries.E96, ohms))
                 {
-                    advice.Add(new Advice(null, null, $"{part.PartNumber}: {EngineeringNotation.Format(ohms, "ohm")} is neither an E24 nor an E96 value."));
+                    yield return new Advice(null, null, $"{part.PartNumber}: {EngineeringNotation.Format(ohms, "ohm")} is neither an E24 nor an E96 value.");
                 }
             }
         }
@@ -404,10 +499,11 @@ public static class CheckRun
         };
 
         private BoardReport Report(
-            DeratingTable derating, IReadOnlyList<JudgedChannel> judged, IReadOnlyList<Finding> billFindings, IReadOnlyList<Finding> pinFindings)
+            DeratingTable derating, IReadOnlyList<JudgedChannel> judged, IReadOnlyList<Finding> billFindings, IReadOnlyList<Finding> pinFindings,
+            Func<ReadingJudgement, ReadingJudgement> conceded, IReadOnlyList<Advice> remarks)
         {
             List<ChannelJudgement> channels = [.. judged.Select(j => ChannelAssembly.Assemble(
-                j.Channel, j.Derating.Name, j.Readings, j.MissingData, [.. billFindings, .. pinFindings],
+                j.Channel, j.Derating.Name, [.. j.Readings.Select(conceded)], j.MissingData, [.. billFindings, .. pinFindings],
                 [.. j.Channel.Assumed, .. j.Models.SelectMany(m => m.Assumed), .. j.Readings.SelectMany(r => r.Assumed)]))];
             List<string> names = [.. channels.Select(c => c.Channel)];
             IReadOnlyList<Finding> all = FindingOrder.WorstFirst(
@@ -429,7 +525,7 @@ public static class CheckRun
                 Rules = RuleBook.Judged,
                 RulesNotJudged = RuleBook.NotJudged,
                 Assumed = assumed,
-                Advice = advice,
+                Advice = remarks,
                 Cautions = Cautions.All,
             };
         }

@@ -95,7 +95,7 @@ public class BadInputTests
     [InlineData("11.4,12.6,8.5,9.5,3,12,28,P9,0,45,Q1,R1,Q2,R2,", "channels.csv!I2", "The pin table has no row \"P9\": known are P5.")]
     [InlineData("11.4,12.6,8.5,9.5,3,12,28,P5,50,45,Q1,R1,Q2,R2,", "channels.csv!J2", "Ambient min is above Ambient max.")]
     [InlineData("11.4,12.6,8.5,9.5,3,12,28,P5,0,45,\"Q1, Q3\",R1,Q2,R2,\"R8, R9\"", "channels.csv!M2", "2 pass transistors need as many sense resistors, not 1 of them.")]
-    [InlineData("11.4,12.6,8.5,9.5,3,12,28,P5,0,45,\"Q1, Q3\",\"R1, R3\",Q2,R2,R8", "channels.csv!P2", "2 legs need as many averaging resistors (or -), not 1 of them.")]
+    [InlineData("11.4,12.6,8.5,9.5,3,12,28,P5,0,45,\"Q1, Q3\",\"R1, R3\",Q2,R2,R8", "channels.csv!P2", "2 legs need as many averaging resistors (or - or direct), not 1 of them.")]
     [InlineData("11.4,12.6,8.5,9.5,3,12,28,P5,0,45,\"Q1, Q3\",\"R1, R3\",Q2,R2,", "channels.csv!P2", "need an averaging resistor each")]
     [InlineData("11.4,12.6,8.5,9.5,3,12,28,P5,0,45,Q1,R1,Q2,R2,-", "channels.csv!P2", "senses no leg")]
     [InlineData("11.4,12.6,8.5,9.5,3,12,28,P5,0,45,Q1-Q9,R1-R9,Q20,R20,R31-R39", "channels.csv!L2", "9 legs; more than eight are not solved")]

@@ -43,6 +43,19 @@ public class ExampleTests
     }
 
     [Fact]
+    public async Task TheQuestionsOfItsReadmeHaveTheAnswersOfItsReadme()
+    {
+        string[] check = ["check", Path.Combine(Folder, "board"), "--parts", Path.Combine(Folder, "parts.csv")];
+        Assert.StartsWith("No: POTTING power Q31 OSKE-118: ", (await Run.Of([.. check, "--with", "Q31=OSKE-118"])).Flat, StringComparison.Ordinal);
+        Assert.StartsWith("Yes: with OSKE-118 for VELM-S45A (Q11), ", (await Run.Of([.. check, "--with", "Q11=OSKE-118"])).Flat, StringComparison.Ordinal);
+        Run run = await Run.Of([.. check, "--concessions", Path.Combine(Folder, "concessions.csv"), "--date", "2026-05-04"]);
+        Assert.Equal(1, run.Code);
+        Assert.Contains("POTTING concession", run.Flat, StringComparison.Ordinal);
+        Assert.Contains("COLDFRAME nonconforming", run.Flat, StringComparison.Ordinal);
+        Assert.Contains("expired on 2026-03-31, not applied.", run.Flat, StringComparison.Ordinal);
+    }
+
+    [Fact]
     public async Task ThePorchLampConformsAndNothingIsAssumed()
     {
         Run run = await Run.Of("check", Path.Combine(Root(), "examples", "porch-lamp"), "--format", "json");

@@ -20,9 +20,10 @@ internal static partial class BillDoubts
     {
         List<Complaint> doubts = [];
         void Doubt(string column, string wanted, string text) => doubts.Add(row.ComplaintOf(column, wanted, text));
-        if (line.Quantity is { } quantity && quantity != line.Placed && line.References.Count > 0)
+        int placed = ReferenceList.Components(line.References);
+        if (line.Quantity is { } quantity && quantity != placed && placed > 0)
         {
-            string text = string.Create(CultureInfo.InvariantCulture, $"The quantity is {quantity}, the references are {line.Placed}.");
+            string text = string.Create(CultureInfo.InvariantCulture, $"The quantity is {quantity}, the references are {placed}.");
             doubts.Add(row.ComplaintOf("Quantity", "as many as references", text) with { IsCount = true });
         }
 

@@ -9,12 +9,6 @@ public sealed record BillLine
     /// <summary>Reference designators in the order of the cell, ranges written out.</summary>
     public required IReadOnlyList<string> References { get; init; }
 
-    /// <summary>Components to place: elements of one package (<c>Q1.1, Q1.2</c>) are one.</summary>
-    public int Placed => References
-        .Select(r => r.IndexOf('.', StringComparison.Ordinal) is > 0 and int dot ? r[..dot] : r)
-        .Distinct(StringComparer.OrdinalIgnoreCase)
-        .Count();
-
     /// <summary>The part number; null where the cell is blank.</summary>
     public string? PartNumber { get; init; }
 
@@ -77,4 +71,10 @@ public sealed record Bill(string Name, IReadOnlyList<BillLine> Lines)
 {
     /// <summary>The tables that the lines stand in.</summary>
     public IReadOnlyList<BillTable> Tables { get; init; } = [];
+
+    /// <summary>Assemblies that columns such as <c>Populated LITE</c> name, in the order of the columns.</summary>
+    public IReadOnlyList<string> Assemblies { get; init; } = [];
+
+    /// <summary>The assembly that was asked for and found, as its header writes it; null: none.</summary>
+    public string? Assembly { get; init; }
 }

@@ -34,75 +34,113 @@ public static class BillReader
     ];
 
     /// <summary>The bill of a sheet; null where it has none.</summary>
-    public static Bill? Read(SheetData sheet, ColumnSpellings spellings, ComplaintList complaints)
+    /// <param name="sheet">The sheet.</param>
+    /// <param name="spellings">Header spellings.</param>
+    /// <param name="complaints">Where complaints go.</param>
+    /// <param name="assembly">
+    /// The assembly whose columns say what is fitted; one that the bill does not name leaves <see cref="Bill.Assembly"/> null.
+    /// </param>
+    public static Bill? Read(SheetData sheet, ColumnSpellings spellings, ComplaintList complaints, string? assembly = null)
     {
         ArgumentNullException.ThrowIfNull(sheet);
         ArgumentNullException.ThrowIfNull(complaints);
-        Table? table = Table.Find(sheet, "BOM", Columns, spellings, complaints);
-        if (table is null)
-        {
-            return null;
-        }
-
-        BillAssembly bill = new();
+        IReadOnlyList<AssemblyColumn> named = Table.Find(sheet, "BOM", Columns, spellings, new ComplaintList()) is { } bare
+            ? AssemblyColumn.Of(sheet, bare.HeaderRow, spellings) : [];
+        List<AssemblyColumn> asked = assembly is null ? [] : [.. named.Where(n => n.Is(assembly))];
+        List<ColumnSpec> columns = [.. Columns, .. asked.Select(a => new ColumnSpec(a.Header, ColumnKind.Text))];
+        BlockGathering bill = new();
         List<Table> tables = [];
-        int references = 0;
-        for (Table? next = table; next is not null; next = Following(next, spellings, complaints))
+        int left = MostReferences;
+        for (Table? table = Table.Find(sheet, "BOM", columns, spellings, complaints); table is not null && left >= 0;)
         {
-            tables.Add(next);
-            List<(TableRow Row, BillLine Line)> read = [];
-            foreach (TableRow row in next.Rows)
+            tables.Add(table);
+            left = ReadTable(table, asked, bill, left);
+            if (tables.Count == MostTables && table.Below is not null)
             {
-                if (read.Count > 0 && read[^1].Row.Block != row.Block)
-                {
-                    bill.Add(read);
-                    read = [];
-                }
-
-                if (ReadLine(row, sheet) is { } line)
-                {
-                    references += line.References.Count;
-                    if (references > MostReferences)
-                    {
-                        row.Complain("References", "a bill of fewer parts", ComplaintOfLength("references", MostReferences));
-                        break;
-                    }
-
-                    read.Add((row, line));
-                }
-            }
-
-            bill.Add(read);
-            if (references > MostReferences)
-            {
+                complaints.Add(new Complaint(sheet.File, sheet.Sheet, null, null, null, null, "one table in one sheet", TooMany("tables", MostTables)));
                 break;
             }
 
-            if (tables.Count == MostTables && next.Below is not null)
-            {
-                complaints.Add(new Complaint(sheet.File, sheet.Sheet, null, null, null, null, "one table in one sheet", ComplaintOfLength("tables", MostTables)));
-                break;
-            }
+            table = table.Below is { } below ? Table.Find(below, "BOM", columns, spellings, complaints) : null;
         }
 
         if (bill.Lines.Count == 0)
         {
-            complaints.Add(new Complaint(
-                sheet.File, sheet.Sheet, null, null, null, null, "at least one bill line", "The bill has a header row and no lines.")
-            { Fatal = true });
+            if (tables.Count > 0)
+            {
+                complaints.Add(new Complaint(
+                    sheet.File, sheet.Sheet, null, null, null, null, "at least one bill line", "The bill has a header row and no lines.")
+                { Fatal = true });
+            }
+
             return null;
         }
 
-        return new Bill(sheet.File, bill.Lines) { Tables = [.. tables.Select((t, i) => BillTables.Of(t, i == 0, bill.Lines))] };
+        return new Bill(sheet.File, bill.Lines)
+        {
+            Assemblies = [.. named.Where(n => n.Plausible || asked.Contains(n)).Select(n => n.Assembly).Distinct(StringComparer.OrdinalIgnoreCase)],
+            Assembly = asked.Count == 0 ? null : asked[0].Assembly,
+            Tables = [.. tables.Select((t, i) => BillTables.Of(t, i == 0, bill.Lines))],
+        };
     }
 
-    private static Table? Following(Table table, ColumnSpellings spellings, ComplaintList complaints) =>
-        table.Below is { } below ? Table.Find(below, "BOM", Columns, spellings, complaints) : null;
+    /// <summary>Reads one table, block by block.</summary>
+    /// <returns>How many references the bill may still have; below 0: it has too many, and the rest is not read.</returns>
+    private static int ReadTable(Table table, IReadOnlyList<AssemblyColumn> asked, BlockGathering bill, int left)
+    {
+        HashSet<TableRow> open = BlankMarks(table, asked);
+        List<(TableRow Row, BillLine Line)> block = [];
+        foreach (TableRow row in table.Rows)
+        {
+            if (block.Count > 0 && block[^1].Row.Block != row.Block)
+            {
+                bill.Add(block);
+                block = [];
+            }
 
-    private static string ComplaintOfLength(string what, int most) =>
+            if (ReadLine(row, table.Sheet, asked) is not { } line)
+            {
+                continue;
+            }
+
+            left -= line.References.Count;
+            if (left < 0)
+            {
+                row.Complain("References", "a bill of fewer parts", TooMany("references", MostReferences));
+                break;
+            }
+
+            block.Add((row, open.Contains(row) ? line with { HasComplaints = true } : line));
+        }
+
+        bill.Add(block);
+        return left;
+    }
+
+    private static string TooMany(string what, int most) =>
         $"The bill has more than {most.ToString(CultureInfo.InvariantCulture)} {what}: what follows is not read.";
 
-    private static BillLine? ReadLine(TableRow row, SheetData sheet)
+    /// <summary>
+    /// Rows that a column of yes-marks alone leaves blank: whether a blank means not fitted, nobody can tell. One complaint for the column.
+    /// </summary>
+    private static HashSet<TableRow> BlankMarks(Table table, IReadOnlyList<AssemblyColumn> asked)
+    {
+        HashSet<TableRow> open = [];
+        foreach (AssemblyColumn column in asked.Where(a => a.YesMeansFitted))
+        {
+            List<TableRow> blank = [.. table.Rows.Where(r => r.Text("References") is not null && r.Text(column.Header) is null)];
+            List<bool?> said = [.. table.Rows.Select(r => r.Text(column.Header) is { } text ? FittedMarks.Statement(text, true) : null)];
+            if (blank.Count > 0 && said.Contains(true) && !said.Contains(false))
+            {
+                blank[0].Complain(column.Header, "yes or no in every row", $"{column.Header} marks what is fitted and says of no line that it is not: whether its blank cells mean that cannot be told.");
+                open.UnionWith(blank);
+            }
+        }
+
+        return open;
+    }
+
+    private static BillLine? ReadLine(TableRow row, SheetData sheet, IReadOnlyList<AssemblyColumn> assembly)
     {
         if (row.Text("References") is not { } text || text.Trim('-', '\u2013', '\u2014', ' ').Length == 0)
         {
@@ -127,7 +165,7 @@ public static class BillReader
         }
 
         string? value = row.Text("Value");
-        (bool fitted, Cited<string>? mark) = FittedMarks.Read(row, value);
+        (bool fitted, Cited<string>? mark) = FittedMarks.Read(row, value, assembly);
         BillLine line = new()
         {
             References = references,

@@ -27,17 +27,50 @@ internal static partial class FittedMarks
     private static readonly string[] FittedWords = ["FIT", "FITTED", "PLACE", "PLACED", "POPULATE", "POPULATED", "MOUNT", "MOUNTED", "INSTALL", "INSTALLED"];
 
     /// <summary>Fitted or not, and the mark that says not.</summary>
-    internal static (bool Fitted, Cited<string>? Mark) Read(TableRow row, string? value)
+    /// <param name="row">The line.</param>
+    /// <param name="value">Its value.</param>
+    /// <param name="assembly">Columns of the assembly asked for: what they say of a line counts, whatever else stands there.</param>
+    internal static (bool Fitted, Cited<string>? Mark) Read(TableRow row, string? value, IReadOnlyList<AssemblyColumn> assembly)
     {
+        (string Column, bool? Fitted)[] set = [.. assembly.Select(a => (a.Header, Said(row, a.Header, a.YesMeansFitted)))];
+        if (Array.Exists(set, s => s.Fitted is not null))
+        {
+            return Decide(row, set);
+        }
+
         bool? byColumn = Said(row, "Fitted", yesMeansFitted: true);
         bool? byMark = Said(row, "Do not fit", yesMeansFitted: false);
         bool? byValue = value is not null && IsMark(value) ? false : null;
-        (string Column, bool? Fitted)[] said =
+        return Decide(row,
         [
             ("Fitted", byColumn), ("Do not fit", byMark), ("Value", byValue),
             .. Elsewhere.Select(column => (column, IsWholeMark(row.Text(column)) ? (bool?)false : null)),
             ("Package", row.Text("Package") is { } package && PackageMark().IsMatch(package) ? false : null),
-        ];
+        ]);
+    }
+
+    /// <summary>What a text says of a line; null: neither that it is fitted nor that it is not.</summary>
+    internal static bool? Statement(string text, bool yesMeansFitted)
+    {
+        string upper = text.ToUpperInvariant();
+        if (Marks.Contains(upper) || Phrases.Contains(upper))
+        {
+            return false;
+        }
+
+        if (FittedWords.Contains(upper))
+        {
+            return true;
+        }
+
+        return Yes.Contains(upper) || No.Contains(upper) ? Yes.Contains(upper) == yesMeansFitted : null;
+    }
+
+    /// <summary>A dash, which in a do-not-fit column stands for a blank cell.</summary>
+    internal static bool IsDash(string text) => text is "-" or "\u2013" or "\u2014";
+
+    private static (bool Fitted, Cited<string>? Mark) Decide(TableRow row, IReadOnlyList<(string Column, bool? Fitted)> said)
+    {
         List<(string Column, bool? Fitted)> clear = [.. said.Where(s => s.Fitted is not null)];
         if (clear.FirstOrDefault(s => s.Fitted == false) is not { Column: { } column })
         {
@@ -58,25 +91,14 @@ internal static partial class FittedMarks
     /// <summary>What a column says; null: nothing.</summary>
     private static bool? Said(TableRow row, string column, bool yesMeansFitted)
     {
-        if (row.Text(column) is not { } text || (!yesMeansFitted && text is "-" or "\u2013" or "\u2014"))
+        if (row.Text(column) is not { } text || (!yesMeansFitted && IsDash(text)))
         {
             return null;
         }
 
-        string upper = text.ToUpperInvariant();
-        if (Marks.Contains(upper) || Phrases.Contains(upper))
+        if (Statement(text, yesMeansFitted) is { } statement)
         {
-            return false;
-        }
-
-        if (FittedWords.Contains(upper))
-        {
-            return true;
-        }
-
-        if (Yes.Contains(upper) || No.Contains(upper))
-        {
-            return Yes.Contains(upper) == yesMeansFitted;
+            return statement;
         }
 
         row.Complain(column, "yes or no", $"\"{text}\" says neither that the line is fitted nor that it is not.");

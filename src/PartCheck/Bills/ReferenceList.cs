@@ -13,6 +13,20 @@ public static partial class ReferenceList
     /// <summary>Longest range that is written out.</summary>
     public const int LongestRange = 10_000;
 
+    /// <summary>The package that a reference belongs to: <c>Q1</c> for its element <c>Q1.2</c>, else the reference itself.</summary>
+    public static string PackageOf(string reference)
+    {
+        ArgumentNullException.ThrowIfNull(reference);
+        return reference.IndexOf('.', StringComparison.Ordinal) is > 0 and int dot ? reference[..dot] : reference;
+    }
+
+    /// <summary>Components to place: elements of one package (<c>Q1.1, Q1.2</c>) are one.</summary>
+    public static int Components(IEnumerable<string> references)
+    {
+        ArgumentNullException.ThrowIfNull(references);
+        return references.Select(PackageOf).Distinct(StringComparer.OrdinalIgnoreCase).Count();
+    }
+
     /// <summary>The references of a cell.</summary>
     /// <param name="text">The cell's text.</param>
     /// <param name="references">The references, ranges written out.</param>

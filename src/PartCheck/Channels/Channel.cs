@@ -24,6 +24,9 @@ public enum Role
 
     /// <summary>Pull-down resistor.</summary>
     PullDown,
+
+    /// <summary>LED of the load.</summary>
+    Led,
 }
 
 /// <summary>Where the pull-down resistor sits.</summary>
@@ -53,6 +56,12 @@ public sealed record ChannelConditions
 
     /// <summary>LEDs in the string; 0: a pure resistor.</summary>
     public required int Leds { get; init; }
+
+    /// <summary>Strings of LEDs in parallel.</summary>
+    public int Strings { get; init; } = 1;
+
+    /// <summary>Largest current of one string over the mean of all; null: nobody knows how they share.</summary>
+    public double? StringShareMax { get; init; }
 
     /// <summary>The current window.</summary>
     public required Interval<Current> CurrentWindow { get; init; }
@@ -93,7 +102,7 @@ public sealed record Placement(Role Role, int Leg, string Reference, BillLine Li
 /// <summary>One leg, every role bound.</summary>
 /// <param name="Pass">Pass transistor.</param>
 /// <param name="Sense">Sense resistor.</param>
-/// <param name="Averaging">Averaging resistor; null: none.</param>
+/// <param name="Averaging">Averaging resistor; null: none (the emitter is the control's base node, or the leg is not sensed).</param>
 /// <param name="Sensed">False where the control does not sense this leg (<c>-</c> in Averaging).</param>
 public sealed record Leg(Placement Pass, Placement Sense, Placement? Averaging, bool Sensed)
 {
@@ -140,12 +149,25 @@ public sealed record BoundChannel
     /// <summary>Where the pull-down sits.</summary>
     public PullDownAt PullDownAt { get; init; }
 
+    /// <summary>Which part this reading takes for each line that offers several part numbers or manufacturers; empty: none does.</summary>
+    public IReadOnlyList<MixedLine> Mix { get; init; } = [];
+
+    /// <summary>LEDs of the load; empty: the channel names none, and none is judged.</summary>
+    public IReadOnlyList<Placement> Leds { get; init; } = [];
+
     /// <summary>The control transistor's row.</summary>
     public Transistor ControlPart => (Transistor)Control.Part;
 
     /// <summary>Cell of a condition's column (by the column's own name, e.g. <c>Current min</c>), for findings; may be empty.</summary>
     public IReadOnlyDictionary<string, string> ConditionCells { get; init; } = new Dictionary<string, string>();
 }
+
+/// <summary>What one mix of parts takes for a bill line that offers several.</summary>
+/// <param name="References">References of the line that the channel names.</param>
+/// <param name="PartNumber">Part number taken.</param>
+/// <param name="Manufacturer">Its manufacturer; null: the table names none.</param>
+/// <param name="Alternate">True where it is an approved alternate of the line, not its own part number.</param>
+public sealed record MixedLine(IReadOnlyList<string> References, string PartNumber, string? Manufacturer, bool Alternate);
 
 /// <summary>A value that the tables did not give and a stated default filled.</summary>
 /// <param name="What">Which value, e.g. <c>TCR</c>.</param>
@@ -162,7 +184,7 @@ public sealed record Channel
     /// <summary>File and cell of the name.</summary>
     public required string Cell { get; init; }
 
-    /// <summary>One bound channel for every combination of part rows over its lines; empty where it cannot be judged.</summary>
+    /// <summary>One bound channel for every combination of part rows, alternates included, over its lines; empty where it cannot be judged.</summary>
     public required IReadOnlyList<BoundChannel> Readings { get; init; }
 
     /// <summary>Data that is missing, when <see cref="Readings"/> is empty: e.g. "part table row of ZX-117".</summary>
@@ -186,4 +208,11 @@ public sealed record Channel
 /// <param name="Reference">The reference that the channel names.</param>
 /// <param name="Text">What is wrong, one sentence.</param>
 /// <param name="Cell">The cell that says so.</param>
-public sealed record RoleFault(Role Role, string Reference, string Text, string Cell);
+public sealed record RoleFault(Role Role, string Reference, string Text, string Cell)
+{
+    /// <summary>True where an approved alternate cannot play the role: the channel's other mixes are judged all the same.</summary>
+    public bool OfAlternate { get; init; }
+
+    /// <summary>Data that the alternate lacks: the finding is then not verified instead of nonconforming; null: none.</summary>
+    public string? Missing { get; init; }
+}

@@ -29,7 +29,7 @@ public static class ChannelBinder
         // A row with complaints is not judged and proves nothing about the others.
         ILookup<string, ChannelRow> users = rows
             .Where(row => row.Conditions is not null)
-            .SelectMany(row => RoleNames.Columns.SelectMany(c => row.Of(c.Role)).Where(r => r != "-").Distinct(StringComparer.OrdinalIgnoreCase).Select(reference => (reference, row)))
+            .SelectMany(row => RoleNames.Columns.SelectMany(c => row.Placed(c.Role)).Distinct(StringComparer.OrdinalIgnoreCase).Select(reference => (reference, row)))
             .ToLookup(use => use.reference, use => use.row, StringComparer.OrdinalIgnoreCase);
         return [.. rows.Select(row => BindOne(row, byReference, users, parts, pins, complaints))];
     }
@@ -44,18 +44,18 @@ public static class ChannelBinder
         Dictionary<string, string> usedBy = new(StringComparer.OrdinalIgnoreCase);
         foreach ((Role role, string column) in RoleNames.Columns)
         {
-            foreach (string reference in row.Of(role).Where(r => r != "-"))
+            foreach (string reference in row.Placed(role))
             {
                 if (!usedBy.TryAdd(reference, column))
                 {
-                    faults.Add(new RoleFault(role, reference, $"{reference} serves as {usedBy[reference].ToLowerInvariant()} and as {column.ToLowerInvariant()}.", row.Cells[column]));
+                    faults.Add(new RoleFault(role, reference, $"{reference} serves as {RoleNames.Spoken(usedBy[reference])} and as {RoleNames.Spoken(column)}.", row.Cells[column]));
                     continue;
                 }
 
                 // One part carries the current of one channel: in two it would be judged at half its load.
                 if (users[reference].FirstOrDefault(other => other != row) is { } twin)
                 {
-                    faults.Add(new RoleFault(role, reference, $"{reference} ({column.ToLowerInvariant()}) serves channel {twin.Name} too.", row.Cells[column]));
+                    faults.Add(new RoleFault(role, reference, $"{reference} ({RoleNames.Spoken(column)}) serves channel {twin.Name} too.", row.Cells[column]));
                     continue;
                 }
 
@@ -70,21 +70,21 @@ public static class ChannelBinder
 
         LogicPin? pin = pins.FirstOrDefault(p => string.Equals(p.Name, row.Logic, StringComparison.OrdinalIgnoreCase));
         List<BoundChannel> readings = [];
-        if (faults.Count == 0 && missing.Count == 0 && pin is not null)
+        if (faults.TrueForAll(f => f.OfAlternate) && missing.Count == 0 && pin is not null)
         {
             long count = choices.Values.Aggregate(1L, (n, c) => Math.Min(n * c.Count, 1L << 40));
             if (count > MostReadings)
             {
                 string[] cite = row.Cell.Split('!');
-                string text = string.Create(CultureInfo.InvariantCulture, $"The bill's part numbers have {count} combinations of rows in the part table for this channel, more than {MostReadings}: name the manufacturers on the bill.");
-                complaints.Add(new Complaint(cite[0], cite.Length > 2 ? cite[1] : null, null, "Channel", cite[^1], row.Name, "manufacturers on the bill", text) { Channel = row.Name });
-                missing.Add("manufacturers on the bill");
+                string text = string.Create(CultureInfo.InvariantCulture, $"The part numbers and alternates on the bill have {count} combinations of rows in the part table for this channel, more than {MostReadings}: name the manufacturers on the bill, or ask for one alternate at a time (--with).");
+                complaints.Add(new Complaint(cite[0], cite.Length > 2 ? cite[1] : null, null, "Channel", cite[^1], row.Name, "manufacturers on the bill, or fewer alternates", text) { Channel = row.Name });
+                missing.Add("manufacturers on the bill, or fewer alternates");
             }
             else
             {
                 foreach (Dictionary<BillLine, Part> reading in Combinations([.. choices]))
                 {
-                    readings.Add(Reading(row, pin, bill, reading));
+                    readings.Add(Reading(row, pin, bill, reading) with { Mix = Mix(row, choices, reading) });
                 }
             }
         }
@@ -97,7 +97,7 @@ public static class ChannelBinder
             Missing = missing,
             RoleFaults = faults,
             Assumed = assumed,
-            References = [.. RoleNames.Columns.SelectMany(c => row.Of(c.Role)).Where(r => r != "-")],
+            References = [.. RoleNames.Columns.SelectMany(c => row.Placed(c.Role))],
             Derating = row.Conditions?.Derating,
         };
     }
@@ -109,79 +109,79 @@ public static class ChannelBinder
         void Fault(string text, string cell) => faults.Add(new RoleFault(role, reference, text, cell));
         if (!bill.TryGetValue(reference, out BillLine? line))
         {
-            Fault($"{reference} ({column.ToLowerInvariant()}) is not on the bill.", row.Cells[column]);
+            Fault($"{reference} ({RoleNames.Spoken(column)}) is not on the bill.", row.Cells[column]);
             return;
         }
 
         if (!line.Fitted)
         {
-            Fault($"{reference} ({column.ToLowerInvariant()}) is not fitted: the bill says \"{line.FittedMark?.Value}\".", line.FittedMark?.Cell ?? line.Cell);
+            Fault($"{reference} ({RoleNames.Spoken(column)}) is not fitted: the bill says \"{line.FittedMark?.Value}\".", line.FittedMark?.Cell ?? line.Cell);
             return;
+        }
+
+        // Nothing is solved with an LED's row: without it the channel is judged, and the rule that reads it is not verified.
+        void Absent(string what)
+        {
+            if (role == Role.Led)
+            {
+                choices[line] = [new LedPart { PartNumber = line.PartNumber ?? "no part number", Cell = line.Cell, Missing = what }];
+            }
+            else if (!missing.Contains(what))
+            {
+                missing.Add(what);
+            }
         }
 
         if (line.PartNumber is null)
         {
-            Missing(missing, "part number of " + reference);
+            Absent("part number of " + reference);
             return;
         }
 
-        IReadOnlyList<Part> found = parts.Find(line.PartNumber);
-        if (found.Count == 0)
+        PartChoice own = PartChoice.Of(row, role, reference, line.PartNumber, line.Manufacturer, parts, assumed);
+        if (own.Missing is { } lacking)
         {
-            Missing(missing, "part table row of " + line.PartNumber);
+            Absent(lacking);
             return;
         }
 
-        if (line.Manufacturer is { } maker)
+        if (own.Fault is { } wrong)
         {
-            found = [.. found.Where(p => p.Manufacturer is null || string.Equals(p.Manufacturer, maker, StringComparison.OrdinalIgnoreCase))];
-            if (found.Count == 0)
+            Fault(wrong, own.FaultCell ?? line.Cell);
+            return;
+        }
+
+        // One purchase fills a line: every reference of it carries the same part, its own or one alternate.
+        List<Part> rows = [.. own.Rows];
+        foreach (string alternate in AlternatesOf(line).Where(a => parts.Find(a).Count > 0))
+        {
+            PartChoice other = PartChoice.Of(row, role, reference, alternate, null, parts, assumed);
+            rows.AddRange(other.Rows);
+            if (other.Rows.Count == 0)
             {
-                Missing(missing, $"part table row of {line.PartNumber} by {maker}");
-                return;
+                faults.Add(new RoleFault(role, reference, $"Alternate {alternate}: {other.Fault ?? "its row is not for this mounting."}", other.FaultCell ?? line.Cell)
+                {
+                    OfAlternate = true,
+                    Missing = other.Missing,
+                });
             }
         }
 
-        if (row.Conditions?.Mounting is { } mounting)
-        {
-            IReadOnlyList<Part> mounted = [.. found.Where(p => p.Mounting is null || string.Equals(p.Mounting, mounting, StringComparison.OrdinalIgnoreCase))];
-            if (mounted.Count == 0)
-            {
-                Missing(missing, $"part table row of {line.PartNumber} on {mounting}");
-                return;
-            }
+        choices[line] = choices.TryGetValue(line, out IReadOnlyList<Part>? earlier) ? [.. rows.Where(r => earlier.Any(e => ReferenceEquals(e, r)))] : rows;
+    }
 
-            found = mounted;
-        }
-        else if (found.Select(p => p.Mounting ?? string.Empty).Distinct(StringComparer.OrdinalIgnoreCase).Count() > 1
-            && !assumed.Any(a => a.What == "Mounting" && a.Of == line.PartNumber))
-        {
-            assumed.Add(new Assumption("Mounting", line.PartNumber, "the worst of its rows"));
-        }
+    /// <summary>Alternates of a line, each once, its own part number left out.</summary>
+    private static IEnumerable<string> AlternatesOf(BillLine line) => line.Alternates
+        .Distinct(StringComparer.OrdinalIgnoreCase).Where(a => !string.Equals(a, line.PartNumber, StringComparison.OrdinalIgnoreCase));
 
-        bool transistor = role is Role.Pass or Role.Control;
-        foreach (Part part in found)
-        {
-            if (part is RefusedPart refused)
-            {
-                Fault($"{line.PartNumber} is refused as {column.ToLowerInvariant()}: {refused.Reason}.", line.Cell);
-                return;
-            }
-
-            if (part is Transistor != transistor)
-            {
-                Fault($"{reference} ({column.ToLowerInvariant()}) is a {(part is Transistor ? "transistor" : "resistor")}: a {(transistor ? "transistor" : "resistor")} is wanted.", line.Cell);
-                return;
-            }
-
-            if (part is ResistorPart { Resistance.Value.Ohms: 0 } && role != Role.Averaging)
-            {
-                Fault($"{reference} ({column.ToLowerInvariant()}) has zero ohm: only averaging may.", part.Cell);
-                return;
-            }
-        }
-
-        choices[line] = found;
+    /// <summary>What a reading takes for the lines that offer several part numbers or manufacturers, in bill order.</summary>
+    private static List<MixedLine> Mix(ChannelRow row, IReadOnlyDictionary<BillLine, IReadOnlyList<Part>> choices, Dictionary<BillLine, Part> taken)
+    {
+        HashSet<string> named = new(RoleNames.Columns.SelectMany(c => row.Of(c.Role)), StringComparer.OrdinalIgnoreCase);
+        return [.. choices.Where(c => c.Value.Select(p => (p.PartNumber, p.Manufacturer)).Distinct().Count() > 1)
+            .Select(c => new MixedLine(
+                [.. c.Key.References.Where(named.Contains)], taken[c.Key].PartNumber, taken[c.Key].Manufacturer,
+                !string.Equals(taken[c.Key].PartNumber, c.Key.PartNumber, StringComparison.OrdinalIgnoreCase)))];
     }
 
     private static BoundChannel Reading(ChannelRow row, LogicPin pin, Dictionary<string, BillLine> bill, Dictionary<BillLine, Part> parts)
@@ -198,10 +198,10 @@ public static class ChannelBinder
         List<Leg> legs = [];
         for (int i = 0; i < pass.Count; i++)
         {
-            bool sensed = averaging.Count == 0 || averaging[i] != "-";
+            bool sensed = averaging.Count == 0 || averaging[i] != RoleNames.NotSensed;
             legs.Add(new Leg(
                 Place(Role.Pass, i, pass[i]), Place(Role.Sense, i, sense[i]),
-                averaging.Count > 0 && sensed ? Place(Role.Averaging, i, averaging[i]) : null, sensed));
+                averaging.Count > 0 && RoleNames.IsReference(averaging[i]) ? Place(Role.Averaging, i, averaging[i]) : null, sensed));
         }
 
         return new BoundChannel
@@ -216,6 +216,7 @@ public static class ChannelBinder
             Feed = Place(Role.Feed, -1, row.Of(Role.Feed)[0]),
             PullDown = row.Of(Role.PullDown) is { Count: > 0 } down ? Place(Role.PullDown, -1, down[0]) : null,
             PullDownAt = row.PullDownAt,
+            Leds = [.. row.Of(Role.Led).Select(r => Place(Role.Led, -1, r))],
             ConditionCells = row.Cells,
         };
     }
@@ -242,14 +243,6 @@ public static class ChannelBinder
             {
                 yield break;
             }
-        }
-    }
-
-    private static void Missing(List<string> missing, string what)
-    {
-        if (!missing.Contains(what))
-        {
-            missing.Add(what);
         }
     }
 }

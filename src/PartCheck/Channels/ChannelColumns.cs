@@ -16,6 +16,8 @@ public static class ChannelColumns
         new("Load drop max", ColumnKind.Voltage, 0.1, 1000),
         new("Load slope", ColumnKind.Resistance, 0, 1e5),
         new("LEDs", ColumnKind.Number, 0, 1000),
+        new("Strings", ColumnKind.Number, 1, 1000),
+        new("String share max", ColumnKind.Number, 1, 1000),
         new("Current min", ColumnKind.Current, 0, 20),
         new("Current max", ColumnKind.Current, 1e-6, 20),
         new("Current nominal", ColumnKind.Current, 1e-6, 20),
@@ -36,5 +38,6 @@ public static class ChannelColumns
         new("Averaging", ColumnKind.Text),
         new("Pull-down", ColumnKind.Text),
         new("Pull-down at", ColumnKind.Text),
+        new("LED", ColumnKind.Text),
     ];
 }

@@ -97,7 +97,7 @@ public static class ChannelReader
             assumed.Add(new Assumption("Pull-down at", name, "base"));
         }
 
-        ChannelConditions? conditions = Conditions(row, name, assumed);
+        ChannelConditions? conditions = Conditions(row, name, references.GetValueOrDefault(Role.Led)?.Count ?? 0, assumed);
         if (conditions is not null)
         {
             row.Check(Rules, conditions);
@@ -117,7 +117,7 @@ public static class ChannelReader
         };
     }
 
-    private static ChannelConditions? Conditions(TableRow row, string name, List<Assumption> assumed)
+    private static ChannelConditions? Conditions(TableRow row, string name, int named, List<Assumption> assumed)
     {
         double? Needed(string column)
         {
@@ -161,7 +161,22 @@ public static class ChannelReader
             row.Complain("LEDs", "a whole number", "The number of LEDs is a whole number.");
         }
 
-        if (leds is null && row.Text("LEDs") is null or "-")
+        double strings = row.Number("Strings")?.Value ?? 1;
+        if (strings != Math.Floor(strings))
+        {
+            row.Complain("Strings", "a whole number", "The number of strings is a whole number.");
+        }
+        else if (named % strings != 0)
+        {
+            row.Complain("LED", "as many LEDs in each string", string.Create(CultureInfo.InvariantCulture, $"{named} LEDs do not make {strings} equal strings."));
+        }
+
+        if (leds is null && row.Text("LEDs") is null or "-" && named > 0)
+        {
+            leds = Math.Ceiling(named / strings);
+            assumed.Add(new Assumption("LEDs", name, leds.Value.ToString(CultureInfo.InvariantCulture)));
+        }
+        else if (leds is null && row.Text("LEDs") is null or "-")
         {
             // 3.3 V a LED: the usual drop of a white one (common practice, no source).
             leds = Math.Ceiling(dropMax.Value / 3.3);
@@ -175,6 +190,8 @@ public static class ChannelReader
             LoadDrop = new(Voltage.FromVolts(dropMin.Value), Voltage.FromVolts(dropMax.Value)),
             LoadSlope = Resistance.FromOhms(slope ?? 0),
             Leds = (int)(leds ?? 0),
+            Strings = (int)strings,
+            StringShareMax = row.Number("String share max")?.Value,
             CurrentWindow = new(Current.FromAmperes(currentMin.Value), Current.FromAmperes(currentMax.Value)),
             CurrentNominal = Current.FromAmperes(nominal ?? ((currentMin.Value + currentMax.Value) / 2)),
             Ambient = new(Temperature.FromKelvins(ambientMin.Value), Temperature.FromKelvins(ambientMax.Value)),

@@ -18,7 +18,7 @@ public sealed record ChannelRow
     /// <summary>Net name of the pin; null: its own pin.</summary>
     public string? Pin { get; init; }
 
-    /// <summary>References by role, legs in order; an averaging entry <c>-</c> is a leg that is not sensed.</summary>
+    /// <summary>References by role, legs in order; an averaging entry <c>-</c> is a leg that is not sensed, <c>direct</c> one without a resistor.</summary>
     public required IReadOnlyDictionary<Role, IReadOnlyList<string>> References { get; init; }
 
     /// <summary>Where the pull-down sits.</summary>
@@ -32,4 +32,7 @@ public sealed record ChannelRow
 
     /// <summary>References of a role; empty: none.</summary>
     public IReadOnlyList<string> Of(Role role) => References.GetValueOrDefault(role) ?? [];
+
+    /// <summary>References of a role, the marks of averaging left out.</summary>
+    public IEnumerable<string> Placed(Role role) => Of(role).Where(RoleNames.IsReference);
 }

@@ -25,11 +25,11 @@ internal static class RoleReferences
 
                 references[role] = role == Role.Averaging ? list : WithoutDash(row, column, list);
                 if (onBill.TryGetValue(role, out List<string>? other)
-                    && !references[role].Where(r => r != "-").ToHashSet(StringComparer.OrdinalIgnoreCase).SetEquals(other))
+                    && !references[role].Where(RoleNames.IsReference).ToHashSet(StringComparer.OrdinalIgnoreCase).SetEquals(other))
                 {
                     row.Complain(
                         column, "references that agree with the bill's column Role",
-                        $"The channel's {column.ToLowerInvariant()} is {text} here and {string.Join(", ", other)} by the bill's column Role.");
+                        $"The channel's {RoleNames.Spoken(column)} is {text} here and {string.Join(", ", other)} by the bill's column Role.");
                 }
             }
             else if (onBill.TryGetValue(role, out List<string>? byBill))
@@ -48,6 +48,11 @@ internal static class RoleReferences
         }
 
         CheckLegs(row, references);
+        if (references.GetValueOrDefault(Role.Led)?.FirstOrDefault(r => r.All(char.IsAsciiDigit)) is { } number)
+        {
+            row.Complain("LED", "references such as D1-D6", $"\"{number}\" is no reference: LED names the load's LEDs on the bill; how many stand in series goes into LEDs.");
+        }
+
         return references;
     }
 
@@ -65,7 +70,7 @@ internal static class RoleReferences
             else if (line.Role is not null)
             {
                 row.Complain(
-                    "Channel", "one of " + string.Join(", ", RoleNames.Columns.Select(c => c.Column.ToLowerInvariant())),
+                    "Channel", "one of " + string.Join(", ", RoleNames.Columns.Select(c => RoleNames.Spoken(c.Column))),
                     $"The bill gives {string.Join(", ", line.References)} the role \"{line.Role}\" in this channel, which is not known ({line.Cell}).");
             }
         }
@@ -115,16 +120,20 @@ internal static class RoleReferences
         {
             if (legs > 1)
             {
-                row.Complain("Averaging", Count(legs, "references"), "Legs that share a control transistor need an averaging resistor each (or - for a leg that is not sensed).");
+                row.Complain("Averaging", Count(legs, "references"), "Legs that share a control transistor need an averaging resistor each (or - for a leg that is not sensed, or direct for the only one that is).");
             }
         }
         else if (averaging.Count != legs && legs > 0)
         {
-            row.Complain("Averaging", Count(legs, "references"), $"{Count(legs, "legs")} need as many averaging resistors (or -), not {Count(averaging.Count, "of them")}.");
+            row.Complain("Averaging", Count(legs, "references"), $"{Count(legs, "legs")} need as many averaging resistors (or - or direct), not {Count(averaging.Count, "of them")}.");
         }
-        else if (averaging.All(a => a == "-"))
+        else if (averaging.All(a => a == RoleNames.NotSensed))
         {
             row.Complain("Averaging", "at least one leg sensed", "The control transistor senses no leg: nothing limits the current.");
+        }
+        else if (averaging.Any(RoleNames.IsDirect) && averaging.Count(a => a != RoleNames.NotSensed) > 1)
+        {
+            row.Complain("Averaging", "an averaging resistor for each leg that is sensed", "Only a leg that the control senses alone may be joined to it directly: with several, nothing averages them.");
         }
     }
 }

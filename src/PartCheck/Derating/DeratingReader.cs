@@ -8,7 +8,7 @@ public static class DeratingReader
 {
     private static readonly string[] KnownRules =
     [
-        "vce", "vcb", "ic", "power", "junction", "soa", "stability", "sharing", "r-power", "r-voltage", "r-film",
+        "vce", "vcb", "ic", "power", "junction", "soa", "stability", "sharing", "r-power", "r-voltage", "r-film", "led-current",
         "current", "headroom", "drive", "pin-current", "off",
     ];
 
@@ -85,9 +85,9 @@ public static class DeratingReader
         }
 
         string? kind = line.Text("Kind");
-        if (kind is not null && !Same(kind, "npn") && !Same(kind, "resistor"))
+        if (kind is not null && !Same(kind, "npn") && !Same(kind, "resistor") && !Same(kind, "led"))
         {
-            line.Complain("Kind", "npn or resistor", $"The kind \"{kind}\" is not known here.");
+            line.Complain("Kind", "npn, resistor or led", $"The kind \"{kind}\" is not known here.");
         }
 
         string? zero = line.Text("Zero temperature");

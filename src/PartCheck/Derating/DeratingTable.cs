@@ -21,7 +21,7 @@ public sealed record DeratingRow
     /// <summary>The rule it belongs to.</summary>
     public required string Rule { get; init; }
 
-    /// <summary>Part kind it holds for (<c>npn</c>, <c>resistor</c>); null: any.</summary>
+    /// <summary>Part kind it holds for (<c>npn</c>, <c>resistor</c>, <c>led</c>); null: any.</summary>
     public string? Kind { get; init; }
 
     /// <summary>Film style it holds for; null: any.</summary>
@@ -66,7 +66,7 @@ public sealed record DeratingTable(string Name, string? Note, IReadOnlyList<Dera
     /// (factor 1, no offset, no cap, no limit), with <c>no derating row: the rating itself</c> as its source.
     /// </summary>
     /// <param name="rule">Rule identifier.</param>
-    /// <param name="kind"><c>npn</c>, <c>resistor</c> or null for rules of channel and pin.</param>
+    /// <param name="kind"><c>npn</c>, <c>resistor</c>, <c>led</c> or null for rules of channel and pin.</param>
     /// <param name="style">Film style; null: none.</param>
     public DeratingRow For(string rule, string? kind = null, string? style = null)
     {

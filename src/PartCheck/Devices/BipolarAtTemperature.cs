@@ -127,7 +127,7 @@ public readonly struct BipolarAtTemperature
     }
 
     /// <summary>Current crowding in the base: 3 (tan z - z)/(z tan^2 z) with z of IB/IRB (SPICE; constants 144/pi^2 and 24/pi^2).</summary>
-    private static double Crowding(double share)
+    internal static double Crowding(double share)
     {
         double x = Math.Max(share, 1e-9);
         double z = (-1 + Math.Sqrt(1 + (14.59025 * x))) / 2.4317 / Math.Sqrt(x);

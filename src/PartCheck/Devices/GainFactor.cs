@@ -47,6 +47,27 @@ public sealed class GainFactor
         return new GainFactor(first, step, values, slopes);
     }
 
+    /// <summary>ln of the grid's smallest current [ln A].</summary>
+    internal double FirstLog => firstLog;
+
+    /// <summary>Grid points for each unit of ln IC.</summary>
+    internal double PointsPerLog => 1 / step;
+
+    /// <summary>The cubics between the grid points, in the share t of the way: c0 + c1 t + c2 t^2 + c3 t^3, four numbers a cell.</summary>
+    internal double[] Cubics()
+    {
+        double[] cubics = new double[4 * (values.Length - 1)];
+        for (int i = 0; i < values.Length - 1; i++)
+        {
+            cubics[4 * i] = values[i];
+            cubics[(4 * i) + 1] = slopes[i];
+            cubics[(4 * i) + 2] = (3 * (values[i + 1] - values[i])) - (2 * slopes[i]) - slopes[i + 1];
+            cubics[(4 * i) + 3] = (2 * (values[i] - values[i + 1])) + slopes[i] + slopes[i + 1];
+        }
+
+        return cubics;
+    }
+
     /// <summary>The factor and its slope at a collector current.</summary>
     /// <param name="ic">Collector current [A].</param>
     /// <param name="slope">df/dIC [1/A].</param>

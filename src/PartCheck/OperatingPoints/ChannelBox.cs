@@ -151,9 +151,10 @@ public sealed class ChannelBox
         double high = c.Ambient.Max.Kelvins;
         IEnumerable<Part> parts = model.Pass.Append(model.Control).Select(t => (Part)t.Part)
             .Concat(model.Sense.Concat(model.Averaging.OfType<ResistorRange>()).Append(model.Feed).Select(r => r.Part))
-            .Concat(model.PullDown is null ? [] : [model.PullDown.Part]);
+            .Concat(model.PullDown is null ? [] : [model.PullDown.Part])
+            .Concat(model.Channel.Leds.Select(l => l.Part));
 
-        // Knees: ambients inside the range where a rated power starts to fall.
+        // Knees: ambients inside the range where a rated power (an LED's rated current) starts to fall.
         return [.. parts.Select(p => p.FlatTo.Kelvins).Where(t => t > low && t < high).Append(low).Append(high).Distinct().Order()];
     }
 

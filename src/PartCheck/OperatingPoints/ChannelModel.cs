@@ -31,8 +31,11 @@ public sealed class ChannelModel
         PullDown = channel.PullDown is null ? null : new ResistorRange((ResistorPart)channel.PullDown.Part);
         PassRth = [.. Pass.Select(p => Rth(p.Part))];
         ControlRth = Rth(Control.Part);
+        PassHeat = [.. Pass.Select((p, i) => PulsedHeat.Of(p.Part, PassRth[i], channel.Conditions))];
+        ControlHeat = PulsedHeat.Of(Control.Part, ControlRth, channel.Conditions);
         Heats = ControlRth is not null && PassRth.All(r => r is not null);
         CouplingGiven = Classes.All(c => c.First.PassPart.Coupling is not null);
+        OneLegSensed = channel.Legs.Count(l => l.Sensed) == 1;
         Load = [LoadAt(channel.Conditions.LoadDrop.Min), LoadAt(channel.Conditions.LoadDrop.Max)];
         NominalLoad = LoadAt(Voltage.FromVolts(
             (channel.Conditions.LoadDrop.Min.Volts + channel.Conditions.LoadDrop.Max.Volts) / 2));
@@ -66,17 +69,29 @@ public sealed class ChannelModel
     /// <summary>Pull-down resistor; null: none.</summary>
     public ResistorRange? PullDown { get; }
 
-    /// <summary>Thermal resistance of the pass transistors [K/W], by leg class; null: not to be had.</summary>
+    /// <summary>Thermal resistance of the pass transistors at steady power [K/W], by leg class; null: not to be had.</summary>
     public IReadOnlyList<double?> PassRth { get; }
 
-    /// <summary>Thermal resistance of the control [K/W]; null: not to be had.</summary>
+    /// <summary>Thermal resistance of the control at steady power [K/W]; null: not to be had.</summary>
     public double? ControlRth { get; }
+
+    /// <summary>How the pass transistors heat themselves at the channel's duty, by leg class.</summary>
+    public IReadOnlyList<PulsedHeat> PassHeat { get; }
+
+    /// <summary>How the control heats itself at the channel's duty.</summary>
+    public PulsedHeat ControlHeat { get; }
 
     /// <summary>True where every transistor's thermal resistance is known, so that h = 1 can be solved.</summary>
     public bool Heats { get; }
 
     /// <summary>True where the table gives the coupling of every pass transistor.</summary>
     public bool CouplingGiven { get; }
+
+    /// <summary>
+    /// True where the control senses one leg alone. It holds that leg's current, so nothing is averaged: an averaging resistor there carries
+    /// the control's base current and is no ballast.
+    /// </summary>
+    public bool OneLegSensed { get; }
 
     /// <summary>Load at the smallest and the largest drop.</summary>
     public IReadOnlyList<LoadElement> Load { get; }
@@ -130,9 +145,7 @@ public sealed class ChannelModel
             assumed.Add(new Assumption("TCR", r.Part.PartNumber, "200 ppm/K"));
         }
 
-        if (Channel.Conditions.Duty < 1)
-        {
-            assumed.Add(new Assumption("Duty", Channel.Name, "solved and judged as 100 %"));
-        }
+        assumed.AddRange(Pass.Append(Control).Zip(PassHeat.Append(ControlHeat), (t, heat) => PulsedHeat.AssumptionOf(heat, t.Part, Channel))
+            .OfType<Assumption>().Distinct());
     }
 }

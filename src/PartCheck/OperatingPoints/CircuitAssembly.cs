@@ -41,7 +41,7 @@ internal static class CircuitAssembly
             Supply = corner.Supply,
             Load = state == ChannelState.Unfed ? null : model.Load[drop],
             Control = model.Control.At(corner.Control),
-            ControlHeat = Heat(model.Control.Part, model.ControlRth, h, ambient),
+            ControlHeat = Heat(model.Control.Part, model.ControlHeat, h, ambient),
             Legs = groups,
             HottestLegCoupling = h * (corner.AssumedCoupling ?? 0),
             BaseLeakage = state == ChannelState.Off
@@ -60,7 +60,7 @@ internal static class CircuitAssembly
             int c = ClassOf(model, leg);
             groups.Add(new LegGroup(
                 1, model.Pass[c].Nominal, model.Sense[c].Nominal, model.Averaging[c]?.Nominal ?? 0, leg.Sensed,
-                Heat(model.Pass[c].Part, model.PassRth[c], h, ambient), h * (leg.PassPart.Coupling?.Value.KelvinsPerWatt ?? 0)));
+                Heat(model.Pass[c].Part, model.PassHeat[c], h, ambient), h * Coupling(model, c)));
         }
 
         ChannelConditions conditions = model.Channel.Conditions;
@@ -74,7 +74,7 @@ internal static class CircuitAssembly
             Supply = (conditions.Supply.Min.Volts + conditions.Supply.Max.Volts) / 2,
             Load = model.NominalLoad,
             Control = model.Control.Nominal,
-            ControlHeat = Heat(model.Control.Part, model.ControlRth, h, ambient),
+            ControlHeat = Heat(model.Control.Part, model.ControlHeat, h, ambient),
             Legs = groups,
             HottestLegCoupling = model.CouplingGiven ? 0 : h * ChannelModel.AssumedCouplingShare / 2,
         };
@@ -100,9 +100,13 @@ internal static class CircuitAssembly
         Leg leg = model.Classes[c].First;
         return new LegGroup(
             count, pass, model.Sense[c].At(sense, ambient), model.Averaging[c]?.At(averaging, ambient) ?? 0,
-            leg.Sensed, Heat(leg.PassPart, model.PassRth[c], h, ambient), model.CouplingGiven ? h * leg.PassPart.Coupling!.Value.KelvinsPerWatt : 0);
+            leg.Sensed, Heat(leg.PassPart, model.PassHeat[c], h, ambient), model.CouplingGiven ? h * Coupling(model, c) : 0);
     }
 
-    private static JunctionHeat Heat(Transistor part, double? rth, double h, double ambient) =>
-        new(ambient, h * (rth ?? 0), ChannelModel.RunawayLimit(part));
+    private static JunctionHeat Heat(Transistor part, PulsedHeat heat, double h, double ambient) =>
+        new(ambient, h * (heat.Effective ?? 0), ChannelModel.RunawayLimit(part));
+
+    /// <summary>Heating of the control by a leg's power while on, the duty counted as in the leg's own heating [K/W]; 0: not given.</summary>
+    private static double Coupling(ChannelModel model, int c) =>
+        model.PassHeat[c].Share * (model.Pass[c].Part.Coupling?.Value.KelvinsPerWatt ?? 0);
 }

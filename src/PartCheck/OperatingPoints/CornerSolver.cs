@@ -37,15 +37,7 @@ public sealed class CornerSolver
         OperatingPoint? point = solver.Solve(at.Circuit, start);
         if (point is null)
         {
-            return new SolvedState
-            {
-                State = box.State,
-                Corner = at.Corner,
-                Index = offset + index,
-                Solved = false,
-                Transistors = [],
-                Resistors = [],
-            };
+            return Unsolved(box, at, offset + index);
         }
 
         DriveEdge? drive = null;
@@ -63,13 +55,13 @@ public sealed class CornerSolver
                 return Unsolved(box, at, offset + index);
             }
 
-            drive = Edge(at.Circuit, factor);
+            drive = Edge(at.Circuit, edge, factor);
         }
 
         return StateAssembly.Build(model, pin, box.State, at, box.OddClass, point, drive, offset + index);
     }
 
-    private static SolvedState Unsolved(ChannelBox box, in BoxCorner at, int index) => new()
+    internal static SolvedState Unsolved(ChannelBox box, in BoxCorner at, int index) => new()
     {
         State = box.State,
         Corner = at.Corner,
@@ -79,7 +71,8 @@ public sealed class CornerSolver
         Resistors = [],
     };
 
-    private DriveEdge Edge(SinkCircuit circuit, double factor)
+    /// <summary>The edge of regulation as the rule reads it: what one corner's pin, feed and pull-down deliver there.</summary>
+    internal static DriveEdge Edge(SinkCircuit circuit, OperatingPoint? edge, double factor)
     {
         if (edge is null)
         {
@@ -94,6 +87,6 @@ public sealed class CornerSolver
 
         double available = ((circuit.FeedVoltage - edge.BaseVoltage) / circuit.FeedResistance)
             - (edge.BaseVoltage * circuit.BaseConductance);
-        return new DriveEdge(edge.BaseVoltage < circuit.PinVoltage, edge.BaseVoltage, sum, available, factor);
+        return new DriveEdge(edge.BaseVoltage < circuit.PinVoltage, edge.BaseVoltage, sum, available, factor) { ControlCurrent = edge.Control.Ic };
     }
 }

@@ -58,6 +58,8 @@ public sealed class Slots
         placements.Add([channel.Feed]);
         PullDown = placements.Count;
         placements.Add(channel.PullDown is null ? [] : [channel.PullDown]);
+        FirstLed = placements.Count;
+        placements.AddRange(channel.Leds.GroupBy(p => p.Part, ReferenceEqualityComparer.Instance).Select(g => (IReadOnlyList<Placement>)[.. g]));
     }
 
     /// <summary>Number of slots.</summary>
@@ -71,6 +73,9 @@ public sealed class Slots
 
     /// <summary>Slot of the pull-down resistor.</summary>
     public int PullDown { get; }
+
+    /// <summary>First slot of the load's LEDs, one slot for each part, up to <see cref="Count"/>.</summary>
+    public int FirstLed { get; }
 
     /// <summary>Slot of a leg class's pass transistor.</summary>
     public static int Pass(int legClass) => 3 * legClass;

@@ -87,6 +87,12 @@ public sealed class LoadElement
         return scale * (exponential - floor);
     }
 
+    /// <summary>Factor of the junctions' exponential [A].</summary>
+    internal double JunctionScale => referenceCurrent / (1 - floor);
+
+    /// <summary>The exponential at 0 V [-].</summary>
+    internal double JunctionFloor => floor;
+
     /// <summary>Voltage above which a junction's steps are limited [V].</summary>
     internal double CriticalVoltage => referenceDrop + (EmissionVoltage * Math.Log(EmissionVoltage / (Math.Sqrt(2) * referenceCurrent)));
 }

@@ -416,7 +416,10 @@ public sealed class SinkSolver
             FeedCurrent = feedCurrent,
             PinCurrent = feedCurrent + (atPin ? pinNode / circuit.PullDown : 0),
             Control = new SolvedTransistor(
-                q0.Ic, q0.Ib, equations.ControlBaseVoltage, equations.BaseVoltage, 0, equations.Temperature(0, x), !double.IsNaN(held[0])),
+                q0.Ic, q0.Ib, equations.ControlBaseVoltage, equations.BaseVoltage, 0, equations.Temperature(0, x), !double.IsNaN(held[0]))
+            {
+                BaseResistance = q0.Rbb,
+            },
             Legs = legs,
             AveragingCurrents = averaging,
             Iterations = iterations,

@@ -98,12 +98,18 @@ public sealed record Corner
 /// <param name="Vcb">Collector-base voltage at the terminals [V].</param>
 /// <param name="Ic">Collector current [A].</param>
 /// <param name="Ib">Base current [A].</param>
-/// <param name="Power">Dissipation [W].</param>
-/// <param name="Tj">Junction temperature [K].</param>
+/// <param name="Power">Dissipation while on [W].</param>
+/// <param name="Tj">Junction temperature, under PWM its peak [K].</param>
 /// <param name="Held">True where Tj ran away and is held at its bound: it is "at least" this.</param>
 public readonly record struct TransistorPoint(
     int Slot, Role Role, Transistor Part, double Vce, double Vcb, double Ic, double Ib, double Power, double Tj, bool Held)
 {
+    /// <summary>Share of the power that a rating of steady power reads: the duty from 1 kHz up, else 1 [-].</summary>
+    public double AveragedShare { get; init; } = 1;
+
+    /// <summary>Share of the power that surely warms the case: the duty where pulses were solved, else 1 [-].</summary>
+    public double CaseShare { get; init; } = 1;
+
     /// <summary>Slope of VBE with temperature at constant collector current, of the solved model [V/K].</summary>
     public double VbeSlope { get; init; }
 
@@ -113,10 +119,10 @@ public readonly record struct TransistorPoint(
     /// <summary>Effective base resistance of the device [ohm].</summary>
     public double BaseResistance { get; init; }
 
-    /// <summary>Ballast between this leg and the others: sense parallel averaging, sense alone where not sensed [ohm].</summary>
+    /// <summary>Ballast between this leg and the others: sense parallel averaging; sense alone where not sensed, or sensed alone [ohm].</summary>
     public double Ballast { get; init; }
 
-    /// <summary>Thermal resistance junction to ambient, given or assumed [K/W]; NaN: not to be had.</summary>
+    /// <summary>Thermal resistance junction to ambient at steady power, given or assumed [K/W]; NaN: not to be had.</summary>
     public double RthJa { get; init; }
 
     /// <summary>Emitter voltage of a pass transistor, the voltage over its sense resistor [V].</summary>
@@ -158,7 +164,11 @@ public readonly record struct ResistorPoint(
 /// <param name="SumBaseCurrent">Sum of the pass transistors' base currents there [A].</param>
 /// <param name="Available">What pin level, source resistance, feed and pull-down deliver into the base node there [A].</param>
 /// <param name="Factor">k' = max(drive factor, 1.2).</param>
-public readonly record struct DriveEdge(bool Exists, double BaseVoltage, double SumBaseCurrent, double Available, double Factor);
+public readonly record struct DriveEdge(bool Exists, double BaseVoltage, double SumBaseCurrent, double Available, double Factor)
+{
+    /// <summary>Collector current of the control there [A].</summary>
+    public double ControlCurrent { get; init; }
+}
 
 /// <summary>One solved corner of one channel in one state, SI units: what a rule reads.</summary>
 public sealed class SolvedState

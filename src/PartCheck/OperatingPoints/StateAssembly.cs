@@ -27,7 +27,7 @@ internal static class StateAssembly
             }
         }
 
-        transistors[g] = Transistor(model.Slots.Control, Role.Control, model.Control.Part, point.Control);
+        transistors[g] = Transistor(model, model.Slots.Control, Role.Control, model.Control.Part, model.ControlHeat, point.Control);
         AddShared(resistors, model, circuit, point);
         return new SolvedState
         {
@@ -61,7 +61,7 @@ internal static class StateAssembly
             AddLeg(resistors, model, c, circuit.Legs[g], point.Legs[g], point, g);
         }
 
-        transistors[^1] = Transistor(model.Slots.Control, Role.Control, model.Control.Part, point.Control);
+        transistors[^1] = Transistor(model, model.Slots.Control, Role.Control, model.Control.Part, model.ControlHeat, point.Control);
         AddShared(resistors, model, circuit, point);
         return new SolvedState
         {
@@ -78,16 +78,21 @@ internal static class StateAssembly
         };
     }
 
-    private static TransistorPoint Transistor(int slot, Role role, Transistor part, in SolvedTransistor q) =>
-        new(slot, role, part, q.Vce, q.CollectorVoltage - q.BaseVoltage, q.Ic, q.Ib, q.Power, q.Tj, q.Held);
+    private static TransistorPoint Transistor(ChannelModel model, int slot, Role role, Transistor part, PulsedHeat heat, in SolvedTransistor q) =>
+        new(slot, role, part, q.Vce, q.CollectorVoltage - q.BaseVoltage, q.Ic, q.Ib, q.Power, q.Tj, q.Held)
+        {
+            AveragedShare = PulsedHeat.AveragedShare(model.Channel.Conditions),
+            CaseShare = heat.CaseShare,
+            BaseResistance = q.BaseResistance,
+        };
 
     private static TransistorPoint Leg(ChannelModel model, int c, LegGroup leg, in SolvedTransistor q) =>
-        Transistor(Slots.Pass(c), Role.Pass, model.Pass[c].Part, q) with
+        Transistor(model, Slots.Pass(c), Role.Pass, model.Pass[c].Part, model.PassHeat[c], q) with
         {
             VbeSlope = q.VbeSlope,
             EmitterResistance = leg.Pass.Parameters.Re,
             BaseResistance = q.BaseResistance,
-            Ballast = leg.Sensed ? leg.Sense * leg.Averaging / (leg.Sense + leg.Averaging) : leg.Sense,
+            Ballast = leg.Sensed && !model.OneLegSensed ? leg.Sense * leg.Averaging / (leg.Sense + leg.Averaging) : leg.Sense,
             RthJa = model.PassRth[c] ?? double.NaN,
             SenseVoltage = q.EmitterVoltage,
             SenseResistance = leg.Sense,

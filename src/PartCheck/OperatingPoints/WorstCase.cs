@@ -1,4 +1,5 @@
 using PartCheck.Channels;
+using PartCheck.OperatingPoints.Batch;
 using PartCheck.Quantities;
 
 namespace PartCheck.OperatingPoints;
@@ -25,10 +26,18 @@ public static class WorstCase
         ChannelModel model, PinSource pin, double driveFactor, int threads, Func<T> make, Action<T, SolvedState> visit, CancellationToken cancel) =>
         Enumerate(model, pin, Boxes(model, pin), Math.Max(driveFactor, 1.2), threads, make, visit, cancel);
 
-    /// <summary>The same over given boxes; <paramref name="edge"/> is k', null: the edge of regulation is not solved.</summary>
+    /// <summary>The same, each corner solved by itself by the scalar solver: the oracle of the batch.</summary>
+    public static IReadOnlyList<T> EnumerateOneByOne<T>(
+        ChannelModel model, PinSource pin, double driveFactor, int threads, Func<T> make, Action<T, SolvedState> visit, CancellationToken cancel) =>
+        Enumerate(model, pin, Boxes(model, pin), Math.Max(driveFactor, 1.2), threads, make, visit, cancel, sideBySide: false);
+
+    /// <summary>
+    /// The same over given boxes; <paramref name="edge"/> is k', null: the edge of regulation is not solved; <paramref name="sideBySide"/>:
+    /// in lanes, else one by one.
+    /// </summary>
     internal static IReadOnlyList<T> Enumerate<T>(
         ChannelModel model, PinSource pin, IReadOnlyList<ChannelBox> boxes, double? edge, int threads, Func<T> make,
-        Action<T, SolvedState> visit, CancellationToken cancel)
+        Action<T, SolvedState> visit, CancellationToken cancel, bool sideBySide = true)
     {
         ArgumentNullException.ThrowIfNull(model);
         ArgumentNullException.ThrowIfNull(make);
@@ -50,11 +59,18 @@ public static class WorstCase
         Parallel.For(0, chunks.Count, options, i =>
         {
             (ChannelBox box, int from, int to, int shift) = chunks[i];
-            CornerSolver solver = new(model, pin, edge);
             T accumulator = make();
-            for (int index = from; index < to; index++)
+            if (sideBySide)
             {
-                visit(accumulator, solver.Solve(box, index, shift));
+                new CornerBatch(model, pin, edge).Solve(box, from, to, shift, state => visit(accumulator, state));
+            }
+            else
+            {
+                CornerSolver solver = new(model, pin, edge);
+                for (int index = from; index < to; index++)
+                {
+                    visit(accumulator, solver.Solve(box, index, shift));
+                }
             }
 
             results[i] = accumulator;

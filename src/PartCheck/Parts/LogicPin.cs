@@ -27,6 +27,21 @@ public sealed record PartTable(IReadOnlyList<Part> Parts)
     public IReadOnlyList<Part> Find(string partNumber) =>
         byNumber.TryGetValue(partNumber, out List<Part>? found) ? found : [];
 
+    /// <summary>The part that a person names: its part number alone, or manufacturer, blank and part number.</summary>
+    /// <param name="name">What the person wrote.</param>
+    /// <returns>Part number as the table writes it, and the manufacturer where one was named; null: there is no such part.</returns>
+    public (string PartNumber, string? Manufacturer)? Named(string name)
+    {
+        ArgumentNullException.ThrowIfNull(name);
+        if (Find(name) is { Count: > 0 } found)
+        {
+            return (found[0].PartNumber, null);
+        }
+
+        Part? byMaker = Parts.FirstOrDefault(p => p.Manufacturer is { } maker && string.Equals(maker + " " + p.PartNumber, name, StringComparison.OrdinalIgnoreCase));
+        return byMaker is null ? null : (byMaker.PartNumber, byMaker.Manufacturer);
+    }
+
     private readonly Dictionary<string, List<Part>> byNumber = Parts
         .GroupBy(p => p.PartNumber, StringComparer.OrdinalIgnoreCase)
         .ToDictionary(g => g.Key, g => g.ToList(), StringComparer.OrdinalIgnoreCase);

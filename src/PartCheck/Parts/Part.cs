@@ -136,8 +136,8 @@ public sealed record Transistor : Part
     /// <summary>The user's model card, already held to the part's own windows.</summary>
     public Cited<ModelCard>? Card { get; init; }
 
-    /// <summary>Pin order such as <c>BEC</c>.</summary>
-    public string? Pins { get; init; }
+    /// <summary>What the leads are, in order; null: not known.</summary>
+    public LeadOrder? Pins { get; init; }
 
     /// <summary>Transistors in one package.</summary>
     public int Elements { get; init; } = 1;
@@ -166,6 +166,25 @@ public sealed record ResistorPart : Part
 
     /// <inheritdoc/>
     public override Temperature FlatTo => PowerFlatTo?.Value ?? Temperature.FromCelsius(70);
+}
+
+/// <summary>An LED of a channel's load (Kind <c>led</c>).</summary>
+public sealed record LedPart : Part
+{
+    /// <summary>Highest continuous forward current.</summary>
+    public Cited<Current>? ForwardCurrentMax { get; init; }
+
+    /// <summary>Ambient up to which it holds; null: 25 degC.</summary>
+    public Cited<Temperature>? ForwardCurrentFlatTo { get; init; }
+
+    /// <summary>Slope of the forward current maximum above that [A/K]; null: straight to zero at the highest junction temperature.</summary>
+    public Cited<double>? ForwardCurrentSlope { get; init; }
+
+    /// <summary>What is missing, where this stands for a row that the part table does not have; null: it is a row.</summary>
+    public string? Missing { get; init; }
+
+    /// <summary>The ambient up to which the forward current maximum holds: the load has no power rating here.</summary>
+    public override Temperature FlatTo => ForwardCurrentFlatTo?.Value ?? Temperature.FromCelsius(25);
 }
 
 /// <summary>A part whose kind is known and refused, with the reason.</summary>

@@ -53,6 +53,9 @@ internal static class PartAgreement
         nameof(Transistor.Zth) => "Zth points",
         nameof(Transistor.SoaAtCase) => "SOA at",
         nameof(Transistor.Card) => "Model",
+        nameof(LedPart.ForwardCurrentMax) => "IF",
+        nameof(LedPart.ForwardCurrentFlatTo) => "IF flat to",
+        nameof(LedPart.ForwardCurrentSlope) => "IF slope",
         nameof(RefusedPart.Reason) => "Kind",
         _ => PartColumns.All.FirstOrDefault(c => string.Equals(Joined(c.Name), property, StringComparison.OrdinalIgnoreCase))?.Name ?? property,
     };

@@ -84,7 +84,7 @@ public static class PartTableReader
 
         if (kind is null)
         {
-            row.Complain("Kind", "npn or resistor", $"{number} has no kind.");
+            row.Complain("Kind", "npn, resistor or led", $"{number} has no kind.");
             return null;
         }
 
@@ -114,7 +114,12 @@ public static class PartTableReader
             return Resistor(row, number);
         }
 
-        row.Complain("Kind", "npn or resistor", $"The kind \"{kind}\" is not known.");
+        if (string.Equals(kind, "led", StringComparison.OrdinalIgnoreCase))
+        {
+            return LedRow.Read(row, number);
+        }
+
+        row.Complain("Kind", "npn, resistor or led", $"The kind \"{kind}\" is not known.");
         return null;
     }
 

@@ -28,6 +28,16 @@ internal sealed class ResistorValidator : AbstractValidator<ResistorPart>
     }
 }
 
+/// <summary>What must hold between the columns of an LED's row.</summary>
+internal sealed class LedValidator : AbstractValidator<LedPart>
+{
+    public LedValidator()
+    {
+        this.Demand("Tj max", p => p.TjMax is null || p.TjMax.Value.Kelvins > p.FlatTo.Kelvins, "a temperature above IF flat to", _ => "Tj max is not above the temperature up to which the forward current holds.");
+        this.Demand("IF slope", p => p.ForwardCurrentSlope is null || p.ForwardCurrentMax is not null, "the forward current beside it", _ => "A slope of the forward current needs IF beside it.");
+    }
+}
+
 /// <summary>What both kinds share.</summary>
 internal static class PartValidation
 {

@@ -17,7 +17,7 @@ internal static class TransistorRow
         Lifecycle = row.Text("Lifecycle"),
         Stock = row.Number("Stock")?.Value,
         Source = row.Text("Source"),
-        Pins = row.Text("Pins"),
+        Pins = Pins(row),
         Elements = Elements(row),
         Vceo = row.Quantity("VCEO", Voltage.FromVolts),
         Vcbo = row.Quantity("VCBO", Voltage.FromVolts),
@@ -47,6 +47,25 @@ internal static class TransistorRow
         Vaf = row.Quantity("VAF", Voltage.FromVolts),
         Card = Card(row, folder),
     };
+
+    private static LeadOrder? Pins(TableRow row)
+    {
+        if (row.Text("Pins") is not { } text)
+        {
+            return null;
+        }
+
+        int elements = row.Number("Elements")?.Value is 2 ? 2 : 1;
+        LeadOrder? order = LeadOrder.Parse(text, elements);
+        if (order is null)
+        {
+            row.Complain(
+                "Pins", elements == 1 ? "the leads in their order, the tab after a plus sign: BEC, BCE+C" : "the leads in their order: E1 B1 C2 E2 B2 C1",
+                $"\"{text}\" is no order of leads.");
+        }
+
+        return order;
+    }
 
     private static int Elements(TableRow row)
     {

@@ -27,6 +27,9 @@ public enum QuantityKind
     /// <summary>Power slope [W/K].</summary>
     PowerSlope,
 
+    /// <summary>Current slope [A/K].</summary>
+    CurrentSlope,
+
     /// <summary>Frequency [Hz].</summary>
     Frequency,
 

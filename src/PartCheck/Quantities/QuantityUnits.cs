@@ -49,6 +49,7 @@ public static class QuantityUnits
             new("\u00B0C/mW", 3, AnyCase: false, Prefixed: false), new("C/mW", 3, AnyCase: false, Prefixed: false),
         ],
         [QuantityKind.PowerSlope] = [new("W/K"), new("W/\u00B0C"), new("W/C")],
+        [QuantityKind.CurrentSlope] = [new("A/K"), new("A/\u00B0C"), new("A/C")],
         [QuantityKind.Frequency] = [new("Hz"), new("hertz")],
         [QuantityKind.Time] = [new("s", AnyCase: false), new("sec", Prefixed: false), new("second", Prefixed: false), new("seconds", Prefixed: false)],
         [QuantityKind.Percent] = [new("%", -2, Prefixed: false), new("percent", -2, Prefixed: false)],
@@ -61,7 +62,7 @@ public static class QuantityUnits
         [QuantityKind.Number] = [],
     };
 
-    /// <summary>The unit of a bare number where neither cell nor header names one: V, A, W, ohm, degC, K, K/W, W/K, Hz, s, %, ppm/K, none.</summary>
+    /// <summary>The unit of a bare number where neither cell nor header names one: V, A, W, ohm, degC, K, K/W, W/K, A/K, Hz, s, %, ppm/K, none.</summary>
     public static QuantityUnit BareUnitOf(QuantityKind kind) => kind switch
     {
         QuantityKind.Temperature => new(0, CelsiusZero),
@@ -81,6 +82,7 @@ public static class QuantityUnits
         QuantityKind.TemperatureDelta => "K",
         QuantityKind.ThermalResistance => "K/W",
         QuantityKind.PowerSlope => "W/K",
+        QuantityKind.CurrentSlope => "A/K",
         QuantityKind.Frequency => "Hz",
         QuantityKind.Time => "s",
         QuantityKind.Percent => "%",
@@ -99,6 +101,7 @@ public static class QuantityUnits
         QuantityKind.TemperatureDelta => "a temperature difference such as 10 K",
         QuantityKind.ThermalResistance => "a thermal resistance such as 250 K/W",
         QuantityKind.PowerSlope => "a power slope such as 2 mW/K",
+        QuantityKind.CurrentSlope => "a current slope such as 0.5 mA/K",
         QuantityKind.Frequency => "a frequency such as 1 kHz",
         QuantityKind.Time => "a time such as 10 ms",
         QuantityKind.Percent => "a percentage such as 5 %",

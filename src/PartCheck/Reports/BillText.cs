@@ -92,7 +92,7 @@ public static class BillText
     private static void Line(StringBuilder text, BillLine line)
     {
         List<string> said = [Cut(Ranges(line.References), ReferencesShown) + ";"];
-        said.Add(line.Quantity is { } quantity ? $"{quantity.ToString(CultureInfo.InvariantCulture)} pcs;" : $"{Whole(line.Placed)} counted;");
+        said.Add(line.Quantity is { } quantity ? $"{quantity.ToString(CultureInfo.InvariantCulture)} pcs;" : $"{Whole(ReferenceList.Components(line.References))} counted;");
         said.Add(line.PartNumber is { } number ? Cut(number, TextShown) + ";" : "no part number;");
         if (line.Value is { } value && value != line.PartNumber)
         {

@@ -2,12 +2,12 @@ using PartCheck.Rules;
 
 namespace PartCheck.Reports;
 
-/// <summary>Sums over a board with every channel on, SI units.</summary>
+/// <summary>Sums over a board with every channel on at once: currents and powers while on, whatever the duty; SI units.</summary>
 /// <param name="SupplyMin">Smallest current from the load supplies [A].</param>
 /// <param name="SupplyMax">Largest current from the load supplies [A].</param>
 /// <param name="HeatMax">Largest heat of the channels' parts, loads left out [W].</param>
 /// <param name="Pins">Largest current of each pin [A].</param>
-/// <param name="Hottest">The hottest transistors: channel, reference, highest junction temperature [K].</param>
+/// <param name="Hottest">The hottest transistors: channel, reference, highest junction temperature, under PWM the peak [K].</param>
 /// <param name="Without">Channels that could not be solved and are left out of the sums.</param>
 public sealed record BoardTotals(
     double SupplyMin, double SupplyMax, double HeatMax, IReadOnlyList<(string Pin, double Current)> Pins,

@@ -25,6 +25,15 @@ public sealed record BoardReport
     /// <summary>What every output that uses the table must say; null: nothing.</summary>
     public string? DeratingNote { get; init; }
 
+    /// <summary>The day that concessions were held against; null: the board has none.</summary>
+    public DateOnly? ConcessionsAsOf { get; init; }
+
+    /// <summary>The assembly judged; null: the board as its bill stands.</summary>
+    public string? Assembly { get; init; }
+
+    /// <summary>Channels that are not there in the assembly, since none of their parts is fitted: not judged.</summary>
+    public IReadOnlyList<string> ChannelsNotFitted { get; init; } = [];
+
     /// <summary>Channels in the sheet's order.</summary>
     public required IReadOnlyList<ChannelJudgement> Channels { get; init; }
 
@@ -48,6 +57,9 @@ public sealed record BoardReport
 
     /// <summary>Safety cautions.</summary>
     public required IReadOnlyList<string> Cautions { get; init; }
+
+    /// <summary>Beside the bill as it stands, where other parts were asked for; null: none were.</summary>
+    public BoardComparison? Comparison { get; init; }
 }
 
 /// <summary>One input file and its hash.</summary>
@@ -57,4 +69,8 @@ public sealed record InputFile(string File, string Sha256);
 
 /// <summary>Everything one run of <c>check</c> found: what the reports print.</summary>
 public sealed record CheckReport(
-    IReadOnlyList<BoardReport> Boards, IReadOnlyList<Complaint> Complaints, IReadOnlyList<InputFile> Inputs);
+    IReadOnlyList<BoardReport> Boards, IReadOnlyList<Complaint> Complaints, IReadOnlyList<InputFile> Inputs)
+{
+    /// <summary>What the question itself asks wrongly (a line that is not on the bill); with any of it nothing was judged.</summary>
+    public IReadOnlyList<string> UsageFaults { get; init; } = [];
+}

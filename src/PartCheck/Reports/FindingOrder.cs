@@ -4,7 +4,7 @@ namespace PartCheck.Reports;
 
 /// <summary>
 /// The order of findings in every report, worst first: nonconforming without a stress ratio, nonconforming by stress ratio
-/// descending, not verified, conforming by stress ratio descending. Ties go by the order of channels, of rules, then by
+/// descending, not verified, under a concession, conforming by stress ratio descending. Ties go by the order of channels, of rules, then by
 /// reference (Q2 before Q10), part number and manufacturer, so that the order never depends on how the findings were made.
 /// </summary>
 public static class FindingOrder
@@ -47,7 +47,8 @@ public static class FindingOrder
     {
         Verdict.Nonconforming => Ratio(finding) is null ? 0 : 1,
         Verdict.NotVerified => 2,
-        _ => 3,
+        Verdict.Concession => 3,
+        _ => 4,
     };
 
     private static Dictionary<string, int> Positions(IReadOnlyList<string> names)

@@ -17,6 +17,8 @@ internal static class FindingText
             Channels = null,
             Missing = [],
             Cell = null,
+            Basis = null,
+            Derivation = null,
             Text = f.Text + string.Join("|", f.Missing) + string.Join(",", f.References ?? []) + string.Join(",", f.Channels ?? []),
         }).Select(g => (IReadOnlyList<Finding>)[.. g])];
 
@@ -67,9 +69,12 @@ internal static class FindingText
     /// <summary>
     /// The stress ratio with two decimals, with more where two would show a broken limit as met exactly; null: none.
     /// </summary>
-    public static string? Ratio(Finding f)
+    public static string? Ratio(Finding f) => Ratio(FindingOrder.Ratio(f));
+
+    /// <summary>A stress ratio as every report shows it; null: none.</summary>
+    public static string? Ratio(double? stressRatio)
     {
-        if (FindingOrder.Ratio(f) is not { } ratio)
+        if (stressRatio is not { } ratio)
         {
             return null;
         }
@@ -82,6 +87,25 @@ internal static class FindingText
     public static string Value(double si, string? unit, int digits = 4) => !double.IsFinite(si) ? "not known" : (unit == "K"
         ? string.Create(CultureInfo.InvariantCulture, $"{si - Temperature.CelsiusZero:0.0} degC")
         : EngineeringNotation.Format(si, unit ?? string.Empty, digits)).Replace(' ', Columns80.Glue);
+
+    /// <summary>The worst mix of parts in words, e.g. <c>with OX-9 by Oxmoor in Q1, Q3</c>; empty: no line offers a choice.</summary>
+    public static string Mix(Finding f) => f.Mix.Count == 0 ? string.Empty : "with " + string.Join("; ", f.Mix.Select(m =>
+        $"{m.PartNumber}{(m.Manufacturer is { } maker ? " by " + maker : string.Empty)} in {string.Join(", ", m.References)}"));
+
+    /// <summary>The concession in words: who accepted it, from when to when, for what, why; empty: there is none.</summary>
+    public static string Accepted(Finding f)
+    {
+        if (f.Concession is not { } granted)
+        {
+            return string.Empty;
+        }
+
+        string holds = granted.Effectivity is { } effectivity ? "for " + effectivity : "serials or lots not named";
+        return $"accepted by {granted.AcceptedBy}, {Day(granted.Date)} to {Day(granted.Expires)}, {holds}: {granted.Reason} ({granted.Cell})";
+    }
+
+    /// <summary>A day as ISO 8601 writes it.</summary>
+    public static string Day(DateOnly day) => day.ToString("yyyy-MM-dd", CultureInfo.InvariantCulture);
 
     /// <summary>The corner in words.</summary>
     public static string Corner(Finding f)

@@ -15,6 +15,17 @@ internal static class JsonFinding
         WriteGroup(json, finding);
         json.Text("partNumber", finding.PartNumber);
         json.Text("manufacturer", finding.Manufacturer);
+        if (finding.Mix.Count > 0)
+        {
+            json.List("mix", finding.Mix, (into, line) =>
+            {
+                into.Texts("references", line.References);
+                into.Text("partNumber", line.PartNumber);
+                into.Text("manufacturer", line.Manufacturer);
+                into.WriteBoolean("alternate", line.Alternate);
+            });
+        }
+
         json.Text("state", finding.State is { } state ? StateWord(state) : null);
         json.Real("actual", finding.Actual);
         if (finding.ActualIsAtLeast)
@@ -40,7 +51,17 @@ internal static class JsonFinding
 
         json.Text("source", finding.Source);
         json.Text("cell", finding.Cell);
-        json.WriteNull("concession");
+        if (finding.Concession is { } concession)
+        {
+            json.WriteStartObject("concession");
+            WriteConcession(json, concession);
+            json.WriteEndObject();
+        }
+        else
+        {
+            json.WriteNull("concession");
+        }
+
         json.Texts("missing", finding.Missing);
         if (finding.Text is not null)
         {
@@ -56,6 +77,16 @@ internal static class JsonFinding
         ChannelState.Unfed => "unfed",
         _ => throw new ArgumentOutOfRangeException(nameof(state), state, "A state is on, off or unfed."),
     };
+
+    private static void WriteConcession(Utf8JsonWriter json, GrantedConcession concession)
+    {
+        json.Text("reason", concession.Reason);
+        json.Text("acceptedBy", concession.AcceptedBy);
+        json.Day("date", concession.Date);
+        json.Day("expires", concession.Expires);
+        json.Text("effectivity", concession.Effectivity);
+        json.Text("cell", concession.Cell);
+    }
 
     private static void WriteGroup(Utf8JsonWriter json, Finding finding)
     {

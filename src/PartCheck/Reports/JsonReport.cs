@@ -43,6 +43,24 @@ public static class JsonReport
         json.Text("board", board.Board);
         json.Text("verdict", VerdictWords.Of(board.Verdict));
         json.Text("derating", board.Derating);
+        if (board.Assembly is { } assembly)
+        {
+            json.Text("assembly", assembly);
+            json.Texts("channelsNotFitted", board.ChannelsNotFitted);
+        }
+
+        if (board.ConcessionsAsOf is { } day)
+        {
+            json.Day("concessionsAsOf", day);
+        }
+
+        if (board.Comparison is { } comparison)
+        {
+            json.WriteStartObject("comparison");
+            JsonComparison.Write(json, comparison);
+            json.WriteEndObject();
+        }
+
         json.List("channels", board.Channels, JsonChannel.Write);
         json.List("findings", FindingOrder.WorstFirst(board), JsonFinding.Write);
         if (board.Totals is { } totals)
@@ -87,7 +105,7 @@ public static class JsonReport
         json.Texts("without", totals.Without);
     }
 
-    private static void WriteAssumed(Utf8JsonWriter json, AssumedValue assumed)
+    internal static void WriteAssumed(Utf8JsonWriter json, AssumedValue assumed)
     {
         json.Text("what", assumed.What);
         json.Text("of", assumed.Of);
@@ -114,7 +132,7 @@ public static class JsonReport
         json.Text("text", complaint.Text);
     }
 
-    private static void WriteInput(Utf8JsonWriter json, InputFile input)
+    internal static void WriteInput(Utf8JsonWriter json, InputFile input)
     {
         json.Text("file", input.File);
         json.Text("sha256", input.Sha256);

@@ -1,3 +1,4 @@
+using System.Globalization;
 using System.Text.Json;
 
 namespace PartCheck.Reports;
@@ -46,6 +47,10 @@ internal static class JsonValues
             json.WriteStringValue(WholeCharacters(value));
         }
     }
+
+    /// <summary>Writes a day as ISO 8601 does.</summary>
+    internal static void Day(this Utf8JsonWriter json, string name, DateOnly day) =>
+        json.WriteString(name, day.ToString("yyyy-MM-dd", CultureInfo.InvariantCulture));
 
     /// <summary>Writes a list of texts.</summary>
     internal static void Texts(this Utf8JsonWriter json, string name, IEnumerable<string> values)

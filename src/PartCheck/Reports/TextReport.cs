@@ -34,21 +34,32 @@ public static class TextReport
 
     private static void Board(StringBuilder text, BoardReport board)
     {
-        Columns80.Wrap(text, string.Empty, $"{board.Board}: {VerdictWords.Of(board.Verdict).ToUpperInvariant()} (derating: {board.Derating})", 2);
+        if (board.Comparison is { } comparison)
+        {
+            ComparisonText.Write(text, comparison);
+        }
+
+        Columns80.Wrap(text, string.Empty, $"{board.Board}: {VerdictWords.Of(board.Verdict).ToUpperInvariant()} (derating: {board.Derating}{(board.Assembly is { } a ? "; assembly: " + a : string.Empty)}{AsOf(board)})", 2);
         if (board.DeratingNote is { } note)
         {
             Columns80.Wrap(text, "  ", note, 2);
         }
 
+        if (board.ChannelsNotFitted.Count > 0)
+        {
+            Columns80.Wrap(text, "  ", $"Not fitted in this assembly, not judged: {string.Join(", ", board.ChannelsNotFitted)}", 4);
+        }
+
         text.Append('\n');
         if (board.Channels.Count == 0)
         {
-            text.Append("  Nothing could be judged: see the complaints.\n\n");
+            text.Append(board.ChannelsNotFitted.Count > 0 ? "  No channel is fitted in this assembly.\n\n" : "  Nothing could be judged: see the complaints.\n\n");
             return;
         }
 
         Nonconforming(text, board.Findings.Where(f => f.Verdict == Verdict.Nonconforming));
         NotVerified(text, board.Findings.Where(f => f.Verdict == Verdict.NotVerified));
+        UnderConcession(text, board.Findings.Where(f => f.Verdict == Verdict.Concession));
         Channels(text, board);
         Conforming(text, board);
         Bench(text, board);
@@ -84,6 +95,11 @@ public static class TextReport
         {
             Finding f = group[0];
             Columns80.Wrap(text, "  ", Head(group) + ": " + Joined("; ", FindingText.Numbers(f), f.Text), 4);
+            if (FindingText.Mix(f) is { Length: > 0 } mix)
+            {
+                Columns80.Wrap(text, "    ", mix, 6);
+            }
+
             if (FindingText.Corner(f) is { Length: > 0 } corner)
             {
                 Columns80.Wrap(text, "    ", corner, 6);
@@ -117,9 +133,35 @@ public static class TextReport
         text.Append('\n');
     }
 
+    private static void UnderConcession(StringBuilder text, IEnumerable<Finding> findings)
+    {
+        IReadOnlyList<IReadOnlyList<Finding>> groups = FindingText.Grouped(findings);
+        if (groups.Count == 0)
+        {
+            return;
+        }
+
+        text.Append("Concession\n");
+        foreach (IReadOnlyList<Finding> group in groups)
+        {
+            Finding f = group[0];
+            Columns80.Wrap(text, "  ", Head(group) + ": " + Joined("; ", FindingText.Numbers(f), f.Text), 4);
+            if (FindingText.Mix(f) is { Length: > 0 } mix)
+            {
+                Columns80.Wrap(text, "    ", mix, 6);
+            }
+
+            Columns80.Wrap(text, "    ", FindingText.Accepted(f), 6);
+        }
+
+        text.Append('\n');
+    }
+
+    private static string AsOf(BoardReport board) => board.ConcessionsAsOf is { } day ? "; concessions as of " + FindingText.Day(day) : string.Empty;
+
     private static string Head(IReadOnlyList<Finding> group) => Joined(" ", group[0].Channel, group[0].Rule, FindingText.Subject(group));
 
-    private static string Joined(string between, params string?[] parts) => string.Join(between, parts.Where(p => !string.IsNullOrEmpty(p)));
+    internal static string Joined(string between, params string?[] parts) => string.Join(between, parts.Where(p => !string.IsNullOrEmpty(p)));
 
     private static void Channels(StringBuilder text, BoardReport board)
     {
@@ -152,12 +194,16 @@ public static class TextReport
             OperatingPoints.TestLimits l = c.TestLimits!;
             Columns80.Wrap(
                 text, $"  {c.Channel} ",
-                $"at {FindingText.Value(l.Supply, "V")}: load {Range(l.LoadCurrent, "A")}; sense {Range(l.SenseVoltage, "V")}; base {Range(l.BaseVoltage, "V")}; collector {Range(l.CollectorVoltage, "V")}",
+                $"at {FindingText.Value(l.Supply, "V")}{Pulsed(c)}: load {Range(l.LoadCurrent, "A")}; sense {Range(l.SenseVoltage, "V")}; base {Range(l.BaseVoltage, "V")}; collector {Range(l.CollectorVoltage, "V")}",
                 4);
         }
 
         text.Append('\n');
     }
+
+    /// <summary>A channel that pulses is measured while on, and is as warm as its largest duty makes it.</summary>
+    private static string Pulsed(ChannelJudgement c) => c.Reading is { Conditions.Duty: < 1 and var duty }
+        ? string.Create(CultureInfo.InvariantCulture, $" while on, duty up to {duty * 100:0.###} %") : string.Empty;
 
     private static string Range(OperatingPoints.ValueRange range, string unit) =>
         $"{FindingText.Value(range.Min, unit, 3)} .. {FindingText.Value(range.Max, unit, 3)}";
@@ -167,7 +213,7 @@ public static class TextReport
         string without = totals.Without.Count == 0 ? string.Empty : $" (without {string.Join(", ", totals.Without)})";
         Columns80.Wrap(
             text, string.Empty,
-            $"Board{without}: load supplies {FindingText.Value(totals.SupplyMin, "A", 3)} .. {FindingText.Value(totals.SupplyMax, "A", 3)}; heat of its parts up to {FindingText.Value(totals.HeatMax, "W", 3)}; hottest "
+            $"Board{without}: load supplies {FindingText.Value(totals.SupplyMin, "A", 3)} .. {FindingText.Value(totals.SupplyMax, "A", 3)}; heat of its parts while on up to {FindingText.Value(totals.HeatMax, "W", 3)}; hottest "
             + string.Join(", ", totals.Hottest.Select(h => $"{h.Reference} {FindingText.Value(h.Tj, "K")}")) + ".",
             2);
     }

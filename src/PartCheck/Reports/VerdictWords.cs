@@ -5,13 +5,14 @@ namespace PartCheck.Reports;
 /// <summary>The words of a verdict and of a state, the same in every report.</summary>
 public static class VerdictWords
 {
-    /// <summary><c>conforms</c>, <c>nonconforming</c> or <c>not verified</c>.</summary>
-    /// <exception cref="ArgumentOutOfRangeException">The verdict is none of the three.</exception>
+    /// <summary><c>conforms</c>, <c>nonconforming</c>, <c>not verified</c> or <c>concession</c>.</summary>
+    /// <exception cref="ArgumentOutOfRangeException">The verdict is none of the four.</exception>
     public static string Of(Verdict verdict) => verdict switch
     {
         Verdict.Conforms => "conforms",
         Verdict.Nonconforming => "nonconforming",
         Verdict.NotVerified => "not verified",
-        _ => throw new ArgumentOutOfRangeException(nameof(verdict), verdict, "A verdict is one of the three."),
+        Verdict.Concession => "concession",
+        _ => throw new ArgumentOutOfRangeException(nameof(verdict), verdict, "A verdict is one of the four."),
     };
 }

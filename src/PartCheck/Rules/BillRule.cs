@@ -18,7 +18,8 @@ public static class BillRule
     /// <summary>What the rule demands, one line.</summary>
     public const string Title = "Quantity, fitting, package, kind and resistance of each line agree with references and part table";
 
-    private const string Source = "the bill and the part table themselves";
+    /// <summary>Where the rule comes from.</summary>
+    public const string Source = "the bill and the part table themselves";
 
     /// <summary>Judges a bill.</summary>
     public static IReadOnlyList<Finding> Judge(Bill bill, PartTable parts, IReadOnlyList<Channel> channels)
@@ -45,10 +46,12 @@ public static class BillRule
                     Channel = channel.Name,
                     Rule = Id,
                     Reference = fault.Reference,
-                    Verdict = Verdict.Nonconforming,
+                    Verdict = fault.Missing is null ? Verdict.Nonconforming : Verdict.NotVerified,
                     Source = Source,
                     Cell = fault.Cell,
                     Text = fault.Text,
+                    Missing = fault.Missing is { } lacking ? [lacking] : [],
+                    Derivation = new Derivation().Note(fault.Text, fault.Cell),
                 });
             }
         }
@@ -68,9 +71,21 @@ public static class BillRule
             missing.Add("a bill line without complaints");
         }
 
-        if (line.Quantity is { } quantity && quantity != line.Placed)
+        Derivation steps = new();
+        int placed = ReferenceList.Components(line.References);
+        steps.Given("references", placed, string.Empty, "components to place: " + string.Join(", ", line.References), line.Cell);
+        if (line.Quantity is { } stated)
         {
-            wrong.Add(string.Create(CultureInfo.InvariantCulture, $"the quantity is {quantity}, the references are {line.Placed}"));
+            steps.Given("quantity", stated, string.Empty, "Quantity of the line", line.Cell).Step("surplus", "quantity - references", string.Empty, "must be 0");
+        }
+        else
+        {
+            steps.Note("The line gives no quantity.");
+        }
+
+        if (line.Quantity is { } quantity && quantity != placed)
+        {
+            wrong.Add(string.Create(CultureInfo.InvariantCulture, $"the quantity is {quantity}, the references are {placed}"));
         }
 
         IReadOnlyList<Part> rows = line.PartNumber is null ? [] : parts.Find(line.PartNumber);
@@ -91,16 +106,28 @@ public static class BillRule
 
         foreach (Part row in rows)
         {
-            if (line.Package is { } package && row.Package is { } tabled && !PackageName.Agrees(package, tabled))
+            Compare(steps, line, row);
+            wrong.AddRange(Disagreements(line, row, "the part table's"));
+            if (row is ResistorPart resistor && Differs(line, resistor))
             {
-                wrong.Add($"the bill's package is {package}, the part table's {tabled}");
+                (actual, allowed, unit) = (line.Resistance!.Value.Ohms, resistor.Resistance.Value.Ohms, "ohm");
+            }
+        }
+
+        foreach (string alternate in line.Alternates)
+        {
+            IReadOnlyList<Part> others = parts.Find(alternate);
+            if (others.Count == 0)
+            {
+                missing.Add("part table row of " + alternate);
             }
 
-            if (row is ResistorPart resistor && line.Resistance is { } value && Math.Abs(value.Ohms - resistor.Resistance.Value.Ohms) > 1e-6 * value.Ohms)
+            foreach (Part other in others)
             {
-                wrong.Add($"the bill's value is {EngineeringNotation.Format(value.Ohms, "ohm")}, the part table's {EngineeringNotation.Format(resistor.Resistance.Value.Ohms, "ohm")}");
-                (actual, allowed, unit) = (value.Ohms, resistor.Resistance.Value.Ohms, "ohm");
+                Compare(steps, line, other);
             }
+
+            wrong.AddRange(others.SelectMany(other => Disagreements(line, other, $"that of the alternate {other.PartNumber}")));
         }
 
         return new Finding
@@ -118,7 +145,35 @@ public static class BillRule
             Cell = line.Cell,
             Text = wrong.Count == 0 ? null : Sentence(string.Join("; ", wrong.Distinct(StringComparer.Ordinal))),
             Missing = wrong.Count > 0 ? [] : missing,
+            Derivation = steps,
         };
+    }
+
+    /// <summary>Where a line and a part row disagree in package or resistance.</summary>
+    private static IEnumerable<string> Disagreements(BillLine line, Part row, string whose)
+    {
+        if (line.Package is { } package && row.Package is { } tabled && !PackageName.Agrees(package, tabled))
+        {
+            yield return $"the bill's package is {package}, {whose} {tabled}";
+        }
+
+        if (row is ResistorPart resistor && Differs(line, resistor))
+        {
+            yield return $"the bill's value is {EngineeringNotation.Format(line.Resistance!.Value.Ohms, "ohm")}, {whose} {EngineeringNotation.Format(resistor.Resistance.Value.Ohms, "ohm")}";
+        }
+    }
+
+    private static bool Differs(BillLine line, ResistorPart resistor) =>
+        line.Resistance is { } value && Math.Abs(value.Ohms - resistor.Resistance.Value.Ohms) > 1e-6 * value.Ohms;
+
+    /// <summary>Writes down what a line is held to in one row of the part table.</summary>
+    private static void Compare(Derivation steps, BillLine line, Part row)
+    {
+        steps.Note($"Part table row of {row.PartNumber}{(row.Manufacturer is { } maker ? " by " + maker : string.Empty)}: package {row.Package ?? "not given"}; the bill says {line.Package ?? "nothing"}.", row.Cell);
+        if (row is ResistorPart resistor && line.Resistance is { } value)
+        {
+            steps.Note($"Resistance {EngineeringNotation.Format(resistor.Resistance.Value.Ohms, "ohm", 6)}; the bill says {EngineeringNotation.Format(value.Ohms, "ohm", 6)}.", resistor.Resistance.Cell);
+        }
     }
 
     private static string Sentence(string text) => char.ToUpperInvariant(text[0]) + text[1..] + ".";

@@ -20,7 +20,7 @@ public static class ChannelAssembly
         ArgumentNullException.ThrowIfNull(readings);
         ArgumentNullException.ThrowIfNull(boardFindings);
         List<string> gaps = [.. missing];
-        gaps.AddRange(channel.RoleFaults.Select(f => "a bill that serves the role of " + f.Reference));
+        gaps.AddRange(channel.RoleFaults.Where(f => !f.OfAlternate).Select(f => "a bill that serves the role of " + f.Reference));
         List<Finding> findings = [];
         ReadingJudgement? worst = null;
         if (readings.Count > 0)
@@ -53,7 +53,7 @@ public static class ChannelAssembly
         {
             // What could not be judged is said rule by rule: none is silently absent.
             findings = readings.Count > 0
-                ? [.. findings.Select(f => f.Verdict == Verdict.Nonconforming ? f : f with { Verdict = Verdict.NotVerified, Missing = gaps })]
+                ? [.. findings.Select(f => f.Verdict == Verdict.Nonconforming ? f : f with { Verdict = Verdict.NotVerified, Missing = gaps, Concession = null })]
                 : [.. RuleBook.StateRules.Where(r => r.AlwaysAsked).Select(r => r.Id).Append(PinCurrentRule.Id).Distinct().Select(id => new Finding
                     {
                         Channel = channel.Name, Rule = id, Verdict = Verdict.NotVerified, Source = "not judged", Cell = channel.Cell, Missing = gaps,

@@ -1,3 +1,4 @@
+using System.Globalization;
 using PartCheck.Channels;
 using PartCheck.Derating;
 using PartCheck.OperatingPoints;
@@ -33,7 +34,7 @@ public sealed class ChannelJudge
             for (int s = 0; s <= slots; s++)
             {
                 Part? part = s < slots && model.Slots.Of(s) is { Count: > 0 } placements ? placements[0].Part : null;
-                string? kind = part switch { Transistor => "npn", ResistorPart => "resistor", _ => null };
+                string? kind = part switch { Transistor => "npn", ResistorPart => "resistor", LedPart => "led", _ => null };
                 string? style = (part as ResistorPart)?.Style;
                 rows[r, s] = new RuleRows(derating.For(rules[r].Id, kind, style), derating.For("r-power", kind, style));
                 applies[r, s] = (rules[r], part) switch
@@ -41,6 +42,7 @@ public sealed class ChannelJudge
                     (TransistorRule rule, Transistor transistor) =>
                         rule.AppliesTo(model.Slots.Of(s)[0].Role) && rule.Asked(transistor, model.Channel, rows[r, s]),
                     (ResistorRule rule, ResistorPart resistor) => rule.AppliesTo(resistor),
+                    (LedRule, LedPart) => true,
                     (ChannelRule rule, _) => s == slots && rule.Asked(model.Channel, rows[r, s]),
                     _ => false,
                 };
@@ -76,9 +78,10 @@ public sealed class ChannelJudge
         }
 
         SolvedState? nominal = WorstCase.Nominal(model, pin);
-        return new ReadingJudgement(model.Channel, Findings(total), nominal, total.LoadMin, total.LoadMax, total.PinMax, total.Corners, total.NotSolved + (nominal is null ? 1 : 0))
+        return new ReadingJudgement(model.Channel, Findings(total, pin), nominal, total.LoadMin, total.LoadMax, total.PinMax, total.Corners, total.NotSolved + (nominal is null ? 1 : 0))
         {
             HeatMax = total.HeatMax,
+            PinState = total.PinState,
             Assumed = total.ControlHeld
                 ? [new Assumption("hFE of the control beyond its points", model.Control.Part.PartNumber, "the outermost value held")]
                 : [],
@@ -87,7 +90,7 @@ public sealed class ChannelJudge
         };
     }
 
-    /// <summary>Heat of everything on the board that belongs to the channel, the load left out [W].</summary>
+    /// <summary>Heat while on of everything on the board that belongs to the channel, the load left out [W].</summary>
     private static double Heat(SolvedState state)
     {
         double sum = 0;
@@ -126,7 +129,12 @@ public sealed class ChannelJudge
             }
         }
 
-        into.PinMax = Math.Max(into.PinMax, state.PinCurrent);
+        if (state.PinCurrent > into.PinMax)
+        {
+            into.PinMax = state.PinCurrent;
+            into.PinState = state;
+        }
+
         int channelSlot = model.Slots.Count;
         for (int r = 0; r < rules.Count; r++)
         {
@@ -160,6 +168,13 @@ public sealed class ChannelJudge
                     }
 
                     break;
+                case LedRule rule:
+                    for (int s = model.Slots.FirstLed; s < model.Slots.Count; s++)
+                    {
+                        into.At(r, s).Take(rule.Evaluate(state, (LedPart)model.Slots.Of(s)[0].Part, model.Channel, rows[r, s]), state);
+                    }
+
+                    break;
                 case ChannelRule rule when applies[r, channelSlot]:
                     into.At(r, channelSlot).Take(rule.Evaluate(state, model.Channel, rows[r, channelSlot]), state);
                     break;
@@ -183,7 +198,7 @@ public sealed class ChannelJudge
         }
     }
 
-    private List<Finding> Findings(Accumulator total)
+    private List<Finding> Findings(Accumulator total, PinSource pin)
     {
         List<Finding> findings = [];
         for (int r = 0; r < rules.Count; r++)
@@ -198,13 +213,13 @@ public sealed class ChannelJudge
                 Worst worst = total.At(r, s);
                 if (s == model.Slots.Count)
                 {
-                    findings.Add(Make(r, s, worst, null));
+                    findings.Add(Make(r, s, worst, null, pin));
                     continue;
                 }
 
                 foreach (Placement placement in model.Slots.Of(s))
                 {
-                    findings.Add(Make(r, s, worst, placement));
+                    findings.Add(Make(r, s, worst, placement, pin));
                 }
             }
         }
@@ -212,7 +227,7 @@ public sealed class ChannelJudge
         return findings;
     }
 
-    private Finding Make(int r, int s, Worst worst, Placement? placement)
+    private Finding Make(int r, int s, Worst worst, Placement? placement, PinSource pin)
     {
         Rule rule = rules[r];
         Stress stress = worst.Stress;
@@ -221,11 +236,14 @@ public sealed class ChannelJudge
         {
             (TransistorRule t, Transistor part) => t.DecidingCell(part),
             (ResistorRule t, ResistorPart part) => t.DecidingCell(part),
+            (LedRule t, LedPart part) => t.DecidingCell(part),
             (ChannelRule t, _) => t.DecidingCell(model.Channel, stress),
             _ => null,
         };
         string? text = rule is ResistorVoltageRule && placement?.Part is ResistorPart { WorkingVoltageMax: null, Resistance.Value.Ohms: > 0 }
-            ? "no limiting element voltage given: judged by sqrt(P R) alone" : null;
+            ? "no limiting element voltage given: judged by sqrt(P R) alone"
+            : rule is PowerRule && PulsedHeat.AveragedShare(model.Channel.Conditions) is < 1 and var duty
+            ? string.Create(CultureInfo.InvariantCulture, $"averaged over a duty of {duty * 100:0.###} %") : null;
         return new Finding
         {
             Channel = model.Channel.Name,
@@ -233,6 +251,7 @@ public sealed class ChannelJudge
             Reference = placement?.Reference,
             PartNumber = placement?.Part.PartNumber,
             Manufacturer = placement?.Part.Manufacturer,
+            Mix = model.Channel.Mix,
             State = worst.State?.State,
             Actual = judged && double.IsFinite(stress.Actual) ? stress.Actual : null,
             ActualIsAtLeast = stress.AtLeast,
@@ -245,6 +264,7 @@ public sealed class ChannelJudge
             Cell = cell,
             Text = text,
             Missing = worst.Verdict == Verdict.NotVerified ? [.. worst.Missing.DefaultIfEmpty("a state to judge")] : [],
+            Basis = worst.State is { } state ? new FindingBasis(model, pin, rule, rows[r, s], state, s, stress) : null,
         };
     }
 
@@ -262,6 +282,8 @@ public sealed class ChannelJudge
 
         public double PinMax { get; set; }
 
+        public SolvedState? PinState { get; set; }
+
         public double HeatMax { get; set; }
 
         public bool ControlHeld { get; set; }
@@ -276,7 +298,7 @@ public sealed class ChannelJudge
             NotSolved += later.NotSolved;
             LoadMin = Math.Min(LoadMin, later.LoadMin);
             LoadMax = Math.Max(LoadMax, later.LoadMax);
-            PinMax = Math.Max(PinMax, later.PinMax);
+            (PinMax, PinState) = later.PinMax > PinMax ? (later.PinMax, later.PinState) : (PinMax, PinState);
             HeatMax = Math.Max(HeatMax, later.HeatMax);
             ControlHeld |= later.ControlHeld;
             for (int s = 0; s < slots; s++)
@@ -308,8 +330,11 @@ public sealed record ReadingJudgement(
     BoundChannel Channel, IReadOnlyList<Finding> Findings, SolvedState? Nominal, double LoadMin, double LoadMax, double PinMax,
     int Corners, int NotSolved)
 {
-    /// <summary>Largest heat of the channel's parts on the board, the load left out [W].</summary>
+    /// <summary>Largest heat of the channel's parts on the board while on, whatever the duty, the load left out [W].</summary>
     public double HeatMax { get; init; }
+
+    /// <summary>The state of <see cref="PinMax"/>; null: the pin delivers nothing.</summary>
+    public SolvedState? PinState { get; init; }
 
     /// <summary>Each transistor with its highest junction temperature [K].</summary>
     public IReadOnlyList<(string Reference, double Tj)> Hottest { get; init; } = [];

@@ -40,6 +40,18 @@ public sealed class CurrentRule : ChannelRule
     }
 
     /// <inheritdoc/>
+    public override void Derive(Derivation steps, SolvedState state, BoundChannel channel, in RuleRows rows, in Stress stress)
+    {
+        ArgumentNullException.ThrowIfNull(channel);
+        Interval window = new(channel.Conditions.CurrentWindow.Min.Amperes, channel.Conditions.CurrentWindow.Max.Amperes);
+        bool upper = stress.Allowed == window.Max;
+        steps.Given("Imin", window.Min, "A", "Current min", channel.ConditionCells.GetValueOrDefault("Current min"))
+            .Given("Imax", window.Max, "A", "Current max", channel.ConditionCells.GetValueOrDefault("Current max"))
+            .Step("M", "(Imin + Imax) / 2", "A", "centre of the window")
+            .Judged("I", upper ? "Imax" : "Imin", upper ? "(I - M) / (Imax - M)" : "(M - I) / (M - Imin)", stress);
+    }
+
+    /// <inheritdoc/>
     public override string? DecidingCell(BoundChannel channel, in Stress stress)
     {
         ArgumentNullException.ThrowIfNull(channel);

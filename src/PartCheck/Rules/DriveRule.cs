@@ -44,6 +44,31 @@ public sealed class DriveRule : ChannelRule
     }
 
     /// <inheritdoc/>
+    public override void Derive(Derivation steps, SolvedState state, BoundChannel channel, in RuleRows rows, in Stress stress)
+    {
+        ArgumentNullException.ThrowIfNull(channel);
+        if (state.Drive is not { Exists: true } drive)
+        {
+            steps.Note("No base voltage below the pin's level makes the control collect (k' - 1) times the sum of the base currents: the loop does not regulate.");
+            return;
+        }
+
+        bool atPin = channel is { PullDown: not null, PullDownAt: PullDownAt.Pin };
+        string delivered = atPin ? "(Vsource - Vedge) / Rsource" : "(Vpin - Vedge) / (Rf + Rpin)";
+        steps.Given("k", rows.Own.Limit ?? 1, string.Empty, "drive factor of the derating table", rows.Own.Cell, rows.Own.Source)
+            .Step("k'", "max(k, 1.2)", string.Empty, "drive factor, at least 1.2")
+            .Solved("Vedge", drive.BaseVoltage, "V", "lowest base voltage at which the control regulates")
+            .Solved("IBedge", drive.SumBaseCurrent, "A", "sum of the pass transistors' base currents there")
+            .Solved("ICedge", drive.ControlCurrent, "A", "collector current of the control there")
+            .Balance("ICedge", "(k' - 1) x IBedge", "A", "the edge of regulation")
+            .Step(
+                "Iavailable", channel is { PullDown: not null, PullDownAt: PullDownAt.Base } ? delivered + " - Vedge / Rp" : delivered, "A",
+                "what pin, feed and pull-down deliver into the base node there")
+            .Step("Ineeded", "k' x IBedge", "A", "what the pass transistors need, k' times")
+            .AtLeast("Iavailable", "Ineeded", stress);
+    }
+
+    /// <inheritdoc/>
     public override string? DecidingCell(BoundChannel channel, in Stress stress)
     {
         ArgumentNullException.ThrowIfNull(channel);

@@ -45,5 +45,15 @@ public sealed class FilmRule : ResistorRule
     }
 
     /// <inheritdoc/>
+    public override void Derive(Derivation steps, SolvedState state, in ResistorPoint point, BoundChannel channel, in RuleRows rows, in Stress stress)
+    {
+        steps.Given("Rth", point.Part.RthJa!.Value.KelvinsPerWatt, "K/W", "thermal resistance of " + point.Part.PartNumber, point.Part.RthJa.Cell)
+            .Given("Tfilm", point.Part.TjMax!.Value.Celsius, "degC", "film maximum of " + point.Part.PartNumber, point.Part.TjMax.Cell)
+            .Step("Tf", "Ta + PR x Rth", "degC", "film temperature");
+        JunctionRule.DeriveAllowed(steps, "Tfilm", rows.Own);
+        steps.Rises("Tf", "Tallowed", stress);
+    }
+
+    /// <inheritdoc/>
     public override string? DecidingCell(ResistorPart part) => part.TjMax?.Cell;
 }

@@ -30,6 +30,9 @@ public sealed record Finding
     /// <summary>Manufacturer of the row judged.</summary>
     public string? Manufacturer { get; init; }
 
+    /// <summary>The mix of parts that is the worst, for each line that offers several part numbers or manufacturers; empty: none does.</summary>
+    public IReadOnlyList<MixedLine> Mix { get; init; } = [];
+
     /// <summary>State of the worst corner; null where no state is read.</summary>
     public ChannelState? State { get; init; }
 
@@ -66,8 +69,17 @@ public sealed record Finding
     /// <summary>One sentence, where numbers do not say it.</summary>
     public string? Text { get; init; }
 
+    /// <summary>What it was accepted under, where the verdict is concession.</summary>
+    public GrantedConcession? Concession { get; init; }
+
     /// <summary>What is missing, when not verified.</summary>
     public IReadOnlyList<string> Missing { get; init; } = [];
+
+    /// <summary>The state, rule and rows that it was judged from; null: it reads no state, or there was none to judge.</summary>
+    public FindingBasis? Basis { get; init; }
+
+    /// <summary>Its equation with numbers, where it reads no state; null: <see cref="Basis"/> gives it.</summary>
+    public Derivation? Derivation { get; init; }
 }
 
 /// <summary>Currents, voltages and temperatures of the nominal state, and the extremes of the load current.</summary>
@@ -100,10 +112,10 @@ public sealed record ChannelJudgement
     /// <summary>What a good channel measures on the bench; null: not solved.</summary>
     public TestLimits? TestLimits { get; init; }
 
-    /// <summary>Largest heat of the channel's parts on the board, the load left out [W]; null: not solved.</summary>
+    /// <summary>Largest heat of the channel's parts on the board while on, whatever the duty, the load left out [W]; null: not solved.</summary>
     public double? HeatMax { get; init; }
 
-    /// <summary>Each transistor with its highest junction temperature [K], hottest first.</summary>
+    /// <summary>Each transistor with its highest junction temperature, under PWM the peak [K], hottest first.</summary>
     public IReadOnlyList<(string Reference, double Tj)> Hottest { get; init; } = [];
 
     /// <summary>Corners solved, over all states and readings.</summary>

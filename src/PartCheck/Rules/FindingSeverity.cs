@@ -3,8 +3,8 @@ namespace PartCheck.Rules;
 /// <summary>Orders verdicts and findings by how bad they are.</summary>
 public static class FindingSeverity
 {
-    /// <summary>Nonconforming above not verified above conforms.</summary>
-    public static int Rank(Verdict verdict) => verdict switch { Verdict.Nonconforming => 2, Verdict.NotVerified => 1, _ => 0 };
+    /// <summary>Nonconforming above not verified above concession above conforms.</summary>
+    public static int Rank(Verdict verdict) => verdict switch { Verdict.Nonconforming => 3, Verdict.NotVerified => 2, Verdict.Concession => 1, _ => 0 };
 
     /// <summary>The worst of verdicts; nothing judged is not verified.</summary>
     public static Verdict WorstOf(IEnumerable<Verdict> verdicts)

@@ -63,6 +63,32 @@ public sealed class HeadroomRule : ChannelRule
     }
 
     /// <inheritdoc/>
+    public override void Derive(Derivation steps, SolvedState state, BoundChannel channel, in RuleRows rows, in Stress stress)
+    {
+        ArgumentNullException.ThrowIfNull(channel);
+        if (stress.Half)
+        {
+            steps.Given("Imin", channel.Conditions.CurrentWindow.Min.Amperes, "A", "Current min", channel.ConditionCells.GetValueOrDefault("Current min"))
+                .AtLeast("I", "Imin", stress);
+            return;
+        }
+
+        for (int i = 0; i < state.Transistors.Count; i++)
+        {
+            TransistorPoint point = state.Transistors[i];
+            if (point is { Role: Role.Pass, Part: { VceSatMax: { } saturation, VceSatAt: { } at } } && point.Vce == stress.Actual)
+            {
+                string leg = Derivation.SubjectOf(state, i);
+                steps.Given("VCEsat", saturation.Value.Volts, "V", "VCEsat max of " + point.Part.PartNumber, saturation.Cell)
+                    .Given("Isat", at.Amperes, "A", "collector current that it holds at", saturation.Cell)
+                    .Step("Vneeded", $"VCEsat x max(1, IC{leg} / Isat)", "V", "VCEsat at this current")
+                    .AtLeast("VCE" + leg, "Vneeded", stress);
+                return;
+            }
+        }
+    }
+
+    /// <inheritdoc/>
     public override string? DecidingCell(BoundChannel channel, in Stress stress)
     {
         ArgumentNullException.ThrowIfNull(channel);

@@ -26,6 +26,13 @@ public sealed class IcRule : TransistorRule
             : Stress.NotVerified("IC of " + point.Part.PartNumber);
 
     /// <inheritdoc/>
+    public override void Derive(Derivation steps, SolvedState state, in TransistorPoint point, BoundChannel channel, in RuleRows rows, in Stress stress)
+    {
+        steps.Given("ICmax", point.Part.Ic!.Value.Amperes, "A", "IC rating of " + point.Part.PartNumber, point.Part.Ic.Cell).Factor(rows.Own)
+            .Step("ICallowed", "ICmax x F", "A", "derated rating").AtMost("IC#", "ICallowed", stress);
+    }
+
+    /// <inheritdoc/>
     public override string? DecidingCell(Transistor part) => part.Ic?.Cell;
 }
 
@@ -55,6 +62,13 @@ public sealed class ZeroOhmCurrentRule : ResistorRule
         point.Part.Ic is { } rating
             ? Stress.AtMostOf(point.Current, rating.Value.Amperes * rows.Own.Factor)
             : Stress.NotVerified("IC of " + point.Part.PartNumber);
+
+    /// <inheritdoc/>
+    public override void Derive(Derivation steps, SolvedState state, in ResistorPoint point, BoundChannel channel, in RuleRows rows, in Stress stress)
+    {
+        steps.Given("Imax", point.Part.Ic!.Value.Amperes, "A", "rated current of " + point.Part.PartNumber, point.Part.Ic.Cell).Factor(rows.Own)
+            .Step("Iallowed", "Imax x F", "A", "derated rating").AtMost("IR", "Iallowed", stress);
+    }
 
     /// <inheritdoc/>
     public override string? DecidingCell(ResistorPart part) => part.Ic?.Cell;

@@ -7,7 +7,7 @@ using PartCheck.Quantities;
 namespace PartCheck.Rules;
 
 /// <summary>
-/// Junction temperature, state on. Allowed: the lowest of Tmax x factor (a multiplication of degrees Celsius), Tmax - offset
+/// Junction temperature, state on, under PWM its peak. Allowed: the lowest of Tmax x factor (a multiplication of degrees Celsius), Tmax - offset
 /// and cap. Ratio (Tj - Ta)/(Tallowed - Ta). A junction that ran away is nonconforming, "at least" where it is held.
 /// </summary>
 public sealed class JunctionRule : TransistorRule
@@ -34,6 +34,25 @@ public sealed class JunctionRule : TransistorRule
         return Math.Min(allowed, row.Cap?.Kelvins ?? double.PositiveInfinity);
     }
 
+    /// <summary>Writes down <see cref="Allowed"/>.</summary>
+    /// <param name="steps">The derivation; the allowed temperature becomes <c>Tallowed</c> [degC].</param>
+    /// <param name="maximum">Symbol of the maximum.</param>
+    /// <param name="row">Derating row.</param>
+    public static void DeriveAllowed(Derivation steps, string maximum, DeratingRow row)
+    {
+        ArgumentNullException.ThrowIfNull(steps);
+        ArgumentNullException.ThrowIfNull(row);
+        steps.Factor(row).Given("offset", row.Offset.Kelvins, "K", "distance from the maximum", row.Cell, row.Source);
+        string limits = $"{maximum} x F, {maximum} - offset";
+        if (row.Cap is { } cap)
+        {
+            steps.Given("Tcap", cap.Celsius, "degC", "upper bound of the limit", row.Cell, row.Source);
+            limits += ", Tcap";
+        }
+
+        steps.Step("Tallowed", $"min({limits})", "degC", "the lowest of factor (of degrees Celsius), offset and cap");
+    }
+
     /// <inheritdoc/>
     public override Stress Evaluate(SolvedState state, in TransistorPoint point, BoundChannel channel, in RuleRows rows)
     {
@@ -53,6 +72,25 @@ public sealed class JunctionRule : TransistorRule
         }
 
         return stress.Verdict == Verdict.Conforms && MissingData.Heat(state) is { } missing ? Stress.NotVerified(missing) : stress;
+    }
+
+    /// <inheritdoc/>
+    public override void Derive(Derivation steps, SolvedState state, in TransistorPoint point, BoundChannel channel, in RuleRows rows, in Stress stress)
+    {
+        if (point.Held)
+        {
+            steps.Note("The junction runs away; it is held at its bound, so that its temperature is at least this.");
+        }
+
+        if (point.Part.TjMax is not { } max)
+        {
+            steps.Broken("Tj#");
+            return;
+        }
+
+        steps.Given("Tmax#", max.Value.Celsius, "degC", "Tj max of " + point.Part.PartNumber, max.Cell);
+        DeriveAllowed(steps, "Tmax#", rows.Own);
+        steps.Rises("Tj#", "Tallowed", stress);
     }
 
     /// <inheritdoc/>

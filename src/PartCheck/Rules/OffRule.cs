@@ -68,6 +68,14 @@ public sealed class OffRule : ChannelRule
     }
 
     /// <inheritdoc/>
+    public override void Derive(Derivation steps, SolvedState state, BoundChannel channel, in RuleRows rows, in Stress stress)
+    {
+        ArgumentNullException.ThrowIfNull(channel);
+        steps.Given("Ioff", channel.Conditions.OffCurrentMax!.Value.Amperes, "A", "Off current max", channel.ConditionCells.GetValueOrDefault("Off current max"))
+            .AtMost("I", "Ioff", stress);
+    }
+
+    /// <inheritdoc/>
     public override string? DecidingCell(BoundChannel channel, in Stress stress)
     {
         ArgumentNullException.ThrowIfNull(channel);

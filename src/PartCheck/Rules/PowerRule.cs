@@ -5,7 +5,7 @@ using PartCheck.Parts;
 namespace PartCheck.Rules;
 
 /// <summary>
-/// Dissipation, state on, at the ambient where the ratio is worst. Allowed at ambient T:
+/// Dissipation, state on, under PWM from 1 kHz up its average over the period at the largest duty, at the ambient where the ratio is worst. Allowed at ambient T:
 /// factor x min(Power, Power - slope (T - flat), (Tmax - T)/RthJA) [W]; slope from (Tmax - flat) where the table gives none;
 /// nothing from Tmax up, whatever the slope says.
 /// MIL-PRF-19500/255 1.3 states its ratings so: flat at PT, then a line to zero at TJ maximum.
@@ -60,7 +60,7 @@ public sealed class PowerRule : TransistorRule
             rated = 0;
         }
 
-        Stress stress = Stress.AtMostOf(point.Power, rated * rows.Own.Factor);
+        Stress stress = Stress.AtMostOf(point.Power * point.AveragedShare, rated * rows.Own.Factor);
         if (stress.Verdict != Verdict.Conforms)
         {
             return stress;
@@ -69,6 +69,44 @@ public sealed class PowerRule : TransistorRule
         // With RthJA but no Tj max the third limit is unknown: what is known can refuse, but not clear.
         string? missing = part is { RthJa: not null, TjMax: null } ? "Tj max of " + part.PartNumber : MissingData.Heat(state);
         return missing is null ? stress : Stress.NotVerified(missing);
+    }
+
+    /// <inheritdoc/>
+    public override void Derive(Derivation steps, SolvedState state, in TransistorPoint point, BoundChannel channel, in RuleRows rows, in Stress stress)
+    {
+        Transistor part = point.Part;
+        double ambient = state.Corner.Ambient;
+        steps.Given("Prated#", part.Power!.Value.Watts, "W", "rated power of " + part.PartNumber, part.Power.Cell)
+            .Given("Tflat#", part.FlatTo.Celsius, "degC", "the rated power holds up to here", part.PowerFlatTo?.Cell, assumed: part.PowerFlatTo is null);
+        string line = "Prated#";
+        if (part.TjMax is { } max)
+        {
+            steps.Given("Tmax#", max.Value.Celsius, "degC", "Tj max of " + part.PartNumber, max.Cell);
+        }
+
+        if (part.PowerSlope is { } slope)
+        {
+            steps.Given("slope", slope.Value, "W/K", "slope of the rated power above that", slope.Cell);
+            line = "Prated# - slope x max(0, Ta - Tflat#)";
+        }
+        else if (part.TjMax is { } zero)
+        {
+            line = zero.Value.Kelvins > part.FlatTo.Kelvins ? "Prated# x (1 - max(0, Ta - Tflat#) / (Tmax# - Tflat#))" : "0 W";
+        }
+
+        steps.Step("Pline", line, "W", "rated power at the ambient: flat, then a line");
+        bool thermal = part is { TjMax: not null, RthJa: not null };
+        if (thermal)
+        {
+            steps.Step("Pth", "(Tmax# - Ta) / RthJA#", "W", "what the thermal resistance lets through up to Tj max");
+        }
+
+        bool none = ambient >= part.TjMax?.Value.Kelvins;
+        steps.Factor(rows.Own)
+            .Step(
+                "Pallowed", none ? "0 W" : thermal ? "F x max(0, min(Pline, Pth))" : "F x max(0, Pline)", "W",
+                none ? "nothing: the ambient is at or above Tj max" : "derated power")
+            .AtMost("P#", "Pallowed", stress);
     }
 
     /// <inheritdoc/>

@@ -62,6 +62,52 @@ public sealed class ResistorPowerRule : ResistorRule
         return ambient >= zero ? 0 : ambient <= flat ? full : full * (zero - ambient) / (zero - flat);
     }
 
+    /// <summary>Writes down <see cref="Allowed"/>, which must be known.</summary>
+    /// <param name="steps">The derivation; the allowed power becomes <c>Pallowed</c> [W].</param>
+    /// <param name="part">The resistor.</param>
+    /// <param name="row">Derating row of this rule.</param>
+    /// <param name="ambient">Ambient temperature [K].</param>
+    public static void DeriveAllowed(Derivation steps, ResistorPart part, DeratingRow row, double ambient)
+    {
+        ArgumentNullException.ThrowIfNull(steps);
+        ArgumentNullException.ThrowIfNull(part);
+        ArgumentNullException.ThrowIfNull(row);
+        steps.Given("Prated", part.Power!.Value.Watts, "W", "rated power of " + part.PartNumber, part.Power.Cell)
+            .Given("T1", part.FlatTo.Celsius, "degC", "the rated power holds up to here", part.PowerFlatTo?.Cell, assumed: part.PowerFlatTo is null)
+            .Factor(row, "Fp");
+        if (part.TjMax is not { } film)
+        {
+            steps.Step("Pallowed", "Prated x Fp", "W", "derated power, on its flat part");
+            return;
+        }
+
+        string t3 = "Tfilm";
+        steps.Given("Tfilm", film.Value.Celsius, "degC", "film maximum of " + part.PartNumber, film.Cell);
+        if (part.PowerSlope is { Value: > 0 } slope)
+        {
+            t3 = "T3";
+            steps.Given("slope", slope.Value, "W/K", "slope of the rated power", slope.Cell)
+                .Step("T3", "min(Tfilm, T1 + Prated / slope)", "degC", "where the rated power reaches zero");
+        }
+
+        if (row is { Zero: ZeroTemperature.Fixed, ZeroAt: { } fix })
+        {
+            steps.Given("Tzero", fix.Celsius, "degC", "zero temperature of the derating table", row.Cell, row.Source);
+        }
+
+        string zero = row switch
+        {
+            { Zero: ZeroTemperature.Parallel } => $"min({t3}, Fp x ({t3} - T1) + T1)",
+            { Zero: ZeroTemperature.Fixed, ZeroAt: not null } => $"min({t3}, Tzero)",
+            _ => t3,
+        };
+        steps.Step("T2", zero, "degC", "where the derated power reaches zero");
+        double known = Allowed(part, row, ambient);
+        steps.Step(
+            "Pallowed", known == 0 ? "0 W" : ambient <= part.FlatTo.Kelvins ? "Prated x Fp" : "Prated x Fp x (T2 - Ta) / (T2 - T1)", "W",
+            known == 0 ? "nothing: the ambient is at or above T2" : "derated power at the ambient");
+    }
+
     /// <inheritdoc/>
     public override Stress Evaluate(SolvedState state, in ResistorPoint point, BoundChannel channel, in RuleRows rows)
     {
@@ -74,6 +120,13 @@ public sealed class ResistorPowerRule : ResistorRule
         return double.IsNaN(allowed)
             ? Stress.NotVerified("Film max of " + point.Part.PartNumber)
             : Stress.AtMostOf(point.Power, allowed);
+    }
+
+    /// <inheritdoc/>
+    public override void Derive(Derivation steps, SolvedState state, in ResistorPoint point, BoundChannel channel, in RuleRows rows, in Stress stress)
+    {
+        DeriveAllowed(steps, point.Part, rows.Own, state.Corner.Ambient);
+        steps.AtMost("PR", "Pallowed", stress);
     }
 
     /// <inheritdoc/>

@@ -45,5 +45,34 @@ public sealed class ResistorVoltageRule : ResistorRule
     }
 
     /// <inheritdoc/>
+    public override void Derive(Derivation steps, SolvedState state, in ResistorPoint point, BoundChannel channel, in RuleRows rows, in Stress stress)
+    {
+        if (point.Resistance == 0)
+        {
+            steps.Note("A zero-ohm resistor has no voltage across it.");
+            return;
+        }
+
+        string limit = string.Empty;
+        if (point.Part.WorkingVoltageMax is { } max)
+        {
+            steps.Given("Vmax", max.Value.Volts, "V", "limiting element voltage of " + point.Part.PartNumber, max.Cell).Factor(rows.Own);
+            limit = "Vmax x F";
+        }
+        else
+        {
+            steps.Note("No limiting element voltage is given: sqrt(P R) alone.");
+        }
+
+        if (!double.IsNaN(ResistorPowerRule.Allowed(point.Part, rows.ResistorPower, state.Corner.Ambient)))
+        {
+            ResistorPowerRule.DeriveAllowed(steps, point.Part, rows.ResistorPower, state.Corner.Ambient);
+            limit = limit.Length == 0 ? "sqrt(Pallowed x @)" : $"min({limit}, sqrt(Pallowed x @))";
+        }
+
+        steps.Step("Vallowed", limit, "V", "the lower of both limits").AtMost("VR", "Vallowed", stress);
+    }
+
+    /// <inheritdoc/>
     public override string? DecidingCell(ResistorPart part) => part.WorkingVoltageMax?.Cell ?? part.Power?.Cell;
 }

@@ -48,6 +48,9 @@ public abstract class TransistorRule : Rule
     /// <summary>Judges one transistor in one state.</summary>
     public abstract Stress Evaluate(SolvedState state, in TransistorPoint point, BoundChannel channel, in RuleRows rows);
 
+    /// <summary>Writes the equation down with its numbers, for a state that <see cref="Evaluate"/> judged: the same equation, as a person reads it.</summary>
+    public abstract void Derive(Derivation steps, SolvedState state, in TransistorPoint point, BoundChannel channel, in RuleRows rows, in Stress stress);
+
     /// <summary>The cell of the rating that decides; null: not given.</summary>
     public abstract string? DecidingCell(Transistor part);
 }
@@ -64,8 +67,24 @@ public abstract class ResistorRule : Rule
     /// <summary>Judges one resistor in one state.</summary>
     public abstract Stress Evaluate(SolvedState state, in ResistorPoint point, BoundChannel channel, in RuleRows rows);
 
+    /// <summary>Writes the equation down with its numbers, for a state that <see cref="Evaluate"/> judged: the same equation, as a person reads it.</summary>
+    public abstract void Derive(Derivation steps, SolvedState state, in ResistorPoint point, BoundChannel channel, in RuleRows rows, in Stress stress);
+
     /// <summary>The cell of the rating that decides; null: not given.</summary>
     public abstract string? DecidingCell(ResistorPart part);
+}
+
+/// <summary>A rule that judges the load's LEDs, where the channel names them.</summary>
+public abstract class LedRule : Rule
+{
+    /// <inheritdoc/>
+    public override bool AlwaysAsked => false;
+
+    /// <summary>Judges one LED in one state.</summary>
+    public abstract Stress Evaluate(SolvedState state, LedPart part, BoundChannel channel, in RuleRows rows);
+
+    /// <summary>The cell of the rating that decides; null: not given.</summary>
+    public abstract string? DecidingCell(LedPart part);
 }
 
 /// <summary>A rule that judges the channel as a whole.</summary>
@@ -76,6 +95,9 @@ public abstract class ChannelRule : Rule
 
     /// <summary>Judges the channel in one state.</summary>
     public abstract Stress Evaluate(SolvedState state, BoundChannel channel, in RuleRows rows);
+
+    /// <summary>Writes the equation down with its numbers, for a state that <see cref="Evaluate"/> judged: the same equation, as a person reads it.</summary>
+    public abstract void Derive(Derivation steps, SolvedState state, BoundChannel channel, in RuleRows rows, in Stress stress);
 
     /// <summary>The cell of the limit that decides; null: not given.</summary>
     /// <param name="channel">The channel.</param>

@@ -1,3 +1,4 @@
+using System.Globalization;
 using PartCheck.Channels;
 using PartCheck.OperatingPoints;
 
@@ -84,6 +85,37 @@ public sealed class SharingRule : ChannelRule
         // A missing tolerance was solved as zero, missing thermal data as the cold start alone: they can refuse, but not clear.
         string? missing = MissingData.Tolerance(state) ?? MissingData.Heat(state);
         return stress.Verdict == Verdict.Conforms && missing is not null ? Stress.NotVerified(missing) : stress;
+    }
+
+    /// <inheritdoc/>
+    public override void Derive(Derivation steps, SolvedState state, BoundChannel channel, in RuleRows rows, in Stress stress)
+    {
+        ArgumentNullException.ThrowIfNull(channel);
+        List<string> shares = [];
+        List<string> sum = [];
+        int legs = 0;
+        for (int i = 0; i < state.Transistors.Count; i++)
+        {
+            TransistorPoint point = state.Transistors[i];
+            if (point.Role == Role.Pass)
+            {
+                string leg = Derivation.SubjectOf(state, i);
+                steps.Given("Rn" + leg, point.NominalSense, "ohm", "nominal sense resistance")
+                    .Step("S" + leg, $"VE{leg} / Rs{leg} x Rn{leg}", "V", "share of a leg: its current times the nominal resistance");
+                shares.Add("S" + leg);
+                sum.Add(point.Count == 1 ? "S" + leg : string.Create(CultureInfo.InvariantCulture, $"{point.Count} x S{leg}"));
+                legs += point.Count;
+            }
+        }
+
+        bool own = channel.Conditions.SharingMax is not null;
+        steps.Step("Smean", string.Create(CultureInfo.InvariantCulture, $"({string.Join(" + ", sum)}) / {legs}"), "V", "mean of all legs")
+            .Step("excess", $"max({string.Join(", ", shares)}) / Smean - 1", string.Empty, "how far the largest lies above the mean")
+            .Given(
+                "Smax", channel.Conditions.SharingMax ?? rows.Own.Limit ?? 1, string.Empty, own ? "Sharing max" : "limit of the derating table",
+                own ? channel.ConditionCells.GetValueOrDefault("Sharing max") : rows.Own.Cell, own ? null : rows.Own.Source)
+            .Step("allowed", "Smax - 1", string.Empty, "allowed excess")
+            .AtMost("excess", "allowed", stress);
     }
 
     /// <inheritdoc/>

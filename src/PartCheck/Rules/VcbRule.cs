@@ -40,5 +40,24 @@ public sealed class VcbRule : TransistorRule
     }
 
     /// <inheritdoc/>
+    public override void Derive(Derivation steps, SolvedState state, in TransistorPoint point, BoundChannel channel, in RuleRows rows, in Stress stress)
+    {
+        if (point.Role == Role.Pass)
+        {
+            steps.Given("Vpeak", channel.Conditions.SupplyPeak.Volts, "V", "Supply peak", VceRule.PeakCell(channel))
+                .Step(
+                    "VCBmax", state.State == ChannelState.Off ? "Vpeak - Vb" : "VCB# + max(0, Vpeak - Vsupply)", "V",
+                    state.State == ChannelState.Off ? "the load drops nothing" : "the collector follows the supply's peak");
+        }
+        else
+        {
+            steps.Step("VCBmax", "VCB#", "V", "collector-base voltage");
+        }
+
+        steps.Given("VCBO", point.Part.Vcbo!.Value.Volts, "V", "rating of " + point.Part.PartNumber, point.Part.Vcbo.Cell).Factor(rows.Own)
+            .Step("VCBallowed", "VCBO x F", "V", "derated rating").AtMost("VCBmax", "VCBallowed", stress);
+    }
+
+    /// <inheritdoc/>
     public override string? DecidingCell(Transistor part) => part.Vcbo?.Cell;
 }

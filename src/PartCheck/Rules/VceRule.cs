@@ -40,5 +40,26 @@ public sealed class VceRule : TransistorRule
     }
 
     /// <inheritdoc/>
+    public override void Derive(Derivation steps, SolvedState state, in TransistorPoint point, BoundChannel channel, in RuleRows rows, in Stress stress)
+    {
+        if (point.Role == Role.Pass)
+        {
+            steps.Given("Vpeak", channel.Conditions.SupplyPeak.Volts, "V", "Supply peak: the load drops nothing", PeakCell(channel))
+                .Step("VCEmax", "Vpeak", "V", "the whole of it stands across the pass transistor");
+        }
+        else
+        {
+            steps.Step("VCEmax", "min(Vb, Vpin)", "V", "base-node voltage, bounded by the pin's level");
+        }
+
+        steps.Given("VCEO", point.Part.Vceo!.Value.Volts, "V", "rating of " + point.Part.PartNumber, point.Part.Vceo.Cell).Factor(rows.Own)
+            .Step("VCEallowed", "VCEO x F", "V", "derated rating").AtMost("VCEmax", "VCEallowed", stress);
+    }
+
+    /// <inheritdoc/>
     public override string? DecidingCell(Transistor part) => part.Vceo?.Cell;
+
+    /// <summary>The cell of the highest supply: Supply peak, or Supply max where no peak is given.</summary>
+    internal static string? PeakCell(BoundChannel channel) => channel.ConditionCells.GetValueOrDefault(
+        channel.Conditions.SupplyPeak.Volts == channel.Conditions.Supply.Max.Volts ? "Supply max" : "Supply peak");
 }

@@ -11,4 +11,7 @@ public enum Verdict
 
     /// <summary>The requirement is not met.</summary>
     Nonconforming,
+
+    /// <summary>The requirement is not met, and that was accepted in writing by someone named, until a day named.</summary>
+    Concession,
 }

@@ -17,6 +17,7 @@ internal static class ColumnKindMap
         ColumnKind.TemperatureDelta => QuantityKind.TemperatureDelta,
         ColumnKind.ThermalResistance => QuantityKind.ThermalResistance,
         ColumnKind.PowerSlope => QuantityKind.PowerSlope,
+        ColumnKind.CurrentSlope => QuantityKind.CurrentSlope,
         ColumnKind.Frequency => QuantityKind.Frequency,
         ColumnKind.Time => QuantityKind.Time,
         ColumnKind.Percent => QuantityKind.Percent,

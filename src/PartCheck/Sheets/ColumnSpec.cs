@@ -30,6 +30,9 @@ public enum ColumnKind
     /// <summary>W/K.</summary>
     PowerSlope,
 
+    /// <summary>A/K.</summary>
+    CurrentSlope,
+
     /// <summary>Hertz.</summary>
     Frequency,
 

@@ -18,7 +18,9 @@ public class RoomTests
         ["OperatingPoints"] = ["Quantities", "Devices", "Parts", "Channels"],
         ["Derating"] = ["Quantities", "Sheets"],
         ["Rules"] = ["Quantities", "Bills", "Parts", "Channels", "OperatingPoints", "Derating"],
-        ["Reports"] = ["Quantities", "Sheets", "Bills", "Parts", "Channels", "OperatingPoints", "Rules"],
+        ["Concessions"] = ["Quantities", "Sheets", "Bills", "Rules"],
+        ["Workings"] = ["Quantities", "Devices", "Parts", "Channels", "OperatingPoints", "Derating", "Rules"],
+        ["Reports"] = ["Quantities", "Sheets", "Bills", "Parts", "Channels", "OperatingPoints", "Rules", "Workings"],
     };
 
     [Fact]

@@ -87,7 +87,8 @@ public class BillFileTests : SheetsFixture
     {
         BillReading reading = Text("Ref,MPN\n\"R1,R2\",RK-33\n");
         Assert.Contains("There is no quantity column: references are counted.", reading.Bill!.Tables[0].Notes);
-        Assert.Equal(2, reading.Bill.Lines[0].Placed);
+        Assert.Equal(["R1", "R2"], reading.Bill.Lines[0].References);
+        Assert.Empty(reading.Complaints);
     }
 
     [Theory]

@@ -21,11 +21,40 @@ public sealed class ChannelBinderTests
     }
 
     [Theory]
+    [InlineData("direct, -", true)]
+    [InlineData("-, Direct", false)]
+    public void OneLegMayBeSensedDirectly(string averaging, bool first)
+    {
+        board.Row["Pass"] = "Q1, Q3";
+        board.Row["Sense"] = "R3, R1";
+        board.Row["Averaging"] = averaging;
+        Channel channel = Assert.Single(board.Bind());
+        Assert.Empty(board.Complaints);
+        Assert.All(Assert.Single(channel.Readings).Legs, l => Assert.Null(l.Averaging));
+        Assert.Equal([first, !first], channel.Readings[0].Legs.Select(l => l.Sensed));
+        Assert.Equal(["Q1", "Q3", "R3", "R1", "Q2", "R2"], channel.References);
+    }
+
+    [Theory]
+    [InlineData("direct, direct")]
+    [InlineData("direct, R9")]
+    public void WhereSeveralLegsAreSensedNoneIsDirect(string averaging)
+    {
+        board.Row["Pass"] = "Q1, Q3";
+        board.Row["Sense"] = "R3, R1";
+        board.Row["Averaging"] = averaging;
+        Assert.Empty(Assert.Single(board.Bind()).Readings);
+        Assert.Contains("Only a leg that the control senses alone may be joined to it directly", board.Only(), StringComparison.Ordinal);
+    }
+
+    [Theory]
     [InlineData("Sense", "R77", "R77 (sense) is not on the bill.")]
     [InlineData("Sense", "Q3", "Q3 (sense) is a transistor: a resistor is wanted.")]
     [InlineData("Control", "R8", "R8 (control) is a resistor: a transistor is wanted.")]
     [InlineData("Sense", "R10", "R10 (sense) has zero ohm: only averaging may.")]
     [InlineData("Control", "Q1", "Q1 serves as pass and as control.")]
+    [InlineData("LED", "D1", "D1 (LED) is not on the bill.")]
+    [InlineData("LED", "R3", "R3 (LED) is a resistor: an LED is wanted.")]
     public void ARoleThatTheBillDoesNotServeIsAFault(string column, string reference, string text)
     {
         board.Row[column] = reference;
@@ -33,6 +62,28 @@ public sealed class ChannelBinderTests
         Assert.Equal(text, Assert.Single(channel.RoleFaults).Text);
         Assert.Empty(channel.Readings);
         Assert.Empty(board.Complaints);
+    }
+
+    [Fact]
+    public void AnLedIsNoResistor()
+    {
+        board.Parts[3] = "RK-33|led";
+        Assert.Equal("R1 (sense) is an LED: a resistor is wanted.", Assert.Single(Assert.Single(board.Bind()).RoleFaults).Text);
+    }
+
+    // Nothing is solved with an LED's row: what is missing of it stays with the LED.
+    [Theory]
+    [InlineData("D1|LW-3", "part table row of LW-3")]
+    [InlineData("D1", "part number of D1")]
+    [InlineData("D1|LW-4|Kelbrook", "part table row of LW-4 by Kelbrook")]
+    public void AnLedWithoutItsRowLeavesTheChannelToBeJudged(string line, string missing)
+    {
+        board.Row["LED"] = "D1";
+        board.Bill.Add(line);
+        board.Parts.Add("LW-4|led|Tarnwood");
+        Channel channel = Assert.Single(board.Bind());
+        Assert.Empty(channel.Missing);
+        Assert.Equal(missing, ((PartCheck.Parts.LedPart)Assert.Single(Assert.Single(channel.Readings).Leds).Part).Missing);
     }
 
     [Fact]
@@ -121,8 +172,53 @@ public sealed class ChannelBinderTests
         {
             Assert.Equal("CH1", Assert.Single(board.Complaints).Channel);
             Assert.Contains("272 combinations", board.Only(), StringComparison.Ordinal);
-            Assert.Equal(["manufacturers on the bill"], channel.Missing);
+            Assert.Equal(["manufacturers on the bill, or fewer alternates"], channel.Missing);
         }
+    }
+
+    // Two parts on each of two lines: four mixes, the bill's own parts first.
+    [Fact]
+    public void EveryMixOfAlternatesOverTheLinesIsAReadingAndNamesItself()
+    {
+        GiveAlternates("OX-9", "OX-8; ox-8, TQ-30");
+        IReadOnlyList<BoundChannel> readings = Assert.Single(board.Bind()).Readings;
+        Assert.Equal(
+            ["TQ-31 TQ-30", "OX-9 TQ-30", "TQ-31 OX-8", "OX-9 OX-8"], readings.Select(r => $"{r.Legs[0].PassPart.PartNumber} {r.ControlPart.PartNumber}"));
+        Assert.Equal(
+            ["Q1 TQ-31 False, Q2 TQ-30 False", "Q1 OX-9 True, Q2 TQ-30 False", "Q1 TQ-31 False, Q2 OX-8 True", "Q1 OX-9 True, Q2 OX-8 True"],
+            readings.Select(r => string.Join(", ", r.Mix.Select(m => $"{string.Join('+', m.References)} {m.PartNumber} {m.Alternate}"))));
+    }
+
+    [Fact]
+    public void AlternatesOfAnyManufacturerCountAndAChannelWithoutAChoiceHasNoMix()
+    {
+        Assert.Empty(Assert.Single(Assert.Single(board.Bind()).Readings).Mix);
+        GiveAlternates("OX-9", string.Empty);
+        board.Bill[1] = "Q1, Q3|TQ-31|Tarnwood||||OX-9";
+        board.Parts.Add("OX-9|npn|Tarnwood");
+        Assert.Equal([null, "Oxmoor", "Tarnwood"], Assert.Single(board.Bind()).Readings.Select(r => r.Mix[0].Alternate ? r.Mix[0].Manufacturer : null));
+    }
+
+    [Fact]
+    public void AnAlternateThatCannotPlayTheRoleIsAFaultOfItsOwnAndTheRestIsBound()
+    {
+        GiveAlternates("RK-33", string.Empty);
+        Channel channel = Assert.Single(board.Bind());
+        Assert.Single(channel.Readings);
+        RoleFault fault = Assert.Single(channel.RoleFaults);
+        Assert.Equal(("Alternate RK-33: Q1 (pass) is a resistor: a transistor is wanted.", true), (fault.Text, fault.OfAlternate));
+        Assert.Null(fault.Missing);
+    }
+
+    [Fact]
+    public void AnAlternateWithoutARowForTheMountingIsNotVerified()
+    {
+        GiveAlternates("OX-9", string.Empty);
+        board.Parts[^2] = "OX-9|npn|Oxmoor|FR4";
+        board.Row["Mounting"] = "ceramic";
+        Channel channel = Assert.Single(board.Bind());
+        Assert.Single(channel.Readings);
+        Assert.Equal("part table row of OX-9 on ceramic", Assert.Single(channel.RoleFaults).Missing);
     }
 
     [Fact]
@@ -152,6 +248,15 @@ public sealed class ChannelBinderTests
         board.Row["Feed"] = "R3";
         Assert.Empty(Assert.Single(board.Bind()).Readings);
         Assert.Contains("The channel's feed is R3 here and R2 by the bill's column Role.", board.Only(), StringComparison.Ordinal);
+    }
+
+    private void GiveAlternates(string pass, string control)
+    {
+        board.Bill[0] += "|Alternates";
+        board.Bill[1] = "Q1, Q3|TQ-31|||||" + pass;
+        board.Bill[2] = "Q2|TQ-30|||||" + control;
+        board.Parts.Add("OX-9|npn|Oxmoor");
+        board.Parts.Add("OX-8|npn|Oxmoor");
     }
 
     private void GiveRoles()

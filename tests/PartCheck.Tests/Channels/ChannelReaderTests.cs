@@ -37,6 +37,34 @@ public sealed class ChannelReaderTests
         Assert.Contains(new Assumption("LEDs", "CH1", leds == 3 ? "3" : "4"), channel.Assumed);
     }
 
+    // Six LEDs in two strings: three in series.
+    [Fact]
+    public void LedsOfTheLoadAreNamedAndCounted()
+    {
+        board.Row.Remove("LEDs");
+        board.Row["LED"] = "D1-D6";
+        board.Row["Strings"] = "2";
+        board.Row["String share max"] = "1.2";
+        board.Bill.Add("D1-D6|LW-3");
+        board.Parts.Add("LW-3|led|Tarnwood");
+        Channel channel = Assert.Single(board.Bind());
+        BoundChannel reading = Assert.Single(channel.Readings);
+        Assert.Empty(board.Complaints);
+        Assert.Equal(["D1", "D2", "D3", "D4", "D5", "D6"], reading.Leds.Select(l => l.Reference));
+        Assert.Equal((3, 2, 1.2), (reading.Conditions.Leds, reading.Conditions.Strings, reading.Conditions.StringShareMax));
+        Assert.Contains(new Assumption("LEDs", "CH1", "3"), channel.Assumed);
+        Assert.Contains("D6", channel.References);
+    }
+
+    [Fact]
+    public void LedsThatMakeNoEqualStringsAreTold()
+    {
+        board.Row["LED"] = "D1-D5";
+        board.Row["Strings"] = "2";
+        Assert.Empty(Assert.Single(board.Bind()).Readings);
+        Assert.Contains("5 LEDs do not make 2 equal strings.", board.Only(), StringComparison.Ordinal);
+    }
+
     [Fact]
     public void APullDownWithoutItsPlaceSitsAtTheBaseAssumed()
     {
@@ -77,6 +105,11 @@ public sealed class ChannelReaderTests
     [InlineData("Pass", "-", "The channel has no pass.")]
     [InlineData("Control", "-", "The channel has no control.")]
     [InlineData("Sense", "R1, -", "only averaging may leave a leg out")]
+    [InlineData("LED", "6", "\"6\" is no reference: LED names the load's LEDs on the bill")]
+    [InlineData("LED", "D1, -", "only averaging may leave a leg out")]
+    [InlineData("Strings", "1.5", "The number of strings is a whole number.")]
+    [InlineData("Strings", "0", "P2")]
+    [InlineData("String share max", "0.9", "P2")]
     public void AMistakeIsToldWithItsCellAndCostsThatChannelAlone(string column, string text, string told)
     {
         string good = board.Row.GetValueOrDefault(column) ?? string.Empty;

@@ -22,6 +22,7 @@ public sealed class DeratingLibraryTests
     [InlineData("stability", "npn", 0.5)]
     [InlineData("r-power", "resistor", 0.5)]
     [InlineData("r-voltage", "resistor", 0.8)]
+    [InlineData("led-current", "led", 0.8)]
     [InlineData("pin-current", null, 0.8)]
     public void TheWorkshopsFactors(string rule, string? kind, double factor)
     {

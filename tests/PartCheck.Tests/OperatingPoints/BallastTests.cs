@@ -36,22 +36,45 @@ public class BallastTests
     [InlineData(10, 2, 10.84)]
     public void TheSolverGivesWhatNgspiceGives(double averaging, int legs, double ohms)
     {
-        JunctionHeat heat = new(298.15, 0, 1000);
-        LegGroup rest = new(legs - 1, new BipolarDevice(Card), 56, averaging, true, heat);
-        LegGroup odd = new(1, new BipolarDevice(Card, shift: 1.039690), 56, averaging, true, heat);
-        SinkCircuit circuit = new()
+        LegGroup rest = new(legs - 1, new BipolarDevice(Card), 56, averaging, true, Heat);
+        LegGroup odd = rest with { Count = 1, Pass = new BipolarDevice(Card, shift: 1.039690) };
+        OperatingPoint point = Solve(odd, rest);
+        Assert.InRange(1e-3 / (point.Legs[0].Ic - point.Legs[1].Ic) / ohms, 0.99, 1.01);
+    }
+
+    // The first leg alone is sensed, through 120 ohm. ngspice prints 12.34282 and 12.32876 mA; with 1 mV at the second base 12.34281
+    // and 12.34582 mA, at the first base 12.34298 and 12.31185 mA: 1 mV over 17.07 uA is 58.58 ohm either way. The sense resistor alone
+    // with the device, 56 + 0.1 + 2.09 + 0.02, is 58.21 ohm; 56 parallel 120 would be 40.39.
+    [Theory]
+    [InlineData(true)]
+    [InlineData(false)]
+    public void ALegThatIsSensedAloneHasItsSenseResistorForBallast(bool atTheSensed)
+    {
+        BipolarDevice shifted = new(Card, shift: 1.039690);
+        LegGroup sensed = new(1, new BipolarDevice(Card), 56, 120, true, Heat);
+        LegGroup other = sensed with { Sensed = false, Averaging = 0 };
+        OperatingPoint even = Solve(sensed, other);
+        OperatingPoint odd = atTheSensed ? Solve(sensed with { Pass = shifted }, other) : Solve(sensed, other with { Pass = shifted });
+        double moved = (odd.Legs[0].Ic - odd.Legs[1].Ic) - (even.Legs[0].Ic - even.Legs[1].Ic);
+        Assert.InRange((atTheSensed ? 1e-3 : -1e-3) / moved / 58.58, 0.99, 1.01);
+    }
+
+    private static readonly JunctionHeat Heat = new(298.15, 0, 1000);
+
+    private static OperatingPoint Solve(LegGroup odd, LegGroup rest)
+    {
+        OperatingPoint? point = new SinkSolver().Solve(new SinkCircuit
         {
             PinVoltage = 5,
             Feed = 1e3,
             Supply = 12,
-            Load = LoadElement.FromDrop(3, 12.3e-3 * legs, 0, 1),
+            Load = LoadElement.FromDrop(3, 12.3e-3 * (odd.Count + rest.Count), 0, 1),
             Control = new BipolarDevice(Card),
-            ControlHeat = heat,
+            ControlHeat = Heat,
             Legs = [odd, rest],
-        };
-        OperatingPoint? point = new SinkSolver().Solve(circuit);
+        });
         Assert.NotNull(point);
         Assert.InRange(point.Legs[1].Ic, 11.9e-3, 12.7e-3);
-        Assert.InRange(1e-3 / (point.Legs[0].Ic - point.Legs[1].Ic) / ohms, 0.99, 1.01);
+        return point;
     }
 }

@@ -109,6 +109,27 @@ public class CheckCasesTests
         Close(apart.Legs[0].Ic, apart.Legs[1].Ic);
     }
 
+    // Two legs of which the control senses the first, through 120 ohm or directly: the second stands at the same base node with its
+    // sense resistor alone. Pin 5 V, feed 1 k, sense 56 ohm, printed by ngspice 39 with the options above.
+    [Theory]
+    [InlineData(25, 0, 12.31176e-3, 12.29769e-3, 1.415115, 0.691386, 0.691386, 3.58489e-3)]
+    [InlineData(85, 0, 10.55475e-3, 10.54348e-3, 1.215567, 0.592173, 0.592173, 3.78443e-3)]
+    [InlineData(25, 120, 12.34282e-3, 12.32876e-3, 1.416934, 0.691370, 0.693133, 3.58307e-3)]
+    [InlineData(85, 120, 10.57997e-3, 10.56871e-3, 1.217065, 0.592158, 0.593591, 3.78293e-3)]
+    public void OneLegOfTwoIsSensed(
+        double celsius, double averaging, double sensed, double other, double baseNode, double controlBase, double emitter, double pin)
+    {
+        SinkCircuit one = Circuit(celsius, sensed + other, feed: 1e3, pin: 5);
+        OperatingPoint p = Solve(one with { Legs = [one.Legs[0] with { Averaging = averaging }, one.Legs[0] with { Sensed = false }] });
+        Close(sensed, p.Legs[0].Ic);
+        Close(other, p.Legs[1].Ic);
+        Close(baseNode, p.BaseVoltage);
+        Close(controlBase, p.ControlBaseVoltage);
+        Close(emitter, p.Legs[0].EmitterVoltage);
+        Close(pin, p.PinCurrent);
+        Close(sensed + other, p.LoadCurrent);
+    }
+
     private static SinkCircuit Circuit(
         double celsius, double load, double sense = 56, double feed = 10e3, double pin = 3.3, double supply = 12, double drop = 3, double gain = 250)
     {

@@ -36,6 +36,32 @@ public sealed class PartTableReaderTests
         Assert.Equal((4700.0, 0.01, 1e-4), (part.Resistance.Value.Ohms, Math.Round(part.Tolerance!.Value, 12), Math.Round(part.Tcr!.Value, 12)));
     }
 
+    [Fact]
+    public void AnLedsRowIsReadInSi()
+    {
+        LedPart part = Assert.IsType<LedPart>(Assert.Single(Read(
+            "Part number|Kind|IF [mA]|IF flat to [degC]|Forward current derating|Tj max", "LW|LED|30|60|0.6 mA/K|105")));
+        Assert.Empty(typed.Complaints);
+        Assert.Equal(0.03, part.ForwardCurrentMax!.Value.Amperes, 12);
+        Assert.Equal(333.15, part.FlatTo.Kelvins, 9);
+        Assert.Equal(0.6e-3, part.ForwardCurrentSlope!.Value, 12);
+        Assert.Equal(378.15, part.TjMax!.Value.Kelvins, 9);
+        Assert.Equal("p.csv!C2", part.ForwardCurrentMax.Cell);
+    }
+
+    [Theory]
+    [InlineData("IF", "30", "most likely in another unit")]
+    [InlineData("IF slope", "0.6 mA/K", "A slope of the forward current needs IF beside it.")]
+    [InlineData("Tj max", "20 degC", "F2")]
+    [InlineData("IF flat to", "110", "Tj max is not above the temperature up to which the forward current holds.")]
+    public void AnLedsMistakeIsTold(string column, string text, string told)
+    {
+        string[] columns = ["IF", "IF flat to", "IF slope", "Tj max"];
+        string[] cells = [.. columns.Select(c => c == column ? text : c switch { "Tj max" => "105", "IF" when column != "IF slope" => "30 mA", _ => string.Empty })];
+        Assert.Empty(Read("Part number|Kind|" + string.Join('|', columns), "LW|led|" + string.Join('|', cells)));
+        Assert.Contains(told, typed.Only(), StringComparison.Ordinal);
+    }
+
     [Theory]
     [InlineData("pnp")]
     [InlineData("NPN Darlington")]

@@ -28,6 +28,7 @@ public class QuantityUnitsTests
     [InlineData("K/mW", QuantityKind.ThermalResistance, 3)]
     [InlineData("deg C / W", QuantityKind.ThermalResistance, 0)]
     [InlineData("mW/\u00B0C", QuantityKind.PowerSlope, -3)]
+    [InlineData("mA/\u00B0C", QuantityKind.CurrentSlope, -3)]
     [InlineData("MHz", QuantityKind.Frequency, 6)]
     [InlineData("us", QuantityKind.Time, -6)]
     [InlineData("%", QuantityKind.Percent, -2)]
@@ -63,6 +64,7 @@ public class QuantityUnitsTests
     [InlineData("\u00B0F", QuantityKind.Temperature)]
     [InlineData("k%", QuantityKind.Percent)]
     [InlineData("W", QuantityKind.PowerSlope)]
+    [InlineData("mA", QuantityKind.CurrentSlope)]
     [InlineData("V", QuantityKind.Number)]
     public void OtherUnitsAreNone(string text, QuantityKind kind) => Assert.False(QuantityUnits.TryFind(text, kind, out _));
 

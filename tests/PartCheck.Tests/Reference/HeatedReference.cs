@@ -8,7 +8,8 @@ namespace PartCheck.Tests.Reference;
 /// <param name="Circuit">The circuit at its final junction temperatures.</param>
 /// <param name="Ambient">Ambient temperature [degC].</param>
 /// <param name="Rth">Thermal resistances [K/W], the control's first, then the legs'.</param>
-public sealed record HeatedCircuit(ReferenceCircuit Circuit, double Ambient, IReadOnlyList<double> Rth)
+/// <param name="Coupling">Heating of the control by each leg [K/W].</param>
+public sealed record HeatedCircuit(ReferenceCircuit Circuit, double Ambient, IReadOnlyList<double> Rth, double Coupling = 0)
 {
     /// <summary>The circuit for the project's solver, which finds the temperatures itself.</summary>
     public SinkCircuit ToSink()
@@ -26,7 +27,8 @@ public sealed record HeatedCircuit(ReferenceCircuit Circuit, double Ambient, IRe
 public static class HeatedReference
 {
     /// <summary>Iterates a circuit; null where ngspice fails or a junction passes 175 degC.</summary>
-    public static (HeatedCircuit Heated, ReferenceResult Result)? Iterate(ReferenceCircuit circuit, double ambient, IReadOnlyList<double> rth)
+    public static (HeatedCircuit Heated, ReferenceResult Result)? Iterate(
+        ReferenceCircuit circuit, double ambient, IReadOnlyList<double> rth, double coupling = 0)
     {
         double[] celsius = [.. Enumerable.Repeat(ambient, rth.Count)];
         for (int round = 0; round < 100; round++)
@@ -42,12 +44,14 @@ public static class HeatedReference
             }
 
             double moved = 0;
-            for (int d = 0; d < celsius.Length; d++)
+            double legs = 0;
+            for (int d = celsius.Length - 1; d >= 0; d--)
             {
                 double power = d == 0
                     ? (r.BaseVoltage * r.ControlIc) + (r.ControlBaseVoltage * r.ControlIb)
                     : ((r.CollectorVoltage - r.Emitter[d - 1]) * r.Ic[d - 1]) + ((r.BaseVoltage - r.Emitter[d - 1]) * r.Ib[d - 1]);
-                double next = ambient + (rth[d] * power);
+                double next = ambient + (rth[d] * power) + (d == 0 ? coupling * legs : 0);
+                legs += power;
                 moved = Math.Max(moved, Math.Abs(next - celsius[d]));
                 celsius[d] = next;
             }
@@ -59,7 +63,7 @@ public static class HeatedReference
 
             if (moved < 1e-4)
             {
-                return (new HeatedCircuit(at, ambient, rth), r);
+                return (new HeatedCircuit(at, ambient, rth, coupling), r);
             }
         }
 

@@ -77,12 +77,14 @@ public class NgspiceLiveTests
         {
             Assert.InRange(Recording.Channels(), 340, 400);
             Assert.Equal(40, Recording.Heated());
+            Assert.Equal(4, Recording.Pulsed());
             return;
         }
 
         Dictionary<string, ReferenceCircuit> made = ReferenceGenerator.Circuits(400).ToDictionary(c => c.Name);
         Assert.All(ReferenceTable.Read(), row => Assert.Equal(Ngspice.Deck(made[row.Circuit.Name], Ngspice.Options[0]), Ngspice.Deck(row.Circuit, Ngspice.Options[0])));
         Assert.Equal(40, HeatedReference.Read().Count);
+        Assert.Equal(PulsedReference.Cases.Select(c => c.Name), PulsedReference.Read().Select(r => r.Heated.Circuit.Name));
     }
 
     [Fact]
@@ -96,6 +98,23 @@ public class NgspiceLiveTests
             Close(recorded.LoadCurrent, live.LoadCurrent, Amperes);
             double power = ((live.CollectorVoltage - live.Emitter[0]) * live.Ic[0]) + ((live.BaseVoltage - live.Emitter[0]) * live.Ib[0]);
             Assert.InRange(heated.Ambient + (heated.Rth[1] * power) - heated.Circuit.Legs[0].Pass.Celsius, -0.01, 0.01);
+        }
+    }
+
+    [Fact]
+    public void ThePulsedCircuitsStandStillInNgspice()
+    {
+        Assert.SkipUnless(Ngspice.Absence is null, Ngspice.Absence ?? string.Empty);
+        foreach ((HeatedCircuit heated, ReferenceResult recorded) in PulsedReference.Read())
+        {
+            ReferenceResult? live = Ngspice.Solve(heated.Circuit);
+            Assert.NotNull(live);
+            Close(recorded.LoadCurrent, live.LoadCurrent, Amperes);
+            double power = ((live.CollectorVoltage - live.Emitter[0]) * live.Ic[0]) + ((live.BaseVoltage - live.Emitter[0]) * live.Ib[0]);
+            double control = (live.BaseVoltage * live.ControlIc) + (live.ControlBaseVoltage * live.ControlIb);
+            Assert.InRange(heated.Ambient + (heated.Rth[1] * power) - heated.Circuit.Legs[0].Pass.Celsius, -0.01, 0.01);
+            double coupled = heated.Coupling * power * heated.Circuit.Legs.Count;
+            Assert.InRange(heated.Ambient + (heated.Rth[0] * control) + coupled - heated.Circuit.Control.Celsius, -0.01, 0.01);
         }
     }
 

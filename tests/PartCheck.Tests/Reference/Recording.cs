@@ -60,5 +60,22 @@ internal static class Recording
         return rows.Count;
     }
 
+    /// <summary>Channels that heat themselves in pulses.</summary>
+    /// <returns>Rows written.</returns>
+    public static int Pulsed()
+    {
+        IReadOnlyList<(ReferenceCircuit, ReferenceResult)> rows = PulsedReference.Make();
+        ReferenceTable.Write(
+            Path.Combine(SourceFolder(), ReferenceTable.Pulsed),
+            [
+                "LED current-sink channels under PWM at the end of a pulse: junction temperatures by fixed point in ngspice (no junction moves by more than 0.1 mK)",
+                $"Source: {Ngspice.Version()} (Debian package), .options {Ngspice.Options[0]}",
+                "Made by: PulsedReference with PARTCHECK_RECORD_NGSPICE=1; behind @ in the name: ambient in degC, then the effective thermal resistance in K/W of the control and of each leg, by hand (the arithmetic stands in PulsedReference), then behind @ what each leg's power heats the control by in K/W",
+                "Tolerance of the comparison: 0.1 % and 0.05 K. SI units, junction temperatures in degC",
+            ],
+            rows);
+        return rows.Count;
+    }
+
     private static string SourceFolder([CallerFilePath] string file = "") => Path.GetDirectoryName(file)!;
 }

@@ -14,6 +14,9 @@ public static class ReferenceTable
     /// <summary>Channels that heat themselves.</summary>
     public const string Heated = "ngspice-heated.csv";
 
+    /// <summary>Channels that heat themselves in pulses.</summary>
+    public const string Pulsed = "ngspice-pulsed.csv";
+
     /// <summary>Every row of a table.</summary>
     public static IReadOnlyList<(ReferenceCircuit Circuit, ReferenceResult Result)> Read(string table = Channels)
     {

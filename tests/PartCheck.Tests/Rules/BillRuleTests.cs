@@ -8,7 +8,7 @@ using Xunit;
 
 namespace PartCheck.Tests.Rules;
 
-public class BillRuleTests
+public class BillRuleTests : ExactRuleTests
 {
     private static readonly PartTable Table = new([SampleChannel.Transistor(), SampleChannel.Resistor(33)]);
 
@@ -20,6 +20,16 @@ public class BillRuleTests
         Resistance = Resistance.FromOhms(33),
         Cell = "bom.csv!A2",
     };
+
+    public override string Id => BillRule.Id;
+
+    protected override Finding Agreeing() => Assert.Single(Judge(Senses));
+
+    protected override Finding Disagreeing() => Assert.Single(Judge(Senses with { Quantity = 3 }));
+
+    protected override Finding WithoutTheRow() => Assert.Single(Judge(Senses with { PartNumber = "RK-99" }));
+
+    protected override IReadOnlyList<Finding> NotAsked() => Judge(Senses with { References = ["C7"], Quantity = 9, PartNumber = null });
 
     [Fact]
     public void ALineThatAgreesConformsAndNamesItsChannels()
@@ -70,8 +80,31 @@ public class BillRuleTests
     }
 
     [Fact]
-    public void ALineThatServesNoChannelIsLeftInPeace() =>
-        Assert.Empty(Judge(Senses with { References = ["C7"], Quantity = 9, PartNumber = null }));
+    public void AnAlternateThatTheTableDoesNotHaveIsNotVerified()
+    {
+        Finding finding = Assert.Single(Judge(Senses with { Alternates = ["RK-33", "RK-98", "RK-99"] }));
+        Assert.Equal(Verdict.NotVerified, finding.Verdict);
+        Assert.Equal(["part table row of RK-98", "part table row of RK-99"], finding.Missing);
+    }
+
+    [Fact]
+    public void AnAlternateInAnotherPackageOrOfAnotherValueIsNonconforming()
+    {
+        BillLine line = new() { References = ["R1"], PartNumber = "RK-33", Resistance = Resistance.FromOhms(33), Package = "0603", Alternates = ["TQ-31", "RK-47"], Cell = "bom.csv!A2" };
+        PartTable table = new([SampleChannel.Transistor(), SampleChannel.Resistor(33) with { Package = "0603" }, SampleChannel.Resistor(47) with { Package = "0603" }]);
+        Finding finding = Assert.Single(BillRule.Judge(new Bill("bom.csv", [line]), table, [Channel()]));
+        Assert.Equal(Verdict.Nonconforming, finding.Verdict);
+        Assert.Equal("The bill's package is 0603, that of the alternate TQ-31 SOT-23; the bill's value is 33 ohm, that of the alternate RK-47 47 ohm.", finding.Text);
+    }
+
+    [Fact]
+    public void AnAlternateThatLacksDataInItsRoleIsNotVerified()
+    {
+        RoleFault fault = new(Role.Feed, "R9", "Alternate RK-1: its row is not for this mounting.", "bom.csv!A9") { OfAlternate = true, Missing = "part table row of RK-1 on FR4" };
+        Finding finding = Assert.Single(BillRule.Judge(new Bill("bom.csv", []), Table, [Channel() with { RoleFaults = [fault] }]));
+        Assert.Equal(Verdict.NotVerified, finding.Verdict);
+        Assert.Equal(["part table row of RK-1 on FR4"], finding.Missing);
+    }
 
     [Fact]
     public void ARoleThatTheBillDoesNotServeIsAFindingOfItsChannel()

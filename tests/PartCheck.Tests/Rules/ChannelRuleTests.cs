@@ -9,10 +9,8 @@ using Xunit;
 
 namespace PartCheck.Tests.Rules;
 
-public class CurrentRuleTests : RuleTests
+public class CurrentRuleTests : RuleTests<CurrentRule>
 {
-    private static readonly CurrentRule Rule = new();
-
     // The sample's window is 14 to 28 mA.
     protected override Stress Below() => Judge(0.024);
 
@@ -21,6 +19,8 @@ public class CurrentRuleTests : RuleTests
     protected override Stress Above() => Judge(0.0281);
 
     protected override Stress WithoutTheRating() => States.Judge(Rule, States.Of(States.Pass(SampleChannel.Transistor() with { Vbe = null }), load: 0.02));
+
+    protected override bool AskedByNobody() => States.Asks(Rule, SampleChannel.Channel(1));
 
     // Centre 21 mA, half width 7 mA: 24.5 and 17.5 mA stand half way out, 12.6 mA 1.2 times.
     [Theory]
@@ -82,10 +82,8 @@ public class CurrentRuleTests : RuleTests
         States.Judge(Rule, States.Of(States.Pass(SampleChannel.Transistor() with { Vbe = States.Cite(window) }), load: 0.02));
 }
 
-public class HeadroomRuleTests : RuleTests
+public class HeadroomRuleTests : RuleTests<HeadroomRule>
 {
-    private static readonly HeadroomRule Rule = new();
-
     // VCEsat max 0.3 V at 50 mA; at 20 mA it counts as it stands. Window from 14 mA.
     protected override Stress Below() => Judge(0.5, 0.02);
 
@@ -95,6 +93,8 @@ public class HeadroomRuleTests : RuleTests
 
     protected override Stress WithoutTheRating() => States.Judge(
         Rule, States.Of(States.Pass(SampleChannel.Transistor() with { VceSatMax = null }, vce: 2), lowest: true));
+
+    protected override bool AskedByNobody() => States.Asks(Rule, SampleChannel.Channel(1));
 
     // At 100 mA twice the saturation voltage is wanted: 0.6 V.
     [Fact]
@@ -129,10 +129,8 @@ public class HeadroomRuleTests : RuleTests
     private static Stress Judge(double vce, double load) => States.Judge(Rule, States.Of(States.Pass(vce: vce, ic: load), load: load, lowest: true));
 }
 
-public class DriveRuleTests : RuleTests
+public class DriveRuleTests : RuleTests<DriveRule>
 {
-    private static readonly DriveRule Rule = new();
-
     // Sum IB 1 mA, k' 1.5: 1.5 mA required.
     protected override Stress Below() => Judge(2e-3);
 
@@ -142,6 +140,8 @@ public class DriveRuleTests : RuleTests
 
     protected override Stress WithoutTheRating() => States.Judge(
         Rule, States.Of(States.Pass(SampleChannel.Transistor() with { Hfe = null }), drive: new DriveEdge(true, 1.3, 1e-3, 2e-3, 1.5)));
+
+    protected override bool AskedByNobody() => States.Asks(Rule, SampleChannel.Channel(1));
 
     [Theory]
     [InlineData(false, 2e-3)]
@@ -165,9 +165,24 @@ public class DriveRuleTests : RuleTests
         States.Judge(Rule, States.Of(States.Pass(), drive: new DriveEdge(true, 1.3, 1e-3, available, 1.5)));
 }
 
-public class PinCurrentRuleTests
+public class PinCurrentRuleTests : RuleTests
 {
     private static readonly DeratingTable Table = new("test", null, [States.Row("pin-current", 0.8)]);
+
+    public override string Id => PinCurrentRule.Id;
+
+    protected override bool AlwaysAsked => true;
+
+    // 20 mA x 0.8: 16 mA.
+    protected override Stress Below() => Judge(0.01, 0.02);
+
+    protected override Stress AtTheLimit() => Judge(0.016, 0.02);
+
+    protected override Stress Above() => Judge(0.0161, 0.02);
+
+    protected override Stress WithoutTheRating() => Judge(0.001, null);
+
+    protected override bool AskedByNobody() => Judge(0.001, null).Missing is not null;
 
     // Two feeds of 8 mA together on a 20 mA pin at 0.8: exactly the 16 mA allowed.
     [Theory]
@@ -176,7 +191,7 @@ public class PinCurrentRuleTests
     [InlineData(0.0081, Verdict.Nonconforming)]
     public void AllFeedsOfAPinCountTogether(double each, Verdict verdict)
     {
-        Finding finding = PinCurrentRule.Judge("P1", [("A", each), ("B", each)], Pin(0.02), Table);
+        Finding finding = PinCurrentRule.Judge("P1", [new("A", each), new("B", each)], Pin(0.02), Table);
         Assert.Equal(verdict, finding.Verdict);
         Assert.Equal(2 * each, finding.Actual!.Value, 12);
         Assert.Equal(0.016, finding.Allowed!.Value, 12);
@@ -185,11 +200,18 @@ public class PinCurrentRuleTests
     [Fact]
     public void AMissingRatingOrFeedIsNotVerified()
     {
-        Finding rating = PinCurrentRule.Judge("P1", [("A", 0.001)], Pin(null), Table);
+        Finding rating = PinCurrentRule.Judge("P1", [new("A", 0.001)], Pin(null), Table);
         Assert.Equal(Verdict.NotVerified, rating.Verdict);
         Assert.Equal(["Pin current max of CTRL-5"], rating.Missing);
-        Assert.Equal(Verdict.NotVerified, PinCurrentRule.Judge("P1", [("A", 0.001), ("B", double.NaN)], Pin(0.02), Table).Verdict);
-        Assert.Equal(Verdict.Nonconforming, PinCurrentRule.Judge("P1", [("A", 0.03), ("B", double.NaN)], Pin(0.02), Table).Verdict);
+        Assert.Equal(Verdict.NotVerified, PinCurrentRule.Judge("P1", [new("A", 0.001), new("B", double.NaN)], Pin(0.02), Table).Verdict);
+        Assert.Equal(Verdict.Nonconforming, PinCurrentRule.Judge("P1", [new("A", 0.03), new("B", double.NaN)], Pin(0.02), Table).Verdict);
+    }
+
+    private static Stress Judge(double amperes, double? rating)
+    {
+        Finding finding = PinCurrentRule.Judge("P1", [new("A", amperes)], Pin(rating), Table);
+        return new Stress(
+            finding.Actual ?? double.NaN, finding.Allowed ?? double.NaN, finding.StressRatio, finding.Verdict, finding.Missing is [string first, ..] ? first : null);
     }
 
     private static LogicPin Pin(double? rating) => SampleChannel.Channel(1).Logic with

@@ -7,10 +7,8 @@ using Xunit;
 
 namespace PartCheck.Tests.Rules;
 
-public class FilmRuleTests : RuleTests
+public class FilmRuleTests : RuleTests<FilmRule>
 {
-    private static readonly FilmRule Rule = new();
-
     // Thick film 0603: 0.1 W at 70 degC, film 155 degC, so 85 K/0.1 W = 850 K/W. 0.6 V x 0.15 A = 0.09 W is 76.5 K.
     private static readonly ResistorPart ThickFilm = With(850);
 
@@ -21,6 +19,8 @@ public class FilmRuleTests : RuleTests
     protected override Stress Above() => Judge(ThickFilm, 0.5, 0.2, 71);
 
     protected override Stress WithoutTheRating() => Judge(ThickFilm with { TjMax = null }, 0.6, 0.15, 70);
+
+    protected override bool AskedByNobody() => States.Asks(Rule, States.BareResistor(33));
 
     [Fact]
     public void TheRatioIsOfTheRiseOverAmbient()

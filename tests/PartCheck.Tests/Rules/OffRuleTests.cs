@@ -9,10 +9,8 @@ using Xunit;
 
 namespace PartCheck.Tests.Rules;
 
-public class OffRuleTests : RuleTests
+public class OffRuleTests : RuleTests<OffRule>
 {
-    private static readonly OffRule Rule = new();
-
     // Hottest ambient of the sample channel: 55 degC.
     private static readonly Transistor Leaky = SampleChannel.Transistor() with
     {
@@ -27,6 +25,8 @@ public class OffRuleTests : RuleTests
     protected override Stress Above() => Judge(20.1e-6);
 
     protected override Stress WithoutTheRating() => States.Judge(Rule, Off(15e-6), Channel(Leaky with { IcboMax = null }));
+
+    protected override bool AskedByNobody() => States.Asks(Rule, SampleChannel.Channel(1));
 
     [Fact]
     public void WhatIsMissingIsNamed()

@@ -7,9 +7,8 @@ using Xunit;
 
 namespace PartCheck.Tests.Rules;
 
-public class ResistorPowerRuleTests : RuleTests
+public class ResistorPowerRuleTests : RuleTests<ResistorPowerRule>
 {
-    private static readonly ResistorPowerRule Rule = new();
     private static readonly ResistorPart Chip = SampleChannel.Resistor(100);
 
     // 0.1 W, factor 0.5, up to 70 degC: 50 mW. 100 ohm: 2.236068 V is 50 mW.
@@ -20,6 +19,8 @@ public class ResistorPowerRuleTests : RuleTests
     protected override Stress Above() => Judge(Chip, 2.3, 70);
 
     protected override Stress WithoutTheRating() => Judge(Chip with { Power = null }, 1, 25);
+
+    protected override bool AskedByNobody() => States.Asks(Rule, States.BareResistor(33));
 
     // NASA EEE-INST-002, R2 Table 4: style RM 0.6, 70, T2 118, T3 150 degC; RLR 350 ppm T2 103 at T3 125 (figures of the standard).
     [Theory]
@@ -82,9 +83,8 @@ public class ResistorPowerRuleTests : RuleTests
         Rule, States.Of(resistor: States.Resistor(part, volts, volts / 100), celsius: celsius), States.Row("r-power", 0.5, zero: ZeroTemperature.Parallel));
 }
 
-public class ResistorVoltageRuleTests : RuleTests
+public class ResistorVoltageRuleTests : RuleTests<ResistorVoltageRule>
 {
-    private static readonly ResistorVoltageRule Rule = new();
     private static readonly ResistorPart Large = SampleChannel.Resistor(100_000);
 
     // 75 V x 0.8 = 60 V; sqrt(0.05 W x 100 kohm) = 70.7 V.
@@ -95,6 +95,8 @@ public class ResistorVoltageRuleTests : RuleTests
     protected override Stress Above() => Judge(Large, 61);
 
     protected override Stress WithoutTheRating() => Judge(Large with { Power = null }, 10);
+
+    protected override bool AskedByNobody() => States.Asks(Rule, States.BareResistor(33));
 
     // NASA EEE-INST-002 note 2, worked: 47 ohm 0603 with 60 mW: sqrt(0.06 x 47) = 1.679 V.
     [Fact]
@@ -122,9 +124,8 @@ public class ResistorVoltageRuleTests : RuleTests
         Rule, States.Of(resistor: States.Resistor(part, volts, 0)), States.Row("r-voltage", 0.8), States.Row("r-power", 0.5));
 }
 
-public class ZeroOhmCurrentRuleTests : RuleTests
+public class ZeroOhmCurrentRuleTests : RuleTests<ZeroOhmCurrentRule>
 {
-    private static readonly ZeroOhmCurrentRule Rule = new();
     private static readonly ResistorPart Jumper = SampleChannel.Resistor(0) with { Ic = States.Cite(Current.FromAmperes(1)) };
 
     protected override Stress Below() => Judge(Jumper, 0.5);
@@ -134,6 +135,8 @@ public class ZeroOhmCurrentRuleTests : RuleTests
     protected override Stress Above() => Judge(Jumper, 0.76);
 
     protected override Stress WithoutTheRating() => Judge(Jumper with { Ic = null }, 0.1);
+
+    protected override bool AskedByNobody() => States.Asks(Rule, States.BareResistor(0));
 
     [Fact]
     public void ItIsARuleOfJumpersAlone()

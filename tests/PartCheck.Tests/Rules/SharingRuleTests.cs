@@ -9,9 +9,8 @@ using Xunit;
 
 namespace PartCheck.Tests.Rules;
 
-public class SharingRuleTests : RuleTests
+public class SharingRuleTests : RuleTests<SharingRule>
 {
-    private static readonly SharingRule Rule = new();
     private static readonly Transistor Lot = SampleChannel.Transistor() with { VbeMatch = States.Cite(Voltage.FromVolts(0.002)) };
 
     // Allowed 1.1 - 1 = 0.1. Means 0.60 V: 0.63/0.60 - 1 = 0.05; 0.66/0.60 - 1 = 0.1; 0.67/0.60 - 1 = 0.1167.
@@ -23,6 +22,8 @@ public class SharingRuleTests : RuleTests
 
     protected override Stress WithoutTheRating() =>
         States.Judge(Rule, States.OfLegs(Extreme.Min, Leg(0.63), Leg(0.57)), SampleChannel.Channel(2));
+
+    protected override bool AskedByNobody() => States.Asks(Rule, SampleChannel.Channel(2));
 
     // One odd leg and seven others: mean (0.76 + 7 x 0.60)/8 = 0.62; 0.76/0.62 - 1 = 0.225806.
     [Fact]
@@ -110,6 +111,16 @@ public class SharingRuleTests : RuleTests
         Assert.Equal(matched, finding.Corner!.OddPass.Vbe == Extreme.Match);
     }
 
+    // The first leg alone is sensed, directly: the control holds its sense voltage at 0.55 V, the second's is 80 x 33/34.5/(1 - 0.10) =
+    // 85 mV off. 0.55/0.5075 - 1 = 0.084 where it is below, and 1 % of the sense resistors: about 0.09.
+    [Fact]
+    public void ALegThatIsNotSensedStandsApartByItsWindow()
+    {
+        Finding finding = EndToEnd(SampleChannel.Transistor(), 0.01, sensedAlone: true);
+        Assert.Equal(Verdict.Nonconforming, finding.Verdict);
+        Assert.InRange(finding.Actual!.Value, 0.075, 0.105);
+    }
+
     [Fact]
     public void AMissingToleranceDoesNotCountAsNone()
     {
@@ -118,14 +129,20 @@ public class SharingRuleTests : RuleTests
         Assert.Equal(["Tolerance of RK-33"], finding.Missing);
     }
 
-    private static Finding EndToEnd(Transistor pass, double? tolerance)
+    private static Finding EndToEnd(Transistor pass, double? tolerance, bool sensedAlone = false)
     {
         BoundChannel sample = Limited(1.05);
         ResistorPart sense = SampleChannel.Resistor(33) with { Tolerance = tolerance is { } t ? States.Cite(t) : null };
         Temperature room = Temperature.FromCelsius(25);
         BoundChannel channel = sample with
         {
-            Legs = [.. sample.Legs.Select(l => l with { Pass = l.Pass with { Part = pass }, Sense = l.Sense with { Part = sense } })],
+            Legs = [.. sample.Legs.Select((l, i) => l with
+            {
+                Pass = l.Pass with { Part = pass },
+                Sense = l.Sense with { Part = sense },
+                Averaging = sensedAlone ? null : l.Averaging,
+                Sensed = !sensedAlone || i == 0,
+            })],
             Conditions = sample.Conditions with
             {
                 Supply = new(Voltage.FromVolts(24), Voltage.FromVolts(24)),

@@ -1,4 +1,5 @@
 using PartCheck.Channels;
+using PartCheck.OperatingPoints;
 using PartCheck.Parts;
 using PartCheck.Quantities;
 using PartCheck.Rules;
@@ -7,10 +8,8 @@ using Xunit;
 
 namespace PartCheck.Tests.Rules;
 
-public class SoaRuleTests : RuleTests
+public class SoaRuleTests : RuleTests<SoaRule>
 {
-    private static readonly SoaRule Rule = new();
-
     // IC rating 250 mA, DC boundary 5 V: 200 mA, 20 V: 80 mA, 40 V: 20 mA; Tj max 150 degC.
     private static readonly Transistor Part = SampleChannel.Transistor() with
     {
@@ -33,6 +32,8 @@ public class SoaRuleTests : RuleTests
     protected override Stress Above() => Judge(Part, 20, 0.0321, 87.5, 0.8);
 
     protected override Stress WithoutTheRating() => Judge(Part with { TjMax = null }, 10, 0.1);
+
+    protected override bool AskedByNobody() => States.Asks(Rule, States.BareTransistor, SampleChannel.Channel(1));
 
     // 10 V: ln 2/ln 4 = 1/2 of the way: sqrt(200 x 80) = 126.491 mA. 28.2843 V = 20 V x sqrt 2: sqrt(80 x 20) = 40 mA.
     // 8 V: ln 1.6/ln 4 = 0.339036; 200 x exp(-0.916291 x 0.339036) = 200 x 0.732966 = 146.593 mA. Below 5 V the IC rating.
@@ -68,6 +69,17 @@ public class SoaRuleTests : RuleTests
     // Tj 125 degC less 0.2 W x 80 K/W = 109 degC: (150 - 109)/125 = 0.328 of 200 mA.
     [Fact]
     public void AtCaseTheJunctionLessItsOwnRiseCounts() => Assert.Equal(0.0656, JudgeAtCase(AtCase, 125, 0.2).Allowed, 9);
+
+    // On a quarter of the time: Tj 125 degC less 0.25 x 0.2 W x 80 K/W = 121 degC, (150 - 121)/125 = 0.232 of 200 mA. With all of the
+    // power the case would be taken for 109 degC. The pair is that while on.
+    [Fact]
+    public void UnderPwmTheCaseIsNotTakenForCoolerThanItIs()
+    {
+        TransistorPoint pass = States.Pass(AtCase, vce: 5, ic: 0.01, power: 0.2, tj: 125) with { CaseShare = 0.25, AveragedShare = 0.25 };
+        Stress stress = States.Judge(Rule, States.Of(pass, celsius: 55));
+        Assert.Equal(0.0464, stress.Allowed, 9);
+        Assert.Equal(0.01, stress.Actual, 12);
+    }
 
     // Just switched on, Tj is the ambient of 55 degC: the case is there, too, not at 55 - 16 = 39 degC: 0.76 of 200 mA.
     [Fact]

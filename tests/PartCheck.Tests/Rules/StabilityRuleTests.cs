@@ -7,10 +7,8 @@ using Xunit;
 
 namespace PartCheck.Tests.Rules;
 
-public class StabilityRuleTests : RuleTests
+public class StabilityRuleTests : RuleTests<StabilityRule>
 {
-    private static readonly StabilityRule Rule = new();
-
     // VCE 3 V, RthJA 325 K/W, 2 mV/K: 1.95 ohm. VT/IC at 25 degC and 20 mA: 25.6926 mV/20 mA = 1.28463 ohm; so the edge is at
     // RE = 0.66537 ohm. Below: 1.95/2.28463 = 0.853530. Above: 1.95/1.88463 = 1.034686.
     protected override Stress Below() => Judge(1.0);
@@ -20,6 +18,8 @@ public class StabilityRuleTests : RuleTests
     protected override Stress Above() => Judge(0.6);
 
     protected override Stress WithoutTheRating() => States.Judge(Rule, States.Of(Leg(1) with { RthJa = double.NaN }));
+
+    protected override bool AskedByNobody() => States.Asks(Rule, States.BareTransistor, SampleChannel.Channel(1));
 
     [Theory]
     [InlineData(1.0, 0.853530)]
@@ -55,6 +55,11 @@ public class StabilityRuleTests : RuleTests
         Assert.Equal(1.70706, stress.Ratio!.Value, 5);
     }
 
+    // Half the time on, from 1 kHz up: half of 0.853530 is 0.426765. Whatever the peak, below 1 kHz the share is 1.
+    [Fact]
+    public void AveragedPowerHeatsByItsDuty() =>
+        Assert.Equal(0.42677, States.Judge(Rule, States.Of(Leg(1) with { AveragedShare = 0.5 })).Actual, 4);
+
     [Fact]
     public void ALegWithoutCurrentIsStable() => Assert.Equal(0, States.Judge(Rule, States.Of(Leg(0) with { Ic = 0, Ib = 0 })).Ratio!.Value, 12);
 
@@ -85,15 +90,16 @@ public class StabilityRuleTests : RuleTests
     // 33 x 100/133 = 24.812 ohm; unsensed 33 ohm. Silicon at constant current: about -(1.206 V - VBE)/T, that is -1.7 mV/K at 0.66 V
     // and 330 K.
     [Theory]
-    [InlineData(true, 24.812)]
-    [InlineData(false, 33.0)]
-    public void TheSolvedStateCarriesWhatTheRuleReads(bool sensed, double ballast)
+    [InlineData(true, 1, 24.812)]
+    [InlineData(false, 1, 33.0)]
+    [InlineData(false, 0, 33.0)]
+    public void TheSolvedStateCarriesWhatTheRuleReads(bool sensed, int of, double ballast)
     {
         BoundChannel channel = SampleChannel.Channel(2, feed: 1500);
         channel = channel with { Legs = [channel.Legs[0], channel.Legs[1] with { Sensed = sensed }] };
         SolvedState? state = WorstCase.Nominal(new ChannelModel(channel, p => new TransistorVariants(p)), new PinSource(channel.Logic));
         Assert.NotNull(state);
-        TransistorPoint leg = state.Transistors[1];
+        TransistorPoint leg = state.Transistors[of];
         Assert.Equal(ballast, leg.Ballast, 3);
         Assert.Equal(300, leg.RthJa, 9);
         Assert.InRange(leg.VbeSlope, -2.2e-3, -1.3e-3);

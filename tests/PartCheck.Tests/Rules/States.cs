@@ -13,6 +13,9 @@ internal static class States
 {
     public static readonly BoundChannel Channel = SampleChannel.Channel(1);
 
+    /// <summary>A transistor whose row gives nothing: nobody asks for anything.</summary>
+    public static readonly Transistor BareTransistor = new() { PartNumber = "TQ-99", Cell = "parts.csv!A99" };
+
     public static SolvedState Of(
         TransistorPoint? pass = null, ResistorPoint? resistor = null, double celsius = 25, ChannelState state = ChannelState.On, double load = 0.02,
         double baseNode = 1.3, bool lowest = false, DriveEdge? drive = null, bool pinHolds = true, bool gainHolds = true, double pinLevel = 5.25) => new()
@@ -42,6 +45,9 @@ internal static class States
     public static Stress Judge(ResistorRule rule, SolvedState state, DeratingRow? row = null, DeratingRow? power = null) =>
         rule.Evaluate(state, state.Resistors[0], Channel, new RuleRows(row ?? Row(rule.Id), power ?? row ?? Row("r-power")));
 
+    public static Stress Judge(LedRule rule, SolvedState state, LedPart part, DeratingRow row, BoundChannel? channel = null) =>
+        rule.Evaluate(state, part, channel ?? Channel, Rows(rule, row));
+
     public static Stress Judge(ChannelRule rule, SolvedState state, BoundChannel? channel = null) =>
         rule.Evaluate(state, channel ?? Channel, Rows(rule, null));
 
@@ -61,7 +67,13 @@ internal static class States
     public static Stress Judge(ChannelRule rule, SolvedState state, DeratingRow row, BoundChannel channel) =>
         rule.Evaluate(state, channel, Rows(rule, row));
 
-    public static bool Asks(TransistorRule rule, Transistor part, BoundChannel channel) => rule.Asked(part, channel, Rows(rule, null));
+    public static bool Asks(TransistorRule rule, Transistor part, BoundChannel channel) => rule.AppliesTo(Role.Pass) && rule.Asked(part, channel, Rows(rule, null));
+
+    public static bool Asks(ResistorRule rule, ResistorPart part) => rule.AppliesTo(part);
+
+    /// <summary>A resistor whose row gives its resistance alone.</summary>
+    public static ResistorPart BareResistor(double ohms) =>
+        new() { PartNumber = "RK-99", Cell = "parts.csv!A99", Resistance = Cite(Resistance.FromOhms(ohms)) };
 
     public static bool Asks(ChannelRule rule, BoundChannel channel, DeratingRow? row = null) => rule.Asked(channel, Rows(rule, row));
 

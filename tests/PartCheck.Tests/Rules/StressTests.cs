@@ -59,24 +59,3 @@ public class StressTests
         Assert.True(high.Worse(Stress.AtMostOf(1, 2)) > 0);
     }
 }
-
-public class RuleBookTests
-{
-    /// <summary>The approved list: identifiers are stable, reports and concessions quote them.</summary>
-    [Fact]
-    public void TheRulesJudgedAreTheApprovedOnes() => Assert.Equal(
-        ["vce", "vcb", "ic", "power", "junction", "soa", "stability", "sharing", "r-power", "r-voltage", "r-film", "current", "headroom", "drive",
-            "pin-current", "off", "bill"],
-        RuleBook.Judged);
-
-    [Fact]
-    public void WhatIsNotJudgedIsSaid() => Assert.Empty(RuleBook.NotJudged);
-
-    [Fact]
-    public void EveryRuleHasATitleAUnitAndASource() => Assert.All(RuleBook.StateRules, rule =>
-    {
-        Assert.NotEmpty(rule.Title);
-        Assert.True(rule.Unit is "V" or "A" or "W" or "K" or "");
-        Assert.NotEmpty(rule.Source);
-    });
-}

@@ -8,10 +8,8 @@ using Xunit;
 
 namespace PartCheck.Tests.Rules;
 
-public class VceRuleTests : RuleTests
+public class VceRuleTests : RuleTests<VceRule>
 {
-    private static readonly VceRule Rule = new();
-
     // The sample channel's Supply peak is 28 V.
     protected override Stress Below() => Judge(45);
 
@@ -20,6 +18,8 @@ public class VceRuleTests : RuleTests
     protected override Stress Above() => States.Judge(Rule, States.Of(States.Pass(With(34))), States.Row("vce", 0.8));
 
     protected override Stress WithoutTheRating() => States.Judge(Rule, States.Of(States.Pass(SampleChannel.Transistor() with { Vceo = null })));
+
+    protected override bool AskedByNobody() => States.Asks(Rule, States.BareTransistor, SampleChannel.Channel(1));
 
     [Fact]
     public void TheControlStandsUnderTheBaseNodeBoundedByThePin()
@@ -34,10 +34,8 @@ public class VceRuleTests : RuleTests
     private static Transistor With(double rating) => SampleChannel.Transistor() with { Vceo = States.Cite(Voltage.FromVolts(rating)) };
 }
 
-public class VcbRuleTests : RuleTests
+public class VcbRuleTests : RuleTests<VcbRule>
 {
-    private static readonly VcbRule Rule = new();
-
     // On: 20 V in the corner, 28 V peak over 25.2 V supply: 22.8 V.
     protected override Stress Below() => Judge(25);
 
@@ -46,6 +44,8 @@ public class VcbRuleTests : RuleTests
     protected override Stress Above() => Judge(22.7);
 
     protected override Stress WithoutTheRating() => States.Judge(Rule, States.Of(States.Pass(SampleChannel.Transistor() with { Vcbo = null })));
+
+    protected override bool AskedByNobody() => States.Asks(Rule, States.BareTransistor, SampleChannel.Channel(1));
 
     [Fact]
     public void WithThePinLowTheWholePeakStandsOnTheCollector()
@@ -60,10 +60,8 @@ public class VcbRuleTests : RuleTests
     private static Transistor With(double rating) => SampleChannel.Transistor() with { Vcbo = States.Cite(Voltage.FromVolts(rating)) };
 }
 
-public class IcRuleTests : RuleTests
+public class IcRuleTests : RuleTests<IcRule>
 {
-    private static readonly IcRule Rule = new();
-
     // Rating 100 mA, factor 0.75: 75 mA.
     protected override Stress Below() => Judge(0.05);
 
@@ -73,13 +71,13 @@ public class IcRuleTests : RuleTests
 
     protected override Stress WithoutTheRating() => States.Judge(Rule, States.Of(States.Pass(SampleChannel.Transistor() with { Ic = null })));
 
+    protected override bool AskedByNobody() => States.Asks(Rule, States.BareTransistor, SampleChannel.Channel(1));
+
     private static Stress Judge(double ic) => States.Judge(Rule, States.Of(States.Pass(ic: ic)), States.Row("ic", 0.75));
 }
 
-public class PowerRuleTests : RuleTests
+public class PowerRuleTests : RuleTests<PowerRule>
 {
-    private static readonly PowerRule Rule = new();
-
     // MIL-PRF-19500/255 1.3, 2N2222A: PT 0.50 W, 3.08 mW/K above TA 37.5 degC, RthJA 325 K/W, TJ 200 degC.
     private static readonly Transistor Slash255 = SampleChannel.Transistor() with
     {
@@ -96,7 +94,21 @@ public class PowerRuleTests : RuleTests
 
     protected override Stress Above() => Judge(Slash255, 0.31, 100);
 
+    // 0.6 W while on at 37.5 degC, of 0.5 W: too much; averaged over a duty of 60 % from 1 kHz up it is 0.36 W: ratio 0.72.
+    [Theory]
+    [InlineData(1, 1.2, Verdict.Nonconforming)]
+    [InlineData(0.6, 0.72, Verdict.Conforms)]
+    public void UnderPwmTheAverageIsJudged(double share, double ratio, Verdict verdict)
+    {
+        Stress stress = States.Judge(Rule, States.Of(States.Pass(Slash255, power: 0.6) with { AveragedShare = share }, celsius: 37.5));
+        Assert.Equal(ratio, stress.Ratio!.Value, 9);
+        Assert.Equal(0.6 * share, stress.Actual, 12);
+        Assert.Equal(verdict, stress.Verdict);
+    }
+
     protected override Stress WithoutTheRating() => Judge(Slash255 with { Power = null }, 0.1, 25);
+
+    protected override bool AskedByNobody() => States.Asks(Rule, States.BareTransistor, SampleChannel.Channel(1));
 
     // 500 mW - 3.08 mW/K x 62.5 K = 307.5 mW, just under (200 - 100)/325 = 307.7 mW.
     [Theory]
@@ -181,10 +193,8 @@ public class PowerRuleTests : RuleTests
         States.Judge(Rule, States.Of(States.Pass(part, power: watts), celsius: celsius));
 }
 
-public class JunctionRuleTests : RuleTests
+public class JunctionRuleTests : RuleTests<JunctionRule>
 {
-    private static readonly JunctionRule Rule = new();
-
     // Sample: Tj max 150 degC, 25 K under it: 125 degC; ambient 25 degC.
     protected override Stress Below() => Judge(100);
 
@@ -193,6 +203,8 @@ public class JunctionRuleTests : RuleTests
     protected override Stress Above() => Judge(126);
 
     protected override Stress WithoutTheRating() => States.Judge(Rule, States.Of(States.Pass(SampleChannel.Transistor() with { TjMax = null })));
+
+    protected override bool AskedByNobody() => States.Asks(Rule, States.BareTransistor, SampleChannel.Channel(1));
 
     // NASA EEE-INST-002 (May 2003), S1 Table 4 and note 2: 0.80 Tj max, at most 125 degC, at most Tj max - 40 K.
     [Theory]

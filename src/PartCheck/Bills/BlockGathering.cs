@@ -6,7 +6,7 @@ namespace PartCheck.Bills;
 /// Puts the lines of a bill together, block by block: each reference once. A block whose references all stand above already is the
 /// same list once more (grouped, or one row a part), and is taken once.
 /// </summary>
-internal sealed class BillAssembly
+internal sealed class BlockGathering
 {
     private readonly List<BillLine> lines = [];
     private readonly Dictionary<string, int> seen = new(StringComparer.OrdinalIgnoreCase);
