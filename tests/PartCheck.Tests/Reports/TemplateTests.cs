@@ -52,7 +52,7 @@ public class TemplateTests
     }
 
     [Theory]
-    [InlineData("Parts", "Kind", "npn,resistor")]
+    [InlineData("Parts", "Kind", "npn,resistor,led")]
     [InlineData("Pins", "Output", "cmos,ttl")]
     [InlineData("Channels", "Pull-down at", "base,pin")]
     public void ClosedListsAreDropDowns(string name, string column, string choices)
