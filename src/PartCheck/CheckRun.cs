@@ -207,7 +207,7 @@ public static partial class CheckRun
             IReadOnlyList<Finding> pinFindings = JudgePins(judged, derating);
             ConcessionBook book = BookOf(rows, changes);
             BoardReport report = Report(
-                derating, judged, [.. billFindings.Select(book.Apply)], [.. pinFindings.Select(book.Apply)], book.Apply, [.. advice, .. MistypedAdvice(bill, parts, channels), .. CircuitAdvice(channels)]);
+                derating, judged, [.. billFindings.Select(book.Apply)], [.. pinFindings.Select(book.Apply)], book.Apply, [.. advice, .. MistypedAdvice(bill, parts, channels), .. CircuitAdvice(channels), .. FaultAdvice(judged, cancel)]);
             return report with
             {
                 ConcessionsAsOf = concessions is null ? null : request.Date,
@@ -480,6 +480,28 @@ public static partial class CheckRun
                 {
                     yield return new Advice(null, null, $"{part.PartNumber}: {EngineeringNotation.Format(ohms, "ohm")} is neither an E24 nor an E96 value.");
                 }
+            }
+        }
+
+        /// <summary>Remarks on what heat and a single fault would do, of each channel's worst reading.</summary>
+        private IEnumerable<Advice> FaultAdvice(IReadOnlyList<JudgedChannel> judged, CancellationToken cancel)
+        {
+            foreach (JudgedChannel channel in judged.Where(j => j.Readings.Count > 0))
+            {
+                int hot = channel.Readings.FindIndex(r => HotNeighbour.Text(channel.Models[channel.Readings.IndexOf(r)], r) is not null);
+                if (hot >= 0)
+                {
+                    yield return new Advice(
+                        channel.Channel.Name, channel.Models[hot].Channel.Control.Reference, HotNeighbour.Text(channel.Models[hot], channel.Readings[hot])!);
+                }
+
+                double supply = channel.Models[0].Channel.Conditions.Supply.Max.Volts;
+                string shorted = channel.Models
+                    .Select(m => ShortedLoad.Judge(m.Channel, Variants, new PinSource(m.Channel.Logic), request.Threads, cancel))
+                    .OrderByDescending(j => j.Count(s => s.Stress.Verdict == Verdict.Nonconforming))
+                    .ThenByDescending(j => j.Max(s => s.Stress.Ratio ?? 0))
+                    .Select(j => ShortedLoad.Text(supply, j)).First();
+                yield return new Advice(channel.Channel.Name, null, shorted);
             }
         }
 

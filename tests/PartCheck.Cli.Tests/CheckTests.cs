@@ -36,6 +36,38 @@ public class CheckTests
         }
     }
 
+    /// <summary>
+    /// Two board conditions of one transistor, 300 and 150 K/W: blank takes the worse and lists it, a name takes its row. The control's heat,
+    /// the currents and so the powers are nearly the same; the rated powers are 350 and 700 mW: twice the ratio of <c>power</c>.
+    /// </summary>
+    [Fact]
+    public async Task BlankMountingIsTheWorstRowAndListedANameIsItsRow()
+    {
+        string parts = BoardFolder.Parts.Replace("Package,VCEO", "Package,Mounting,VCEO", StringComparison.Ordinal)
+            .Replace("SOT-23,45", "SOT-23,bare,45", StringComparison.Ordinal).Replace("0603,,", "0603,,,", StringComparison.Ordinal);
+        string row = parts.Split('\n').First(l => l.TrimStart().StartsWith("TQ-31", StringComparison.Ordinal));
+        parts = parts.Replace(row, row + "\n" + row.Replace("bare", "copper", StringComparison.Ordinal).Replace(",350,300,", ",700,150,", StringComparison.Ordinal), StringComparison.Ordinal)
+            .Replace("TQ-30,npn,Tarnwood,SOT-23,bare", "TQ-30,npn,Tarnwood,SOT-23,", StringComparison.Ordinal);
+        async Task<(double Ratio, bool Listed)> Power(string? mounting)
+        {
+            string channels = mounting is null ? BoardFolder.Channels
+                : BoardFolder.Channels.Replace(",Feed", ",Feed,Mounting", StringComparison.Ordinal).Replace(",Q2,R2", ",Q2,R2," + mounting, StringComparison.Ordinal);
+            using BoardFolder board = new(channels: channels, parts: parts);
+            Run run = await board.Check("--format", "json");
+            using JsonDocument document = JsonDocument.Parse(run.Output);
+            JsonElement one = document.RootElement.GetProperty("boards")[0];
+            JsonElement finding = one.GetProperty("findings").EnumerateArray().Single(f => f.GetProperty("rule").GetString() == "power" && f.GetProperty("reference").GetString() == "Q1");
+            return (finding.GetProperty("stressRatio").GetDouble(), one.GetProperty("assumed").EnumerateArray().Any(a => a.GetProperty("what").GetString() == "Mounting"));
+        }
+
+        (double blank, bool blankListed) = await Power(null);
+        (double bare, bool bareListed) = await Power("bare");
+        (double copper, bool copperListed) = await Power("Copper");
+        Assert.Equal(bare, blank, 9);
+        Assert.InRange(bare / copper, 1.9, 2.1);
+        Assert.Equal((true, false, false), (blankListed, bareListed, copperListed));
+    }
+
     [Fact]
     public void TheSameInputGivesTheSameReportWithAnyThreadCount()
     {

@@ -23,6 +23,7 @@ public sealed class BipolarDevice
         ArgumentNullException.ThrowIfNull(parameters);
         ArgumentOutOfRangeException.ThrowIfNegativeOrZero(shift);
         Parameters = parameters;
+        Shift = shift;
         Gain = gain;
         XtbCold = xtbCold ?? parameters.Xtb;
         XtbHot = xtbHot ?? parameters.Xtb;
@@ -40,6 +41,9 @@ public sealed class BipolarDevice
 
     /// <summary>Parameters at their own TNOM.</summary>
     public BipolarParameters Parameters { get; }
+
+    /// <summary>k of the VBE shift [-].</summary>
+    public double Shift { get; }
 
     /// <summary>Factor on the forward base current; null: 1.</summary>
     public GainFactor? Gain { get; }

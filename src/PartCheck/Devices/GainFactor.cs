@@ -47,6 +47,30 @@ public sealed class GainFactor
         return new GainFactor(first, step, values, slopes);
     }
 
+    /// <summary>The factor straight between two, so that the base current is; null: 1.</summary>
+    /// <param name="low">Factor at share 0.</param>
+    /// <param name="high">Factor at share 1.</param>
+    /// <param name="share">0 to 1.</param>
+    /// <exception cref="ArgumentException">Both vary with the current and are tabulated on different grids.</exception>
+    public static GainFactor? Between(GainFactor? low, GainFactor? high, double share)
+    {
+        if (ReferenceEquals(low, high) || share is 0 or 1)
+        {
+            return share == 1 ? high : low;
+        }
+
+        GainFactor a = low ?? Constant(1);
+        GainFactor b = high ?? Constant(1);
+        GainFactor grid = a.values.Length >= b.values.Length ? a : b;
+        double[] Spread(GainFactor of, double[] values, bool slopes) =>
+            of.values.Length == grid.values.Length && of.firstLog == grid.firstLog && of.step == grid.step ? values
+            : of.slopes.All(s => s == 0) && of.values.All(v => v == of.values[0]) ? [.. Enumerable.Repeat(slopes ? 0 : of.values[0], grid.values.Length)]
+            : throw new ArgumentException("The two factors stand on different grids.", nameof(high));
+        double[] Mix(double[] x, double[] y) => [.. x.Zip(y, (p, q) => ((1 - share) * p) + (share * q))];
+        return new GainFactor(
+            grid.firstLog, grid.step, Mix(Spread(a, a.values, false), Spread(b, b.values, false)), Mix(Spread(a, a.slopes, true), Spread(b, b.slopes, true)));
+    }
+
     /// <summary>ln of the grid's smallest current [ln A].</summary>
     internal double FirstLog => firstLog;
 

@@ -1,7 +1,6 @@
 using System.Globalization;
 using PartCheck.Channels;
 using PartCheck.Parts;
-using PartCheck.Quantities;
 
 namespace PartCheck.OperatingPoints;
 
@@ -36,9 +35,8 @@ public sealed class ChannelModel
         Heats = ControlRth is not null && PassRth.All(r => r is not null);
         CouplingGiven = Classes.All(c => c.First.PassPart.Coupling is not null);
         OneLegSensed = channel.Legs.Count(l => l.Sensed) == 1;
-        Load = [LoadAt(channel.Conditions.LoadDrop.Min), LoadAt(channel.Conditions.LoadDrop.Max)];
-        NominalLoad = LoadAt(Voltage.FromVolts(
-            (channel.Conditions.LoadDrop.Min.Volts + channel.Conditions.LoadDrop.Max.Volts) / 2));
+        Load = [LoadAt(channel.Conditions.LoadDrop.Min.Volts), LoadAt(channel.Conditions.LoadDrop.Max.Volts)];
+        NominalLoad = LoadAt((channel.Conditions.LoadDrop.Min.Volts + channel.Conditions.LoadDrop.Max.Volts) / 2);
         CollectAssumptions();
     }
 
@@ -111,10 +109,11 @@ public sealed class ChannelModel
             ? (t.Value.Kelvins - part.FlatTo.Kelvins) / p.Value.Watts
             : null);
 
-    private LoadElement LoadAt(Voltage drop)
+    /// <summary>The load at a drop [V].</summary>
+    internal LoadElement LoadAt(double drop)
     {
         ChannelConditions c = Channel.Conditions;
-        return LoadElement.FromDrop(drop.Volts, c.CurrentNominal.Amperes, c.LoadSlope.Ohms, c.Leds);
+        return LoadElement.FromDrop(drop, c.CurrentNominal.Amperes, c.LoadSlope.Ohms, c.Leds);
     }
 
     private void CollectAssumptions()

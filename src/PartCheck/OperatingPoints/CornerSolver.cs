@@ -33,7 +33,24 @@ public sealed class CornerSolver
     public SolvedState Solve(ChannelBox box, int index, int offset = 0)
     {
         ArgumentNullException.ThrowIfNull(box);
-        BoxCorner at = box.At(index);
+        return Solve(box, box.At(index), index, offset);
+    }
+
+    /// <summary>The solved state of a point inside the box.</summary>
+    /// <param name="box">The box.</param>
+    /// <param name="inside">The point.</param>
+    /// <param name="offset">Index of the state.</param>
+    public SolvedState SolveInside(ChannelBox box, in BoxCorner inside, int offset)
+    {
+        ArgumentNullException.ThrowIfNull(box);
+        edgeOf = -1;
+        SolvedState state = Solve(box, inside, 0, offset);
+        edgeOf = -1;
+        return state;
+    }
+
+    private SolvedState Solve(ChannelBox box, in BoxCorner at, int index, int offset)
+    {
         OperatingPoint? point = solver.Solve(at.Circuit, start);
         if (point is null)
         {

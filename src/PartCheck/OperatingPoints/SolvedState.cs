@@ -30,6 +30,9 @@ public enum Extreme
 
     /// <summary>The odd leg's VBE, one lot's match away from the rest's end of the window.</summary>
     Match,
+
+    /// <summary>Between the ends: a knee, where a ratio peaks inside its range.</summary>
+    Inside,
 }
 
 /// <summary>Ends of a transistor's two windows.</summary>
@@ -217,6 +220,9 @@ public sealed class SolvedState
 
     /// <summary>Resistors.</summary>
     public required IReadOnlyList<ResistorPoint> Resistors { get; init; }
+
+    /// <summary>The circuit that was solved, as numbers; null: the state was not solved.</summary>
+    public SinkCircuit? Circuit { get; init; }
 
     /// <summary>Edge of regulation (state on, h = 0); null elsewhere.</summary>
     public DriveEdge? Drive { get; init; }

@@ -33,6 +33,7 @@ internal static class StateAssembly
         {
             State = state,
             Corner = at.Corner,
+            Circuit = circuit,
             Index = index,
             BaseVoltage = point.BaseVoltage,
             ControlBaseVoltage = point.ControlBaseVoltage,
@@ -67,6 +68,7 @@ internal static class StateAssembly
         {
             State = state,
             Corner = corner,
+            Circuit = circuit,
             Index = -1,
             BaseVoltage = point.BaseVoltage,
             ControlBaseVoltage = point.ControlBaseVoltage,

@@ -117,6 +117,17 @@ public sealed class TransistorVariants
         matched[(restVbe == Extreme.Max ? 2 : 0) + (hfe == Extreme.Max ? 1 : 0)]
         ?? throw new InvalidOperationException($"{Part.PartNumber} has no VBE match.");
 
+    /// <summary>The device at positions inside its windows, 0 their smallest and 1 their largest VBE and hFE.</summary>
+    public BipolarDevice Between(double vbe, double hfe) => Blend(corners, vbe, hfe);
+
+    /// <summary>The odd device of one lot, the rest at a position inside its VBE window: at most the match away from it.</summary>
+    /// <exception cref="InvalidOperationException">The row gives no match.</exception>
+    public BipolarDevice MatchedBetween(double restVbe, double hfe)
+    {
+        Matched(Extreme.Min, Extreme.Min);
+        return Blend(matched, restVbe, hfe);
+    }
+
     /// <summary>True where a collector current lies within a factor 3 of the guaranteed points of the window's end.</summary>
     public bool GainHolds(double ic, Extreme hfe)
     {
@@ -136,6 +147,15 @@ public sealed class TransistorVariants
         }
 
         return new BipolarDevice(model, Math.Exp(logShift), gain, xtbCold, xtbHot);
+    }
+
+    /// <summary>Bilinear between four devices: the shift in its logarithm, the gain factor and its exponents straight.</summary>
+    private static BipolarDevice Blend(BipolarDevice[] ends, double vbe, double hfe)
+    {
+        double Mix(Func<BipolarDevice, double> of) =>
+            ((1 - vbe) * (((1 - hfe) * of(ends[0])) + (hfe * of(ends[1])))) + (vbe * (((1 - hfe) * of(ends[2])) + (hfe * of(ends[3]))));
+        return new BipolarDevice(
+            ends[0].Parameters, Math.Exp(Mix(d => Math.Log(d.Shift))), GainFactor.Between(ends[0].Gain, ends[1].Gain, hfe), Mix(d => d.XtbCold), Mix(d => d.XtbHot));
     }
 
     private static List<(double Ic, double Gain)> Points(Transistor part, Func<HfePoint, double?> end) =>

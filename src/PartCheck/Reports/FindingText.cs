@@ -172,5 +172,5 @@ internal static class FindingText
         }
     }
 
-    private static string End(Extreme end) => end switch { Extreme.Min => "min", Extreme.Match => "one lot's match off the rest", _ => "max" };
+    private static string End(Extreme end) => end switch { Extreme.Min => "min", Extreme.Match => "one lot's match off the rest", Extreme.Inside => "inside its range", _ => "max" };
 }

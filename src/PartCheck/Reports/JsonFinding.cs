@@ -153,6 +153,7 @@ internal static class JsonFinding
         Extreme.Min => "min",
         Extreme.Max => "max",
         Extreme.Match => "match",
-        _ => throw new ArgumentOutOfRangeException(nameof(end), end, "An end is typical, min, max or match."),
+        Extreme.Inside => "inside",
+        _ => throw new ArgumentOutOfRangeException(nameof(end), end, "An end is typical, min, max, match or inside."),
     };
 }

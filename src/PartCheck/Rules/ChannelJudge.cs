@@ -77,17 +77,75 @@ public sealed class ChannelJudge
             }
         }
 
+        Climb(total, new KneeSearch(model, pin), driveFactor, threads, cancel);
         SolvedState? nominal = WorstCase.Nominal(model, pin);
         return new ReadingJudgement(model.Channel, Findings(total, pin), nominal, total.LoadMin, total.LoadMax, total.PinMax, total.Corners, total.NotSolved + (nominal is null ? 1 : 0))
         {
             HeatMax = total.HeatMax,
-            PinState = total.PinState,
+            PinState = total.MostPin,
             Assumed = total.ControlHeld
                 ? [new Assumption("hFE of the control beyond its points", model.Control.Part.PartNumber, "the outermost value held")]
                 : [],
             Hottest = [.. Enumerable.Range(0, model.Slots.Count).Where(s => total.Hottest[s] > 0)
                 .SelectMany(s => model.Slots.Of(s).Select(p => (p.Reference, total.Hottest[s])))],
         };
+    }
+
+    /// <summary>From every worst corner to the knee that may be worse still.</summary>
+    private void Climb(Accumulator total, KneeSearch search, double driveFactor, int threads, CancellationToken cancel)
+    {
+        List<(int Rule, int Slot)> keys = [];
+        for (int r = 0; r < rules.Count; r++)
+        {
+            for (int s = 0; s <= model.Slots.Count; s++)
+            {
+                if (applies[r, s] && total.At(r, s).State is not null)
+                {
+                    keys.Add((r, s));
+                }
+            }
+        }
+
+        List<SolvedState?> peaks = [.. Enumerable.Repeat<SolvedState?>(null, keys.Count + 4)];
+        ParallelOptions options = new() { CancellationToken = cancel, MaxDegreeOfParallelism = threads > 0 ? threads : -1 };
+        Parallel.For(0, keys.Count, options, i =>
+        {
+            (int r, int s) = keys[i];
+            double? edge = rules[r] is DriveRule ? Math.Max(driveFactor, 1.2) : null;
+            peaks[i] = search.Climb(total.At(r, s).State!, edge, state => Measure(r, s, state));
+        });
+        for (int i = 0; i < keys.Count; i++)
+        {
+            if (peaks[i] is { } peak)
+            {
+                Take(total.At(keys[i].Rule, keys[i].Slot), keys[i].Rule, keys[i].Slot, peak);
+            }
+        }
+
+        foreach (SolvedState? peak in (ReadOnlySpan<SolvedState?>)[
+            total.LeastLoad is { } least ? search.Climb(least, null, s => -s.LoadCurrent) : null,
+            total.MostLoad is { } most ? search.Climb(most, null, s => s.LoadCurrent) : null,
+            total.MostPin is { } pin ? search.Climb(pin, null, s => s.PinCurrent) : null,
+            total.MostHeat is { } heat ? search.Climb(heat, null, Heat) : null])
+        {
+            if (peak is not null)
+            {
+                total.TakeExtremes(peak, Heat(peak));
+            }
+        }
+    }
+
+    /// <summary>The ratio of a rule at a slot in a state, infinite where it is nonconforming at any size; NaN: not judged there.</summary>
+    private double Measure(int r, int s, SolvedState state)
+    {
+        if (!rules[r].Reads(state))
+        {
+            return double.NaN;
+        }
+
+        Worst worst = new();
+        Take(worst, r, s, state);
+        return worst.State is null ? double.NaN : worst.Stress.Ratio ?? double.PositiveInfinity;
     }
 
     /// <summary>Heat while on of everything on the board that belongs to the channel, the load left out [W].</summary>
@@ -117,22 +175,14 @@ public sealed class ChannelJudge
             return;
         }
 
+        into.TakeExtremes(state, state.State == ChannelState.On ? Heat(state) : 0);
         if (state.State == ChannelState.On)
         {
-            into.LoadMin = Math.Min(into.LoadMin, state.LoadCurrent);
-            into.LoadMax = Math.Max(into.LoadMax, state.LoadCurrent);
-            into.HeatMax = Math.Max(into.HeatMax, Heat(state));
             into.ControlHeld |= !state.ControlGainGuaranteed;
             foreach (TransistorPoint point in (TransistorPoint[])state.Transistors)
             {
                 into.Hottest[point.Slot] = Math.Max(into.Hottest[point.Slot], point.Tj);
             }
-        }
-
-        if (state.PinCurrent > into.PinMax)
-        {
-            into.PinMax = state.PinCurrent;
-            into.PinState = state;
         }
 
         int channelSlot = model.Slots.Count;
@@ -143,43 +193,73 @@ public sealed class ChannelJudge
                 continue;
             }
 
-            switch (rules[r])
+            for (int slot = 0; slot <= channelSlot; slot++)
             {
-                case TransistorRule rule:
-                    foreach (TransistorPoint point in (TransistorPoint[])state.Transistors)
-                    {
-                        if (!applies[r, point.Slot])
-                        {
-                            continue;
-                        }
-
-                        into.At(r, point.Slot).Take(rule.Evaluate(state, point, model.Channel, rows[r, point.Slot]), state);
-                    }
-
-                    break;
-                case ResistorRule rule:
-                    for (int i = 0; i < state.Resistors.Count; i++)
-                    {
-                        ResistorPoint point = state.Resistors[i];
-                        if (applies[r, point.Slot])
-                        {
-                            into.At(r, point.Slot).Take(rule.Evaluate(state, point, model.Channel, rows[r, point.Slot]), state);
-                        }
-                    }
-
-                    break;
-                case LedRule rule:
-                    for (int s = model.Slots.FirstLed; s < model.Slots.Count; s++)
-                    {
-                        into.At(r, s).Take(rule.Evaluate(state, (LedPart)model.Slots.Of(s)[0].Part, model.Channel, rows[r, s]), state);
-                    }
-
-                    break;
-                case ChannelRule rule when applies[r, channelSlot]:
-                    into.At(r, channelSlot).Take(rule.Evaluate(state, model.Channel, rows[r, channelSlot]), state);
-                    break;
+                if (applies[r, slot])
+                {
+                    Take(into.At(r, slot), r, slot, state);
+                }
             }
         }
+    }
+
+    /// <summary>What a rule says of every point of a slot.</summary>
+    private void Take(Worst into, int r, int slot, SolvedState state)
+    {
+        switch (rules[r])
+        {
+            case TransistorRule rule:
+                foreach (TransistorPoint point in (TransistorPoint[])state.Transistors)
+                {
+                    if (point.Slot == slot)
+                    {
+                        into.Take(rule.Evaluate(state, point, model.Channel, rows[r, slot]), state);
+                    }
+                }
+
+                break;
+            case ResistorRule rule:
+                for (int i = 0; i < state.Resistors.Count; i++)
+                {
+                    if (state.Resistors[i].Slot == slot)
+                    {
+                        into.Take(rule.Evaluate(state, state.Resistors[i], model.Channel, rows[r, slot]), state);
+                    }
+                }
+
+                break;
+            case LedRule rule:
+                into.Take(rule.Evaluate(state, (LedPart)model.Slots.Of(slot)[0].Part, model.Channel, rows[r, slot]), state);
+                break;
+            case ChannelRule rule:
+                into.Take(rule.Evaluate(state, model.Channel, rows[r, slot]), state);
+                break;
+        }
+    }
+
+    /// <summary>What every rule says of one state: rule, reference (null: the channel) and stress, worst of the points of a slot.</summary>
+    public IReadOnlyList<(string Rule, string? Reference, Stress Stress)> Evaluate(SolvedState state)
+    {
+        ArgumentNullException.ThrowIfNull(state);
+        List<(string, string?, Stress)> found = [];
+        for (int r = 0; r < rules.Count; r++)
+        {
+            for (int slot = 0; slot <= model.Slots.Count && rules[r].Reads(state); slot++)
+            {
+                Worst worst = new();
+                if (applies[r, slot])
+                {
+                    Take(worst, r, slot, state);
+                }
+
+                if (worst.State is not null)
+                {
+                    found.Add((rules[r].Id, slot == model.Slots.Count ? null : model.Slots.Of(slot)[0].Reference, worst.Stress));
+                }
+            }
+        }
+
+        return found;
     }
 
     /// <summary>A corner without a solution: nothing that reads its state is verified.</summary>
@@ -276,19 +356,43 @@ public sealed class ChannelJudge
 
         public int NotSolved { get; set; }
 
-        public double LoadMin { get; set; } = double.PositiveInfinity;
+        public SolvedState? LeastLoad { get; private set; }
 
-        public double LoadMax { get; set; } = double.NegativeInfinity;
+        public SolvedState? MostLoad { get; private set; }
 
-        public double PinMax { get; set; }
+        public SolvedState? MostPin { get; private set; }
 
-        public SolvedState? PinState { get; set; }
+        public SolvedState? MostHeat { get; private set; }
 
-        public double HeatMax { get; set; }
+        public double LoadMin => LeastLoad?.LoadCurrent ?? double.PositiveInfinity;
+
+        public double LoadMax => MostLoad?.LoadCurrent ?? double.NegativeInfinity;
+
+        public double PinMax => Math.Max(0, MostPin?.PinCurrent ?? 0);
+
+        public double HeatMax { get; private set; }
 
         public bool ControlHeld { get; set; }
 
         public double[] Hottest { get; } = new double[slots];
+
+        /// <summary>Load current and heat of the states on, pin current of all.</summary>
+        public void TakeExtremes(SolvedState state, double heat)
+        {
+            MostPin = MostPin is null || state.PinCurrent > MostPin.PinCurrent ? state : MostPin;
+            if (state.State != ChannelState.On)
+            {
+                return;
+            }
+
+            LeastLoad = LeastLoad is null || state.LoadCurrent < LeastLoad.LoadCurrent ? state : LeastLoad;
+            MostLoad = MostLoad is null || state.LoadCurrent > MostLoad.LoadCurrent ? state : MostLoad;
+            if (MostHeat is null || heat > HeatMax)
+            {
+                MostHeat = state;
+                HeatMax = heat;
+            }
+        }
 
         public Worst At(int rule, int slot) => worst[(rule * slots) + slot] ??= new Worst();
 
@@ -296,10 +400,19 @@ public sealed class ChannelJudge
         {
             Corners += later.Corners;
             NotSolved += later.NotSolved;
-            LoadMin = Math.Min(LoadMin, later.LoadMin);
-            LoadMax = Math.Max(LoadMax, later.LoadMax);
-            (PinMax, PinState) = later.PinMax > PinMax ? (later.PinMax, later.PinState) : (PinMax, PinState);
-            HeatMax = Math.Max(HeatMax, later.HeatMax);
+            foreach (SolvedState? state in (ReadOnlySpan<SolvedState?>)[later.LeastLoad, later.MostLoad, later.MostPin])
+            {
+                if (state is not null)
+                {
+                    TakeExtremes(state, double.NegativeInfinity);
+                }
+            }
+
+            if (later.MostHeat is { } hot)
+            {
+                TakeExtremes(hot, later.HeatMax);
+            }
+
             ControlHeld |= later.ControlHeld;
             for (int s = 0; s < slots; s++)
             {

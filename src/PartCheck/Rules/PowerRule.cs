@@ -106,7 +106,20 @@ public sealed class PowerRule : TransistorRule
             .Step(
                 "Pallowed", none ? "0 W" : thermal ? "F x max(0, min(Pline, Pth))" : "F x max(0, Pline)", "W",
                 none ? "nothing: the ambient is at or above Tj max" : "derated power")
-            .AtMost("P#", "Pallowed", stress);
+            .AtMost(Averaged(steps, point), "Pallowed", stress);
+    }
+
+    /// <summary>The symbol of the power that is judged, its averaging derived where there is any.</summary>
+    private static string Averaged(Derivation steps, in TransistorPoint point)
+    {
+        if (point.AveragedShare == 1)
+        {
+            return "P#";
+        }
+
+        steps.Given("dP", point.AveragedShare, string.Empty, "largest duty: from 1 kHz up a rating reads the average")
+            .Step("Paverage", "dP x P#", "W", "dissipation averaged over the period");
+        return "Paverage";
     }
 
     /// <inheritdoc/>

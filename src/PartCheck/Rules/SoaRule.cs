@@ -103,7 +103,8 @@ public sealed class SoaRule : TransistorRule
         {
             at = "Tcase";
             steps.Given("RthJC", part.RthJc!.Value.KelvinsPerWatt, "K/W", "junction to case", part.RthJc.Cell)
-                .Step("Tcase", "max(Ta, Tj# - P# x RthJC)", "degC", "case temperature");
+                .Given("dC", point.CaseShare, string.Empty, "share of the power that surely warms the case: the duty where pulses were solved, else 1")
+                .Step("Tcase", "max(Ta, Tj# - dC x P# x RthJC)", "degC", "case temperature");
         }
 
         steps.Given("Tmax#", part.TjMax!.Value.Celsius, "degC", "Tj max of " + part.PartNumber, part.TjMax.Cell)

@@ -132,7 +132,7 @@ internal static class CircuitSymbols
         foreach (LegView leg in legs)
         {
             TransistorPoint q = state.Transistors[leg.Index];
-            AddThermal(book, q, leg.N, leg.Who, warm, []);
+            AddThermal(book, q, model, model.PassHeat[leg.Class], leg.N, leg.Who, warm, []);
             if (hottest < 0 || q.RthJa * q.Power > state.Transistors[hottest].RthJa * state.Transistors[hottest].Power)
             {
                 hottest = leg.Index;
@@ -141,7 +141,8 @@ internal static class CircuitSymbols
             if (warm && model.CouplingGiven && q.Part.Coupling is { } coupling)
             {
                 book.Given("Kc" + leg.N, coupling.Value.KelvinsPerWatt, "K/W", $"heating of the control by {leg.Who}", coupling.Cell);
-                heat.Add(Times(q.Count, $"Kc{leg.N} x P{leg.N}"));
+                string pulsed = Pulsed(model.PassHeat[leg.Class]) ? $" x RthP{leg.N} / RthJA{leg.N}" : string.Empty;
+                heat.Add(Times(q.Count, $"Kc{leg.N}{pulsed} x P{leg.N}"));
             }
         }
 
@@ -149,13 +150,14 @@ internal static class CircuitSymbols
         {
             string n = legs.First(l => l.Index == hottest).N;
             book.Given("Kshare", share, string.Empty, "share of the hottest leg's RthJA that heats the control", assumed: true);
-            heat.Add($"Kshare x RthJA{n} x P{n}");
+            heat.Add($"Kshare x {(Pulsed(model.PassHeat[legs.First(l => l.Index == hottest).Class]) ? "RthP" : "RthJA")}{n} x P{n}");
         }
 
-        AddThermal(book, state.Transistors[^1] with { RthJa = model.ControlRth ?? double.NaN }, "0", model.Channel.Control.Reference, warm, heat);
+        AddThermal(book, state.Transistors[^1] with { RthJa = model.ControlRth ?? double.NaN }, model, model.ControlHeat, "0", model.Channel.Control.Reference, warm, heat);
     }
 
-    private static void AddThermal(Derivation book, in TransistorPoint q, string n, string who, bool warm, List<string> more)
+    private static void AddThermal(
+        Derivation book, in TransistorPoint q, ChannelModel model, PulsedHeat pulses, string n, string who, bool warm, List<string> more)
     {
         if (q.Part.RthJa is { } given)
         {
@@ -175,9 +177,26 @@ internal static class CircuitSymbols
             return;
         }
 
-        string formula = !warm ? "Ta" : string.Join(" + ", [$"Ta + RthJA{n} x P{n}", .. more]);
+        if (warm && Pulsed(pulses))
+        {
+            double duty = model.Channel.Conditions.Duty;
+            book.Given("d" + n, duty, string.Empty, "largest duty", model.Channel.ConditionCells.GetValueOrDefault("Duty max"));
+            string formulaOfPulse = $"d{n} x RthJA{n}";
+            if (q.Part.Zth.Count > 0)
+            {
+                book.Given("Zth" + n, (pulses.Effective!.Value - (duty * pulses.Steady!.Value)) / (1 - duty), "K/W", "thermal resistance of one pulse, log-log between the Zth points of " + q.Part.PartNumber);
+                formulaOfPulse += $" + (1 - d{n}) x Zth{n}";
+            }
+
+            book.Step("RthP" + n, formulaOfPulse, "K/W", "peak rise of the junction over the power while on");
+        }
+
+        string formula = !warm ? "Ta" : string.Join(" + ", [$"Ta + {(Pulsed(pulses) ? "RthP" : "RthJA")}{n} x P{n}", .. more]);
         book.Step("Tj" + n, formula, "degC", $"junction temperature of {who}{(warm ? string.Empty : ", just switched on")}");
     }
+
+    /// <summary>True where the junction is not that of steady power.</summary>
+    private static bool Pulsed(PulsedHeat heat) => heat.Effective != heat.Steady;
 
     private static void AddBalances(Derivation book, FindingBasis basis, IReadOnlyList<LegView> legs, string feed)
     {

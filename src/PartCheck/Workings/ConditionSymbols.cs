@@ -21,7 +21,7 @@ internal static class ConditionSymbols
         bool hottest = corner.Ambient == c.Ambient.Max.Kelvins;
         book.Given(
                 "Ta", corner.Ambient - Temperature.CelsiusZero, "degC",
-                coldest || hottest ? "ambient" : "ambient: inside the range, where a rated power starts to fall",
+                coldest || hottest ? "ambient" : "ambient: inside the range, where a rated power starts to fall or the ratio peaks",
                 coldest ? Cell("Ambient min") : hottest ? Cell("Ambient max") : null)
             .Given("Vsupply", corner.Supply, "V", "load supply", Cell(corner.Supply == c.Supply.Min.Volts ? "Supply min" : "Supply max"))
             .Given("Vdrop", corner.LoadDrop, "V", "drop of the load at Iref", Cell(corner.LoadDrop == c.LoadDrop.Min.Volts ? "Load drop min" : "Load drop max"))
@@ -33,17 +33,17 @@ internal static class ConditionSymbols
         foreach (LegView leg in legs)
         {
             Leg first = model.Classes[leg.Class].First;
-            AddResistance(book, "Rs" + leg.N, model.Sense[leg.Class], basis.State, leg.Odd ? corner.OddSense : corner.Sense, $"sense resistor {first.Sense.Part.PartNumber} of {leg.Who}");
+            AddResistance(book, "Rs" + leg.N, model.Sense[leg.Class], basis.State, basis.State.Circuit?.Legs[leg.Index].Sense, leg.Odd ? corner.OddSense : corner.Sense, $"sense resistor {first.Sense.Part.PartNumber} of {leg.Who}");
             if (model.Averaging[leg.Class] is { } averaging)
             {
-                AddResistance(book, "Ra" + leg.N, averaging, basis.State, leg.Odd ? corner.OddAveraging : corner.Averaging, $"averaging resistor {averaging.Part.PartNumber} of {leg.Who}");
+                AddResistance(book, "Ra" + leg.N, averaging, basis.State, basis.State.Circuit?.Legs[leg.Index].Averaging, leg.Odd ? corner.OddAveraging : corner.Averaging, $"averaging resistor {averaging.Part.PartNumber} of {leg.Who}");
             }
         }
 
-        AddResistance(book, "Rf", model.Feed, basis.State, corner.Feed, "feed resistor " + model.Channel.Feed.Reference);
+        AddResistance(book, "Rf", model.Feed, basis.State, basis.State.Circuit?.Feed, corner.Feed, "feed resistor " + model.Channel.Feed.Reference);
         if (model.PullDown is { } down)
         {
-            AddResistance(book, "Rp", down, basis.State, corner.PullDown, "pull-down resistor " + model.Channel.PullDown!.Reference);
+            AddResistance(book, "Rp", down, basis.State, basis.State.Circuit?.PullDown, corner.PullDown, "pull-down resistor " + model.Channel.PullDown!.Reference);
         }
 
         if (model.Channel is { PullDown: not null, PullDownAt: PullDownAt.Pin })
@@ -69,6 +69,13 @@ internal static class ConditionSymbols
             }
 
             book.Given("Rpin", corner.PinResistance, "ohm", "its resistance to ground", logic.Cell);
+            return;
+        }
+
+        if (corner.PinLevel != basis.Pin.WeakVoltage && corner.PinLevel != basis.Pin.StrongVoltage)
+        {
+            book.Given("Vpin", corner.PinLevel, "V", "level of the pin, inside its range, where the ratio peaks", logic.Cell)
+                .Given("Rpin", corner.PinResistance, "ohm", "its source resistance there", logic.Cell);
             return;
         }
 
@@ -98,12 +105,18 @@ internal static class ConditionSymbols
     }
 
     /// <summary>R (1 +- tolerance)(1 +- TCR abs(T - 20 degC)) at one end.</summary>
-    private static void AddResistance(Derivation book, string symbol, ResistorRange range, SolvedState state, Extreme end, string who)
+    private static void AddResistance(Derivation book, string symbol, ResistorRange range, SolvedState state, double? solved, Extreme end, string who)
     {
         ResistorPart part = range.Part;
         if (state.Index < 0 || end == Extreme.Typical || range.Nominal == 0)
         {
             book.Given(symbol, range.Nominal, "ohm", who, part.Resistance.Cell);
+            return;
+        }
+
+        if (end == Extreme.Inside)
+        {
+            book.Given(symbol, solved ?? range.Nominal, "ohm", who + ", inside its range, where the ratio peaks", part.Resistance.Cell);
             return;
         }
 

@@ -49,8 +49,7 @@ public static class FindingWorking
         CircuitSymbols.Add(book, basis, legs);
         Corner corner = state.Corner;
         DeviceSymbols.Add(
-            book, state.Transistors[^1], state.Index < 0 ? model.Control.Nominal : model.Control.At(corner.Control), "0", model.Channel.Control.Reference,
-            corner.Control.Vbe, model.Control);
+            book, state.Transistors[^1], ControlDevice(model, state), "0", model.Channel.Control.Reference, corner.Control.Vbe, model.Control);
         foreach (LegView leg in legs)
         {
             DeviceSymbols.Add(
@@ -78,6 +77,12 @@ public static class FindingWorking
 
         return rule;
     }
+
+    /// <summary>The control's device in this corner, or where a ratio peaks inside its windows.</summary>
+    private static Devices.BipolarDevice ControlDevice(ChannelModel model, SolvedState state) =>
+        state.Index < 0 ? model.Control.Nominal
+        : state.Circuit is { } circuit && (state.Corner.Control.Vbe == Extreme.Inside || state.Corner.Control.Hfe == Extreme.Inside) ? circuit.Control
+        : model.Control.At(state.Corner.Control);
 
     /// <summary>Voltage, current and power of the resistor judged.</summary>
     /// <returns>Symbol of its resistance.</returns>

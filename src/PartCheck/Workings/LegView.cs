@@ -42,7 +42,9 @@ internal sealed record LegView(int Index, int Class, bool Odd, string N, string 
     public BipolarDevice Device(ChannelModel model, SolvedState state)
     {
         Corner corner = state.Corner;
-        return state.Index < 0 ? model.Pass[Class].Nominal
+        TransistorCorner ends = Odd ? corner.OddPass : corner.Pass;
+        return state.Circuit is { } circuit && (ends.Vbe == Extreme.Inside || ends.Hfe == Extreme.Inside || corner.Pass.Vbe == Extreme.Inside) ? circuit.Legs[Index].Pass
+            : state.Index < 0 ? model.Pass[Class].Nominal
             : !Odd ? model.Pass[Class].At(corner.Pass)
             : corner.OddPass.Vbe == Extreme.Match ? model.Pass[Class].Matched(corner.Pass.Vbe, corner.OddPass.Hfe)
             : model.Pass[Class].At(corner.OddPass);
