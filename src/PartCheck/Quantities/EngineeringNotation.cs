@@ -10,7 +10,7 @@ public static class EngineeringNotation
 
     /// <summary>Prints a value, rounded to significant digits, without trailing zeros, in the invariant culture.</summary>
     /// <param name="si">The value in SI; finite.</param>
-    /// <param name="unit">The unit. V, A, W, ohm, Hz, s, W/K and V/K take the prefixes p n u m k M G; all others are printed plain.</param>
+    /// <param name="unit">The unit. V, A, W, ohm, Hz, s, W/K, V/K and A/K take the prefixes p n u m k M G; all others are printed plain.</param>
     /// <param name="digits">Significant digits, 1 to 15.</param>
     /// <returns>Number, blank, prefix and unit; the number alone where the unit is empty.</returns>
     /// <exception cref="ArgumentOutOfRangeException">The value is not finite or the digits are out of range.</exception>
@@ -20,7 +20,7 @@ public static class EngineeringNotation
         ArgumentOutOfRangeException.ThrowIfLessThan(digits, 1);
         ArgumentOutOfRangeException.ThrowIfGreaterThan(digits, 15);
         Finite.Checked(si, nameof(si));
-        bool prefixed = unit is "V" or "A" or "W" or "ohm" or "\u03A9" or "Hz" or "s" or "W/K" or "V/K";
+        bool prefixed = unit is "V" or "A" or "W" or "ohm" or "\u03A9" or "Hz" or "s" or "W/K" or "V/K" or "A/K";
 
         // Scientific notation rounds first, so that 999.96 mA becomes 1 A and not 1000 mA.
         string scientific = si.ToString("E" + (digits - 1).ToString(CultureInfo.InvariantCulture), CultureInfo.InvariantCulture);

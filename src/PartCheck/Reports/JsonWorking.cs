@@ -42,9 +42,9 @@ public static class JsonWorking
         json.WriteStartObject("finding");
         JsonFinding.Write(json, working.Finding);
         json.WriteEndObject();
-        json.Text("actual", working.Actual);
-        json.Text("allowed", working.Allowed);
-        json.Text("stressRatio", working.Ratio);
+        json.Text("actualSymbol", working.Actual);
+        json.Text("allowedSymbol", working.Allowed);
+        json.Text("ratioSymbol", working.Ratio);
         json.List("steps", working.Lines, WriteLine);
         json.List("checks", working.Checks, WriteLine);
     }

@@ -82,6 +82,50 @@ public sealed class LedCurrentRule : LedRule
     }
 
     /// <inheritdoc/>
+    public override void Derive(Derivation steps, SolvedState state, LedPart part, BoundChannel channel, in RuleRows rows, in Stress stress)
+    {
+        string actual = "I";
+        ChannelConditions c = channel.Conditions;
+        if (c.Strings > 1)
+        {
+            actual = "Istring";
+            steps.Given("strings", c.Strings, string.Empty, "Strings in parallel", channel.ConditionCells.GetValueOrDefault("Strings"));
+            if (stress.AtLeast)
+            {
+                steps.Step("Istring", "I / strings", "A", "current of a string at even shares: one of them carries at least this");
+            }
+            else
+            {
+                bool given = c.StringShareMax is not null;
+                steps.Given(
+                        "share", c.StringShareMax ?? c.Strings, string.Empty, given ? "String share max" : "no String share max is given: one string may carry all",
+                        channel.ConditionCells.GetValueOrDefault("String share max"), assumed: !given)
+                    .Step("Istring", "I / strings x min(strings, share)", "A", "most that one string carries");
+            }
+        }
+
+        steps.Given("IF", part.ForwardCurrentMax!.Value.Amperes, "A", "highest forward current of " + part.PartNumber, part.ForwardCurrentMax.Cell)
+            .Given("TLflat", part.FlatTo.Celsius, "degC", "it holds up to here", part.ForwardCurrentFlatTo?.Cell, assumed: part.ForwardCurrentFlatTo is null)
+            .Factor(rows.Own);
+        string fall = string.Empty;
+        if (part.ForwardCurrentSlope is { } slope)
+        {
+            steps.Given("slope", slope.Value, "A/K", "slope above that", slope.Cell);
+            fall = " - slope x max(0, Ta - TLflat)";
+        }
+        else if (part.TjMax is { } max)
+        {
+            steps.Given("TLmax", max.Value.Celsius, "degC", "Tj max of " + part.PartNumber, max.Cell);
+            fall = " - IF x max(0, Ta - TLflat) / (TLmax - TLflat)";
+        }
+
+        bool none = state.Corner.Ambient >= part.TjMax?.Value.Kelvins;
+        steps.Step(
+                "Iallowed", none ? "0 A" : $"F x max(0, IF{fall})", "A", none ? "nothing: the ambient is at or above Tj max" : "derated forward current at the ambient")
+            .AtMost(actual, "Iallowed", stress);
+    }
+
+    /// <inheritdoc/>
     public override string? DecidingCell(LedPart part)
     {
         ArgumentNullException.ThrowIfNull(part);

@@ -101,25 +101,18 @@ public sealed class PowerRule : TransistorRule
             steps.Step("Pth", "(Tmax# - Ta) / RthJA#", "W", "what the thermal resistance lets through up to Tj max");
         }
 
+        bool averaged = point.AveragedShare != 1;
+        if (averaged)
+        {
+            steps.Step("Pmean", "d x P#", "W", "average over the period, from 1 kHz up");
+        }
+
         bool none = ambient >= part.TjMax?.Value.Kelvins;
         steps.Factor(rows.Own)
             .Step(
                 "Pallowed", none ? "0 W" : thermal ? "F x max(0, min(Pline, Pth))" : "F x max(0, Pline)", "W",
                 none ? "nothing: the ambient is at or above Tj max" : "derated power")
-            .AtMost(Averaged(steps, point), "Pallowed", stress);
-    }
-
-    /// <summary>The symbol of the power that is judged, its averaging derived where there is any.</summary>
-    private static string Averaged(Derivation steps, in TransistorPoint point)
-    {
-        if (point.AveragedShare == 1)
-        {
-            return "P#";
-        }
-
-        steps.Given("dP", point.AveragedShare, string.Empty, "largest duty: from 1 kHz up a rating reads the average")
-            .Step("Paverage", "dP x P#", "W", "dissipation averaged over the period");
-        return "Paverage";
+            .AtMost(averaged ? "Pmean" : "P#", "Pallowed", stress);
     }
 
     /// <inheritdoc/>

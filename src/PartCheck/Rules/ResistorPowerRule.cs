@@ -72,12 +72,12 @@ public sealed class ResistorPowerRule : ResistorRule
         ArgumentNullException.ThrowIfNull(steps);
         ArgumentNullException.ThrowIfNull(part);
         ArgumentNullException.ThrowIfNull(row);
-        steps.Given("Prated", part.Power!.Value.Watts, "W", "rated power of " + part.PartNumber, part.Power.Cell)
+        steps.Given("PRrated", part.Power!.Value.Watts, "W", "rated power of " + part.PartNumber, part.Power.Cell)
             .Given("T1", part.FlatTo.Celsius, "degC", "the rated power holds up to here", part.PowerFlatTo?.Cell, assumed: part.PowerFlatTo is null)
             .Factor(row, "Fp");
         if (part.TjMax is not { } film)
         {
-            steps.Step("Pallowed", "Prated x Fp", "W", "derated power, on its flat part");
+            steps.Step("Pallowed", "PRrated x Fp", "W", "derated power, on its flat part");
             return;
         }
 
@@ -87,7 +87,7 @@ public sealed class ResistorPowerRule : ResistorRule
         {
             t3 = "T3";
             steps.Given("slope", slope.Value, "W/K", "slope of the rated power", slope.Cell)
-                .Step("T3", "min(Tfilm, T1 + Prated / slope)", "degC", "where the rated power reaches zero");
+                .Step("T3", "min(Tfilm, T1 + PRrated / slope)", "degC", "where the rated power reaches zero");
         }
 
         if (row is { Zero: ZeroTemperature.Fixed, ZeroAt: { } fix })
@@ -104,7 +104,7 @@ public sealed class ResistorPowerRule : ResistorRule
         steps.Step("T2", zero, "degC", "where the derated power reaches zero");
         double known = Allowed(part, row, ambient);
         steps.Step(
-            "Pallowed", known == 0 ? "0 W" : ambient <= part.FlatTo.Kelvins ? "Prated x Fp" : "Prated x Fp x (T2 - Ta) / (T2 - T1)", "W",
+            "Pallowed", known == 0 ? "0 W" : ambient <= part.FlatTo.Kelvins ? "PRrated x Fp" : "PRrated x Fp x (T2 - Ta) / (T2 - T1)", "W",
             known == 0 ? "nothing: the ambient is at or above T2" : "derated power at the ambient");
     }
 

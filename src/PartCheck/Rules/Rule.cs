@@ -83,6 +83,9 @@ public abstract class LedRule : Rule
     /// <summary>Judges one LED in one state.</summary>
     public abstract Stress Evaluate(SolvedState state, LedPart part, BoundChannel channel, in RuleRows rows);
 
+    /// <summary>Writes the equation down with its numbers, for a state that <see cref="Evaluate"/> judged: the same equation, as a person reads it.</summary>
+    public abstract void Derive(Derivation steps, SolvedState state, LedPart part, BoundChannel channel, in RuleRows rows, in Stress stress);
+
     /// <summary>The cell of the rating that decides; null: not given.</summary>
     public abstract string? DecidingCell(LedPart part);
 }

@@ -103,8 +103,7 @@ public sealed class SoaRule : TransistorRule
         {
             at = "Tcase";
             steps.Given("RthJC", part.RthJc!.Value.KelvinsPerWatt, "K/W", "junction to case", part.RthJc.Cell)
-                .Given("dC", point.CaseShare, string.Empty, "share of the power that surely warms the case: the duty where pulses were solved, else 1")
-                .Step("Tcase", "max(Ta, Tj# - dC x P# x RthJC)", "degC", "case temperature");
+                .Step("Tcase", point.CaseShare == 1 ? "max(Ta, Tj# - P# x RthJC)" : "max(Ta, Tj# - d x P# x RthJC)", "degC", "case temperature");
         }
 
         steps.Given("Tmax#", part.TjMax!.Value.Celsius, "degC", "Tj max of " + part.PartNumber, part.TjMax.Cell)

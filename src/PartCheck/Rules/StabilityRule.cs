@@ -66,8 +66,7 @@ public sealed class StabilityRule : TransistorRule
         else
         {
             steps.Solved("slope#", Math.Abs(point.VbeSlope), "V/K", "abs(dVBE/dT) of the model at constant collector current")
-                .Given("dS", point.AveragedShare, string.Empty, "largest duty where power is averaged (from 1 kHz up), else 1")
-                .Step("thermal", "dS x VCE# x RthJA# x slope#", "V/A", "volts of VBE that an ampere's heat shifts")
+                .Step("thermal", point.AveragedShare == 1 ? "VCE# x RthJA# x slope#" : "d x VCE# x RthJA# x slope#", "ohm", "volts of VBE that an ampere's heat shifts")
                 .Step("electrical", "Rball# + RE# + VT# / IC# + Rbb# x max(0, IB#) / IC#", "ohm", "volts that an ampere drops: ballast, emitter, VT/IC, base")
                 .Step("S", "thermal / electrical", string.Empty, "thermal loop gain between legs");
         }

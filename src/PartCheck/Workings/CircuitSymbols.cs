@@ -1,7 +1,6 @@
 using System.Globalization;
 using PartCheck.Channels;
 using PartCheck.OperatingPoints;
-using PartCheck.Quantities;
 using PartCheck.Rules;
 
 namespace PartCheck.Workings;
@@ -39,7 +38,7 @@ internal static class CircuitSymbols
         }
 
         AddLoad(book, basis, legs);
-        AddTemperatures(book, basis, legs);
+        HeatSymbols.Add(book, basis, legs);
         AddBalances(book, basis, legs, feed);
     }
 
@@ -91,10 +90,10 @@ internal static class CircuitSymbols
             .Step("VBE" + n, $"Vb - VE{n}", "V", "base-emitter voltage of " + who)
             .Step("VCB" + n, "Vc - Vb", "V", "collector-base voltage of " + who)
             .Step("P" + n, $"VCE{n} x IC{n} + VBE{n} x IB{n}", "W", "dissipation of " + who)
-            .Step("Rball" + n, sensed ? averaged ? $"Rs{n} x Ra{n} / (Rs{n} + Ra{n})" : "0 ohm" : $"Rs{n}", "ohm", "ballast of " + who);
+            .Step("Rball" + n, !sensed || basis.Model.OneLegSensed ? $"Rs{n}" : averaged ? $"Rs{n} x Ra{n} / (Rs{n} + Ra{n})" : "0 ohm", "ohm", "ballast of " + who);
     }
 
-    private static string GainEnd(Extreme end) => end switch { Extreme.Min => "hFE min", Extreme.Max => "hFE max", _ => "hFE has one value" };
+    private static string GainEnd(Extreme end) => end switch { Extreme.Min => "hFE min", Extreme.Max => "hFE max", Extreme.Inside => "hFE inside its window", _ => "hFE has one value" };
 
     private static void AddLoad(Derivation book, FindingBasis basis, IReadOnlyList<LegView> legs)
     {
@@ -121,82 +120,6 @@ internal static class CircuitSymbols
             .Step("Vload", load, "V", "drop of the load at its current")
             .Step("Vc", "Vsupply - Vload", "V", "joined collectors, the low end of the load");
     }
-
-    private static void AddTemperatures(Derivation book, FindingBasis basis, IReadOnlyList<LegView> legs)
-    {
-        SolvedState state = basis.State;
-        ChannelModel model = basis.Model;
-        bool warm = state.Corner.Heat == 1;
-        List<string> heat = [];
-        int hottest = -1;
-        foreach (LegView leg in legs)
-        {
-            TransistorPoint q = state.Transistors[leg.Index];
-            AddThermal(book, q, model, model.PassHeat[leg.Class], leg.N, leg.Who, warm, []);
-            if (hottest < 0 || q.RthJa * q.Power > state.Transistors[hottest].RthJa * state.Transistors[hottest].Power)
-            {
-                hottest = leg.Index;
-            }
-
-            if (warm && model.CouplingGiven && q.Part.Coupling is { } coupling)
-            {
-                book.Given("Kc" + leg.N, coupling.Value.KelvinsPerWatt, "K/W", $"heating of the control by {leg.Who}", coupling.Cell);
-                string pulsed = Pulsed(model.PassHeat[leg.Class]) ? $" x RthP{leg.N} / RthJA{leg.N}" : string.Empty;
-                heat.Add(Times(q.Count, $"Kc{leg.N}{pulsed} x P{leg.N}"));
-            }
-        }
-
-        if (warm && state.Corner.AssumedCoupling is > 0 and var share && hottest >= 0)
-        {
-            string n = legs.First(l => l.Index == hottest).N;
-            book.Given("Kshare", share, string.Empty, "share of the hottest leg's RthJA that heats the control", assumed: true);
-            heat.Add($"Kshare x {(Pulsed(model.PassHeat[legs.First(l => l.Index == hottest).Class]) ? "RthP" : "RthJA")}{n} x P{n}");
-        }
-
-        AddThermal(book, state.Transistors[^1] with { RthJa = model.ControlRth ?? double.NaN }, model, model.ControlHeat, "0", model.Channel.Control.Reference, warm, heat);
-    }
-
-    private static void AddThermal(
-        Derivation book, in TransistorPoint q, ChannelModel model, PulsedHeat pulses, string n, string who, bool warm, List<string> more)
-    {
-        if (q.Part.RthJa is { } given)
-        {
-            book.Given("RthJA" + n, given.Value.KelvinsPerWatt, "K/W", "thermal resistance of " + q.Part.PartNumber, given.Cell);
-        }
-        else if (!double.IsNaN(q.RthJa))
-        {
-            book.Given("Tmax" + n, q.Part.TjMax!.Value.Celsius, "degC", "Tj max of " + q.Part.PartNumber, q.Part.TjMax.Cell)
-                .Given("Tflat" + n, q.Part.FlatTo.Celsius, "degC", "the rated power holds up to here", q.Part.PowerFlatTo?.Cell, assumed: q.Part.PowerFlatTo is null)
-                .Given("Prated" + n, q.Part.Power!.Value.Watts, "W", "rated power of " + q.Part.PartNumber, q.Part.Power.Cell)
-                .Step("RthJA" + n, $"(Tmax{n} - Tflat{n}) / Prated{n}", "K/W", $"thermal resistance of {q.Part.PartNumber}: none is given (assumed)");
-        }
-
-        if (q.Held)
-        {
-            book.Given("Tj" + n, q.Tj - Temperature.CelsiusZero, "degC", $"junction of {who}, held where it runs away: at least this");
-            return;
-        }
-
-        if (warm && Pulsed(pulses))
-        {
-            double duty = model.Channel.Conditions.Duty;
-            book.Given("d" + n, duty, string.Empty, "largest duty", model.Channel.ConditionCells.GetValueOrDefault("Duty max"));
-            string formulaOfPulse = $"d{n} x RthJA{n}";
-            if (q.Part.Zth.Count > 0)
-            {
-                book.Given("Zth" + n, (pulses.Effective!.Value - (duty * pulses.Steady!.Value)) / (1 - duty), "K/W", "thermal resistance of one pulse, log-log between the Zth points of " + q.Part.PartNumber);
-                formulaOfPulse += $" + (1 - d{n}) x Zth{n}";
-            }
-
-            book.Step("RthP" + n, formulaOfPulse, "K/W", "peak rise of the junction over the power while on");
-        }
-
-        string formula = !warm ? "Ta" : string.Join(" + ", [$"Ta + {(Pulsed(pulses) ? "RthP" : "RthJA")}{n} x P{n}", .. more]);
-        book.Step("Tj" + n, formula, "degC", $"junction temperature of {who}{(warm ? string.Empty : ", just switched on")}");
-    }
-
-    /// <summary>True where the junction is not that of steady power.</summary>
-    private static bool Pulsed(PulsedHeat heat) => heat.Effective != heat.Steady;
 
     private static void AddBalances(Derivation book, FindingBasis basis, IReadOnlyList<LegView> legs, string feed)
     {
@@ -227,5 +150,5 @@ internal static class CircuitSymbols
         }
     }
 
-    private static string Times(int count, string term) => count == 1 ? term : string.Create(CultureInfo.InvariantCulture, $"{count} x {term}");
+    internal static string Times(int count, string term) => count == 1 ? term : string.Create(CultureInfo.InvariantCulture, $"{count} x {term}");
 }

@@ -23,11 +23,13 @@ internal static class ConditionSymbols
                 "Ta", corner.Ambient - Temperature.CelsiusZero, "degC",
                 coldest || hottest ? "ambient" : "ambient: inside the range, where a rated power starts to fall or the ratio peaks",
                 coldest ? Cell("Ambient min") : hottest ? Cell("Ambient max") : null)
-            .Given("Vsupply", corner.Supply, "V", "load supply", Cell(corner.Supply == c.Supply.Min.Volts ? "Supply min" : "Supply max"))
-            .Given("Vdrop", corner.LoadDrop, "V", "drop of the load at Iref", Cell(corner.LoadDrop == c.LoadDrop.Min.Volts ? "Load drop min" : "Load drop max"))
+            .Given("Vsupply", corner.Supply, "V", "load supply" + Inside(corner.Supply, c.Supply), Cell(corner.Supply == c.Supply.Min.Volts ? "Supply min" : "Supply max"))
+            .Given("Vdrop", corner.LoadDrop, "V", "drop of the load at Iref" + Inside(corner.LoadDrop, c.LoadDrop), Cell(corner.LoadDrop == c.LoadDrop.Min.Volts ? "Load drop min" : "Load drop max"))
             .Given("Iref", c.CurrentNominal.Amperes, "A", "current at which the drop holds (Current nominal, or the window's centre)", Cell("Current nominal"))
             .Given("Rload", c.LoadSlope.Ohms, "ohm", "ohmic part of the load", Cell("Load slope"))
             .Given("LEDs", c.Leds, string.Empty, "LEDs in the string", Cell("LEDs"))
+            .Given("d", c.Duty, string.Empty, "largest duty", Cell("Duty max"))
+            .Given("f", c.Frequency?.Hertz ?? 0, "Hz", "PWM frequency", Cell("Frequency"))
             .Given("kq", PhysicalConstants.BoltzmannOverCharge, "V/K", "Boltzmann constant over elementary charge (SI, exact)");
         AddPin(book, basis);
         foreach (LegView leg in legs)
@@ -52,6 +54,9 @@ internal static class ConditionSymbols
                 .Step("Rsource", "Rf + Rpin x Rp / (Rp + Rpin)", "ohm", "resistance of that source, feed included");
         }
     }
+
+    private static string Inside(double volts, Interval<Voltage> range) =>
+        volts > range.Min.Volts && volts < range.Max.Volts ? ", inside its range, where the ratio peaks" : string.Empty;
 
     /// <summary>Voltage and resistance of the pin, from the row's guaranteed levels.</summary>
     private static void AddPin(Derivation book, FindingBasis basis)

@@ -1,5 +1,6 @@
 using PartCheck.Channels;
 using PartCheck.OperatingPoints;
+using PartCheck.Parts;
 using PartCheck.Quantities;
 using PartCheck.Rules;
 
@@ -68,6 +69,10 @@ public static class FindingWorking
             case ResistorRule of:
                 rule = new Derivation(resistance: AddResistor(book, basis, point, legs));
                 of.Derive(rule, state, state.Resistors[point], model.Channel, basis.Rows, basis.Stress);
+                break;
+            case LedRule of:
+                rule = new Derivation();
+                of.Derive(rule, state, (LedPart)model.Slots.Of(basis.Slot)[0].Part, model.Channel, basis.Rows, basis.Stress);
                 break;
             default:
                 rule = new Derivation();

@@ -9,7 +9,7 @@ namespace PartCheck.Tests.Workings;
 /// <summary>Every finding of both examples, followed with a calculator.</summary>
 public class ExampleWorkingTests
 {
-    private static readonly Lazy<CheckReport> Greenhouse = new(() => Checked("greenhouse-lamps/board", "greenhouse-lamps/parts.csv"));
+    internal static readonly Lazy<CheckReport> Greenhouse = new(() => Checked("greenhouse-lamps/board", "greenhouse-lamps/parts.csv"));
     private static readonly Lazy<CheckReport> Porch = new(() => Checked("porch-lamp"));
 
     [Fact]
@@ -19,10 +19,9 @@ public class ExampleWorkingTests
     public void EveryFindingOfThePorchLampCanBeFollowed() => Follow(Porch.Value, 100);
 
     [Fact]
-    public void EveryRuleButThoseThatTheExamplesDoNotAskIsAmongThem() =>
-        Assert.Equal(
-            RuleBook.Judged.Except(["soa", "r-film"]).Order(StringComparer.Ordinal),
-            Greenhouse.Value.Boards[0].Findings.Concat(Porch.Value.Boards[0].Findings).Select(f => f.Rule).Distinct().Order(StringComparer.Ordinal));
+    public void EveryRuleButThoseThatTheExamplesMayLeaveOutIsAmongThem() =>
+        Assert.Empty(RuleBook.Judged.Except(["soa", "r-film", "led-current"])
+            .Except(Greenhouse.Value.Boards[0].Findings.Concat(Porch.Value.Boards[0].Findings).Select(f => f.Rule)));
 
     // The last step is the ratio that the check prints: to the rounding of six figures that a difference of two of them can grow to.
     [Fact]

@@ -146,6 +146,6 @@ internal static partial class PrintedCalculator
         };
     }
 
-    [GeneratedRegex(@"[0-9]+(\.[0-9]+)?( (%|ppm/K|degC|K/W|K|[pnumkMG]?(V/K|W/K|V|A|W|ohm))(?![A-Za-z0-9]))?|[A-Za-z][A-Za-z0-9']*|[-+/^(),]")]
+    [GeneratedRegex(@"[0-9]+(\.[0-9]+)?( (%|ppm/K|degC|K/W|K|[pnumkMG]?(V/K|W/K|A/K|Hz|V|A|W|s|ohm))(?![A-Za-z0-9]))?|[A-Za-z][A-Za-z0-9']*|[-+/^(),]")]
     private static partial Regex Token();
 }

@@ -68,9 +68,9 @@ internal sealed partial class PrintedWorking
         {
             double right = SideOf(text[7..], balance.Split(" = ")[1]);
 
-            // Six figures of what is subtracted: volts agree to 50 uV, currents to a thousandth, 2 nA and a ten-thousandth of a percent of each term.
+            // Six figures of what is subtracted: volts agree to 50 uV, currents to a thousandth, 2 nA and 5 ppm of each term.
             double terms = Amperes().Matches(text + leftText).Sum(m => Math.Abs(PrintedCalculator.Number(m.Value)));
-            double allowed = text.EndsWith('V') ? 50e-6 : (1e-3 * Math.Abs(left)) + (text.EndsWith('A') ? 2e-9 + (1e-6 * terms) : 0);
+            double allowed = text.EndsWith('V') ? 50e-6 : (1e-3 * Math.Abs(left)) + (text.EndsWith('A') ? 2e-9 + (5e-6 * terms) : 0);
             Assert.True(Math.Abs(left - right) <= allowed, $"{balance}: {left} and {right}");
             Balances++;
             return;
@@ -113,7 +113,7 @@ internal sealed partial class PrintedWorking
 
     private static bool StartsWithNumber(string text) => char.IsDigit(text.TrimStart('-')[0]) && !text.Contains('(', StringComparison.Ordinal);
 
-    [GeneratedRegex(@"^    ([A-Za-z][A-Za-z0-9']*) +(-?[0-9]+(?:\.[0-9]+)?(?: (?:%|ppm/K|degC|K/W|K|[pnumkMG]?(?:V/K|W/K|V|A|W|ohm)))?) ")]
+    [GeneratedRegex(@"^    ([A-Za-z][A-Za-z0-9']*) +(-?[0-9]+(?:\.[0-9]+)?(?: (?:%|ppm/K|degC|K/W|K|[pnumkMG]?(?:V/K|W/K|A/K|Hz|V|A|W|s|ohm)))?) ")]
     private static partial Regex Figure();
 
     [GeneratedRegex(@"[0-9.]+ [pnum]?A(?![A-Za-z0-9])")]

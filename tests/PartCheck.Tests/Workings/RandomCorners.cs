@@ -56,6 +56,17 @@ internal sealed class RandomCorners
                 continue;
             }
 
+            if (rule is LedRule led)
+            {
+                for (int s = model.Slots.FirstLed; s < model.Slots.Count; s++)
+                {
+                    RuleRows rows = new(table.For(rule.Id, "led"), table.For("r-power", "led"));
+                    yield return Made(new FindingBasis(model, pin, rule, rows, state, s, led.Evaluate(state, (LedPart)model.Slots.Of(s)[0].Part, model.Channel, rows)));
+                }
+
+                continue;
+            }
+
             foreach (TransistorPoint point in rule is TransistorRule ? state.Transistors : [])
             {
                 TransistorRule of = (TransistorRule)rule;
@@ -114,6 +125,10 @@ internal sealed class RandomCorners
                 LoadSlope = Resistance.FromOhms(random.Next(2) == 0 ? 0 : Between(1, 40) / legs),
                 LoadDrop = new(Voltage.FromVolts(drop), Voltage.FromVolts(drop + Between(0, 3))),
                 OffCurrentMax = Current.FromAmperes(1e-4),
+                Duty = random.Next(2) == 0 ? 1 : Between(0.05, 0.95),
+                Frequency = random.Next(4) switch { 0 => null, 1 => Frequency.FromHertz(200), _ => Frequency.FromHertz(Between(1000, 20000)) },
+                Strings = random.Next(2) == 0 ? 1 : 3,
+                StringShareMax = random.Next(2) == 0 ? null : 1.2,
                 SharingMax = random.Next(2) == 0 ? null : 1.3,
             },
             Legs = [.. sample.Legs.Select((l, i) => l with
@@ -123,6 +138,7 @@ internal sealed class RandomCorners
                 Averaging = averaging is null || (unsensed && i == 0) ? null : SampleChannel.Place(Role.Averaging, i, $"R{i + 11}", averaging),
                 Sensed = !(unsensed && i == 0),
             })],
+            Leds = [SampleChannel.Place(Role.Led, -1, "D1", Led())],
             Control = sample.Control with { Part = Transistor("TQ-30") },
             Feed = sample.Feed with { Part = Resistor(((ResistorPart)sample.Feed.Part).Resistance.Value.Ohms) },
             PullDown = down ? SampleChannel.Place(Role.PullDown, -1, "R21", Resistor(Between(5e3, 50e3))) : null,
@@ -147,6 +163,7 @@ internal sealed class RandomCorners
             PowerSlope = random.Next(2) == 0 ? null : Cite(Between(1e-3, 4e-3)),
             PowerFlatTo = random.Next(2) == 0 ? null : Cite(Temperature.FromCelsius(Between(25, 50))),
             Vaf = random.Next(3) == 0 ? null : Cite(Voltage.FromVolts(Between(20, 150))),
+            Zth = random.Next(2) == 0 ? [] : [Point(1e-6, Between(1, 5)), Point(1e-4, Between(10, 30)), Point(1e-2, Between(50, 90))],
             SoaAtCase = random.Next(2) == 0,
             RthJc = Cite(ThermalResistance.FromKelvinsPerWatt(Between(10, 90))),
             Soa = Cite<IReadOnlyList<SoaPoint>>([Soa(Between(2, 8), 0.1), Soa(Between(10, 20), Between(0.03, 0.09)), Soa(Between(22, 30), Between(0.005, 0.02))]),
@@ -167,6 +184,16 @@ internal sealed class RandomCorners
         };
     }
 
+    private LedPart Led() => new()
+    {
+        PartNumber = "LM-2",
+        Cell = "parts.csv!A7",
+        ForwardCurrentMax = Cite(Current.FromAmperes(Between(0.02, 0.1))),
+        ForwardCurrentFlatTo = random.Next(2) == 0 ? null : Cite(Temperature.FromCelsius(40)),
+        ForwardCurrentSlope = random.Next(2) == 0 ? null : Cite(Between(1e-4, 1e-3)),
+        TjMax = Cite(Temperature.FromCelsius(110)),
+    };
+
     private ResistorPart Resistor(double ohms) => SampleChannel.Resistor(ohms) with
     {
         Ic = Cite(Current.FromAmperes(1)),
@@ -176,6 +203,8 @@ internal sealed class RandomCorners
         WorkingVoltageMax = random.Next(3) == 0 ? null : Cite(Voltage.FromVolts(Between(1, 75))),
         RthJa = random.Next(2) == 0 ? null : Cite(ThermalResistance.FromKelvinsPerWatt(Between(100, 900))),
     };
+
+    private static ZthPoint Point(double seconds, double kelvinsPerWatt) => new(seconds, ThermalResistance.FromKelvinsPerWatt(kelvinsPerWatt));
 
     private static SoaPoint Soa(double volts, double amperes) => new(Voltage.FromVolts(volts), Current.FromAmperes(amperes));
 
