@@ -66,7 +66,6 @@ internal static class DeviceSymbols
         Extreme.Min => "such that VBE takes the window's smallest value",
         Extreme.Max => "such that VBE takes the window's largest value",
         Extreme.Inside => "such that VBE lies inside its window, where the ratio peaks",
-        Extreme.Inside => "such that VBE lies inside the window, where the ratio peaks",
         Extreme.Match => "such that VBE lies one lot's match off the rest",
         _ => "of the window's only value",
     };
