@@ -100,29 +100,7 @@ internal sealed class BoardOptions
     /// <param name="error">Standard error.</param>
     public async Task<int> WriteAsync(ParseResult parse, string text, int code, TextWriter output, TextWriter error)
     {
-        if (parse.GetValue(file) is not { } target)
-        {
-            return await CommandLine.WrittenAsync(output, text).ConfigureAwait(false)
-                ? code
-                : await CommandLine.UnwritableAsync(error).ConfigureAwait(false);
-        }
-
-        try
-        {
-            await OutputFile.WriteAsync(target, text, replace: parse.GetValue(replace)).ConfigureAwait(false);
-        }
-        catch (IOException) when (!parse.GetValue(replace) && File.Exists(target))
-        {
-            await error.WriteLineAsync($"partcheck: {target} came into being during the run; --replace allows to replace it.").ConfigureAwait(false);
-            return ExitCodes.CannotCreate;
-        }
-        catch (Exception e) when (e is IOException or UnauthorizedAccessException)
-        {
-            await error.WriteLineAsync($"partcheck: {target} could not be written; nothing was changed.").ConfigureAwait(false);
-            return ExitCodes.WriteFailure;
-        }
-
-        return code;
+        return await Delivery.SendAsync(text, parse.GetValue(file), parse.GetValue(replace), code, output, error).ConfigureAwait(false);
     }
 
     /// <summary>What cannot be read of changes and day; null: all can.</summary>

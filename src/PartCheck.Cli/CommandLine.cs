@@ -22,6 +22,8 @@ public static class CommandLine
             RootCommand root = new("Checks LED current sinks of a board's bill of materials at worst case.")
             {
                 CheckCommand.Build(output, error, colour),
+                BillCommand.Build(output, error),
+                TemplateCommand.Build(output, error),
                 WorkingCommand.Build(output, error),
             };
             ParseResult parsed = root.Parse(args);

@@ -1,5 +1,6 @@
 using PartCheck.Reports;
 using PartCheck.Rules;
+using PartCheck.Sheets;
 
 namespace PartCheck.Cli;
 
@@ -20,14 +21,9 @@ internal static class ExitCodes
     /// <summary>The code of a run whose verdict is that of what it shows.</summary>
     public static int Of(CheckReport report, Verdict verdict)
     {
-        if (report.Complaints.Any(c => c.NoInput))
+        if (Of(report.Complaints) is var trouble and not 0)
         {
-            return NoInput;
-        }
-
-        if (report.Complaints.Count > 0)
-        {
-            return Data;
+            return trouble;
         }
 
         return verdict switch
@@ -37,4 +33,8 @@ internal static class ExitCodes
             _ => 2,
         };
     }
+
+    /// <summary>The code of complaints alone: 66, 65, 0.</summary>
+    public static int Of(IReadOnlyList<Complaint> complaints) =>
+        complaints.Any(c => c.NoInput) ? NoInput : complaints.Count > 0 ? Data : 0;
 }

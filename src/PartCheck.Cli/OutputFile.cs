@@ -1,5 +1,3 @@
-using System.Text;
-
 namespace PartCheck.Cli;
 
 /// <summary>Writes a report beside its target and renames it: nothing is ever half-written.</summary>
@@ -54,15 +52,15 @@ internal static class OutputFile
 
     /// <summary>Writes a file; an exception leaves the target as it was. A link stays a link: the file it leads to is replaced.</summary>
     /// <param name="path">The target.</param>
-    /// <param name="text">What it holds.</param>
+    /// <param name="bytes">What it holds.</param>
     /// <param name="replace">True where an existing file may be replaced.</param>
-    public static async Task WriteAsync(string path, string text, bool replace)
+    public static async Task WriteAsync(string path, byte[] bytes, bool replace)
     {
         string full = FileIdentity.Of(path);
         string beside = Beside(full);
         try
         {
-            await File.WriteAllTextAsync(beside, text, new UTF8Encoding(false), CancellationToken.None).ConfigureAwait(false);
+            await File.WriteAllBytesAsync(beside, bytes, CancellationToken.None).ConfigureAwait(false);
             File.Move(beside, full, overwrite: replace);
         }
         catch

@@ -95,7 +95,7 @@ public static partial class CheckRun
         {
             List<string> references = [.. RoleNames.Columns.SelectMany(c => row.Placed(c.Role))];
             return references.Count > 0 && references.TrueForAll(reference =>
-                bill.Lines.FirstOrDefault(l => l.References.Contains(reference, StringComparer.OrdinalIgnoreCase)) is { Fitted: false, HasComplaints: false });
+                bill.Lines.FirstOrDefault(l => l.Holds(reference)) is { Fitted: false, HasComplaints: false });
         }
 
         /// <summary>The board's concessions; those without a part number do not hold for parts put in another's place.</summary>

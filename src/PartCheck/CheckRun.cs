@@ -149,7 +149,7 @@ public static partial class CheckRun
                 return Unread(derating);
             }
 
-            SheetData? billSheet = request.Bill is { } b ? source.File(b, "BOM") : source.Table(board, "BOM", required: true);
+            SheetData? billSheet = request.Bill is { } b ? BillOf(b) : source.Table(board, "BOM", required: true);
             SheetData? channelSheet = request.Channels is { } c ? source.File(c, "Channels") : source.Table(board, "Channels", required: true);
             if (exists && source.Table(board, "Derating", required: false) is { } deratingSheet)
             {
@@ -177,6 +177,7 @@ public static partial class CheckRun
                 return Unread(derating);
             }
 
+            bill = WithDoubts(bill, rows);
             if (request.Assembly is { } wanted && bill.Assembly is null)
             {
                 string has = bill.Assemblies.Count > 0 ? "it has " + string.Join(", ", bill.Assemblies) : $"no column such as \"Populated {wanted}\" names one";
@@ -206,12 +207,36 @@ public static partial class CheckRun
             IReadOnlyList<Finding> pinFindings = JudgePins(judged, derating);
             ConcessionBook book = BookOf(rows, changes);
             BoardReport report = Report(
-                derating, judged, [.. billFindings.Select(book.Apply)], [.. pinFindings.Select(book.Apply)], book.Apply, [.. advice, .. CircuitAdvice(channels), .. FaultAdvice(judged, cancel)]);
+                derating, judged, [.. billFindings.Select(book.Apply)], [.. pinFindings.Select(book.Apply)], book.Apply, [.. advice, .. MistypedAdvice(bill, parts, channels), .. CircuitAdvice(channels), .. FaultAdvice(judged, cancel)]);
             return report with
             {
                 ConcessionsAsOf = concessions is null ? null : request.Date,
                 Advice = [.. report.Advice, .. ConcessionAdvice(book)],
             };
+        }
+
+        private SheetData? BillOf(string argument)
+        {
+            List<string> notes = [];
+            SheetData? sheet = BillFile.SheetOf(source, argument, spellings, notes, complaints);
+            advice.AddRange(notes.Select(note => new Advice(null, null, note)));
+            return sheet;
+        }
+
+        /// <summary>What is doubtful in a line that serves a channel is a complaint; a quantity is the rule <c>bill</c>'s own matter.</summary>
+        private Bill WithDoubts(Bill bill, IReadOnlyList<ChannelRow> rows)
+        {
+            HashSet<string> serving = new(
+                rows.SelectMany(row => RoleNames.Columns.SelectMany(c => row.Of(c.Role))), StringComparer.OrdinalIgnoreCase);
+            List<BillLine> lines = [];
+            foreach (BillLine line in bill.Lines)
+            {
+                List<Complaint> doubts = line.References.Any(serving.Contains) ? [.. line.Doubts.Where(d => !d.IsCount)] : [];
+                doubts.ForEach(complaints.Add);
+                lines.Add(doubts.Count > 0 ? line with { HasComplaints = true } : line);
+            }
+
+            return bill with { Lines = lines };
         }
 
         private DeratingTable RunDerating()
@@ -306,18 +331,31 @@ public static partial class CheckRun
                 }
             }
 
-            // Feeds on one pin lower each other's level: first each alone, then with what the others draw.
-            foreach (IGrouping<string, JudgedChannel> pin in judged.Where(j => j.Models.Count > 0).GroupBy(PinKey, StringComparer.OrdinalIgnoreCase))
+            // Feeds on one pin lower each other's level, elements of one package warm each other: first each channel alone, then with
+            // what the others draw and dissipate.
+            List<IGrouping<string, JudgedChannel>> pins = [.. judged.Where(j => j.Models.Count > 0).GroupBy(PinKey, StringComparer.OrdinalIgnoreCase)];
+            Dictionary<string, double> powers = new(StringComparer.OrdinalIgnoreCase);
+            foreach (JudgedChannel feed in pins.SelectMany(p => p).Where(f => f.HasNeighbours || pins.Any(p => p.Count() > 1 && p.Contains(f))))
+            {
+                List<ReadingJudgement> alone = [.. feed.Models.Select(m => Judgement(feed, m, 0, cancel))];
+                feed.AloneCurrent = alone.Max(r => r.PinMax);
+                foreach ((string reference, double watts) in alone.SelectMany(r => r.MostPower))
+                {
+                    powers[reference] = Math.Max(powers.GetValueOrDefault(reference), watts);
+                }
+            }
+
+            foreach (JudgedChannel feed in judged.Where(j => j.HasNeighbours))
+            {
+                List<ChannelModel> warmed = [.. feed.Models.Select(m => new ChannelModel(m.Channel, Variants, powers))];
+                feed.Models.Clear();
+                feed.Models.AddRange(warmed);
+                feed.MissingNeighbour = warmed.Select(m => m.Package.Missing).FirstOrDefault(m => m is not null);
+            }
+
+            foreach (IGrouping<string, JudgedChannel> pin in pins)
             {
                 List<JudgedChannel> feeds = [.. pin];
-                if (feeds.Count > 1)
-                {
-                    foreach (JudgedChannel feed in feeds)
-                    {
-                        feed.AloneCurrent = feed.Models.Max(m => Judgement(feed, m, 0, cancel).PinMax);
-                    }
-                }
-
                 foreach (JudgedChannel feed in feeds)
                 {
                     double others = feeds.Where(f => f != feed).Sum(f => f.AloneCurrent);
@@ -411,6 +449,19 @@ public static partial class CheckRun
             }
 
             return made;
+        }
+
+        /// <summary>A part number that the table does not have is looked for by its near misses: suggested, never taken.</summary>
+        private static IEnumerable<Advice> MistypedAdvice(Bill bill, PartTable parts, IReadOnlyList<Channel> channels)
+        {
+            HashSet<string> serving = new(channels.SelectMany(c => c.References), StringComparer.OrdinalIgnoreCase);
+            foreach (BillLine line in bill.Lines.Where(l => l.PartNumber is { } number && parts.Find(number).Count == 0 && l.References.Any(serving.Contains)))
+            {
+                if (NearMisses.Of(line.PartNumber!, parts.Parts.Select(p => p.PartNumber)) is { Count: > 0 } near)
+                {
+                    yield return new Advice(null, line.References[0], $"The part table has no row {line.PartNumber}; is {string.Join(" or ", near)} meant?");
+                }
+            }
         }
 
         /// <summary>Remarks on parts and circuits that no rule judges.</summary>
@@ -530,10 +581,15 @@ public static partial class CheckRun
 
         public double AloneCurrent { get; set; }
 
+        public bool HasNeighbours => Models.Exists(m => m.Channel.Neighbours.Count > 0);
+
+        public string? MissingNeighbour { get; set; }
+
         public IReadOnlyList<string> MissingData =>
         [
             .. channel.Missing,
             .. CardFault is null ? (string[])[] : [$"a right model card of {CardFault.Part.PartNumber}"],
+            .. MissingNeighbour is null ? (string[])[] : [MissingNeighbour],
             .. derating.Unknown ? (string[])[$"derating table {derating.Name}"] : [],
         ];
     }

@@ -94,7 +94,7 @@ public class WorkingTests
         JsonElement ratio = steps.Single(s => s.GetProperty("symbol").GetString() == working.GetProperty("ratioSymbol").GetString());
         Assert.Equal("P / Pallowed", ratio.GetProperty("formula").GetString());
         Assert.Contains(" mW / ", ratio.GetProperty("numbers").GetString(), StringComparison.Ordinal);
-        Assert.Equal(working.GetProperty("finding").GetProperty("stressRatio").GetDouble(), ratio.GetProperty("result").GetDouble(), 4);
+        Assert.Equal(working.GetProperty("finding").GetProperty("stressRatio").GetDouble(), ratio.GetProperty("result").GetDouble(), 1e-5);
         Assert.Contains("balance", working.GetProperty("checks").EnumerateArray().Select(s => s.GetProperty("kind").GetString()));
         Assert.DoesNotContain(board.Folder, run.Output, StringComparison.Ordinal);
     }

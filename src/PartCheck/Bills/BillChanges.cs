@@ -54,7 +54,7 @@ public static class BillChanges
         foreach ((BillLine line, IReadOnlyList<string> references) in found)
         {
             // Elements of one package are one component: no part of it can be replaced alone.
-            if (references.Select(ReferenceList.PackageOf).FirstOrDefault(p => line.References.Any(r => Same(ReferenceList.PackageOf(r), p) && !references.Contains(r))) is { } split)
+            if (references.Select(ElementReference.PackageOf).FirstOrDefault(p => line.References.Any(r => Same(ElementReference.PackageOf(r), p) && !references.Contains(r))) is { } split)
             {
                 found = [];
                 return $"\"{name}\" is one element of {split}: a package is replaced as a whole.";
@@ -116,7 +116,7 @@ public static class BillChanges
             .Select(l => (Line: l, References: (IReadOnlyList<string>)[.. l.References.Where(r => names.Any(n => Meant(r, n)))]))
             .Where(f => f.References.Count > 0)];
 
-    private static bool Meant(string reference, string name) => Same(reference, name) || Same(ReferenceList.PackageOf(reference), name);
+    private static bool Meant(string reference, string name) => Same(reference, name) || Same(ElementReference.PackageOf(reference), name);
 
     private static bool Same(string? a, string? b) => string.Equals(a, b, StringComparison.OrdinalIgnoreCase);
 }

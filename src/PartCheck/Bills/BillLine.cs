@@ -1,4 +1,5 @@
 using PartCheck.Quantities;
+using PartCheck.Sheets;
 
 namespace PartCheck.Bills;
 
@@ -47,8 +48,24 @@ public sealed record BillLine
     /// <summary>True where something in the line could not be read or contradicts another line: it is not verified.</summary>
     public bool HasComplaints { get; init; }
 
+    /// <summary>
+    /// What contradicts itself in the line, or was lost before the file was saved. It is no matter while the line serves no channel;
+    /// a line that does is not verified.
+    /// </summary>
+    public IReadOnlyList<Complaint> Doubts { get; init; } = [];
+
     /// <summary>File and cell of the references.</summary>
     public required string Cell { get; init; }
+
+    /// <summary>The sheet of the line; null for CSV.</summary>
+    public string? Sheet { get; init; }
+
+    /// <summary>One-based row of the line.</summary>
+    public int Row { get; init; }
+
+    /// <summary>True where the line holds a reference, or the package of which the reference is an element.</summary>
+    public bool Holds(string reference) => References.Contains(reference, StringComparer.OrdinalIgnoreCase)
+        || References.Contains(ElementReference.PackageOf(reference), StringComparer.OrdinalIgnoreCase);
 }
 
 /// <summary>A bill of materials.</summary>
@@ -56,6 +73,9 @@ public sealed record BillLine
 /// <param name="Lines">Its lines, in order.</param>
 public sealed record Bill(string Name, IReadOnlyList<BillLine> Lines)
 {
+    /// <summary>The tables that the lines stand in.</summary>
+    public IReadOnlyList<BillTable> Tables { get; init; } = [];
+
     /// <summary>Assemblies that columns such as <c>Populated LITE</c> name, in the order of the columns.</summary>
     public IReadOnlyList<string> Assemblies { get; init; } = [];
 

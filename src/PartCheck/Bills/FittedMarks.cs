@@ -1,3 +1,4 @@
+using System.Text.RegularExpressions;
 using PartCheck.Quantities;
 using PartCheck.Sheets;
 
@@ -7,7 +8,7 @@ namespace PartCheck.Bills;
 /// Whether a line is fitted: its column Fitted, its do-not-fit column, or a mark inside its value (<c>DNP</c>, <c>0R - DNP</c>,
 /// <c>10k (not fitted)</c>). Marks that contradict each other are a complaint, and nothing is chosen between them.
 /// </summary>
-internal static class FittedMarks
+internal static partial class FittedMarks
 {
     private static readonly string[] Marks = ["DNP", "DNF", "DNI", "DNM", "NF", "NC", "N/F", "NOFIT"];
     private static readonly string[] MarkWords = ["DNP", "DNF", "DNI", "DNM"];
@@ -17,6 +18,9 @@ internal static class FittedMarks
         "NOT FITTED", "NOT PLACED", "NOT POPULATED", "NOT MOUNTED", "NOT INSTALLED", "UNFITTED", "NO FIT",
         "DO NOT FIT", "DO NOT PLACE", "DO NOT POPULATE", "DO NOT MOUNT", "DO NOT INSTALL",
     ];
+
+    /// <summary>Columns in which a mark counts where it is the whole cell.</summary>
+    private static readonly string[] Elsewhere = ["Notes", "Part number", "Manufacturer", "Description"];
 
     private static readonly string[] No = ["NO", "N", "0", "FALSE", "-"];
     private static readonly string[] Yes = ["YES", "Y", "1", "TRUE", "X", "\u2713", "\u2714"];
@@ -37,7 +41,12 @@ internal static class FittedMarks
         bool? byColumn = Said(row, "Fitted", yesMeansFitted: true);
         bool? byMark = Said(row, "Do not fit", yesMeansFitted: false);
         bool? byValue = value is not null && IsMark(value) ? false : null;
-        return Decide(row, [("Fitted", byColumn), ("Do not fit", byMark), ("Value", byValue)]);
+        return Decide(row,
+        [
+            ("Fitted", byColumn), ("Do not fit", byMark), ("Value", byValue),
+            .. Elsewhere.Select(column => (column, IsWholeMark(row.Text(column)) ? (bool?)false : null)),
+            ("Package", row.Text("Package") is { } package && PackageMark().IsMatch(package) ? false : null),
+        ]);
     }
 
     /// <summary>What a text says of a line; null: neither that it is fitted nor that it is not.</summary>
@@ -96,6 +105,13 @@ internal static class FittedMarks
         return null;
     }
 
+    /// <summary>A mark that is the whole text of a cell.</summary>
+    private static bool IsWholeMark(string? text) =>
+        text?.Trim().ToUpperInvariant() is { } upper && (MarkWords.Contains(upper) || Phrases.Contains(upper));
+
+    /// <summary>A mark inside a longer note: what it says of the line cannot be told.</summary>
+    internal static bool IsInside(string text) => !IsWholeMark(text) && IsMark(text);
+
     /// <summary>A mark that is the whole value, one of its words, or a phrase in it.</summary>
     private static bool IsMark(string value)
     {
@@ -106,4 +122,7 @@ internal static class FittedMarks
             || words.Any(MarkWords.Contains)
             || Phrases.Any(phrase => spaced.Contains(" " + phrase + " ", StringComparison.Ordinal));
     }
+
+    [GeneratedRegex("(?:^|[_ -])(?:DNP|DNF|DNI|DNM)$", RegexOptions.CultureInvariant | RegexOptions.IgnoreCase)]
+    private static partial Regex PackageMark();
 }

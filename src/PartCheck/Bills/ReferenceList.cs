@@ -13,18 +13,11 @@ public static partial class ReferenceList
     /// <summary>Longest range that is written out.</summary>
     public const int LongestRange = 10_000;
 
-    /// <summary>The package that a reference belongs to: <c>Q1</c> for its element <c>Q1.2</c>, else the reference itself.</summary>
-    public static string PackageOf(string reference)
-    {
-        ArgumentNullException.ThrowIfNull(reference);
-        return reference.IndexOf('.', StringComparison.Ordinal) is > 0 and int dot ? reference[..dot] : reference;
-    }
-
     /// <summary>Components to place: elements of one package (<c>Q1.1, Q1.2</c>) are one.</summary>
     public static int Components(IEnumerable<string> references)
     {
         ArgumentNullException.ThrowIfNull(references);
-        return references.Select(PackageOf).Distinct(StringComparer.OrdinalIgnoreCase).Count();
+        return references.Select(ElementReference.PackageOf).Distinct(StringComparer.OrdinalIgnoreCase).Count();
     }
 
     /// <summary>The references of a cell.</summary>
@@ -38,9 +31,16 @@ public static partial class ReferenceList
         references = found;
         string normal = Dashes().Replace(text.Normalize(NormalizationForm.FormKC), "-");
         normal = BlanksAroundDash().Replace(normal, "-");
+        normal = BlankInside().Replace(normal, string.Empty);
         string prefix = string.Empty;
-        foreach (string token in normal.Split([',', ';', ' ', '\t', '\n', '\r', '/', '\u00A0'], StringSplitOptions.RemoveEmptyEntries))
+        foreach (string token in Tokens(normal))
         {
+            if (found.Count > LongestRange)
+            {
+                found.RemoveRange(LongestRange, found.Count - LongestRange);
+                return $"The cell names more than {LongestRange.ToString(CultureInfo.InvariantCulture)} references.";
+            }
+
             string item = char.IsAsciiDigit(token[0]) && prefix.Length > 0 ? prefix + token : token;
             Match range = Range().Match(item);
             if (!range.Success)
@@ -81,8 +81,37 @@ public static partial class ReferenceList
         return null;
     }
 
+    /// <summary>
+    /// The names in a cell. Between commas, semicolons and line ends a text of several words that does not begin as a designator does
+    /// (<c>PIR module</c>, <c>cable 10 cm</c>) is one name.
+    /// </summary>
+    private static IEnumerable<string> Tokens(string text)
+    {
+        foreach (string item in text.Split([',', ';', '\n', '\r'], StringSplitOptions.RemoveEmptyEntries))
+        {
+            string[] words = item.Split([' ', '\t', '\u00A0', '/'], StringSplitOptions.RemoveEmptyEntries);
+            if (words.Length > 1 && !Designator().IsMatch(words[0]))
+            {
+                yield return item.Trim();
+                continue;
+            }
+
+            foreach (string word in words)
+            {
+                yield return word;
+            }
+        }
+    }
+
+    [GeneratedRegex("^(?:[A-Za-z_]{1,8})?[0-9]+(?:[.-].*|[A-Za-z])?$")]
+    private static partial Regex Designator();
+
     [GeneratedRegex("[\u2010-\u2015\u2212~]|\\.\\.+")]
     private static partial Regex Dashes();
+
+    // "C  2, C  3": blanks between letters and number.
+    [GeneratedRegex(@"(?<=(?:^|[,;/\s])[A-Za-z]{1,3})[ \t\u00A0]+(?=[0-9]+(?:$|[,;/\s-]))")]
+    private static partial Regex BlankInside();
 
     [GeneratedRegex(@"\s*-\s*")]
     private static partial Regex BlanksAroundDash();

@@ -97,7 +97,14 @@ public sealed record ChannelConditions
 /// <param name="Reference">The reference designator.</param>
 /// <param name="Line">Its bill line.</param>
 /// <param name="Part">The part row.</param>
-public sealed record Placement(Role Role, int Leg, string Reference, BillLine Line, Part Part);
+public sealed record Placement(Role Role, int Leg, string Reference, BillLine Line, Part Part)
+{
+    /// <summary>Reference of the component that is bought and placed: of an element its package's.</summary>
+    public string Package => ElementReference.PackageOf(Reference);
+
+    /// <summary>Number of the element in its package; null: the reference names none.</summary>
+    public int? Element => ElementReference.ElementOf(Reference);
+}
 
 /// <summary>One leg, every role bound.</summary>
 /// <param name="Pass">Pass transistor.</param>
@@ -154,6 +161,9 @@ public sealed record BoundChannel
 
     /// <summary>LEDs of the load; empty: the channel names none, and none is judged.</summary>
     public IReadOnlyList<Placement> Leds { get; init; } = [];
+
+    /// <summary>Transistors that share a package with one of this channel's and serve another channel; empty: none.</summary>
+    public IReadOnlyList<ElementNeighbour> Neighbours { get; init; } = [];
 
     /// <summary>The control transistor's row.</summary>
     public Transistor ControlPart => (Transistor)Control.Part;

@@ -26,16 +26,33 @@ public static class ChannelBinder
             }
         }
 
+        // A bill may list a package (Q1) whose elements (Q1.2) serve, or the elements of one.
+        foreach (BillLine line in bill.Lines)
+        {
+            foreach (string reference in line.References)
+            {
+                byReference.TryAdd(ElementReference.PackageOf(reference), line);
+            }
+        }
+
+        foreach (string element in rows.SelectMany(row => RoleNames.Columns.SelectMany(c => row.Placed(c.Role))))
+        {
+            if (byReference.TryGetValue(ElementReference.PackageOf(element), out BillLine? line))
+            {
+                byReference.TryAdd(element, line);
+            }
+        }
+
         // A row with complaints is not judged and proves nothing about the others.
         ILookup<string, ChannelRow> users = rows
             .Where(row => row.Conditions is not null)
             .SelectMany(row => RoleNames.Columns.SelectMany(c => row.Placed(c.Role)).Distinct(StringComparer.OrdinalIgnoreCase).Select(reference => (reference, row)))
             .ToLookup(use => use.reference, use => use.row, StringComparer.OrdinalIgnoreCase);
-        return [.. rows.Select(row => BindOne(row, byReference, users, parts, pins, complaints))];
+        return [.. rows.Select(row => BindOne(row, rows, byReference, users, parts, pins, complaints))];
     }
 
     private static Channel BindOne(
-        ChannelRow row, Dictionary<string, BillLine> bill, ILookup<string, ChannelRow> users, PartTable parts, IReadOnlyList<LogicPin> pins, ComplaintList complaints)
+        ChannelRow row, IReadOnlyList<ChannelRow> all, Dictionary<string, BillLine> bill, ILookup<string, ChannelRow> users, PartTable parts, IReadOnlyList<LogicPin> pins, ComplaintList complaints)
     {
         List<RoleFault> faults = [];
         List<string> missing = [];
@@ -60,6 +77,17 @@ public static class ChannelBinder
                 }
 
                 BindReference(row, role, column, reference, bill, parts, choices, faults, missing, assumed);
+                if (bill.TryGetValue(reference, out BillLine? line) && choices.TryGetValue(line, out IReadOnlyList<Part>? bound))
+                {
+                    if (PackageElements.Fault(reference, RoleNames.Spoken(column), bound) is { } fault)
+                    {
+                        faults.Add(new RoleFault(role, reference, fault, row.Cells[column]));
+                    }
+                    else if (bound.OfType<Transistor>().MaxBy(p => p.Elements) is { Elements: > 1 } several)
+                    {
+                        assumed.AddRange(PackageElements.Idle(reference, several, all).Except(assumed));
+                    }
+                }
             }
         }
 
@@ -84,7 +112,7 @@ public static class ChannelBinder
             {
                 foreach (Dictionary<BillLine, Part> reading in Combinations([.. choices]))
                 {
-                    readings.Add(Reading(row, pin, bill, reading) with { Mix = Mix(row, choices, reading) });
+                    readings.Add(Reading(row, pin, bill, reading) with { Mix = Mix(row, choices, reading), Neighbours = PackageElements.Neighbours(row, all) });
                 }
             }
         }
@@ -180,7 +208,7 @@ public static class ChannelBinder
         HashSet<string> named = new(RoleNames.Columns.SelectMany(c => row.Of(c.Role)), StringComparer.OrdinalIgnoreCase);
         return [.. choices.Where(c => c.Value.Select(p => (p.PartNumber, p.Manufacturer)).Distinct().Count() > 1)
             .Select(c => new MixedLine(
-                [.. c.Key.References.Where(named.Contains)], taken[c.Key].PartNumber, taken[c.Key].Manufacturer,
+                [.. c.Key.References.Where(r => named.Contains(r) || named.Any(n => string.Equals(ElementReference.PackageOf(n), r, StringComparison.OrdinalIgnoreCase)))], taken[c.Key].PartNumber, taken[c.Key].Manufacturer,
                 !string.Equals(taken[c.Key].PartNumber, c.Key.PartNumber, StringComparison.OrdinalIgnoreCase)))];
     }
 

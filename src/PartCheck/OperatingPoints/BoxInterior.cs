@@ -130,27 +130,24 @@ public sealed class BoxInterior
         // The corner's circuit, then whatever lies inside its range put in its place.
         SinkCircuit circuit = CircuitAssembly.Build(model, corner, box.State, box.OddClass, drop);
         LegGroup[] legs = [.. circuit.Legs];
-        int g = 0;
-        for (int c = 0; c < model.Classes.Count; c++)
+        IReadOnlyList<LegCell> cells = model.Cells(box.OddClass);
+        for (int g = 0; g < cells.Count; g++)
         {
-            int groups = c == box.OddClass && model.Classes[c].Legs.Count > 1 ? 2 : 1;
-            for (int n = 0; n < groups; n++, g++)
+            int c = cells[g].Class;
+            bool odd = cells[g].Odd;
+            TransistorCorner ends = odd ? corner.OddPass : corner.Pass;
+            Extreme sense = odd ? corner.OddSense : corner.Sense;
+            Extreme averaging = odd ? corner.OddAveraging : corner.Averaging;
+            bool inside = ends.Vbe == Extreme.Inside || ends.Hfe == Extreme.Inside || (ends.Vbe == Extreme.Match && corner.Pass.Vbe == Extreme.Inside);
+            legs[g] = legs[g] with
             {
-                bool odd = c == box.OddClass && n == 0;
-                TransistorCorner ends = odd ? corner.OddPass : corner.Pass;
-                Extreme sense = odd ? corner.OddSense : corner.Sense;
-                Extreme averaging = odd ? corner.OddAveraging : corner.Averaging;
-                bool inside = ends.Vbe == Extreme.Inside || ends.Hfe == Extreme.Inside || (ends.Vbe == Extreme.Match && corner.Pass.Vbe == Extreme.Inside);
-                legs[g] = legs[g] with
-                {
-                    Pass = !inside ? legs[g].Pass
-                        : ends.Vbe == Extreme.Match ? model.Pass[c].MatchedBetween(position(BoxDimension.PassVbe), position(BoxDimension.OddHfe))
-                        : odd ? Device(model.Pass[c], BoxDimension.OddVbe, BoxDimension.OddHfe)
-                        : Device(model.Pass[c], BoxDimension.PassVbe, BoxDimension.PassHfe),
-                    Sense = Ohms(model.Sense[c], sense, odd ? BoxDimension.OddSense : BoxDimension.Sense),
-                    Averaging = model.Averaging[c] is { } range ? Ohms(range, averaging, odd ? BoxDimension.OddAveraging : BoxDimension.Averaging) : 0,
-                };
-            }
+                Pass = !inside ? legs[g].Pass
+                    : ends.Vbe == Extreme.Match ? model.Pass[c].MatchedBetween(position(BoxDimension.PassVbe), position(BoxDimension.OddHfe))
+                    : odd ? Device(model.Pass[c], BoxDimension.OddVbe, BoxDimension.OddHfe)
+                    : Device(model.Pass[c], BoxDimension.PassVbe, BoxDimension.PassHfe),
+                Sense = Ohms(model.Sense[c], sense, odd ? BoxDimension.OddSense : BoxDimension.Sense),
+                Averaging = model.Averaging[c] is { } range ? Ohms(range, averaging, odd ? BoxDimension.OddAveraging : BoxDimension.Averaging) : 0,
+            };
         }
 
         return circuit with

@@ -16,7 +16,7 @@ public sealed class ChannelBox
     private readonly ChannelModel model;
     private readonly PinSource pin;
     private readonly double[] ambients;
-    private readonly (int Heat, double? Coupling)[] heats;
+    private readonly HeatCorner[] heats;
     private readonly Extreme[] controlVbe;
     private readonly Extreme[] controlHfe;
     private readonly Extreme[] passVbe;
@@ -51,9 +51,7 @@ public sealed class ChannelBox
         bool on = state != ChannelState.Unfed;
         bool off = state == ChannelState.Off;
         ambients = off ? [c.Ambient.Max.Kelvins] : Ambients();
-        heats = !model.Heats || off ? [(0, null)]
-            : model.CouplingGiven ? [(0, null), (1, null)]
-            : [(0, null), (1, 0), (1, ChannelModel.AssumedCouplingShare)];
+        heats = [.. HeatCorner.Of(model, off)];
 
         // Each dimension spans the rest of the legs; a class with the odd leg alone in the channel has no rest.
         bool rest = oddClass < 0 || model.Channel.Legs.Count > 1;
@@ -118,7 +116,7 @@ public sealed class ChannelBox
         Extreme pv = Digit(passVbe);
         Extreme ch = Digit(controlHfe);
         Extreme cv = Digit(controlVbe);
-        (int heat, double? coupling) = Digit(heats);
+        HeatCorner heat = Digit(heats);
         double ambient = Digit(ambients);
         ChannelConditions c = model.Channel.Conditions;
         Corner corner = new()
@@ -128,7 +126,7 @@ public sealed class ChannelBox
             Ambient = ambient,
             PinLevel = State == ChannelState.Off ? (isStrong ? 0 : pin.LowVoltage) : isStrong ? pin.StrongVoltage : pin.WeakVoltage,
             PinResistance = isStrong ? 0 : State == ChannelState.Off ? pin.LowResistance : pin.WeakResistance,
-            Heat = heat,
+            Heat = heat.Heat,
             Control = new TransistorCorner(cv, ch),
             Pass = new TransistorCorner(pv, ph),
             Sense = s,
@@ -139,7 +137,9 @@ public sealed class ChannelBox
             OddAveraging = oddA,
             Feed = feedEnd,
             PullDown = pullDownEnd,
-            AssumedCoupling = coupling,
+            AssumedCoupling = heat.Coupling,
+            AssumedPackageCoupling = heat.PackageCoupling,
+            NeighboursOn = heat.NeighboursOn,
         };
         return new BoxCorner(corner, isStrong, drop, supply == c.Supply.Min.Volts && drop == 1, CircuitAssembly.Build(model, corner, State, OddClass, drop));
     }

@@ -11,16 +11,23 @@ public sealed class ChannelModel
     public const double AssumedCouplingShare = 0.2;
 
     private readonly List<Assumption> assumed = [];
+    private readonly IReadOnlyList<LegCell>[] cells;
 
     /// <summary>Builds the model.</summary>
     /// <param name="channel">The channel.</param>
     /// <param name="variants">Devices of a transistor's row (shared between channels).</param>
-    public ChannelModel(BoundChannel channel, Func<Transistor, TransistorVariants> variants)
+    /// <param name="neighbourPowers">
+    /// Highest dissipation of elements in other channels that share a package with this one's, by reference [W]; null: they are off.
+    /// </param>
+    public ChannelModel(
+        BoundChannel channel, Func<Transistor, TransistorVariants> variants, IReadOnlyDictionary<string, double>? neighbourPowers = null)
     {
         ArgumentNullException.ThrowIfNull(channel);
         ArgumentNullException.ThrowIfNull(variants);
         Channel = channel;
-        Classes = LegClass.Of(channel);
+        Package = new PackageHeat(channel, neighbourPowers);
+        Classes = LegClass.Of(channel, Package);
+        cells = [.. Enumerable.Range(-1, Classes.Count + 1).Select(odd => LegPartition.Of(channel, Classes, Package, odd))];
         Slots = new Slots(channel, Classes);
         Pass = [.. Classes.Select(c => variants(c.First.PassPart))];
         Sense = [.. Classes.Select(c => new ResistorRange(c.First.SensePart))];
@@ -33,7 +40,7 @@ public sealed class ChannelModel
         PassHeat = [.. Pass.Select((p, i) => PulsedHeat.Of(p.Part, PassRth[i], channel.Conditions))];
         ControlHeat = PulsedHeat.Of(Control.Part, ControlRth, channel.Conditions);
         Heats = ControlRth is not null && PassRth.All(r => r is not null);
-        CouplingGiven = Classes.All(c => c.First.PassPart.Coupling is not null);
+        CouplingGiven = Enumerable.Range(0, channel.Legs.Count).All(i => channel.Legs[i].PassPart.Coupling is not null || Package.WithControl(i));
         OneLegSensed = channel.Legs.Count(l => l.Sensed) == 1;
         Load = [LoadAt(channel.Conditions.LoadDrop.Min.Volts), LoadAt(channel.Conditions.LoadDrop.Max.Volts)];
         NominalLoad = LoadAt((channel.Conditions.LoadDrop.Min.Volts + channel.Conditions.LoadDrop.Max.Volts) / 2);
@@ -42,6 +49,9 @@ public sealed class ChannelModel
 
     /// <summary>The channel.</summary>
     public BoundChannel Channel { get; }
+
+    /// <summary>Who shares a package with whom.</summary>
+    public PackageHeat Package { get; }
 
     /// <summary>Its legs, grouped.</summary>
     public IReadOnlyList<LegClass> Classes { get; }
@@ -82,7 +92,7 @@ public sealed class ChannelModel
     /// <summary>True where every transistor's thermal resistance is known, so that h = 1 can be solved.</summary>
     public bool Heats { get; }
 
-    /// <summary>True where the table gives the coupling of every pass transistor.</summary>
+    /// <summary>True where the table gives the coupling of every pass transistor that is not in one package with the control.</summary>
     public bool CouplingGiven { get; }
 
     /// <summary>
@@ -99,6 +109,9 @@ public sealed class ChannelModel
 
     /// <summary>What was assumed.</summary>
     public IReadOnlyList<Assumption> Assumed => assumed;
+
+    /// <summary>Cells of legs that are alike where one class gives the odd leg; -1: none is odd.</summary>
+    public IReadOnlyList<LegCell> Cells(int oddClass) => cells[oddClass + 1];
 
     /// <summary>Junction temperature at which a runaway is held: Tj max + 50 K, or 200 degC where it is missing [K].</summary>
     public static double RunawayLimit(Transistor part) => (part.TjMax?.Value.Kelvins + 50) ?? 473.15;
@@ -137,6 +150,19 @@ public sealed class ChannelModel
         if (!CouplingGiven && Heats)
         {
             assumed.Add(new Assumption("Coupling", Channel.Name, "both 0 and 0.2 RthJA of the hottest leg"));
+        }
+
+        foreach (Transistor part in Package.Sharing)
+        {
+            if (part.RthJaBoth is null && Rth(part) is not null)
+            {
+                assumed.Add(new Assumption("RthJA both", part.PartNumber, "heat between the elements both none and all of it"));
+            }
+
+            if (part.PowerBoth is null && part.Power is not null)
+            {
+                assumed.Add(new Assumption("Power both", part.PartNumber, "that of one element for all together"));
+            }
         }
 
         foreach (ResistorRange r in Sense.Concat(Averaging.OfType<ResistorRange>()).Append(Feed).Concat(PullDown is null ? [] : [PullDown]).Where(r => r.Part.Tcr is null && r.Nominal > 0))

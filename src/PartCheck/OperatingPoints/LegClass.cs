@@ -2,7 +2,7 @@ using PartCheck.Channels;
 
 namespace PartCheck.OperatingPoints;
 
-/// <summary>Legs with the same parts: what holds for one of them holds for all.</summary>
+/// <summary>Legs with the same parts and the same beside them in their packages: what holds for one of them holds for all.</summary>
 /// <param name="Legs">The legs, in channel order.</param>
 public sealed record LegClass(IReadOnlyList<Leg> Legs)
 {
@@ -10,29 +10,27 @@ public sealed record LegClass(IReadOnlyList<Leg> Legs)
     public Leg First => Legs[0];
 
     /// <summary>Groups a channel's legs.</summary>
-    public static IReadOnlyList<LegClass> Of(BoundChannel channel)
+    public static IReadOnlyList<LegClass> Of(BoundChannel channel, PackageHeat heat)
     {
         ArgumentNullException.ThrowIfNull(channel);
-        List<List<Leg>> classes = [];
-        foreach (Leg leg in channel.Legs)
+        ArgumentNullException.ThrowIfNull(heat);
+        int[] colours = new int[channel.Legs.Count];
+        for (int i = 0; i < colours.Length; i++)
         {
-            List<Leg>? same = classes.Find(c =>
-                ReferenceEquals(c[0].Pass.Part, leg.Pass.Part)
-                && ReferenceEquals(c[0].Sense.Part, leg.Sense.Part)
-                && ReferenceEquals(c[0].Averaging?.Part, leg.Averaging?.Part)
-                && c[0].Sensed == leg.Sensed);
-            if (same is null)
-            {
-                classes.Add([leg]);
-            }
-            else
-            {
-                same.Add(leg);
-            }
+            // An element of another channel has a power of its own.
+            int like = Enumerable.Range(0, i).FirstOrDefault(j => SameParts(channel.Legs[j], channel.Legs[i]) && heat.NeighbourPower(j + 1).Equals(heat.NeighbourPower(i + 1)), -1);
+            colours[i] = like < 0 ? i : colours[like];
         }
 
-        return [.. classes.Select(c => new LegClass(c))];
+        int[] refined = LegPartition.Refined(colours, heat);
+        return [.. Enumerable.Range(0, colours.Length).GroupBy(i => refined[i]).Select(g => new LegClass([.. g.Select(i => channel.Legs[i])]))];
     }
+
+    private static bool SameParts(Leg a, Leg b) =>
+        ReferenceEquals(a.Pass.Part, b.Pass.Part)
+        && ReferenceEquals(a.Sense.Part, b.Sense.Part)
+        && ReferenceEquals(a.Averaging?.Part, b.Averaging?.Part)
+        && a.Sensed == b.Sensed;
 }
 
 /// <summary>Slots of a channel: which placements a solved point stands for.</summary>

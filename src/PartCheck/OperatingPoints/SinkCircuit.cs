@@ -20,6 +20,12 @@ public readonly record struct JunctionHeat(double Base, double RthJa, double Lim
 public sealed record LegGroup(
     int Count, BipolarDevice Pass, double Sense, double Averaging, bool Sensed, JunctionHeat Heat, double Coupling = 0);
 
+/// <summary>Heating of one device's junction by another's power, inside a package; 0 is the control, from 1 the leg groups.</summary>
+/// <param name="Heated">Device that is heated.</param>
+/// <param name="By">Device whose power heats it, of one leg where it stands for several.</param>
+/// <param name="Rth">Coupling, times the legs of that group in the package, h included [K/W].</param>
+public readonly record struct PackageCoupling(int Heated, int By, double Rth);
+
 /// <summary>One channel in one corner as numbers, SI units: what the solver takes.</summary>
 public sealed record SinkCircuit
 {
@@ -55,6 +61,9 @@ public sealed record SinkCircuit
 
     /// <summary>Share of the hottest leg's RthJA that heats the control, where no coupling is given [-].</summary>
     public double HottestLegCoupling { get; init; }
+
+    /// <summary>Heating between transistors of one package; empty: none share one.</summary>
+    public IReadOnlyList<PackageCoupling> Package { get; init; } = [];
 
     /// <summary>Leakage injected from the collectors into the base node [A].</summary>
     public double BaseLeakage { get; init; }

@@ -102,7 +102,7 @@ internal sealed class SinkEquations
         for (int d = 0; d <= circuit.Legs.Count; d++)
         {
             bool heats = heated && double.IsNaN(HeldAt[d])
-                && (Heat(d).RthJa > 0 || (d == 0 && HasCoupling(circuit)));
+                && (Heat(d).RthJa > 0 || (d == 0 && HasCoupling(circuit)) || IsHeatedInPackage(circuit, d));
             TemperatureIndex[d] = heats ? count++ : -1;
         }
 
@@ -275,6 +275,21 @@ internal sealed class SinkEquations
             }
 
             double coupling = HeatShare * ((m * leg.Coupling) + (g == hottest ? c.HottestLegCoupling * leg.Heat.RthJa : 0));
+            for (int k = 0; k < c.Package.Count; k++)
+            {
+                PackageCoupling pair = c.Package[k];
+                if (pair.By == g && pair.Heated == 0)
+                {
+                    coupling += HeatShare * pair.Rth;
+                }
+                else if (pair.By == g && TemperatureIndex[pair.Heated] is >= 0 and int heated)
+                {
+                    // Its own row: a leg of the same group beside it. AddHeat takes the residual of that alone.
+                    Residual[heated] -= heated == rowT ? 0 : HeatShare * pair.Rth * power;
+                    AddHeat(heated, g, HeatShare * pair.Rth, power, dPower, dVb, q.Ic, dVc);
+                }
+            }
+
             heat0 += coupling * power;
             if (rowHeat0 >= 0 && coupling > 0)
             {
@@ -305,7 +320,13 @@ internal sealed class SinkEquations
             AddControl(0, q0.DIc, 1);
         }
 
-        if (rowHeat0 >= 0)
+        bool heats = false;
+        for (int k = 0; k < c.Package.Count; k++)
+        {
+            heats |= c.Package[k].By == 0;
+        }
+
+        if (rowHeat0 >= 0 || heats)
         {
             double rth = HeatShare * c.ControlHeat.RthJa;
             double power = (vb * q0.Ic) + (vx * q0.Ib);
@@ -313,10 +334,22 @@ internal sealed class SinkEquations
                 (dVb.Vbe * q0.Ic) + (vb * q0.DIc.Vbe) + (dVx.Vbe * q0.Ib) + (vx * q0.DIb.Vbe),
                 (dVb.Vbc * q0.Ic) + (vb * q0.DIc.Vbc) + (dVx.Vbc * q0.Ib) + (vx * q0.DIb.Vbc),
                 (dVb.T * q0.Ic) + (vb * q0.DIc.T) + (dVx.T * q0.Ib) + (vx * q0.DIb.T));
-            Residual[rowHeat0] = x[rowHeat0] - c.ControlHeat.Base - (rth * power) - heat0;
-            Scale[rowHeat0] = Math.Abs(x[rowHeat0]);
-            AddControl(rowHeat0, dPower, -rth);
-            At(rowHeat0, rowHeat0) += 1;
+            if (rowHeat0 >= 0)
+            {
+                Residual[rowHeat0] = x[rowHeat0] - c.ControlHeat.Base - (rth * power) - heat0;
+                Scale[rowHeat0] = Math.Abs(x[rowHeat0]);
+                AddControl(rowHeat0, dPower, -rth);
+                At(rowHeat0, rowHeat0) += 1;
+            }
+
+            for (int k = 0; heats && k < c.Package.Count; k++)
+            {
+                if (c.Package[k].By == 0 && TemperatureIndex[c.Package[k].Heated] is >= 0 and int heated)
+                {
+                    Residual[heated] -= HeatShare * c.Package[k].Rth * power;
+                    AddControl(heated, dPower, -HeatShare * c.Package[k].Rth);
+                }
+            }
         }
     }
 
@@ -327,6 +360,19 @@ internal sealed class SinkEquations
         return device == 0
             ? (BaseVoltage * q.Ic) + (ControlBaseVoltage * q.Ib)
             : ((CollectorVoltage - emitter[device]) * q.Ic) + ((BaseVoltage - emitter[device]) * q.Ib);
+    }
+
+    private static bool IsHeatedInPackage(SinkCircuit circuit, int device)
+    {
+        for (int k = 0; k < circuit.Package.Count; k++)
+        {
+            if (circuit.Package[k].Heated == device && circuit.Package[k].Rth > 0)
+            {
+                return true;
+            }
+        }
+
+        return false;
     }
 
     private static bool HasCoupling(SinkCircuit circuit)

@@ -405,6 +405,11 @@ public sealed class SinkSolver
                 coupled += ((leg.Count * leg.Coupling) + (circuit.HottestLegCoupling * leg.Heat.RthJa)) * equations.Power(g);
             }
 
+            for (int k = 0; k < circuit.Package.Count; k++)
+            {
+                coupled += circuit.Package[k].Heated == d ? circuit.Package[k].Rth * equations.Power(circuit.Package[k].By) : 0;
+            }
+
             if (!double.IsNaN(held[d]) && heat.Base + (heat.RthJa * equations.Power(d)) + coupled < held[d] - 0.5)
             {
                 return false;

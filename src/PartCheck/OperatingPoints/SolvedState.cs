@@ -91,6 +91,12 @@ public sealed record Corner
 
     /// <summary>Share of the hottest leg's RthJA that heats the control, where no coupling is given: 0 or 0.2; null: given.</summary>
     public double? AssumedCoupling { get; init; }
+
+    /// <summary>Share of RthJA that passes between elements of one package, where RthJA both is missing: 0 or 1; null: given, or none share one.</summary>
+    public double? AssumedPackageCoupling { get; init; }
+
+    /// <summary>True where elements of other channels in the same packages are on, at their highest dissipation; null: there are none.</summary>
+    public bool? NeighboursOn { get; init; }
 }
 
 /// <summary>One transistor in a solved state, SI units.</summary>
@@ -127,6 +133,9 @@ public readonly record struct TransistorPoint(
 
     /// <summary>Thermal resistance junction to ambient at steady power, given or assumed [K/W]; NaN: not to be had.</summary>
     public double RthJa { get; init; }
+
+    /// <summary>Power of all elements of its package, averaged where <c>power</c> averages [W]; 0: a transistor that shares its package with none.</summary>
+    public double PackagePower { get; init; }
 
     /// <summary>Emitter voltage of a pass transistor, the voltage over its sense resistor [V].</summary>
     public double SenseVoltage { get; init; }
@@ -223,6 +232,12 @@ public sealed class SolvedState
 
     /// <summary>The circuit that was solved, as numbers; null: the state was not solved.</summary>
     public SinkCircuit? Circuit { get; init; }
+
+    /// <summary>Heating between transistors of one package; 0 is the control, from 1 the transistors in order. Empty: none share one.</summary>
+    public IReadOnlyList<PackageCoupling> Package { get; init; } = [];
+
+    /// <summary>By how much elements of other channels warm each device, the control first [K]; empty: nothing does.</summary>
+    public IReadOnlyList<double> Warmed { get; init; } = [];
 
     /// <summary>Edge of regulation (state on, h = 0); null elsewhere.</summary>
     public DriveEdge? Drive { get; init; }

@@ -13,21 +13,18 @@ internal static class StateAssembly
         TransistorPoint[] transistors = new TransistorPoint[circuit.Legs.Count + 1];
         List<ResistorPoint> resistors = new((2 * circuit.Legs.Count) + 2);
         bool gain = true;
-        int g = 0;
-        for (int c = 0; c < model.Classes.Count; c++)
+        IReadOnlyList<LegCell> cells = model.Cells(oddClass);
+        for (int g = 0; g < cells.Count; g++)
         {
-            int groups = c == oddClass && model.Classes[c].Legs.Count > 1 ? 2 : 1;
-            for (int k = 0; k < groups; k++, g++)
-            {
-                bool odd = c == oddClass && k == 0;
-                SolvedTransistor q = point.Legs[g];
-                transistors[g] = Leg(model, c, circuit.Legs[g], q);
-                gain &= model.Pass[c].GainHolds(q.Ic, odd ? at.Corner.OddPass.Hfe : at.Corner.Pass.Hfe);
-                AddLeg(resistors, model, c, circuit.Legs[g], q, point, g);
-            }
+            int c = cells[g].Class;
+            SolvedTransistor q = point.Legs[g];
+            transistors[g] = Leg(model, c, circuit.Legs[g], q);
+            gain &= model.Pass[c].GainHolds(q.Ic, cells[g].Odd ? at.Corner.OddPass.Hfe : at.Corner.Pass.Hfe);
+            AddLeg(resistors, model, c, circuit.Legs[g], q, point, g);
         }
 
-        transistors[g] = Transistor(model, model.Slots.Control, Role.Control, model.Control.Part, model.ControlHeat, point.Control);
+        transistors[^1] = Transistor(model, model.Slots.Control, Role.Control, model.Control.Part, model.ControlHeat, point.Control);
+        AddPackages(transistors, model, cells, at.Corner.NeighboursOn ?? false);
         AddShared(resistors, model, circuit, point);
         return new SolvedState
         {
@@ -46,6 +43,8 @@ internal static class StateAssembly
             LowestHeadroom = at.LowestHeadroom && state == ChannelState.On,
             Transistors = transistors,
             Resistors = resistors,
+            Package = circuit.Package,
+            Warmed = Warmed(circuit, at.Corner.Ambient),
             Drive = drive,
         };
     }
@@ -77,7 +76,38 @@ internal static class StateAssembly
             PinCurrent = point.PinCurrent,
             Transistors = transistors,
             Resistors = resistors,
+            Package = circuit.Package,
+            Warmed = Warmed(circuit, corner.Ambient),
         };
+    }
+
+    /// <summary>By how much elements of other channels warm each device; empty: nothing does.</summary>
+    private static double[] Warmed(SinkCircuit circuit, double ambient)
+    {
+        double[] rises = [circuit.ControlHeat.Base - ambient, .. circuit.Legs.Select(l => l.Heat.Base - ambient)];
+        return rises.Any(r => r > 0) ? rises : [];
+    }
+
+    /// <summary>Gives each transistor that shares its package the power of all its elements, averaged where <c>power</c> averages.</summary>
+    private static void AddPackages(TransistorPoint[] points, ChannelModel model, IReadOnlyList<LegCell> cells, bool neighboursOn)
+    {
+        for (int g = 0; g < points.Length && model.Package.Shares; g++)
+        {
+            int device = g == cells.Count ? 0 : cells[g].Legs[0] + 1;
+            if (model.Package.IsShared(device))
+            {
+                double sum = (points[g].Power * points[g].AveragedShare) + (neighboursOn ? model.Package.NeighbourPower(device) : 0);
+                foreach (int partner in model.Package.Partners(device))
+                {
+                    for (int by = 0; by < points.Length; by++)
+                    {
+                        sum += (by == cells.Count ? partner == 0 : partner > 0 && cells[by].Legs.Contains(partner - 1)) ? points[by].Power * points[by].AveragedShare : 0;
+                    }
+                }
+
+                points[g] = points[g] with { PackagePower = sum };
+            }
+        }
     }
 
     private static TransistorPoint Transistor(ChannelModel model, int slot, Role role, Transistor part, PulsedHeat heat, in SolvedTransistor q) =>

@@ -21,7 +21,8 @@ public readonly record struct ValueRange(double Min, double Max)
 
 /// <summary>
 /// What a good channel measures on the bench: supply at the mean of Supply min and max, 25 degC, from just switched on to warm,
-/// everything else over its range. Under PWM the values are those while on, warm means as warm as Duty max makes it. SI units; the sense voltage over all legs.
+/// everything else over its range, elements of other channels in its packages off. Under PWM the values are those while on, warm means as warm
+/// as Duty max makes it. SI units; the sense voltage over all legs.
 /// </summary>
 /// <param name="Supply">Supply to set [V].</param>
 /// <param name="BaseVoltage">Base node [V].</param>

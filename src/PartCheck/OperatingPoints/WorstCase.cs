@@ -33,7 +33,7 @@ public static class WorstCase
 
     /// <summary>
     /// The same over given boxes; <paramref name="edge"/> is k', null: the edge of regulation is not solved; <paramref name="sideBySide"/>:
-    /// in lanes, else one by one.
+    /// in lanes, else one by one (and so where legs heat each other inside packages, of which lanes know nothing).
     /// </summary>
     internal static IReadOnlyList<T> Enumerate<T>(
         ChannelModel model, PinSource pin, IReadOnlyList<ChannelBox> boxes, double? edge, int threads, Func<T> make,
@@ -60,7 +60,7 @@ public static class WorstCase
         {
             (ChannelBox box, int from, int to, int shift) = chunks[i];
             T accumulator = make();
-            if (sideBySide)
+            if (sideBySide && !model.Package.HasPartners)
             {
                 new CornerBatch(model, pin, edge).Solve(box, from, to, shift, state => visit(accumulator, state));
             }
@@ -157,6 +157,7 @@ public static class WorstCase
             ControlHeat = nominal.ControlHeat with { RthJa = 0 },
             Legs = [.. nominal.Legs.Select(l => l with { Heat = l.Heat with { RthJa = 0 }, Coupling = 0 })],
             HottestLegCoupling = 0,
+            Package = [],
         };
         OperatingPoint? point = new SinkSolver().Solve(circuit);
         return point is null ? null : StateAssembly.BuildByLeg(model, ChannelState.Off, corner, circuit, point);

@@ -142,6 +142,15 @@ public sealed record Transistor : Part
     /// <summary>Transistors in one package.</summary>
     public int Elements { get; init; } = 1;
 
+    /// <summary>
+    /// Thermal resistance with every element of the package on at the same power: Tj = Ta + (sum of their powers) x this;
+    /// <see cref="Part.RthJa"/> is of one element on alone. Null: missing, or a single transistor.
+    /// </summary>
+    public Cited<ThermalResistance>? RthJaBoth { get; init; }
+
+    /// <summary>Rated power of the whole package in ambient air; <see cref="Part.Power"/> is of one element. Null: missing, or a single transistor.</summary>
+    public Cited<Power>? PowerBoth { get; init; }
+
     /// <inheritdoc/>
     public override Temperature FlatTo => PowerFlatTo?.Value ?? Temperature.FromCelsius(25);
 }

@@ -14,6 +14,10 @@ internal sealed class TransistorValidator : AbstractValidator<Transistor>
         this.Demand("VBE typ", p => p.Vbe is not { Value: { Typ: { } typ } w } || ((w.Min is not { } min || min.Volts <= typ.Volts) && (w.Max is not { } max || typ.Volts <= max.Volts)), "a voltage inside the window", _ => "VBE typ lies outside VBE min to VBE max.");
         this.Demand("VCBO", p => p.Vcbo is null || p.Vceo is null || p.Vcbo.Value.Volts >= p.Vceo.Value.Volts, "a voltage at least VCEO", _ => "VCBO is below VCEO: with the emitter open a junction stands at least as much.");
         this.Demand("RthJC", p => p.RthJc is null || p.RthJa is null || p.RthJc.Value.KelvinsPerWatt <= p.RthJa.Value.KelvinsPerWatt, "a thermal resistance at most RthJA", _ => "RthJC is above RthJA: the way to the air leads through the case.");
+        this.Demand("RthJA both", p => p.RthJaBoth is null || p.Elements > 1, "a blank cell, or Elements above 1", _ => "RthJA both is of a package of several transistors, and Elements says one.");
+        this.Demand("Power both", p => p.PowerBoth is null || p.Elements > 1, "a blank cell, or Elements above 1", _ => "Power both is of a package of several transistors, and Elements says one.");
+        this.Demand("RthJA both", p => p.Elements < 2 || p.RthJaBoth is not { } both || p.RthJa is not { } one || (both.Value.KelvinsPerWatt <= one.Value.KelvinsPerWatt && both.Value.KelvinsPerWatt * p.Elements >= one.Value.KelvinsPerWatt), "the temperature rise over the power of all elements together", _ => "RthJA both lies between RthJA and RthJA over the number of elements: it is the rise over the sum of the powers.");
+        this.Demand("Power both", p => p.Elements < 2 || p.PowerBoth is not { } both || p.Power is not { } one || (both.Value.Watts >= one.Value.Watts && both.Value.Watts <= p.Elements * one.Value.Watts), "the power of all elements together", _ => "Power both lies between Power, which is of one element, and that times the number of elements.");
         this.Demand("hFE cold min", p => p.HfeCold is null || p.Hfe is not null, "hFE points at 25 degC", _ => "A gain in the cold needs the gain at 25 degC beside it.");
     }
 }

@@ -129,6 +129,11 @@ internal static class FindingText
         words.Add("ambient " + Value(c.Ambient, "K"));
         words.Add("pin " + Value(c.PinLevel, "V") + (c.PinResistance > 0 ? " behind " + Value(c.PinResistance, "ohm") : string.Empty));
         words.Add(f.State == ChannelState.Off ? "pin low" : c.Heat == 0 ? "cold start" : "self-heated");
+        if (c.NeighboursOn == true)
+        {
+            words.Add("elements of other channels on");
+        }
+
         Add(words, "control", c.Control);
         Add(words, c.OddLeg is null ? "pass" : "pass of the rest", c.Pass);
         Add(words, "sense" + (c.OddLeg is null ? string.Empty : " of the rest"), c.Sense);

@@ -139,6 +139,8 @@ internal static class JsonFinding
         json.Text("averaging", End(corner.Averaging));
         json.Text("pullDown", End(corner.PullDown));
         json.Real("coupling", corner.AssumedCoupling);
+        json.Real("packageCoupling", corner.AssumedPackageCoupling);
+        json.Real("neighboursOn", corner.NeighboursOn is { } on ? on ? 1 : 0 : null);
     }
 
     private static void WriteEnds(Utf8JsonWriter json, TransistorCorner ends)

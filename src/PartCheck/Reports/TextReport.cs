@@ -23,35 +23,13 @@ public static class TextReport
             Board(text, board with { Findings = FindingOrder.WorstFirst(board) });
         }
 
-        Complaints(text, report.Complaints);
+        ComplaintText.Append(text, report.Complaints);
         foreach (string caution in report.Boards.SelectMany(b => b.Cautions).Distinct(StringComparer.Ordinal))
         {
             Columns80.Wrap(text, "! ", caution, 2);
         }
 
         return colour ? Coloured(text.ToString()) : text.ToString();
-    }
-
-    /// <summary>Appends what could not be read.</summary>
-    internal static void Complaints(StringBuilder text, IReadOnlyList<Complaint> complaints)
-    {
-        if (complaints.Count == 0)
-        {
-            return;
-        }
-
-        text.Append(CultureInfo.InvariantCulture, $"Complaints ({complaints.Count}): what could not be read\n");
-        foreach (Complaint c in complaints)
-        {
-            Columns80.Wrap(text, "  ", Place(c) + ": " + c.Text, 4);
-            if (c.Found is not null || c.Wanted is not null)
-            {
-                string found = c.Found is null ? string.Empty : $"found \"{c.Found}\"" + (c.Wanted is null ? string.Empty : ", ");
-                Columns80.Wrap(text, "    ", found + (c.Wanted is null ? string.Empty : "wanted " + c.Wanted), 6);
-            }
-        }
-
-        text.Append('\n');
     }
 
     private static void Board(StringBuilder text, BoardReport board)
@@ -287,9 +265,6 @@ public static class TextReport
         value.Channels.Count == board.Channels.Count && board.Channels.Count > 1 ? " (every channel)"
         : value.Channels.Count == 1 && value.Channels[0] == value.Of ? string.Empty
         : " (" + string.Join(", ", value.Channels) + ")";
-
-    private static string Place(Complaint c) =>
-        string.Join("!", new[] { c.File, c.Sheet, c.Cell }.OfType<string>()) + (c.Column is null ? string.Empty : $" [{c.Column}]");
 
     private static string Coloured(string text) => text
         .Replace("NONCONFORMING", "\u001b[31mNONCONFORMING\u001b[0m", StringComparison.Ordinal)

@@ -63,7 +63,7 @@ public sealed partial class WorkingText
             text.Append('\n');
         }
 
-        TextReport.Complaints(text, report.Check.Complaints);
+        ComplaintText.Append(text, report.Check.Complaints);
         foreach (string caution in report.Board.Cautions)
         {
             Columns80.Wrap(text, "! ", caution, 2);

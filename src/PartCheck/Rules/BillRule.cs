@@ -30,10 +30,10 @@ public static class BillRule
         List<Finding> findings = [];
         foreach (BillLine line in bill.Lines)
         {
-            List<string> serves = [.. channels.Where(c => c.References.Any(r => line.References.Contains(r, StringComparer.OrdinalIgnoreCase))).Select(c => c.Name)];
+            List<string> serves = [.. channels.Where(c => c.References.Any(line.Holds)).Select(c => c.Name)];
             if (serves.Count > 0)
             {
-                findings.Add(JudgeLine(line, parts, serves));
+                findings.Add(JudgeLine(line, bill, parts, serves));
             }
         }
 
@@ -59,7 +59,7 @@ public static class BillRule
         return findings;
     }
 
-    private static Finding JudgeLine(BillLine line, PartTable parts, List<string> serves)
+    private static Finding JudgeLine(BillLine line, Bill bill, PartTable parts, List<string> serves)
     {
         List<string> wrong = [];
         List<string> missing = [];
@@ -87,6 +87,8 @@ public static class BillRule
         {
             wrong.Add(string.Create(CultureInfo.InvariantCulture, $"the quantity is {quantity}, the references are {placed}"));
         }
+
+        wrong.AddRange(SplitPackages(line, bill));
 
         IReadOnlyList<Part> rows = line.PartNumber is null ? [] : parts.Find(line.PartNumber);
         if (line.Manufacturer is { } maker && rows.Count > 0)
@@ -157,6 +159,11 @@ public static class BillRule
             yield return $"the bill's package is {package}, {whose} {tabled}";
         }
 
+        if (row is Transistor transistor && line.References.FirstOrDefault(r => ElementReference.ElementOf(r) is { } n && (n > transistor.Elements || transistor.Elements == 1)) is { } element)
+        {
+            yield return string.Create(CultureInfo.InvariantCulture, $"{element} names an element that the part does not have, {whose} Elements are {transistor.Elements}");
+        }
+
         if (row is ResistorPart resistor && Differs(line, resistor))
         {
             yield return $"the bill's value is {EngineeringNotation.Format(line.Resistance!.Value.Ohms, "ohm")}, {whose} {EngineeringNotation.Format(resistor.Resistance.Value.Ohms, "ohm")}";
@@ -173,6 +180,24 @@ public static class BillRule
         if (row is ResistorPart resistor && line.Resistance is { } value)
         {
             steps.Note($"Resistance {EngineeringNotation.Format(resistor.Resistance.Value.Ohms, "ohm", 6)}; the bill says {EngineeringNotation.Format(value.Ohms, "ohm", 6)}.", resistor.Resistance.Cell);
+        }
+    }
+
+    /// <summary>A package is bought once: its elements stand on one line, and not beside the package itself.</summary>
+    private static IEnumerable<string> SplitPackages(BillLine line, Bill bill)
+    {
+        foreach (string package in line.References.Where(r => ElementReference.ElementOf(r) is not null).Select(ElementReference.PackageOf).Distinct(StringComparer.OrdinalIgnoreCase))
+        {
+            bool IsOf(string reference) => string.Equals(ElementReference.PackageOf(reference), package, StringComparison.OrdinalIgnoreCase);
+            if (line.References.Contains(package, StringComparer.OrdinalIgnoreCase))
+            {
+                yield return $"{package} stands there as a whole and by elements";
+            }
+
+            if (bill.Lines.FirstOrDefault(other => other != line && other.References.Any(IsOf)) is { } twin)
+            {
+                yield return $"{package} stands on another line, too ({twin.Cell})";
+            }
         }
     }
 

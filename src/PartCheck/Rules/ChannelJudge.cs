@@ -86,6 +86,9 @@ public sealed class ChannelJudge
             Assumed = total.ControlHeld
                 ? [new Assumption("hFE of the control beyond its points", model.Control.Part.PartNumber, "the outermost value held")]
                 : [],
+            MostPower = Enumerable.Range(0, model.Slots.Count).Where(s => total.Hottest[s] > 0)
+                .SelectMany(s => model.Slots.Of(s).Select(p => (p.Reference, Watts: total.MostPower[s])))
+                .ToDictionary(p => p.Reference, p => p.Watts, StringComparer.OrdinalIgnoreCase),
             Hottest = [.. Enumerable.Range(0, model.Slots.Count).Where(s => total.Hottest[s] > 0)
                 .SelectMany(s => model.Slots.Of(s).Select(p => (p.Reference, total.Hottest[s])))],
         };
@@ -182,6 +185,7 @@ public sealed class ChannelJudge
             foreach (TransistorPoint point in (TransistorPoint[])state.Transistors)
             {
                 into.Hottest[point.Slot] = Math.Max(into.Hottest[point.Slot], point.Tj);
+                into.MostPower[point.Slot] = Math.Max(into.MostPower[point.Slot], point.Power * point.AveragedShare);
             }
         }
 
@@ -307,6 +311,22 @@ public sealed class ChannelJudge
         return findings;
     }
 
+    private string Averaged(bool package, Placement? placement)
+    {
+        List<string> words = [];
+        if (package && placement is not null)
+        {
+            words.Add($"the whole package {placement.Package}, its elements together");
+        }
+
+        if (PulsedHeat.AveragedShare(model.Channel.Conditions) is < 1 and var duty)
+        {
+            words.Add(string.Create(CultureInfo.InvariantCulture, $"averaged over a duty of {duty * 100:0.###} %"));
+        }
+
+        return string.Join("; ", words);
+    }
+
     private Finding Make(int r, int s, Worst worst, Placement? placement, PinSource pin)
     {
         Rule rule = rules[r];
@@ -322,8 +342,7 @@ public sealed class ChannelJudge
         };
         string? text = rule is ResistorVoltageRule && placement?.Part is ResistorPart { WorkingVoltageMax: null, Resistance.Value.Ohms: > 0 }
             ? "no limiting element voltage given: judged by sqrt(P R) alone"
-            : rule is PowerRule && PulsedHeat.AveragedShare(model.Channel.Conditions) is < 1 and var duty
-            ? string.Create(CultureInfo.InvariantCulture, $"averaged over a duty of {duty * 100:0.###} %") : null;
+            : rule is PowerRule && Averaged(stress.Package, placement) is { Length: > 0 } words ? words : null;
         return new Finding
         {
             Channel = model.Channel.Name,
@@ -376,6 +395,8 @@ public sealed class ChannelJudge
 
         public double[] Hottest { get; } = new double[slots];
 
+        public double[] MostPower { get; } = new double[slots];
+
         /// <summary>Load current and heat of the states on, pin current of all.</summary>
         public void TakeExtremes(SolvedState state, double heat)
         {
@@ -417,6 +438,7 @@ public sealed class ChannelJudge
             for (int s = 0; s < slots; s++)
             {
                 Hottest[s] = Math.Max(Hottest[s], later.Hottest[s]);
+                MostPower[s] = Math.Max(MostPower[s], later.MostPower[s]);
             }
 
             for (int i = 0; i < worst.Length; i++)
@@ -451,6 +473,9 @@ public sealed record ReadingJudgement(
 
     /// <summary>Each transistor with its highest junction temperature [K].</summary>
     public IReadOnlyList<(string Reference, double Tj)> Hottest { get; init; } = [];
+
+    /// <summary>Highest dissipation of each transistor, state on, averaged where <c>power</c> averages [W], by reference.</summary>
+    public IReadOnlyDictionary<string, double> MostPower { get; init; } = new Dictionary<string, double>();
 
     /// <summary>What a good channel measures on the bench; null: not solved.</summary>
     public TestLimits? TestLimits { get; init; }

@@ -8,7 +8,8 @@ namespace PartCheck.Rules;
 
 /// <summary>
 /// Junction temperature, state on, under PWM its peak. Allowed: the lowest of Tmax x factor (a multiplication of degrees Celsius), Tmax - offset
-/// and cap. Ratio (Tj - Ta)/(Tallowed - Ta). A junction that ran away is nonconforming, "at least" where it is held.
+/// and cap. Ratio (Tj - Ta)/(Tallowed - Ta). The solved Tj holds what the other elements of its package add. A junction that ran away is
+/// nonconforming, "at least" where it is held.
 /// </summary>
 public sealed class JunctionRule : TransistorRule
 {

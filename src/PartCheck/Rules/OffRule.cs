@@ -50,7 +50,9 @@ public sealed class OffRule : ChannelRule
                 return Stress.NotVerified("ICBO of " + part.PartNumber);
             }
 
-            if (part.IcboTemperature.Value.Kelvins < channel.Conditions.Ambient.Max.Kelvins)
+            // An element that is on in another channel warms the one that leaks.
+            double hottest = state.Corner.NeighboursOn == true ? Warmest(state) : channel.Conditions.Ambient.Max.Kelvins;
+            if (part.IcboTemperature.Value.Kelvins < hottest)
             {
                 return Stress.NotVerified("ICBO at the hottest ambient of " + part.PartNumber);
             }
@@ -63,8 +65,20 @@ public sealed class OffRule : ChannelRule
 
         // An assumed VBE and a tolerance solved as zero can refuse, but not clear.
         Stress stress = Stress.AtMostOf(state.LoadCurrent, limit.Amperes);
-        string? missing = MissingData.Vbe(state) ?? MissingData.Tolerance(state);
+        string? missing = MissingData.Vbe(state) ?? MissingData.Tolerance(state)
+            ?? (channel.Neighbours.Count > 0 ? MissingData.Heat(state) : null);
         return stress.Verdict == Verdict.Conforms && missing is not null ? Stress.NotVerified(missing) : stress;
+    }
+
+    private static double Warmest(SolvedState state)
+    {
+        double most = 0;
+        for (int i = 0; i < state.Transistors.Count; i++)
+        {
+            most = state.Transistors[i].Role == Role.Pass ? Math.Max(most, state.Transistors[i].Tj) : most;
+        }
+
+        return most;
     }
 
     /// <inheritdoc/>

@@ -5,9 +5,11 @@ using PartCheck.Parts;
 namespace PartCheck.Rules;
 
 /// <summary>
-/// Dissipation, state on, under PWM from 1 kHz up its average over the period at the largest duty, at the ambient where the ratio is worst. Allowed at ambient T:
+/// Dissipation, state on, under PWM from 1 kHz up its average over the period at the largest duty, at the ambient where the ratio is worst.
+/// Allowed at ambient T:
 /// factor x min(Power, Power - slope (T - flat), (Tmax - T)/RthJA) [W]; slope from (Tmax - flat) where the table gives none;
-/// nothing from Tmax up, whatever the slope says.
+/// nothing from Tmax up, whatever the slope says. Where several transistors of a package are on, the sum of their powers is held in
+/// the same way to Power both (missing: Power) and to (Tmax - T)/RthJA both; the larger ratio counts.
 /// MIL-PRF-19500/255 1.3 states its ratings so: flat at PT, then a line to zero at TJ maximum.
 /// </summary>
 public sealed class PowerRule : TransistorRule
@@ -33,34 +35,15 @@ public sealed class PowerRule : TransistorRule
             return Stress.NotVerified("Power of " + part.PartNumber);
         }
 
-        double ambient = state.Corner.Ambient;
-        double above = Math.Max(0, ambient - part.FlatTo.Kelvins);
-        double rated = power.Value.Watts;
-        if (part.PowerSlope is { } slope)
+        Stress stress = OfOne(part, power.Value.Watts, part.PowerSlope?.Value, part.RthJa?.Value.KelvinsPerWatt, point.Power * point.AveragedShare, state, rows);
+        if (stress.Verdict != Verdict.NotVerified && point.PackagePower > 0)
         {
-            rated -= slope.Value * above;
-        }
-        else if (part.TjMax is { } max)
-        {
-            double span = max.Value.Kelvins - part.FlatTo.Kelvins;
-            rated = span > 0 ? rated * (1 - (above / span)) : 0;
-        }
-        else if (above > 0)
-        {
-            return Stress.NotVerified("Tj max of " + part.PartNumber);
+            double both = part.PowerBoth?.Value.Watts ?? power.Value.Watts;
+            double? slope = part.PowerSlope?.Value * both / power.Value.Watts;
+            Stress whole = OfOne(part, both, slope, part.RthJaBoth?.Value.KelvinsPerWatt, point.PackagePower, state, rows) with { Package = true };
+            stress = whole.Worse(stress) > 0 ? whole : stress;
         }
 
-        if (part is { TjMax: { } tmax, RthJa: { } rth })
-        {
-            rated = Math.Min(rated, (tmax.Value.Kelvins - ambient) / rth.Value.KelvinsPerWatt);
-        }
-
-        if (ambient >= part.TjMax?.Value.Kelvins)
-        {
-            rated = 0;
-        }
-
-        Stress stress = Stress.AtMostOf(point.Power * point.AveragedShare, rated * rows.Own.Factor);
         if (stress.Verdict != Verdict.Conforms)
         {
             return stress;
@@ -75,10 +58,67 @@ public sealed class PowerRule : TransistorRule
     public override void Derive(Derivation steps, SolvedState state, in TransistorPoint point, BoundChannel channel, in RuleRows rows, in Stress stress)
     {
         Transistor part = point.Part;
+        string actual = "P#";
+        if (stress.Package)
+        {
+            steps.Solved("Ppack#", point.PackagePower, "W", "power of all elements of the package, averaged over the period where it counts as an average")
+                .Given("Pratedall#", (part.PowerBoth ?? part.Power!).Value.Watts, "W", "rated power of the package of " + part.PartNumber, (part.PowerBoth ?? part.Power!).Cell, assumed: part.PowerBoth is null);
+            actual = "Ppack#";
+        }
+        else
+        {
+            steps.Given("Prated#", part.Power!.Value.Watts, "W", "rated power of " + part.PartNumber, part.Power.Cell);
+            if (point.AveragedShare < 1)
+            {
+                steps.Step("Pmean", "d x P#", "W", "average over the period, from 1 kHz up");
+                actual = "Pmean";
+            }
+        }
+
+        DeriveAllowed(steps, part, state.Corner.Ambient, rows, stress.Package);
+        steps.AtMost(actual, "Pallowed", stress);
+    }
+
+    /// <inheritdoc/>
+    public override string? DecidingCell(Transistor part) => part.Power?.Cell;
+
+    private static Stress OfOne(
+        Transistor part, double rated, double? slope, double? rth, double actual, SolvedState state, in RuleRows rows)
+    {
         double ambient = state.Corner.Ambient;
-        steps.Given("Prated#", part.Power!.Value.Watts, "W", "rated power of " + part.PartNumber, part.Power.Cell)
-            .Given("Tflat#", part.FlatTo.Celsius, "degC", "the rated power holds up to here", part.PowerFlatTo?.Cell, assumed: part.PowerFlatTo is null);
-        string line = "Prated#";
+        double above = Math.Max(0, ambient - part.FlatTo.Kelvins);
+        if (slope is { } fall)
+        {
+            rated -= fall * above;
+        }
+        else if (part.TjMax is { } max)
+        {
+            double span = max.Value.Kelvins - part.FlatTo.Kelvins;
+            rated = span > 0 ? rated * (1 - (above / span)) : 0;
+        }
+        else if (above > 0)
+        {
+            return Stress.NotVerified("Tj max of " + part.PartNumber);
+        }
+
+        if (part.TjMax is { } tmax && rth is { } resistance)
+        {
+            rated = Math.Min(rated, (tmax.Value.Kelvins - ambient) / resistance);
+        }
+
+        if (ambient >= part.TjMax?.Value.Kelvins)
+        {
+            rated = 0;
+        }
+
+        return Stress.AtMostOf(actual, rated * rows.Own.Factor);
+    }
+
+    private static void DeriveAllowed(Derivation steps, Transistor part, double ambient, in RuleRows rows, bool package)
+    {
+        steps.Given("Tflat#", part.FlatTo.Celsius, "degC", "the rated power holds up to here", part.PowerFlatTo?.Cell, assumed: part.PowerFlatTo is null);
+        string rated = package ? "Pratedall#" : "Prated#";
+        string line = rated;
         if (part.TjMax is { } max)
         {
             steps.Given("Tmax#", max.Value.Celsius, "degC", "Tj max of " + part.PartNumber, max.Cell);
@@ -86,35 +126,31 @@ public sealed class PowerRule : TransistorRule
 
         if (part.PowerSlope is { } slope)
         {
-            steps.Given("slope", slope.Value, "W/K", "slope of the rated power above that", slope.Cell);
-            line = "Prated# - slope x max(0, Ta - Tflat#)";
+            double share = package && part is { PowerBoth: { } both, Power: { } one } ? both.Value.Watts / one.Value.Watts : 1;
+            steps.Given("slope", slope.Value * share, "W/K", share == 1 ? "slope of the rated power above that" : "slope above that, as much steeper as the package's power is larger", slope.Cell);
+            line = rated + " - slope x max(0, Ta - Tflat#)";
         }
         else if (part.TjMax is { } zero)
         {
-            line = zero.Value.Kelvins > part.FlatTo.Kelvins ? "Prated# x (1 - max(0, Ta - Tflat#) / (Tmax# - Tflat#))" : "0 W";
+            line = zero.Value.Kelvins > part.FlatTo.Kelvins ? rated + " x (1 - max(0, Ta - Tflat#) / (Tmax# - Tflat#))" : "0 W";
         }
 
         steps.Step("Pline", line, "W", "rated power at the ambient: flat, then a line");
-        bool thermal = part is { TjMax: not null, RthJa: not null };
-        if (thermal)
+        bool thermal = part.TjMax is not null && (package ? part.RthJaBoth : part.RthJa) is not null;
+        if (thermal && package)
         {
-            steps.Step("Pth", "(Tmax# - Ta) / RthJA#", "W", "what the thermal resistance lets through up to Tj max");
+            steps.Given("RthBoth#", part.RthJaBoth!.Value.KelvinsPerWatt, "K/W", "thermal resistance with all elements on, over the sum of their powers", part.RthJaBoth.Cell);
         }
 
-        bool averaged = point.AveragedShare != 1;
-        if (averaged)
+        if (thermal)
         {
-            steps.Step("Pmean", "d x P#", "W", "average over the period, from 1 kHz up");
+            steps.Step("Pth", package ? "(Tmax# - Ta) / RthBoth#" : "(Tmax# - Ta) / RthJA#", "W", "what the thermal resistance lets through up to Tj max");
         }
 
         bool none = ambient >= part.TjMax?.Value.Kelvins;
         steps.Factor(rows.Own)
             .Step(
                 "Pallowed", none ? "0 W" : thermal ? "F x max(0, min(Pline, Pth))" : "F x max(0, Pline)", "W",
-                none ? "nothing: the ambient is at or above Tj max" : "derated power")
-            .AtMost(averaged ? "Pmean" : "P#", "Pallowed", stress);
+                none ? "nothing: the ambient is at or above Tj max" : "derated power");
     }
-
-    /// <inheritdoc/>
-    public override string? DecidingCell(Transistor part) => part.Power?.Cell;
 }

@@ -8,8 +8,10 @@ namespace PartCheck.Rules;
 /// <param name="Missing">What is missing, where not verified.</param>
 /// <param name="AtLeast">True where the actual value is a lower bound.</param>
 /// <param name="Half">True where a rule of two halves speaks of its current half [A].</param>
+/// <param name="Package">True where the values are of a whole package, not of one of its elements.</param>
 public readonly record struct Stress(
-    double Actual, double Allowed, double? Ratio, Verdict Verdict, string? Missing = null, bool AtLeast = false, bool Half = false)
+    double Actual, double Allowed, double? Ratio, Verdict Verdict, string? Missing = null, bool AtLeast = false, bool Half = false,
+    bool Package = false)
 {
     /// <summary>
     /// Relative rounding of double-precision arithmetic that counts as equality [-]: 0.7 x 45 V must not fall short of 31.5 V.

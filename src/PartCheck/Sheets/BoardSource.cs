@@ -73,6 +73,14 @@ public sealed class BoardSource
         return Named(Read(path, Shown(path)), Shown(path), sheet ?? table, required: true, fallBackToOnly: sheet is null);
     }
 
+    /// <summary>Every sheet of a file that an option names, FILE or FILE:SHEET, with the sheet named; no sheets where it cannot be read.</summary>
+    /// <param name="argument">The option's argument.</param>
+    public (IReadOnlyList<SheetData> Sheets, string Shown, string? Sheet) Sheets(string argument)
+    {
+        (string path, string? sheet) = Split(argument);
+        return (Read(path, Shown(path)), Shown(path), sheet);
+    }
+
     /// <summary>Splits FILE:SHEET; a file of the whole name, or a drive letter, is no sheet.</summary>
     public static (string Path, string? Sheet) Split(string argument)
     {

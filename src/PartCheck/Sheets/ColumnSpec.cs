@@ -56,4 +56,11 @@ public enum ColumnKind
 /// <param name="Max">Largest plausible value, SI; a bare number above it is most likely in another unit: a complaint.</param>
 /// <param name="Required">True where the table makes no sense without the column.</param>
 public sealed record ColumnSpec(
-    string Name, ColumnKind Kind, double Min = double.NegativeInfinity, double Max = double.PositiveInfinity, bool Required = false);
+    string Name, ColumnKind Kind, double Min = double.NegativeInfinity, double Max = double.PositiveInfinity, bool Required = false)
+{
+    /// <summary>
+    /// Says of the texts below a header whose name is doubtful (<c>Part</c>, <c>Name</c>) whether they are this column's; null: no
+    /// doubtful name is taken.
+    /// </summary>
+    public Func<IReadOnlyList<string>, bool>? Proof { get; init; }
+}

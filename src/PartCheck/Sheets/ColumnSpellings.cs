@@ -11,11 +11,13 @@ public sealed class ColumnSpellings
 
     private readonly Dictionary<(string Table, string Spelling), string> columns = [];
 
+    private readonly Dictionary<(string Table, string Spelling), List<string>> doubtful = [];
+
     private ColumnSpellings()
     {
     }
 
-    /// <summary>Loads the embedded spellings and, where given, the user's file (same three columns: Table, Column, Spelling).</summary>
+    /// <summary>Loads the embedded spellings and, where given, the user's file (same columns: Table, Column, Spelling; Doubtful where the cells below must prove it).</summary>
     /// <param name="userFile">The user's file; its spellings win over the project's own. Null: none.</param>
     /// <param name="complaints">Where complaints about the user's file go.</param>
     public static ColumnSpellings Load(string? userFile, ComplaintList complaints)
@@ -41,6 +43,10 @@ public sealed class ColumnSpellings
     /// <summary>The column that a header stands for; null where the spelling is not known.</summary>
     internal string? ColumnOf(string table, string matchedHeader) =>
         columns.TryGetValue((table.ToUpperInvariant(), matchedHeader), out string? column) ? column : null;
+
+    /// <summary>The columns that a doubtful header may stand for; null: none.</summary>
+    internal IReadOnlyList<string>? DoubtfulOf(string table, string matchedHeader) =>
+        doubtful.GetValueOrDefault((table.ToUpperInvariant(), matchedHeader));
 
     /// <summary>Every spelling with its table and column, as matched.</summary>
     internal IEnumerable<(string Table, string Column, string Spelling)> All =>
@@ -71,7 +77,15 @@ public sealed class ColumnSpellings
                     continue;
                 }
 
-                added[(table.ToUpperInvariant(), HeaderText.Matched(spelling))] = column;
+                (string, string) key = (table.ToUpperInvariant(), HeaderText.Matched(spelling));
+                if (TextAt(4).Equals("doubtful", StringComparison.OrdinalIgnoreCase))
+                {
+                    doubtful.TryAdd(key, []);
+                    doubtful[key].Add(column);
+                    continue;
+                }
+
+                added[key] = column;
             }
         }
 

@@ -23,4 +23,7 @@ public sealed record Complaint(
 
     /// <summary>True when the file is not there or cannot be opened (exit code 66).</summary>
     public bool NoInput { get; init; }
+
+    /// <summary>True when it is about a quantity that disagrees with its references, which a rule judges as well.</summary>
+    public bool IsCount { get; init; }
 }

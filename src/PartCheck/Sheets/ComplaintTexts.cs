@@ -10,6 +10,10 @@ internal static class ComplaintTexts
     internal const string WantedEncoding = "the encoding named with --encoding";
     internal const string WantedUnprotected = "an unprotected .xlsx";
 
+    internal const string LongCell = "The cell holds more than 32 767 characters, more than a spreadsheet takes";
+    internal const string FormulaWithoutValue = "The cell holds a formula without a stored result: open the workbook in a spreadsheet program and save it";
+    internal const string ErrorCell = "The cell holds an error instead of a value";
+
     internal static string Missing => "There is no such file.";
 
     internal static string Folder => "This is a folder; a CSV text or an .xlsx workbook is wanted.";
@@ -34,8 +38,12 @@ internal static class ComplaintTexts
     internal static string UnknownEncoding(string name) =>
         $"The encoding \"{name}\" is not known; names such as utf-8, windows-1252, windows-1251, shift_jis or macintosh are wanted.";
 
-    internal static string EncodingNotFound(int line) =>
-        $"Line {Whole(line)} is not UTF-8, and which other encoding it is cannot be told: name it with --encoding.";
+    internal static string EncodingNotFound(int line, IReadOnlyList<string> candidates) => candidates.Count > 1
+        ? $"Line {Whole(line)} is not UTF-8; it may be {string.Join(" or ", candidates)}, and which cannot be told: name it with --encoding."
+        : $"Line {Whole(line)} is not UTF-8, and which other encoding it is cannot be told: name it with --encoding.";
+
+    internal static string Mixed(IReadOnlyList<int> lines) =>
+        $"Bytes of two encodings stand in this file; in {(lines.Count == 1 ? "line" : "lines")} {Listed([.. lines.Select(Whole)])} they were read as Windows-1252, elsewhere as UTF-8: save it in one encoding.";
 
     internal static string EncodingDoesNotFit(string name) => $"The text is not {name}: name another encoding with --encoding.";
 

@@ -1,20 +1,23 @@
+using System.Text.RegularExpressions;
 using CsvHelper;
 
 namespace PartCheck.Sheets;
 
 /// <summary>Separated text to one sheet. Rows are counted as a spreadsheet counts them: one a record, empty lines included.</summary>
-internal static class CsvSheet
+internal static partial class CsvSheet
 {
     private const int LongestRecord = 1 << 20;
-    private const int MostCells = 8_000_000;
+    private const int MostCells = 2_000_000;
 
     /// <summary>The one sheet; an empty list with a fatal complaint where the text cannot be read.</summary>
     internal static IReadOnlyList<SheetData> Read(byte[] bytes, string shownName, string? encoding, ComplaintList complaints)
     {
-        if (TextDecoding.Decode(bytes, shownName, encoding, complaints) is not { } text)
+        if (TextDecoding.Decode(bytes, shownName, encoding, complaints) is not { } decoded)
         {
             return [];
         }
+
+        string text = WithoutShifts(decoded.Text);
 
         if (string.IsNullOrWhiteSpace(text))
         {
@@ -28,6 +31,7 @@ internal static class CsvSheet
 
         char separator = Separator.Of(text, out string body);
         List<IReadOnlyList<SheetCell>> rows = [];
+        Dictionary<int, int> fields = [];
         List<(CsvMalformedReason Reason, int Row)> malformed = [];
         int row = 0;
         int cells = 0;
@@ -49,11 +53,12 @@ internal static class CsvSheet
                 cells += found.Count;
                 if (cells > MostCells)
                 {
-                    return SheetFile.Refuse(shownName, ComplaintTexts.TooLarge("8 million cells are the most"), complaints);
+                    return SheetFile.Refuse(shownName, ComplaintTexts.TooLarge("2 million cells are the most"), complaints);
                 }
 
                 if (found.Count > 0)
                 {
+                    fields[row] = reader.Current.FieldCount;
                     rows.Add(found);
                 }
             }
@@ -74,25 +79,37 @@ internal static class CsvSheet
             Complain(at, ComplaintTexts.TextAfterQuote, fatal: false);
         }
 
+        if (decoded.MixedLines.Count > 0)
+        {
+            complaints.Add(new Complaint(
+                shownName, null, null, null, null, null, "one encoding", ComplaintTexts.Mixed(decoded.MixedLines)));
+        }
+
         bool decimalComma = separator != ',' && DecimalSign.IsComma(rows);
-        return [new SheetData(shownName, null, decimalComma, rows)];
+        return [new SheetData(shownName, null, decimalComma, rows) { Encoding = decoded.Encoding, Separator = Separator.NameOf(separator), Fields = fields }];
 
         void Complain(int at, string sentence, bool fatal) =>
             complaints.Add(new Complaint(shownName, null, at, null, CellAddress.Of(at, 1), null, "quotes in pairs", sentence) { Fatal = fatal });
     }
+
+    /// <summary>The text without the escape sequences by which ISO 2022 texts change their character set (ISO/IEC 2022, 6).</summary>
+    private static string WithoutShifts(string text) =>
+        text.Contains('\u001B', StringComparison.Ordinal) ? Shift().Replace(text, string.Empty) : text;
 
     private static List<SheetCell> Cells(CsvRow record, int row)
     {
         List<SheetCell> cells = [];
         for (int i = 0; i < record.FieldCount; i++)
         {
-            string text = record.GetString(i).Trim();
-            if (text.Length > 0)
+            if (SheetCell.OfText(row, i + 1, record.GetString(i)) is { } cell)
             {
-                cells.Add(new SheetCell(row, i + 1, text, null, false));
+                cells.Add(cell);
             }
         }
 
         return cells;
     }
+
+    [GeneratedRegex(@"\x1B[\x20-\x2F]{1,3}[\x30-\x7E]", RegexOptions.CultureInvariant)]
+    private static partial Regex Shift();
 }

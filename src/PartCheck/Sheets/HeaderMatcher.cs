@@ -11,12 +11,15 @@ namespace PartCheck.Sheets;
 /// <param name="OwnName">True where the header is the column's own name.</param>
 internal sealed record TableColumn(ColumnSpec Spec, int Index, string Header, QuantityUnit? Unit, bool UnitWrong, bool OwnName);
 
-/// <summary>A row read as a header.</summary>
-internal sealed record TableHeader(int Row, IReadOnlyList<SheetCell> Cells, Dictionary<string, TableColumn> Columns, bool Complete);
+/// <summary>A row read as a header, or two rows read as one.</summary>
+internal sealed record TableHeader(int Row, int LastRow, IReadOnlyList<SheetCell> Cells, Dictionary<string, TableColumn> Columns, bool Complete);
 
 /// <summary>Matches the cells of a row with the columns of a table.</summary>
 internal sealed class HeaderMatcher
 {
+    /// <summary>A longer text is no header.</summary>
+    private const int LongestHeader = 200;
+
     private readonly string tableName;
     private readonly ColumnSpellings spellings;
     private readonly Dictionary<string, ColumnSpec> byName = new(StringComparer.Ordinal);
@@ -48,7 +51,7 @@ internal sealed class HeaderMatcher
         Dictionary<string, TableColumn> found = new(StringComparer.OrdinalIgnoreCase);
         foreach (SheetCell cell in row)
         {
-            if (cell.Number is not null || Column(cell) is not { } column)
+            if (cell.Number is not null || cell.Text.Length > LongestHeader || Column(cell) is not { } column)
             {
                 continue;
             }
@@ -60,9 +63,53 @@ internal sealed class HeaderMatcher
             }
         }
 
-        bool complete = found.Count >= leastColumns && required.TrueForAll(spec => found.ContainsKey(spec.Name));
-        return new TableHeader(row[0].Row, row, found, complete);
+        return new TableHeader(row[0].Row, row[0].Row, row, found, IsComplete(found));
     }
+
+    /// <summary>The header with further columns.</summary>
+    internal TableHeader WithColumns(TableHeader header, Dictionary<string, TableColumn> columns) =>
+        header with { Columns = columns, Complete = IsComplete(columns) };
+
+    /// <summary>A quick look: false where a data row cannot be a header, since none of its texts is a name of a required column.</summary>
+    internal bool MayBeHeader(IReadOnlyList<SheetCell> row)
+    {
+        if (required.Count == 0)
+        {
+            return true;
+        }
+
+        foreach (SheetCell cell in row)
+        {
+            if (cell.Number is null && cell.Text.Length <= LongestHeader && Column(cell) is { Spec.Required: true })
+            {
+                return true;
+            }
+        }
+
+        return false;
+    }
+
+    /// <summary>Columns that a row's texts may stand for if the cells below prove it.</summary>
+    internal IEnumerable<TableColumn> Doubtful(IReadOnlyList<SheetCell> row)
+    {
+        foreach (SheetCell cell in row)
+        {
+            if (cell.Number is null && cell.Text.Length <= LongestHeader
+                && spellings.DoubtfulOf(tableName, HeaderText.Matched(cell.Text)) is { } names)
+            {
+                foreach (string name in names)
+                {
+                    if (byName.TryGetValue(HeaderText.Matched(name), out ColumnSpec? spec) && spec.Proof is not null)
+                    {
+                        yield return new TableColumn(spec, cell.Column, Table.OneLine(cell.Text), null, false, false);
+                    }
+                }
+            }
+        }
+    }
+
+    private bool IsComplete(Dictionary<string, TableColumn> found) =>
+        found.Count >= leastColumns && required.TrueForAll(spec => found.ContainsKey(spec.Name));
 
     private TableColumn? Column(SheetCell cell)
     {

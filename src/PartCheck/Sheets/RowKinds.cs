@@ -8,8 +8,17 @@ internal enum RowKind
     /// <summary>Data.</summary>
     Data,
 
-    /// <summary>Blank in every known column, a section title, totals or a sign-off.</summary>
-    Aside,
+    /// <summary>Blank in every known column.</summary>
+    Unknown,
+
+    /// <summary>A section title.</summary>
+    Section,
+
+    /// <summary>Totals.</summary>
+    Total,
+
+    /// <summary>A sign-off or a note about the file.</summary>
+    SignOff,
 
     /// <summary>The header once more.</summary>
     RepeatedHeader,
@@ -26,13 +35,15 @@ internal sealed partial class RowKinds
 {
     private readonly TableHeader header;
     private readonly HeaderMatcher matcher;
+    private readonly SheetLayout layout;
     private readonly HashSet<int> known;
     private readonly HashSet<int> requiredColumns;
     private readonly bool partNumbers;
     private readonly bool bill;
 
-    internal RowKinds(TableHeader header, HeaderMatcher matcher, string tableName)
+    internal RowKinds(TableHeader header, HeaderMatcher matcher, string tableName, SheetLayout layout)
     {
+        this.layout = layout;
         this.header = header;
         this.matcher = matcher;
         known = [.. header.Columns.Values.Select(column => column.Index)];
@@ -48,13 +59,22 @@ internal sealed partial class RowKinds
             return same ? RowKind.RepeatedHeader : RowKind.OtherHeader;
         }
 
-        bool aside = !row.Any(cell => known.Contains(cell.Column)) || IsSection(row) || IsTotal(row) || IsSignOff(row);
-        return aside ? RowKind.Aside : RowKind.Data;
+        return IsTotal(row) ? RowKind.Total
+            : IsSignOff(row) ? RowKind.SignOff
+            : IsSection(row) ? RowKind.Section
+            : !row.Any(cell => known.Contains(cell.Column)) ? RowKind.Unknown
+            : RowKind.Data;
     }
 
     /// <summary>The row names columns again: all the required ones and at least two, or every known column that it fills.</summary>
     private bool IsHeader(IReadOnlyList<SheetCell> row, out bool same)
     {
+        same = false;
+        if (!matcher.MayBeHeader(row))
+        {
+            return false;
+        }
+
         TableHeader again = matcher.Match(row);
         same = again.Columns.All(pair => header.Columns.TryGetValue(pair.Key, out TableColumn? column) && column.Index == pair.Value.Index);
         return again.Complete && again.Columns.Count >= Math.Min(2, header.Columns.Count);
@@ -66,7 +86,7 @@ internal sealed partial class RowKinds
     /// </summary>
     private bool IsSection(IReadOnlyList<SheetCell> row)
     {
-        if (row is not [{ Number: null } only])
+        if (row is not [{ Number: null } only] || requiredColumns.Any(column => layout.MergedFrom(only.Row, column) is not null))
         {
             return false;
         }
@@ -80,8 +100,14 @@ internal sealed partial class RowKinds
     private bool IsTotal(IReadOnlyList<SheetCell> row) =>
         Total().IsMatch(row[0].Text) && !row.Skip(1).Any(cell => requiredColumns.Contains(cell.Column));
 
-    /// <summary>In bills, a first text such as "Approved by:" in place of references.</summary>
-    private bool IsSignOff(IReadOnlyList<SheetCell> row) => bill && row.Count <= 3 && SignOff().IsMatch(row[0].Text);
+    /// <summary>
+    /// In bills, a first text such as "Approved by:" in place of references; and a text that ends in a colon, with a text beside it,
+    /// since no reference does.
+    /// </summary>
+    private bool IsSignOff(IReadOnlyList<SheetCell> row) =>
+        bill && row.Count <= 3
+        && (SignOff().IsMatch(row[0].Text)
+            || (row[0].Text.EndsWith(':') && !row.Skip(1).Any(cell => requiredColumns.Contains(cell.Column))));
 
     [GeneratedRegex(@"^(?:(?:grand|sub)[\s-]?)?(?:totals?|sum)\b(?!\s*[0-9])", RegexOptions.CultureInvariant | RegexOptions.IgnoreCase)]
     private static partial Regex Total();

@@ -5,6 +5,14 @@ internal static class Separator
 {
     private const int LinesLookedAt = 200;
 
+    /// <summary>The separator's name.</summary>
+    internal static string NameOf(char separator) => separator switch
+    {
+        ',' => "comma",
+        ';' => "semicolon",
+        _ => "tab",
+    };
+
     /// <summary>Comma, semicolon or tab. A first line such as <c>sep=;</c> decides and is emptied, so that rows keep their numbers.</summary>
     internal static char Of(string text, out string body)
     {

@@ -1,11 +1,19 @@
 namespace PartCheck.Sheets;
 
+/// <summary>Rows of a sheet that are no data, with the reason.</summary>
+/// <param name="Row">One-based first row.</param>
+/// <param name="LastRow">Last row.</param>
+/// <param name="Why">Why they were left out, e.g. <c>section title</c>.</param>
+/// <param name="Text">The first text that stands there.</param>
+public sealed record SkippedRows(int Row, int LastRow, string Why, string Text);
+
 /// <summary>A table found in a sheet: header row and data rows.</summary>
 public sealed class Table
 {
     private const int LastHeaderRow = 20;
 
     private readonly Dictionary<string, TableColumn> columns;
+    private readonly List<SkippedRows> skipped = [];
 
     private Table(SheetData sheet, TableHeader header, ComplaintList complaints)
     {
@@ -23,6 +31,16 @@ public sealed class Table
 
     /// <summary>One-based row of the header.</summary>
     public int HeaderRow { get; }
+
+    /// <summary>The columns found, in the sheet's order: own name, header as it stands there, one-based column.</summary>
+    public IReadOnlyList<(string Name, string Header, int Index)> Columns =>
+        [.. columns.Values.OrderBy(c => c.Index).Select(c => (c.Spec.Name, c.Header, c.Index))];
+
+    /// <summary>Rows that are no data.</summary>
+    public IReadOnlyList<SkippedRows> Skipped => skipped;
+
+    /// <summary>What stands below another header row, as a sheet of its own; null: nothing.</summary>
+    public SheetData? Below { get; private set; }
 
     /// <summary>Where complaints go.</summary>
     internal ComplaintList Complaints { get; }
@@ -42,24 +60,11 @@ public sealed class Table
         ArgumentNullException.ThrowIfNull(spellings);
         ArgumentNullException.ThrowIfNull(complaints);
         HeaderMatcher matcher = new(tableName, columns, spellings);
-        TableHeader? best = null;
-        TableHeader? nearest = null;
-        foreach (IReadOnlyList<SheetCell> row in sheet.Rows.Where(row => row[0].Row <= LastHeaderRow))
-        {
-            TableHeader header = matcher.Match(row);
-            nearest = nearest is null || header.Columns.Count > nearest.Columns.Count ? header : nearest;
-
-            // The first header counts; only a title that happens to match one column gives way to a later row that matches more.
-            if (header.Complete && (best is null || (best.Columns.Count == 1 && header.Columns.Count > 1)))
-            {
-                best = header;
-            }
-        }
-
-        if (best is null)
+        HeaderSearch search = new(sheet, matcher, FirstRow(sheet) + LastHeaderRow - 1);
+        if (search.Best is not { } best)
         {
             string text = ComplaintTexts.NoHeader(
-                tableName, matcher.LookedFor, nearest?.Row, [.. nearest?.Cells.Select(cell => OneLine(cell.Text)) ?? []]);
+                tableName, matcher.LookedFor, search.Nearest?.Row, [.. search.Nearest?.Cells.Select(cell => OneLine(cell.Text)) ?? []]);
             complaints.Add(new Complaint(
                 sheet.File, sheet.Sheet, null, null, null, null, string.Join(", ", matcher.LookedFor), text)
             { Fatal = true });
@@ -75,7 +80,7 @@ public sealed class Table
                 ComplaintTexts.HeaderUnit(column.Header, wanted)));
         }
 
-        table.Rows = DataRows(table, best, matcher, tableName);
+        table.ReadRows(best, new RowKinds(best, matcher, tableName, sheet.Layout), tableName);
         return table;
     }
 
@@ -87,32 +92,96 @@ public sealed class Table
 
     internal TableColumn? ColumnOf(string column) => columns.GetValueOrDefault(column);
 
-    private static List<TableRow> DataRows(Table table, TableHeader header, HeaderMatcher matcher, string tableName)
+    /// <summary>The cell at an address; null where it is empty.</summary>
+    internal SheetCell? CellAt(int row, int column)
+    {
+        int low = 0;
+        int high = Sheet.Rows.Count - 1;
+        while (low <= high)
+        {
+            int middle = (low + high) / 2;
+            int at = Sheet.Rows[middle][0].Row;
+            if (at == row)
+            {
+                return Sheet.Rows[middle].FirstOrDefault(cell => cell.Column == column);
+            }
+
+            (low, high) = at < row ? (middle + 1, high) : (low, middle - 1);
+        }
+
+        return null;
+    }
+
+    /// <summary>The row from which a header is looked for: 1, or where a second table begins.</summary>
+    private static int FirstRow(SheetData sheet) => sheet.IsRest && sheet.Rows.Count > 0 ? sheet.Rows[0][0].Row : 1;
+
+    private void ReadRows(TableHeader header, RowKinds kinds, string tableName)
     {
         List<TableRow> rows = [];
-        RowKinds kinds = new(header, matcher, tableName);
-        foreach (IReadOnlyList<SheetCell> row in table.Sheet.Rows.Where(row => row[0].Row > header.Row))
+        bool bill = tableName.Equals("BOM", StringComparison.OrdinalIgnoreCase);
+        int block = 0;
+        for (int i = 0; i < Sheet.Rows.Count; i++)
         {
+            IReadOnlyList<SheetCell> row = Sheet.Rows[i];
+            if (row[0].Row < header.Row)
+            {
+                Skip(row, "title above the header");
+            }
+
+            if (row[0].Row <= header.LastRow)
+            {
+                continue;
+            }
+
             RowKind kind = kinds.Of(row);
+            if (kind == RowKind.Data)
+            {
+                rows.Add(new TableRow(this, row, block));
+                continue;
+            }
+
+            block += kind == RowKind.RepeatedHeader ? 1 : 0;
             if (kind == RowKind.OtherHeader)
             {
-                SheetCell first = row[0];
-                if (!tableName.Equals("BOM", StringComparison.OrdinalIgnoreCase))
+                // In a bill the rows below may be the same parts once more: the bill's reader compares.
+                if (bill)
                 {
-                    table.Complaints.Add(new Complaint(
-                        table.Sheet.File, table.Sheet.Sheet, first.Row, null, first.Address, first.Text, "one table in one sheet", ComplaintTexts.SecondHeader));
+                    Below = Sheet with { Rows = [.. Sheet.Rows.Skip(i)], IsRest = true };
+                }
+                else
+                {
+                    SheetCell first = row[0];
+                    Complaints.Add(new Complaint(
+                        Sheet.File, Sheet.Sheet, first.Row, null, first.Address, first.Text, "one table in one sheet", ComplaintTexts.SecondHeader));
                 }
 
                 break;
             }
 
-            if (kind == RowKind.Data)
+            Skip(row, kind switch
             {
-                rows.Add(new TableRow(table, row));
-            }
+                RowKind.Section => "section title",
+                RowKind.Total => "totals",
+                RowKind.SignOff => "note about the file",
+                RowKind.RepeatedHeader => "header once more",
+                _ => "nothing in the columns that are read",
+            });
         }
 
-        return rows;
+        Rows = rows;
+    }
+
+    /// <summary>Notes a row that is left out; runs of one reason are one entry.</summary>
+    internal void Skip(IReadOnlyList<SheetCell> row, string why)
+    {
+        int at = row[0].Row;
+        if (skipped.Count > 0 && skipped[^1] is { } last && last.Why == why && last.LastRow == at - 1)
+        {
+            skipped[^1] = last with { LastRow = at };
+            return;
+        }
+
+        skipped.Add(new SkippedRows(at, at, why, OneLine(row[0].Text)));
     }
 
     internal static string OneLine(string text) => string.Join(' ', text.Split((char[])['\r', '\n'], StringSplitOptions.RemoveEmptyEntries));

@@ -2,21 +2,28 @@ using System.Text;
 
 namespace PartCheck.Sheets;
 
+/// <summary>A text and how it was read.</summary>
+/// <param name="Text">The text.</param>
+/// <param name="Encoding">The encoding in words, e.g. <c>UTF-8</c>, <c>Mac-Roman (found out)</c>.</param>
+/// <param name="MixedLines">Lines that hold bytes of a second encoding; none: the text is of one.</param>
+internal sealed record DecodedText(string Text, string Encoding, IReadOnlyList<int> MixedLines);
+
 /// <summary>
-/// Bytes to text: a byte-order mark decides, then the encoding named, then strict UTF-8, then UTF-16 without a mark, then
-/// Windows-1252 where it fits plainly.
+/// Bytes to text: a byte-order mark decides, then the encoding named, then strict UTF-8, then UTF-16 without a mark, then the one
+/// encoding of bills in which every character is plausible (<see cref="EncodingEvidence"/>), then UTF-8 mixed with Windows-1252.
 /// </summary>
 internal static class TextDecoding
 {
     static TextDecoding() => Encoding.RegisterProvider(CodePagesEncodingProvider.Instance);
 
     /// <summary>The text; null with a complaint where the bytes cannot be told.</summary>
-    internal static string? Decode(byte[] bytes, string shownName, string? encoding, ComplaintList complaints)
+    internal static DecodedText? Decode(byte[] bytes, string shownName, string? encoding, ComplaintList complaints)
     {
         if (OfMark(bytes) is { } marked)
         {
-            return Strict(bytes.AsSpan(marked.Length), marked.Encoding)
-                ?? Refuse(shownName, ComplaintTexts.EncodingDoesNotFit(marked.Encoding.WebName), complaints);
+            return Strict(bytes.AsSpan(marked.Length), marked.Encoding) is { } text
+                ? new DecodedText(text, $"{Shown(marked.Encoding)} (byte-order mark)", [])
+                : Refuse(shownName, ComplaintTexts.EncodingDoesNotFit(marked.Encoding.WebName), complaints);
         }
 
         if (encoding is not null)
@@ -26,23 +33,33 @@ internal static class TextDecoding
                 return Refuse(shownName, ComplaintTexts.UnknownEncoding(encoding), complaints);
             }
 
-            return Strict(bytes, named) ?? Refuse(shownName, ComplaintTexts.EncodingDoesNotFit(encoding), complaints);
+            return Strict(bytes, named) is { } text
+                ? new DecodedText(text, Shown(named) + " (as named)", [])
+                : Refuse(shownName, ComplaintTexts.EncodingDoesNotFit(encoding), complaints);
         }
 
         if (bytes.AsSpan().Contains((byte)0))
         {
-            return Unmarked16(bytes) ?? Refuse(shownName, ComplaintTexts.BinaryText, complaints);
+            return Unmarked16(bytes) is { } text
+                ? new DecodedText(text, "UTF-16 (found out)", [])
+                : Refuse(shownName, ComplaintTexts.BinaryText, complaints);
         }
 
         if (Strict(bytes, new UTF8Encoding(false, true)) is { } utf8)
         {
-            return utf8;
+            return new DecodedText(utf8, bytes.AsSpan().ContainsAnyInRange((byte)0x80, (byte)0xFF) ? "UTF-8" : "ASCII", []);
         }
 
-        string western = Encoding.GetEncoding(1252).GetString(bytes);
-        return FitsPlainly(western)
-            ? western
-            : Refuse(shownName, ComplaintTexts.EncodingNotFound(FirstBadLine(bytes)), complaints);
+        List<(string Name, string Text)> fitting = [.. EncodingEvidence.Candidates
+            .Select(c => (c.Shown, Text: Strict(bytes, Encoding.GetEncoding(c.Name)), c.Fits))
+            .Where(c => c.Text is not null && c.Fits(c.Text)).Select(c => (c.Shown, c.Text!))];
+        if (fitting.Count > 0 && fitting.TrueForAll(f => f.Text == fitting[0].Text))
+        {
+            return new DecodedText(fitting[0].Text, fitting[0].Name + " (found out)", []);
+        }
+
+        return (fitting.Count == 0 ? MixedEncoding.Read(bytes) : null)
+            ?? Refuse(shownName, ComplaintTexts.EncodingNotFound(MixedEncoding.FirstBadLine(bytes), [.. fitting.Select(f => f.Name)]), complaints);
     }
 
     private static (Encoding Encoding, int Length)? OfMark(ReadOnlySpan<byte> bytes) => bytes switch
@@ -53,6 +70,16 @@ internal static class TextDecoding
         [0xFF, 0xFE, ..] => (new UnicodeEncoding(false, false, true), 2),
         [0xFE, 0xFF, ..] => (new UnicodeEncoding(true, false, true), 2),
         _ => null,
+    };
+
+    private static string Shown(Encoding encoding) => encoding.WebName switch
+    {
+        "shift_jis" => "Shift-JIS",
+        "macintosh" => "Mac-Roman",
+        "windows-1252" => "Windows-1252",
+        "windows-1251" => "Windows-1251",
+        "utf-16BE" => "UTF-16 (big-endian)",
+        string name => name.ToUpperInvariant(),
     };
 
     private static Encoding? Named(string name)
@@ -114,59 +141,7 @@ internal static class TextDecoding
         return little || big ? Strict(bytes, new UnicodeEncoding(big, false, true)) : null;
     }
 
-    /// <summary>
-    /// True where the text reads as Windows-1252 beyond doubt: each character above ASCII stands alone and is a sign that bills
-    /// use, or a letter inside a Latin word. Two in a row are another encoding (Cyrillic, Japanese, broken UTF-8).
-    /// </summary>
-    private static bool FitsPlainly(string text)
-    {
-        for (int i = 0; i < text.Length; i++)
-        {
-            char c = text[i];
-            if (c < 0x80)
-            {
-                continue;
-            }
-
-            char before = i > 0 ? text[i - 1] : ' ';
-            char after = i + 1 < text.Length ? text[i + 1] : ' ';
-            bool alone = before < 0x80 && after < 0x80;
-            bool letterInWord = c is >= '\u00C0' and <= '\u00FF' and not '\u00D7' and not '\u00F7'
-                && (char.IsAsciiLetter(before) || char.IsAsciiLetter(after));
-            if (!alone || !(letterInWord || IsSignOfBills(c)))
-            {
-                return false;
-            }
-        }
-
-        return true;
-    }
-
-    private static bool IsSignOfBills(char c) =>
-        c is '\u00B5' or '\u00B0' or '\u00B1' or '\u00B2' or '\u00B3' or '\u00B7' or '\u00D7' or '\u00A0' or '\u00AE' or '\u00A9'
-            or '\u20AC' or '\u2013' or '\u2014' or '\u2018' or '\u2019' or '\u201C' or '\u201D' or '\u2122' or '\u00A7';
-
-    private static int FirstBadLine(byte[] bytes)
-    {
-        int line = 1;
-        ReadOnlySpan<byte> rest = bytes;
-        while (rest.Length > 0)
-        {
-            bool valid = Rune.DecodeFromUtf8(rest, out Rune rune, out int consumed) == System.Buffers.OperationStatus.Done;
-            if (!valid)
-            {
-                break;
-            }
-
-            bool lineEnd = rune.Value == '\n' || (rune.Value == '\r' && !(rest.Length > 1 && rest[1] == '\n'));
-            line += lineEnd ? 1 : 0;
-            rest = rest[consumed..];
-        }
-
-        return line;
-    }
-
-    private static string? Refuse(string shownName, string text, ComplaintList complaints)
+    private static DecodedText? Refuse(string shownName, string text, ComplaintList complaints)
     {
         SheetFile.Refuse(shownName, text, complaints, ComplaintTexts.WantedEncoding);
         return null;

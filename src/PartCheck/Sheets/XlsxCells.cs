@@ -1,21 +1,48 @@
 using System.Globalization;
 using System.Text;
+using System.Text.RegularExpressions;
 using System.Xml;
 
 namespace PartCheck.Sheets;
 
 /// <summary>Streams the cells of one worksheet part; empty ones are left out.</summary>
-internal static class XlsxCells
+internal sealed partial class XlsxCells
 {
     private const int LastRow = 1_048_576;
     private const int LastColumn = 16_384;
-    private const int MostCells = 8_000_000;
+    private const int MostCells = 2_000_000;
+    private const int MostRanges = 100_000;
 
-    internal static List<IReadOnlyList<SheetCell>> Read(
-        XlsxPackage package, string part, List<string> shared, XlsxStyles styles, ref int cells)
+    private readonly List<string> shared;
+    private readonly XlsxStyles styles;
+    private readonly List<SheetCell> found = [];
+    private readonly HashSet<int> hiddenRows = [];
+    private readonly List<(int First, int Last)> hiddenColumns = [];
+    private readonly List<MergedRange> merged = [];
+    private bool inOrder = true;
+
+    private XlsxCells(List<string> shared, XlsxStyles styles) => (this.shared, this.styles) = (shared, styles);
+
+    /// <summary>Reads one worksheet.</summary>
+    /// <param name="package">The package.</param>
+    /// <param name="part">The worksheet's part.</param>
+    /// <param name="hidden">True where the workbook hides the sheet.</param>
+    /// <param name="shared">The shared strings.</param>
+    /// <param name="styles">The styles.</param>
+    /// <param name="cells">Cells of the workbook read so far.</param>
+    internal static (List<IReadOnlyList<SheetCell>> Rows, SheetLayout Layout) Read(
+        XlsxPackage package, string part, bool hidden, List<string> shared, XlsxStyles styles, ref int cells)
     {
-        List<SheetCell> found = [];
+        XlsxCells sheet = new(shared, styles);
         using XmlReader x = package.Open(part);
+        sheet.Read(x, ref cells);
+        List<IReadOnlyList<SheetCell>> rows = sheet.ByRow();
+        sheet.hiddenRows.IntersectWith(rows.Select(row => row[0].Row));
+        return (rows, SheetLayout.Of(hidden, sheet.hiddenRows, sheet.hiddenColumns, sheet.merged));
+    }
+
+    private void Read(XmlReader x, ref int cells)
+    {
         int row = 0;
         int column = 0;
         while (x.Read())
@@ -25,31 +52,53 @@ internal static class XlsxCells
                 continue;
             }
 
-            if (x.LocalName == "row")
+            switch (x.LocalName)
             {
-                row = Within(Whole(x.GetAttribute("r")) ?? (row + 1), LastRow, "row");
-                column = 0;
-            }
-            else if (x.LocalName == "c")
-            {
-                (int? addressRow, int? addressColumn) = Address(x.GetAttribute("r"));
-                column = Within(addressColumn ?? (column + 1), LastColumn, "column");
-                row = row == 0 ? 1 : row;
-                if (Cell(x, Within(addressRow ?? row, LastRow, "row"), column, shared, styles) is { } cell)
-                {
-                    found.Add(cell);
-                    if (++cells > MostCells)
+                case "row":
+                    row = Within(Whole(x.GetAttribute("r")) ?? (row + 1), LastRow, "row");
+                    column = 0;
+                    if (IsTrue(x.GetAttribute("hidden")))
                     {
-                        throw new InvalidDataException("it has more than 8 million cells.");
+                        hiddenRows.Add(row);
                     }
-                }
+
+                    break;
+                case "c":
+                    (int? addressRow, int? addressColumn) = Address(x.GetAttribute("r"));
+                    column = Within(addressColumn ?? (column + 1), LastColumn, "column");
+                    row = row == 0 ? 1 : row;
+                    if (Cell(x, Within(addressRow ?? row, LastRow, "row"), column) is { } cell)
+                    {
+                        Add(cell);
+                        if (++cells > MostCells)
+                        {
+                            throw new InvalidDataException("it has more than 2 million cells.");
+                        }
+                    }
+
+                    break;
+                case "col" when IsTrue(x.GetAttribute("hidden")):
+                    int first = Within(Whole(x.GetAttribute("min")) ?? 1, LastColumn, "column");
+                    hiddenColumns.Add((first, Within(Whole(x.GetAttribute("max")) ?? first, LastColumn, "column")));
+                    Few(hiddenColumns.Count, "hidden columns");
+                    break;
+                case "mergeCell" when Range(x.GetAttribute("ref")) is { } range:
+                    merged.Add(range);
+                    Few(merged.Count, "merged cells");
+                    break;
+                default:
+                    break;
             }
         }
-
-        return ByRow(found);
     }
 
-    private static SheetCell? Cell(XmlReader x, int row, int column, List<string> shared, XlsxStyles styles)
+    private void Add(SheetCell cell)
+    {
+        inOrder = inOrder && (found.Count == 0 || (found[^1].Row, found[^1].Column).CompareTo((cell.Row, cell.Column)) < 0);
+        found.Add(cell);
+    }
+
+    private SheetCell? Cell(XmlReader x, int row, int column)
     {
         string type = x.GetAttribute("t") ?? "n";
         int? style = Whole(x.GetAttribute("s"));
@@ -60,34 +109,51 @@ internal static class XlsxCells
 
         string? value = null;
         string? inline = null;
+        string? formula = null;
         int depth = x.Depth;
         while (x.Read() && x.Depth > depth)
         {
-            if (x.NodeType == XmlNodeType.Element && x.LocalName == "is")
+            if (x.NodeType != XmlNodeType.Element)
             {
-                inline = XlsxStrings.Item(x);
+                continue;
             }
-            else if (x.NodeType == XmlNodeType.Element && x.LocalName == "v")
+
+            switch (x.LocalName)
             {
-                value = ValueText(x);
+                case "is":
+                    inline = XlsxStrings.Item(x);
+                    break;
+                case "v":
+                    value = ValueText(x);
+                    break;
+                case "f":
+                    formula = "=" + ValueText(x);
+                    break;
+                default:
+                    break;
             }
+        }
+
+        // A formula whose result is the empty text stores one (t="str"); a formula that was never worked out stores nothing.
+        if (formula is not null && inline is null && string.IsNullOrWhiteSpace(value) && (value is null || type != "str"))
+        {
+            return SheetCell.Without(row, column, formula, ComplaintTexts.FormulaWithoutValue);
         }
 
         string stored = (type == "inlineStr" ? inline ?? value : value ?? inline) ?? string.Empty;
         return type switch
         {
-            "s" => OfText(Whole(stored.Trim()) is { } i && i < shared.Count
+            "s" when stored.Trim().Length == 0 => null,
+            "s" => SheetCell.OfText(row, column, Whole(stored.Trim()) is { } i && i < shared.Count
                 ? shared[i]
                 : throw new InvalidDataException($"its cell {CellAddress.Of(row, column)} points at a text that is not there.")),
-            "inlineStr" => OfText(stored),
-            "str" => OfText(XlsxStrings.Unescaped(stored)),
-            "b" => OfText(stored.Trim() is "1" or "true" ? "TRUE" : stored.Trim().Length == 0 ? string.Empty : "FALSE"),
-            "e" or "d" => OfText(stored),
+            "inlineStr" => SheetCell.OfText(row, column, stored),
+            "str" => SheetCell.OfText(row, column, XlsxStrings.Unescaped(stored)),
+            "b" => SheetCell.OfText(row, column, stored.Trim() is "1" or "true" ? "TRUE" : stored.Trim().Length == 0 ? string.Empty : "FALSE"),
+            "e" when stored.Trim().Length > 0 => SheetCell.Without(row, column, stored.Trim(), ComplaintTexts.ErrorCell),
+            "d" => SheetCell.OfText(row, column, stored) is { } day ? day with { Date = true } : null,
             _ => styles.NumberCell(row, column, stored.Trim(), style),
         };
-
-        SheetCell? OfText(string text) =>
-            text.Trim() is { Length: > 0 } trimmed ? new SheetCell(row, column, trimmed, null, false) : null;
     }
 
     /// <summary>The text inside the element at which the reader stands.</summary>
@@ -112,9 +178,53 @@ internal static class XlsxCells
     }
 
     /// <summary>Cells in row and column order; of two cells at one address the later counts.</summary>
-    private static List<IReadOnlyList<SheetCell>> ByRow(List<SheetCell> found) =>
-        [.. found.GroupBy(cell => cell.Row).OrderBy(group => group.Key).Select(group => (IReadOnlyList<SheetCell>)
-            [.. group.GroupBy(cell => cell.Column).OrderBy(same => same.Key).Select(same => same.Last())])];
+    private List<IReadOnlyList<SheetCell>> ByRow()
+    {
+        if (!inOrder)
+        {
+            return [.. found.GroupBy(cell => cell.Row).OrderBy(group => group.Key).Select(group => (IReadOnlyList<SheetCell>)
+                [.. group.GroupBy(cell => cell.Column).OrderBy(same => same.Key).Select(same => same.Last())])];
+        }
+
+        List<IReadOnlyList<SheetCell>> rows = [];
+        for (int start = 0; start < found.Count;)
+        {
+            int end = start + 1;
+            while (end < found.Count && found[end].Row == found[start].Row)
+            {
+                end++;
+            }
+
+            rows.Add(found.GetRange(start, end - start));
+            start = end;
+        }
+
+        return rows;
+    }
+
+    private static MergedRange? Range(string? text)
+    {
+        if (text is null || TwoAddresses().Match(text) is not { Success: true } match)
+        {
+            return null;
+        }
+
+        (int? row, int? column) = Address(match.Groups[1].Value);
+        (int? lastRow, int? lastColumn) = Address(match.Groups[2].Value);
+        return row is null || column is null || lastRow is null || lastColumn is null || lastRow < row || lastColumn < column
+            ? null
+            : new MergedRange(row.Value, column.Value, Math.Min(lastRow.Value, LastRow), Math.Min(lastColumn.Value, LastColumn));
+    }
+
+    private static void Few(int count, string what)
+    {
+        if (count > MostRanges)
+        {
+            throw new InvalidDataException($"it has more than 100 000 {what}.");
+        }
+    }
+
+    private static bool IsTrue(string? text) => text is "1" or "true";
 
     private static int? Whole(string? text) =>
         int.TryParse(text, NumberStyles.None, CultureInfo.InvariantCulture, out int value) ? value : null;
@@ -133,4 +243,7 @@ internal static class XlsxCells
 
         return column == 0 ? (null, null) : (Whole(address![i..]), column);
     }
+
+    [GeneratedRegex(@"^([A-Za-z]{1,3}[0-9]{1,7}):([A-Za-z]{1,3}[0-9]{1,7})$", RegexOptions.CultureInvariant)]
+    private static partial Regex TwoAddresses();
 }

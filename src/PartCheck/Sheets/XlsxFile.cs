@@ -5,7 +5,7 @@ namespace PartCheck.Sheets;
 /// <summary>An .xlsx workbook to sheets: values as stored, texts as shown, formulas by their stored results.</summary>
 /// <remarks>
 /// A reader of our own, so that nothing is dropped in silence: workbooks without styles, cells without addresses, pictures, strict
-/// OOXML. Merged cells are read as they are stored (the first cell holds the text); hidden rows and sheets are read like others.
+/// OOXML. Merged cells are stored in the first cell; hidden rows, columns and sheets are read like others, and known as hidden.
 /// </remarks>
 internal static class XlsxFile
 {
@@ -38,12 +38,12 @@ internal static class XlsxFile
         string? Target(string typeEnd) =>
             relations.Find(r => r.Type.EndsWith(typeEnd, StringComparison.Ordinal)).Target is { Length: > 0 } target && package.Has(target) ? target : null;
 
-        (List<(string Name, string Id)> listed, bool from1904) = Listed(package, book);
+        (List<(string Name, string Id, bool Hidden)> listed, bool from1904) = Listed(package, book);
         XlsxStyles styles = XlsxStyles.Read(package, Target("/styles"), from1904);
         List<string> shared = XlsxStrings.Read(package, Target("/sharedStrings"));
         List<SheetData> sheets = [];
         int cells = 0;
-        foreach ((string name, string id) in listed)
+        foreach ((string name, string id, bool hidden) in listed)
         {
             XlsxPackage.Relation relation = relations.Find(r => r.Id == id);
             if (relation.Type is null)
@@ -53,17 +53,17 @@ internal static class XlsxFile
 
             if (relation.Type.EndsWith("/worksheet", StringComparison.Ordinal))
             {
-                List<IReadOnlyList<SheetCell>> rows = XlsxCells.Read(package, relation.Target, shared, styles, ref cells);
-                sheets.Add(new SheetData(shownName, name, DecimalSign.IsComma(rows), rows));
+                (List<IReadOnlyList<SheetCell>> rows, SheetLayout layout) = XlsxCells.Read(package, relation.Target, hidden, shared, styles, ref cells);
+                sheets.Add(new SheetData(shownName, name, DecimalSign.IsComma(rows), rows) { Layout = layout });
             }
         }
 
         return sheets;
     }
 
-    private static (List<(string Name, string Id)> Sheets, bool From1904) Listed(XlsxPackage package, string book)
+    private static (List<(string Name, string Id, bool Hidden)> Sheets, bool From1904) Listed(XlsxPackage package, string book)
     {
-        List<(string, string)> sheets = [];
+        List<(string, string, bool)> sheets = [];
         bool from1904 = false;
         using XmlReader x = package.Open(book);
         while (x.Read())
@@ -80,13 +80,14 @@ internal static class XlsxFile
             else if (x.LocalName == "sheet")
             {
                 string name = x.GetAttribute("name") ?? string.Empty;
+                bool hidden = x.GetAttribute("state") is "hidden" or "veryHidden";
                 string id = string.Empty;
                 while (x.MoveToNextAttribute())
                 {
                     id = x.LocalName == "id" && x.Prefix.Length > 0 ? x.Value : id;
                 }
 
-                sheets.Add((name, id));
+                sheets.Add((name, id, hidden));
             }
         }
 

@@ -6,10 +6,12 @@ namespace PartCheck.Sheets;
 /// <summary>The parts of an .xlsx package: relations between them, and each part as XML with its size limited and no document types.</summary>
 internal sealed class XlsxPackage : IDisposable
 {
-    private const long LargestPart = 512L << 20;
+    /// <summary>What all parts that are read may unpack to [bytes]: a bill of 100 000 lines needs a tenth of it.</summary>
+    private const long MostUnpacked = 256L << 20;
 
     private readonly ZipArchive zip;
     private readonly Dictionary<string, ZipArchiveEntry> parts = new(StringComparer.OrdinalIgnoreCase);
+    private long left = MostUnpacked;
 
     internal XlsxPackage(Stream stream)
     {
@@ -37,9 +39,9 @@ internal sealed class XlsxPackage : IDisposable
             throw new InvalidDataException($"it has no part {part}.");
         }
 
-        if (entry.Length > LargestPart)
+        if (entry.Length > left)
         {
-            throw new InvalidDataException($"its part {part} is larger than 512 MiB.");
+            throw new InvalidDataException($"its parts unpack to more than 256 MiB; part {part} is too large.");
         }
 
         XmlReaderSettings settings = new()
@@ -48,9 +50,10 @@ internal sealed class XlsxPackage : IDisposable
             XmlResolver = null,
             IgnoreComments = true,
             IgnoreProcessingInstructions = true,
-            MaxCharactersInDocument = LargestPart,
+            MaxCharactersInDocument = Math.Max(1, left),
             CloseInput = true,
         };
+        left -= entry.Length;
         return XmlReader.Create(entry.Open(), settings);
     }
 

@@ -24,7 +24,8 @@ internal static partial class XlsxStrings
         {
             if (x.NodeType == XmlNodeType.Element && x.LocalName == "si")
             {
-                string text = Item(x);
+                // Trimmed once: a text that a million cells share is held once.
+                string text = Item(x).Trim();
                 characters += text.Length;
                 if (characters > MostCharacters)
                 {

@@ -53,6 +53,7 @@ internal sealed class XlsxStyles
         }
 
         Dictionary<int, string> custom = [];
+        Dictionary<int, Shown> known = [];
         bool inCellFormats = false;
         using XmlReader x = package.Open(part);
         while (x.Read())
@@ -73,7 +74,12 @@ internal sealed class XlsxStyles
                         inCellFormats = !x.IsEmptyElement;
                         break;
                     case "xf" when inCellFormats:
-                        styles.formats.Add(Shown.Of(custom.GetValueOrDefault(id ?? 0) ?? BuiltIn.GetValueOrDefault(id ?? 0)));
+                        if (!known.TryGetValue(id ?? 0, out Shown shown))
+                        {
+                            shown = known[id ?? 0] = Shown.Of(custom.GetValueOrDefault(id ?? 0) ?? BuiltIn.GetValueOrDefault(id ?? 0));
+                        }
+
+                        styles.formats.Add(shown);
                         break;
                     default:
                         break;
@@ -99,7 +105,7 @@ internal sealed class XlsxStyles
 
         Shown shown = style is { } index && index < formats.Count ? formats[index] : default;
         string text = shown.Format is null ? General(stored, value) : Text(shown, value, stored);
-        return new SheetCell(row, column, text, shown.Date ? null : value, shown.Percent);
+        return new SheetCell(row, column, text, shown.Date ? null : value, shown.Percent) { Date = shown.Date };
     }
 
     private string Text(Shown shown, double value, string stored)

@@ -144,12 +144,12 @@ public static class FindingWorking
 
         if (rule.Ratio is { } ratio && finding.StressRatio is { } stress)
         {
-            chain.Hold(ratio, stress, 1e-3);
+            chain.Hold(ratio, stress, 2e-2);
         }
     }
 
-    /// <summary>Magnitudes of which a millionth is what the solve may leave: 1 nV of a node (more of a difference of two), 0.1 nA, 1 pW, 1 uK.</summary>
-    private static double Magnitude(Finding finding) => finding.Unit switch { "V" => finding.Rule == "vcb" ? 1 : 1e-3, "A" => 1e-4, "W" => 1e-6, _ => 1 };
+    /// <summary>Magnitudes of which a millionth is what the solve may leave: 10 nV between nodes, 0.1 nA, 0.1 nW, 1 uK.</summary>
+    private static double Magnitude(Finding finding) => finding.Unit switch { "V" => finding.Rule == "vcb" ? 1 : 1e-2, "A" => 1e-4, "W" => 1e-4, _ => 1 };
 
     private static void HoldTransistor(FigureChain chain, in TransistorPoint q, string n)
     {

@@ -26,14 +26,15 @@ internal static class HeatSymbols
         {
             TransistorPoint q = state.Transistors[leg.Index];
             PulsedHeat pulsed = model.PassHeat[leg.Class];
-            string peak = AddThermal(book, q, pulsed, model.Channel.Conditions, leg.N, leg.Who, warm, []);
+            string peak = AddThermal(book, q, pulsed, model.Channel.Conditions, leg.N, leg.Who, warm, Beside(book, basis, leg.Index, leg.N, leg.Who, legs));
             double rise = (pulsed.Effective ?? 0) * q.Power;
             if (rise > most)
             {
                 (most, hottest) = (rise, $"{peak} x P{leg.N}");
             }
 
-            if (warm && model.CouplingGiven && q.Part.Coupling is { } coupling)
+            bool beside = model.Package.WithControl(IndexOf(model, leg));
+            if (warm && model.CouplingGiven && !beside && q.Part.Coupling is { } coupling)
             {
                 book.Given("Kc" + leg.N, coupling.Value.KelvinsPerWatt, "K/W", $"heating of the control by {leg.Who}", coupling.Cell);
                 string share = pulsed.Share == 1 ? string.Empty : $" x {peak} / RthJA{leg.N}";
@@ -47,9 +48,50 @@ internal static class HeatSymbols
             heat.Add("Kshare x " + hottest);
         }
 
+        heat.AddRange(Beside(book, basis, state.Transistors.Count - 1, "0", model.Channel.Control.Reference, legs));
         AddThermal(
             book, state.Transistors[^1] with { RthJa = model.ControlRth ?? double.NaN }, model.ControlHeat, model.Channel.Conditions, "0",
             model.Channel.Control.Reference, warm, heat);
+    }
+
+    /// <summary>Terms by which the rest of its package and elements of other channels heat a transistor.</summary>
+    private static List<string> Beside(Derivation book, FindingBasis basis, int index, string n, string who, IReadOnlyList<LegView> legs)
+    {
+        SolvedState state = basis.State;
+        int device = index == state.Transistors.Count - 1 ? 0 : index + 1;
+        TransistorPoint q = state.Transistors[index];
+        List<string> terms = [];
+        if (state.Warmed.Count > device && state.Warmed[device] > 0)
+        {
+            book.Given("dTn" + n, state.Warmed[device], "K", $"what elements of other channels in the package of {who} add, at their highest dissipation", q.Part.RthJaBoth?.Cell, assumed: q.Part.RthJaBoth is null);
+            terms.Add("dTn" + n);
+        }
+
+        foreach (PackageCoupling pair in state.Package)
+        {
+            if (pair.Heated == device)
+            {
+                string by = pair.By == 0 ? "0" : legs.First(l => l.Index == pair.By - 1).N;
+                string symbol = $"Kp{n}by{by}";
+                book.Given(symbol, pair.Rth, "K/W", $"heating of {who} by the rest of its package: (n RthJA both - RthJA) / (n - 1)", q.Part.RthJaBoth?.Cell, assumed: q.Part.RthJaBoth is null);
+                terms.Add($"{symbol} x P{by}");
+            }
+        }
+
+        return terms;
+    }
+
+    private static int IndexOf(ChannelModel model, LegView leg)
+    {
+        for (int i = 0; i < model.Channel.Legs.Count; i++)
+        {
+            if (ReferenceEquals(model.Channel.Legs[i], model.Classes[leg.Class].First))
+            {
+                return i;
+            }
+        }
+
+        return 0;
     }
 
     /// <summary>Adds thermal resistance and junction temperature of a transistor.</summary>
@@ -90,7 +132,7 @@ internal static class HeatSymbols
             return peak;
         }
 
-        string formula = !warm ? "Ta" : string.Join(" + ", [$"Ta + {peak} x P{n}", .. more]);
+        string formula = string.Join(" + ", [warm ? $"Ta + {peak} x P{n}" : "Ta", .. more]);
         book.Step("Tj" + n, formula, "degC", $"junction temperature of {who}{(warm ? string.Empty : ", just switched on")}");
         return peak;
     }

@@ -20,7 +20,7 @@ public class RoomTests
         ["Rules"] = ["Quantities", "Bills", "Parts", "Channels", "OperatingPoints", "Derating"],
         ["Concessions"] = ["Quantities", "Sheets", "Bills", "Rules"],
         ["Workings"] = ["Quantities", "Devices", "Parts", "Channels", "OperatingPoints", "Derating", "Rules"],
-        ["Reports"] = ["Quantities", "Sheets", "Parts", "Channels", "OperatingPoints", "Rules", "Workings"],
+        ["Reports"] = ["Quantities", "Sheets", "Bills", "Parts", "Channels", "OperatingPoints", "Rules", "Workings"],
     };
 
     [Fact]

@@ -19,6 +19,13 @@ public class ReferenceListTests
     [InlineData("R1;R2 R3", "R1 R2 R3")]
     [InlineData("R1,", "R1")]
     [InlineData("LED1 DS2", "LED1 DS2")]
+    [InlineData("C  2,C  3,C1", "C2 C3 C1")]
+    [InlineData("C4/C5", "C4 C5")]
+    [InlineData("REF**", "REF**")]
+    [InlineData("MP?; G***", "MP? G***")]
+    [InlineData("R_SCL,R_SDA", "R_SCL R_SDA")]
+    [InlineData("C61,81", "C61 C81")]
+    [InlineData("R1-R4 R7-R9 ", "R1 R2 R3 R4 R7 R8 R9")]
     public void ReadsEveryUsualWayOfListing(string text, string references)
     {
         Assert.Null(ReferenceList.Read(text, out IReadOnlyList<string> found));
@@ -33,6 +40,21 @@ public class ReferenceListTests
     [InlineData("Q1.1-Q2.4", "keeps its letters")]
     public void RefusesWhatIsNoRange(string text, string reason) =>
         Assert.Contains(reason, ReferenceList.Read(text, out _), StringComparison.Ordinal);
+
+    [Fact]
+    public void ATextOfWordsIsOneName()
+    {
+        Assert.Null(ReferenceList.Read("R1, PIR module, cable 10 cm", out IReadOnlyList<string> found));
+        Assert.Equal(["R1", "PIR module", "cable 10 cm"], found);
+    }
+
+    [Fact]
+    public void ACellOfTooManyReferencesIsRefusedAndNotHeld()
+    {
+        string text = string.Join(' ', Enumerable.Range(1, 1000).Select(i => "R1-R9999"));
+        Assert.Equal("The cell names more than 10000 references.", ReferenceList.Read(text, out IReadOnlyList<string> found));
+        Assert.Equal(10_000, found.Count);
+    }
 
     [Fact]
     public void TheLongestRangeIsWrittenOut()

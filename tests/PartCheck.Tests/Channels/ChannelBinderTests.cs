@@ -64,6 +64,68 @@ public sealed class ChannelBinderTests
         Assert.Empty(board.Complaints);
     }
 
+    // The bill may list the package or its elements; the channel names elements.
+    [Theory]
+    [InlineData("Q1|TQ-2")]
+    [InlineData("Q1.1, Q1.2|TQ-2")]
+    public void ElementsOfOnePackageServeOnTheirOwn(string line)
+    {
+        Dual(line);
+        board.Row["Pass"] = "Q1.1";
+        board.Row["Control"] = "Q1.2";
+        Channel channel = Assert.Single(board.Bind());
+        Assert.Empty(channel.RoleFaults);
+        BoundChannel reading = Assert.Single(channel.Readings);
+        Assert.Equal(("Q1.1", "Q1.2"), (reading.Legs[0].Pass.Reference, reading.Control.Reference));
+        Assert.Same(reading.Legs[0].PassPart, reading.ControlPart);
+        Assert.Empty(reading.Neighbours);
+        Assert.DoesNotContain(channel.Assumed, a => a.What == "Element that no channel names");
+    }
+
+    [Theory]
+    [InlineData("Q1|TQ-2", "Q1", "Q1 (pass) is a package of 2 transistors: name the element, Q1.1 to Q1.2.")]
+    [InlineData("Q1.1, Q1.2|TQ-2", "Q1", "Q1 (pass) is a package of 2 transistors: name the element, Q1.1 to Q1.2.")]
+    [InlineData("Q1|TQ-2", "Q1.3", "Q1.3 (pass) names element 3, and TQ-2 has 2 in a package (Elements of the part table).")]
+    [InlineData("Q1|TQ-30", "Q1.1", "Q1.1 (pass) names element 1, and TQ-30 has 1 in a package (Elements of the part table).")]
+    public void WhatIsNoElementOfThePartIsAFault(string line, string pass, string text)
+    {
+        Dual(line);
+        board.Row["Pass"] = pass;
+        Channel channel = Assert.Single(board.Bind());
+        Assert.Equal(text, Assert.Single(channel.RoleFaults).Text);
+        Assert.Empty(channel.Readings);
+    }
+
+    [Fact]
+    public void ElementsInTwoChannelsAreNeighbours()
+    {
+        Dual("Q1|TQ-2");
+        board.Bill.Add("Q4, Q5|TQ-30");
+        board.Bill.Add("R4|RK-33");
+        board.Bill.Add("R5|RK-4K7");
+        board.Row["Pass"] = "Q1.1";
+        board.Further.Add([("Channel", "CH2"), ("Pass", "Q4"), ("Control", "Q1.2"), ("Sense", "R4"), ("Feed", "R5")]);
+        IReadOnlyList<Channel> channels = board.Bind();
+        Assert.All(channels, c => Assert.Empty(c.RoleFaults));
+        Assert.Equal(new ElementNeighbour("Q1.1", "Q1.2", "CH2"), Assert.Single(channels[0].Readings[0].Neighbours));
+        Assert.Equal(new ElementNeighbour("Q1.2", "Q1.1", "CH1"), Assert.Single(channels[1].Readings[0].Neighbours));
+    }
+
+    [Fact]
+    public void AnElementThatNoChannelNamesIsAssumedOff()
+    {
+        Dual("Q1|TQ-2");
+        board.Row["Pass"] = "Q1.2";
+        Assert.Contains(new Assumption("Element that no channel names", "Q1.1", "off"), Assert.Single(board.Bind()).Assumed);
+    }
+
+    private void Dual(string line)
+    {
+        board.Bill[1] = line;
+        board.Parts[0] += "|Elements";
+        board.Parts.Add("TQ-2|npn|Tarnwood|||2");
+    }
+
     [Fact]
     public void AnLedIsNoResistor()
     {

@@ -50,6 +50,31 @@ public sealed class PartTableReaderTests
     }
 
     [Theory]
+    [InlineData("500", "350", "200", "300", "2", null)]
+    [InlineData("500", "250", "200", "400", "2", null)]
+    [InlineData("500", "249", "200", "300", "2", "RthJA both lies between RthJA and RthJA over the number of elements")]
+    [InlineData("500", "501", "200", "300", "2", "RthJA both lies between RthJA and RthJA over the number of elements")]
+    [InlineData("500", "", "200", "199", "2", "Power both lies between Power")]
+    [InlineData("500", "", "200", "401", "2", "Power both lies between Power")]
+    [InlineData("500", "350", "200", "", "", "RthJA both is of a package of several transistors, and Elements says one.")]
+    [InlineData("500", "", "200", "300", "1", "Power both is of a package of several transistors, and Elements says one.")]
+    public void FiguresOfAPackageFitThoseOfItsElements(string one, string both, string power, string powerBoth, string elements, string? told)
+    {
+        IReadOnlyList<Part> parts = Read("Part number|Kind|RthJA|RthJA both|Power [mW]|Power both [mW]|Elements", $"X|npn|{one}|{both}|{power}|{powerBoth}|{elements}");
+        if (told is null)
+        {
+            Transistor part = Assert.IsType<Transistor>(Assert.Single(parts));
+            Assert.Equal(double.Parse(both, System.Globalization.CultureInfo.InvariantCulture), part.RthJaBoth!.Value.KelvinsPerWatt);
+            Assert.Equal(double.Parse(powerBoth, System.Globalization.CultureInfo.InvariantCulture) / 1000, part.PowerBoth!.Value.Watts, 9);
+        }
+        else
+        {
+            Assert.Empty(parts);
+            Assert.Contains(told, typed.Only(), StringComparison.Ordinal);
+        }
+    }
+
+    [Theory]
     [InlineData("IF", "30", "most likely in another unit")]
     [InlineData("IF slope", "0.6 mA/K", "A slope of the forward current needs IF beside it.")]
     [InlineData("Tj max", "20 degC", "F2")]

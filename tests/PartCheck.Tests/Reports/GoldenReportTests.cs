@@ -55,6 +55,8 @@ public class GoldenReportTests
             OddSense = Extreme.Max,
             OddAveraging = Extreme.Min,
             AssumedCoupling = 0.2,
+            AssumedPackageCoupling = 1,
+            NeighboursOn = true,
         };
         Finding hot = new()
         {

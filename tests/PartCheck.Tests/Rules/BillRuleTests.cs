@@ -10,7 +10,7 @@ namespace PartCheck.Tests.Rules;
 
 public class BillRuleTests : ExactRuleTests
 {
-    private static readonly PartTable Table = new([SampleChannel.Transistor(), SampleChannel.Resistor(33)]);
+    private static readonly PartTable Table = new([SampleChannel.Transistor(), SampleChannel.Transistor("TQ-2") with { Elements = 2 }, SampleChannel.Resistor(33)]);
 
     private static readonly BillLine Senses = new()
     {
@@ -52,10 +52,32 @@ public class BillRuleTests : ExactRuleTests
 
     // Two transistors in one package are one component to buy and place.
     [Theory]
-    [InlineData(1, Verdict.Conforms)]
-    [InlineData(2, Verdict.Nonconforming)]
-    public void ElementsOfOnePackageAreOneComponent(double quantity, Verdict verdict) => Assert.Equal(
-        verdict, Assert.Single(Judge(new BillLine { References = ["Q1.1", "Q1.2"], PartNumber = "TQ-31", Quantity = quantity, Cell = "bom.csv!A3" })).Verdict);
+    [InlineData("Q1.1 Q1.2", 1, Verdict.Conforms)]
+    [InlineData("Q1.1 Q1.2", 2, Verdict.Nonconforming)]
+    [InlineData("Q1", 1, Verdict.Conforms)]
+    [InlineData("Q1 Q5", 2, Verdict.Conforms)]
+    [InlineData("Q1", 2, Verdict.Nonconforming)]
+    public void ElementsOfOnePackageAreOneComponent(string references, double quantity, Verdict verdict) =>
+        Assert.Equal(verdict, Assert.Single(Judge(Dual(references) with { Quantity = quantity })).Verdict);
+
+    [Theory]
+    [InlineData("Q1.1 Q1.3", "Q1.3 names an element that the part does not have, the part table's Elements are 2.")]
+    [InlineData("Q1.1 Q1", "Q1 stands there as a whole and by elements.")]
+    public void ElementsThatThePartDoesNotHaveAreNonconforming(string references, string text) =>
+        Assert.Equal((Verdict.Nonconforming, text), Assert.Single(Judge(Dual(references)).Select(f => (f.Verdict, f.Text!))));
+
+    [Fact]
+    public void AnElementOfASingleTransistorIsNonconforming() => Assert.Equal(
+        "Q1.1 names an element that the part does not have, the part table's Elements are 1.", Assert.Single(Judge(Dual("Q1.1") with { PartNumber = "TQ-31" })).Text);
+
+    // A package is bought once: on two lines it would be bought twice.
+    [Fact]
+    public void ElementsOfOnePackageStandOnOneLine()
+    {
+        BillLine other = Dual("Q1.2") with { Cell = "bom.csv!A4" };
+        IReadOnlyList<Finding> findings = BillRule.Judge(new Bill("bom.csv", [Dual("Q1.1"), other]), Table, [Channel()]);
+        Assert.Equal(["Q1 stands on another line, too (bom.csv!A4).", "Q1 stands on another line, too (bom.csv!A3)."], findings.Select(f => f.Text));
+    }
 
     [Theory]
     [InlineData("SOT-23", Verdict.Conforms)]
@@ -63,7 +85,7 @@ public class BillRuleTests : ExactRuleTests
     [InlineData("SOT-23-5", Verdict.Nonconforming)]
     [InlineData("TO-92", Verdict.Nonconforming)]
     public void ThePackageAgreesWithThePartTable(string package, Verdict verdict) => Assert.Equal(
-        verdict, Assert.Single(Judge(new BillLine { References = ["Q1.1"], PartNumber = "TQ-31", Package = package, Cell = "bom.csv!A3" })).Verdict);
+        verdict, Assert.Single(Judge(new BillLine { References = ["Q1.1"], PartNumber = "TQ-2", Package = package, Cell = "bom.csv!A3" })).Verdict);
 
     [Theory]
     [InlineData(33.0, Verdict.Conforms)]
@@ -113,6 +135,8 @@ public class BillRuleTests : ExactRuleTests
         Finding finding = Assert.Single(BillRule.Judge(new Bill("bom.csv", []), Table, [Channel() with { RoleFaults = [fault] }]));
         Assert.Equal(("CH1", "R9", Verdict.Nonconforming, "channels.csv!M2"), (finding.Channel, finding.Reference, finding.Verdict, finding.Cell));
     }
+
+    private static BillLine Dual(string references) => new() { References = references.Split(' '), PartNumber = "TQ-2", Cell = "bom.csv!A3" };
 
     private static IReadOnlyList<Finding> Judge(BillLine line) => BillRule.Judge(new Bill("bom.csv", [line]), Table, [Channel()]);
 

@@ -189,6 +189,45 @@ public class PowerRuleTests : RuleTests<PowerRule>
         Assert.Equal(Verdict.NotVerified, Judge(part, 0.1, 25).Verdict);
     }
 
+    // One element 200 mW and 500 K/W, both 300 mW and 350 K/W, to 150 degC. At 25 degC 100 mW of 200 mW and 250 mW of 300 mW: the package.
+    // At 87.5 degC half of both ratings is left: 90 of 100 mW, 120 of 150 mW: the element. Without Power both the package has 200 mW.
+    [Theory]
+    [InlineData(0.1, 0.25, 25, 0.3, true, 0.833333)]
+    [InlineData(0.09, 0.12, 87.5, 0.3, false, 0.9)]
+    [InlineData(0.1, 0.25, 25, null, true, 1.25)]
+    [InlineData(0.1, 0, 25, 0.3, false, 0.5)]
+    public void AnElementIsHeldToItsOwnRatingAndThePackageToThatOfBoth(
+        double element, double package, double celsius, double? both, bool whole, double ratio)
+    {
+        Transistor part = SampleChannel.Transistor(rthJa: 500) with
+        {
+            Elements = 2,
+            Power = States.Cite(Power.FromWatts(0.2)),
+            PowerBoth = both is { } watts ? States.Cite(Power.FromWatts(watts)) : null,
+            RthJaBoth = States.Cite(ThermalResistance.FromKelvinsPerWatt(350)),
+        };
+        Stress stress = States.Judge(Rule, States.Of(States.Pass(part, power: element) with { PackagePower = package }, celsius: celsius));
+        Assert.Equal(ratio, stress.Ratio!.Value, 6);
+        Assert.Equal(whole, stress.Package);
+        Assert.Equal(whole ? package : element, stress.Actual, 9);
+    }
+
+    // (150 - 130)/350 = 57.1 mW for both, below the 60 mW that are left of 375 mW.
+    [Fact]
+    public void ThePackageIsHeldToItsThermalResistanceToo()
+    {
+        Transistor part = SampleChannel.Transistor(rthJa: 500) with
+        {
+            Elements = 2,
+            Power = States.Cite(Power.FromWatts(0.25)),
+            PowerBoth = States.Cite(Power.FromWatts(0.375)),
+            RthJaBoth = States.Cite(ThermalResistance.FromKelvinsPerWatt(350)),
+        };
+        Stress stress = States.Judge(Rule, States.Of(States.Pass(part, power: 0.02) with { PackagePower = 0.06 }, celsius: 130));
+        Assert.Equal(0.0571429, stress.Allowed, 6);
+        Assert.Equal(Verdict.Nonconforming, stress.Verdict);
+    }
+
     private static Stress Judge(Transistor part, double watts, double celsius) =>
         States.Judge(Rule, States.Of(States.Pass(part, power: watts), celsius: celsius));
 }

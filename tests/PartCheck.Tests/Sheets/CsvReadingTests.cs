@@ -51,20 +51,6 @@ public class CsvReadingTests : SheetsFixture
             Csv(bytes).Rows.SelectMany(row => row).Select(cell => cell.Text));
     }
 
-    // The same bytes may be several encodings: Cyrillic words, Japanese, an ohm sign of Mac-Roman (0xBD), UTF-8 and Latin-1 mixed.
-    [Theory]
-    [InlineData(new byte[] { 0x61, 0x2C, 0x62, 0x0A, 0xD0, 0xE5, 0xE7, 0x2C, 0x31 })]
-    [InlineData(new byte[] { 0x61, 0x2C, 0x62, 0x0A, 0x90, 0x94, 0x97, 0xCA, 0x2C, 0x31 })]
-    [InlineData(new byte[] { 0x61, 0x2C, 0x62, 0x0A, 0x31, 0x30, 0xBD, 0x2C, 0x31 })]
-    [InlineData(new byte[] { 0x61, 0x2C, 0x62, 0x0A, 0xC2, 0xB5, 0x46, 0x2C, 0xB5 })]
-    public void OtherwiseTheEncodingIsAskedFor(byte[] bytes)
-    {
-        Assert.Empty(Read(bytes));
-        Complaint complaint = Assert.Single(Complaints.Items);
-        Assert.Equal("Line 2 is not UTF-8, and which other encoding it is cannot be told: name it with --encoding.", complaint.Text);
-        Assert.True(complaint.Fatal);
-    }
-
     [Theory]
     [InlineData("windows-1251", new byte[] { 0xD0, 0xE5, 0xE7 }, "\u0420\u0435\u0437")]
     [InlineData("Shift-JIS", new byte[] { 0x90, 0x94, 0x97, 0xCA }, "\u6570\u91CF")]

@@ -68,9 +68,9 @@ internal sealed partial class PrintedWorking
         {
             double right = SideOf(text[7..], balance.Split(" = ")[1]);
 
-            // Six figures of what is subtracted: volts agree to 50 uV, currents to a thousandth, 2 nA and 5 ppm of each term.
+            // Six figures of what is subtracted: volts agree to 50 uV, currents to a thousandth, 20 nA and 5 ppm of each term.
             double terms = Amperes().Matches(text + leftText).Sum(m => Math.Abs(PrintedCalculator.Number(m.Value)));
-            double allowed = text.EndsWith('V') ? 50e-6 : (1e-3 * Math.Abs(left)) + (text.EndsWith('A') ? 2e-9 + (5e-6 * terms) : 0);
+            double allowed = text.EndsWith('V') ? 50e-6 : (1e-3 * Math.Abs(left)) + (text.EndsWith('A') ? 2e-8 + (5e-6 * terms) : 0);
             Assert.True(Math.Abs(left - right) <= allowed, $"{balance}: {left} and {right}");
             Balances++;
             return;

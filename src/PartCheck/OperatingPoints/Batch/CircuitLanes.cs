@@ -106,8 +106,14 @@ public sealed class CircuitLanes
     }
 
     /// <summary>Puts a circuit into a lane.</summary>
+    /// <exception cref="ArgumentException">Transistors share a package: lanes know no heat between them, the scalar solver does.</exception>
     public void Set(int lane, SinkCircuit circuit)
     {
+        if (circuit.Package.Count > 0)
+        {
+            throw new ArgumentException($"The circuit has {circuit.Package.Count} couplings inside packages; lanes take none.", nameof(circuit));
+        }
+
         Put(Source, lane, circuit.FeedVoltage);
         Put(Conductance, lane, 1 / circuit.FeedResistance);
         Put(BaseConductanceField, lane, circuit.BaseConductance);
