@@ -141,7 +141,14 @@ internal static partial class PrintedCalculator
             "degC" or "K" or "K/W" => value,
             var unit => value * unit[0] switch
             {
-                'p' => 1e-12, 'n' => 1e-9, 'u' => 1e-6, 'm' => 1e-3, 'k' => 1e3, 'M' => 1e6, 'G' => 1e9, _ => 1,
+                'p' => 1e-12,
+                'n' => 1e-9,
+                'u' => 1e-6,
+                'm' => 1e-3,
+                'k' => 1e3,
+                'M' => 1e6,
+                'G' => 1e9,
+                _ => 1,
             },
         };
     }

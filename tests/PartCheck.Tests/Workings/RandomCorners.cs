@@ -176,9 +176,19 @@ internal sealed class RandomCorners
                 "INVENTED",
                 new BipolarParameters
                 {
-                    Is = Between(5e-15, 5e-14), Bf = Between(100, 300), Vaf = Between(30, 120), Ikf = Between(0.02, 0.3), Ise = 1e-15, Ne = 1.6, Br = 4,
-                    Nf = Between(0.99, 1.03), Rb = random.Next(2) == 0 ? 0 : Between(5, 200), Re = random.Next(2) == 0 ? 0 : Between(0.05, 1),
-                    Rc = Between(0, 2), Var = random.Next(2) == 0 ? double.PositiveInfinity : Between(10, 40), Nkf = random.Next(2) == 0 ? 0.5 : 0.6,
+                    Is = Between(5e-15, 5e-14),
+                    Bf = Between(100, 300),
+                    Vaf = Between(30, 120),
+                    Ikf = Between(0.02, 0.3),
+                    Ise = 1e-15,
+                    Ne = 1.6,
+                    Br = 4,
+                    Nf = Between(0.99, 1.03),
+                    Rb = random.Next(2) == 0 ? 0 : Between(5, 200),
+                    Re = random.Next(2) == 0 ? 0 : Between(0.05, 1),
+                    Rc = Between(0, 2),
+                    Var = random.Next(2) == 0 ? double.PositiveInfinity : Between(10, 40),
+                    Nkf = random.Next(2) == 0 ? 0.5 : 0.6,
                 },
                 [], [])),
         };
