@@ -14,6 +14,9 @@ internal static class CircuitSymbols
     /// <summary>Share of the nominal current below which the load's logarithm says nothing.</summary>
     private const double LeastLoad = 1e-3;
 
+    /// <summary>Share of the currents through its resistors below which an emitter current is no longer worked out from them.</summary>
+    private const double LeastShare = 0.01;
+
     /// <summary>Adds the symbols.</summary>
     public static void Add(Derivation book, FindingBasis basis, IReadOnlyList<LegView> legs)
     {
@@ -74,7 +77,17 @@ internal static class CircuitSymbols
             book.Solved("Ix" + n, spread, "A", $"current from the emitter of {who} to the control's base");
         }
 
-        book.Step("IE" + n, through, "A", "emitter current of " + who);
+        // Where the currents through its resistors cancel, their printed figures no longer hold the difference.
+        double emitter = q.Ic + q.Ib;
+        if (sensed && Math.Abs(emitter) < LeastShare * (Math.Abs(q.SenseVoltage / q.SenseResistance) + Math.Abs(spread)))
+        {
+            book.Solved("IE" + n, emitter, "A", $"emitter current of {who}, the small difference of the currents through its resistors");
+        }
+        else
+        {
+            book.Step("IE" + n, through, "A", "emitter current of " + who);
+        }
+
         if (state.State == ChannelState.On && q is { Ic: > 0, Ib: > 0 })
         {
             book.Solved("hFE" + n, q.Ic / q.Ib, string.Empty, $"gain of {who} in this corner ({GainEnd(leg.Odd ? state.Corner.OddPass.Hfe : state.Corner.Pass.Hfe)}), at its current, VCE and temperature", q.Part.Hfe?.Cell ?? q.Part.Card?.Cell)
