@@ -88,7 +88,7 @@ public static partial class CheckRun
         }
 
         private static bool Serves(ChannelRow row, IReadOnlyList<string> references) =>
-            RoleNames.Columns.Any(c => row.Placed(c.Role).Any(r => references.Contains(r, StringComparer.OrdinalIgnoreCase)));
+            ElementReference.WithPackages(RoleNames.Columns.SelectMany(c => row.Placed(c.Role))).Overlaps(references);
 
         /// <summary>True where no reference of a channel is fitted: the channel is not there.</summary>
         private static bool LeftOut(ChannelRow row, Bill bill)

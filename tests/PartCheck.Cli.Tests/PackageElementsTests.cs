@@ -90,6 +90,60 @@ public class PackageElementsTests
         Assert.Contains(symbol, run.Output, StringComparison.Ordinal);
     }
 
+    // The bill has Q1 as a whole, the channels its elements: the same component.
+    [Theory]
+    [InlineData("Q1=TQ-3", 0, "Yes: with TQ-3 for TQ-2 (Q1), CH1, CH2 conform")]
+    [InlineData("TQ-2=TQ-3", 0, "Yes: with TQ-3 for TQ-2 (Q1), TQ-3 for TQ-2 (Q3.1, Q3.2), CH1, CH2 conform")]
+    [InlineData("Q1.1=TQ-3", 64, "\"Q1.1\" is one element of Q1: a package is replaced as a whole.")]
+    public async Task APackageThatTheBillNamesAsAWholeIsReplaced(string with, int code, string text)
+    {
+        using BoardFolder board = WithAnother(vceo: "45");
+        Run run = await board.Check("--with", with);
+        Assert.True(run.Code == code, run.Output + run.Error);
+        Assert.Contains(text, run.Flat + run.Error, StringComparison.Ordinal);
+    }
+
+    // 12.6 V against 0.8 x 12 V = 9.6 V. Accepted for the part of the bill, so not for the one in its place.
+    [Fact]
+    public async Task AConcessionDoesNotCoverAPackageInTheOnesPlace()
+    {
+        using BoardFolder board = WithAnother(vceo: "12");
+        board.Write("concessions.csv", "Rule,Reference,Part number,Board,Reason,Accepted by,Date,Expires\nvce,\"Q1.1, Q1.2\",,,tried,A. Body,2026-01-01,2026-12-31\n");
+        Run run = await board.Check("--with", "Q1=TQ-3", "--date", "2026-06-01");
+        Assert.Equal(1, run.Code);
+        Assert.Contains("vce Q1.1 TQ-3: 12.6 V of 9.6 V, ratio 1.31", run.Flat, StringComparison.Ordinal);
+        Assert.Contains("accepted for the part of the bill, not for the one in its place: not applied.", run.Flat, StringComparison.Ordinal);
+    }
+
+    // What contradicts itself in the line of a package counts where only its elements serve.
+    [Fact]
+    public async Task ADoubtfulLineOfAPackageIsAComplaint()
+    {
+        using BoardFolder board = Board("Q1.1", "Q1.2");
+        board.Write("bom.csv", File.ReadAllText(board.At("bom.csv")).Replace("Package\n", "Package,Notes\n", StringComparison.Ordinal)
+            .Replace("Q1,TQ-2,1,SOT-363\n", "Q1,TQ-2,1,SOT-363,perhaps DNP for now\n", StringComparison.Ordinal));
+        Run run = await board.Check();
+        Assert.True(run.Code == 65, run.Output);
+        Assert.Contains("bill Q1 TQ-2: missing a bill line without complaints", run.Flat, StringComparison.Ordinal);
+    }
+
+    [Fact]
+    public async Task AMistypedPackageIsSuggested()
+    {
+        using BoardFolder board = Board("Q1.1", "Q1.2");
+        board.Write("bom.csv", File.ReadAllText(board.At("bom.csv")).Replace("Q1,TQ-2,", "Q1,TQ-2X,", StringComparison.Ordinal));
+        Assert.Contains("Q1: The part table has no row TQ-2X; is TQ-2 meant?", (await board.Check()).Flat, StringComparison.Ordinal);
+    }
+
+    private static BoardFolder WithAnother(string vceo)
+    {
+        BoardFolder board = Board("Q1.1", "Q1.2", "350,350");
+        string parts = File.ReadAllText(board.At("parts.csv"));
+        string dual = parts.Split('\n').Single(l => l.StartsWith("TQ-2,", StringComparison.Ordinal));
+        board.Write("parts.csv", parts + dual.Replace("TQ-2,", "TQ-3,", StringComparison.Ordinal).Replace("SOT-363,45,", $"SOT-363,{vceo},", StringComparison.Ordinal) + "\n");
+        return board;
+    }
+
     private static BoardFolder Board(string one, string other, string both = "350,250", string elements = "2", string feed = "R4")
     {
         string[] parts = BoardFolder.Parts.ReplaceLineEndings("\n").Split('\n');

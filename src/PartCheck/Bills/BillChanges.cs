@@ -44,6 +44,12 @@ public static class BillChanges
             }
         }
 
+        // The bill has the package, the name one of its elements.
+        if (byNumber.Count == 0 && byReference.Count == 0 && ElementReference.PackageOf(name) is var whole && whole != name && References(bill, [whole]).Count > 0)
+        {
+            return $"\"{name}\" is one element of {whole}: a package is replaced as a whole.";
+        }
+
         found = byNumber.Count > 0 ? byNumber : byReference;
         if (found.Count == 0)
         {

@@ -10,6 +10,13 @@ public static class ElementReference
         return ElementOf(reference) is null ? reference : reference[..reference.LastIndexOf('.')];
     }
 
+    /// <summary>References with the packages of which they are elements, however the bill writes them; letter case is ignored.</summary>
+    public static HashSet<string> WithPackages(IEnumerable<string> references)
+    {
+        ArgumentNullException.ThrowIfNull(references);
+        return new HashSet<string>(references.SelectMany(r => (string[])[r, PackageOf(r)]), StringComparer.OrdinalIgnoreCase);
+    }
+
     /// <summary>The element's number, from 1; null where the reference names no element.</summary>
     public static int? ElementOf(string reference)
     {

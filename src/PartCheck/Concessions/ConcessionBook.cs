@@ -1,4 +1,5 @@
 using System.Globalization;
+using PartCheck.Bills;
 using PartCheck.Rules;
 
 namespace PartCheck.Concessions;
@@ -100,8 +101,11 @@ public sealed class ConcessionBook
     }
 
     private bool OfOtherParts(Finding finding) =>
-        finding.Reference is { } reference ? changed.Contains(reference)
-        : finding.References is { } all ? all.Any(changed.Contains)
+        finding.Reference is { } reference ? IsChanged(reference)
+        : finding.References is { } all ? all.Any(IsChanged)
         : finding.Channel is { } channel ? changedChannels.Contains(channel)
         : finding.Channels?.Any(changedChannels.Contains) == true;
+
+    /// <summary>A package is replaced as a whole, whether the bill names it or its elements.</summary>
+    private bool IsChanged(string reference) => changed.Contains(reference) || changed.Contains(ElementReference.PackageOf(reference));
 }
