@@ -108,7 +108,7 @@ public static partial class CheckRun
         CheckReport check = Run(request, cancel);
         BoardReport board = check.Boards[0];
         fault = null;
-        IReadOnlyList<Finding> findings = board.Channels.Count == 0 ? [] : selection.Of(board, out fault);
+        IReadOnlyList<Finding> findings = board.Channels.Count + board.ChannelsNotFitted.Count == 0 ? [] : selection.Of(board, out fault);
         return new WorkingReport(check, selection.Name(board) ?? string.Empty, [.. findings.Select(FindingWorking.Of)])
         {
             EveryCheck = selection.Rule is not null || selection.Reference is not null,
@@ -226,8 +226,7 @@ public static partial class CheckRun
         /// <summary>What is doubtful in a line that serves a channel is a complaint; a quantity is the rule <c>bill</c>'s own matter.</summary>
         private Bill WithDoubts(Bill bill, IReadOnlyList<ChannelRow> rows)
         {
-            HashSet<string> serving = new(
-                rows.SelectMany(row => RoleNames.Columns.SelectMany(c => row.Of(c.Role))), StringComparer.OrdinalIgnoreCase);
+            HashSet<string> serving = ElementReference.WithPackages(rows.SelectMany(row => RoleNames.Columns.SelectMany(c => row.Placed(c.Role))));
             List<BillLine> lines = [];
             foreach (BillLine line in bill.Lines)
             {
@@ -454,7 +453,7 @@ public static partial class CheckRun
         /// <summary>A part number that the table does not have is looked for by its near misses: suggested, never taken.</summary>
         private static IEnumerable<Advice> MistypedAdvice(Bill bill, PartTable parts, IReadOnlyList<Channel> channels)
         {
-            HashSet<string> serving = new(channels.SelectMany(c => c.References), StringComparer.OrdinalIgnoreCase);
+            HashSet<string> serving = ElementReference.WithPackages(channels.SelectMany(c => c.References));
             foreach (BillLine line in bill.Lines.Where(l => l.PartNumber is { } number && parts.Find(number).Count == 0 && l.References.Any(serving.Contains)))
             {
                 if (NearMisses.Of(line.PartNumber!, parts.Parts.Select(p => p.PartNumber)) is { Count: > 0 } near)
@@ -471,6 +470,16 @@ public static partial class CheckRun
             if (floating.Count > 0)
             {
                 yield return new Advice(null, null, $"{string.Join(", ", floating)}: no pull-down; while the pin floats at reset nothing holds the channel off.");
+            }
+
+            foreach (BoundChannel channel in channels.Where(c => c.Readings.Count > 0).Select(c => c.Readings[0]))
+            {
+                int load = channel.Conditions.Leds * channel.Conditions.Strings;
+                if (channel.Leds.Count > 0 && channel.Leds.Count < load)
+                {
+                    yield return new Advice(
+                        channel.Name, null, string.Create(CultureInfo.InvariantCulture, $"LED names {channel.Leds.Count} of the load's {load} LEDs; the others are not judged."));
+                }
             }
 
             IEnumerable<Part> used = channels.SelectMany(c => c.Readings).SelectMany(r => r.Legs

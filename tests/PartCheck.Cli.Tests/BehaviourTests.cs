@@ -129,6 +129,21 @@ public class BehaviourTests
         Assert.Contains("RK-33: 33.5 ohm is neither an E24 nor an E96 value.", run.Flat, StringComparison.Ordinal);
     }
 
+    // Three LEDs in series of which two are named: the third is judged by nobody, and that is said.
+    [Theory]
+    [InlineData("\"D1,D2\"", true)]
+    [InlineData("\"D1,D2,D3\"", false)]
+    public async Task LedsThatNobodyNamesAreTold(string leds, bool told)
+    {
+        string[] channels = BoardFolder.Channels.ReplaceLineEndings("\n").Split('\n');
+        using BoardFolder board = new(
+            bill: BoardFolder.Bill + "\nD1-D3,LW-3,3,,,\n", channels: $"{channels[0]},LED\n{channels[1]},{leds}\n",
+            parts: BoardFolder.Parts + "\nLW-3,led" + new string(',', 22) + "\n");
+        Run run = await board.Check();
+        Assert.True(run.Code == 2, run.Output);
+        Assert.Equal(told, run.Flat.Contains("CH1: LED names 2 of the load's 3 LEDs; the others are not judged.", StringComparison.Ordinal));
+    }
+
     private static async Task<JsonElement[]> Findings(BoardFolder board, string rule)
     {
         Run run = await board.Check("--format", "json");

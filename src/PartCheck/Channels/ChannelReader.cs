@@ -171,6 +171,13 @@ public static class ChannelReader
             row.Complain("LED", "as many LEDs in each string", string.Create(CultureInfo.InvariantCulture, $"{named} LEDs do not make {strings} equal strings."));
         }
 
+        if (leds > 0 && named > leds * strings)
+        {
+            row.Complain(
+                "LED", "the references of the load's LEDs",
+                string.Create(CultureInfo.InvariantCulture, $"LED names {named} LEDs, and LEDs times Strings is {leds * strings}."));
+        }
+
         if (leds is null && row.Text("LEDs") is null or "-" && named > 0)
         {
             leds = Math.Ceiling(named / strings);

@@ -65,6 +65,17 @@ public sealed class ChannelReaderTests
         Assert.Contains("5 LEDs do not make 2 equal strings.", board.Only(), StringComparison.Ordinal);
     }
 
+    // Three in series, two strings: six at most.
+    [Fact]
+    public void MoreLedsThanTheLoadHasAreTold()
+    {
+        board.Row["LEDs"] = "3";
+        board.Row["LED"] = "D1-D8";
+        board.Row["Strings"] = "2";
+        Assert.Empty(Assert.Single(board.Bind()).Readings);
+        Assert.Contains("LED names 8 LEDs, and LEDs times Strings is 6.", board.Only(), StringComparison.Ordinal);
+    }
+
     [Fact]
     public void APullDownWithoutItsPlaceSitsAtTheBaseAssumed()
     {
