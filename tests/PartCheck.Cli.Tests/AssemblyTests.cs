@@ -62,6 +62,31 @@ public class AssemblyTests
         Assert.Contains("no column such as \"Populated LIGHT\" names one.", (await plain.Check("--assembly", "LIGHT")).Error, StringComparison.Ordinal);
     }
 
+    [Theory]
+    [InlineData("LITE", "ch2", "CH2 is not fitted in assembly LITE: there is nothing to derive.")]
+    [InlineData("BARE", "CH1", "CH1 is not fitted in assembly BARE: there is nothing to derive.")]
+    [InlineData("BARE", "CH9", "there is no channel \"CH9\"; the channels are CH1, CH2.")]
+    public async Task AChannelThatIsNotFittedHasNoWorking(string assembly, string channel, string text)
+    {
+        using BoardFolder board = new(bill: Bill, channels: Channels);
+        Run run = await Run.Of("working", board.Folder, channel, "--assembly", assembly);
+        Assert.True(run.Code == 64, run.Output + run.Error);
+        Assert.Empty(run.Output);
+        Assert.Contains(text, run.Error, StringComparison.Ordinal);
+    }
+
+    // CH1 lacks one part and is not solved: no figure of the board is known, and none is 0.
+    [Fact]
+    public async Task ABoardOfWhichNothingIsSolvedShowsNoFigures()
+    {
+        using BoardFolder board = new(bill: BoardFolder.Bill.Replace("R1,", "R9,", StringComparison.Ordinal));
+        Run run = await board.Check();
+        Assert.Equal(1, run.Code);
+        Assert.Contains("Board: no channel was solved, so neither current nor heat is known.", run.Flat, StringComparison.Ordinal);
+        Assert.DoesNotContain("hottest", run.Flat, StringComparison.Ordinal);
+        Assert.DoesNotContain("the closest to their limits", run.Flat, StringComparison.Ordinal);
+    }
+
     [Fact]
     public async Task AChangeIsAskedOfAnAssemblyToo()
     {

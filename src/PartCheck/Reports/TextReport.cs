@@ -210,6 +210,12 @@ public static class TextReport
 
     private static void Totals(StringBuilder text, BoardTotals totals)
     {
+        if (totals.Hottest.Count == 0)
+        {
+            Columns80.Wrap(text, string.Empty, "Board: no channel was solved, so neither current nor heat is known.", 2);
+            return;
+        }
+
         string without = totals.Without.Count == 0 ? string.Empty : $" (without {string.Join(", ", totals.Without)})";
         Columns80.Wrap(
             text, string.Empty,
@@ -234,8 +240,9 @@ public static class TextReport
     {
         List<Finding> conforming = [.. board.Findings.Where(f => f.Verdict == Verdict.Conforms)];
         text.Append(CultureInfo.InvariantCulture, $"Conforming findings: {conforming.Count}");
-        text.Append(conforming.Count > 0 ? "; the closest to their limits:\n" : ".\n");
-        foreach (IReadOnlyList<Finding> group in FindingText.Grouped(conforming.Where(f => FindingOrder.Ratio(f) is not null)).Take(Closest))
+        List<Finding> measured = [.. conforming.Where(f => FindingOrder.Ratio(f) is not null)];
+        text.Append(measured.Count > 0 ? "; the closest to their limits:\n" : ".\n");
+        foreach (IReadOnlyList<Finding> group in FindingText.Grouped(measured).Take(Closest))
         {
             Finding f = group[0];
             Columns80.Wrap(text, "  ", Head(group) + ": " + FindingText.Numbers(f), 4);

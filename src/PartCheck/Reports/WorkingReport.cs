@@ -42,7 +42,9 @@ public sealed record WorkingSelection(string Channel, string? Rule, string? Refe
         fault = null;
         if (Name(board) is not { } channel)
         {
-            fault = $"there is no channel \"{Channel}\"; the channels are {string.Join(", ", board.Channels.Select(c => c.Channel))}.";
+            fault = board.ChannelsNotFitted.FirstOrDefault(c => Same(c, Channel)) is { } absent
+                ? $"{absent} is not fitted in assembly {board.Assembly}: there is nothing to derive."
+                : $"there is no channel \"{Channel}\"; the channels are {string.Join(", ", board.Channels.Select(c => c.Channel).Concat(board.ChannelsNotFitted))}.";
             return [];
         }
 
