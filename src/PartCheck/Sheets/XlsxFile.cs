@@ -43,6 +43,7 @@ internal static class XlsxFile
         List<string> shared = XlsxStrings.Read(package, Target("/sharedStrings"));
         List<SheetData> sheets = [];
         int cells = 0;
+        long characters = 0;
         foreach ((string name, string id, bool hidden) in listed)
         {
             XlsxPackage.Relation relation = relations.Find(r => r.Id == id);
@@ -53,7 +54,7 @@ internal static class XlsxFile
 
             if (relation.Type.EndsWith("/worksheet", StringComparison.Ordinal))
             {
-                (List<IReadOnlyList<SheetCell>> rows, SheetLayout layout) = XlsxCells.Read(package, relation.Target, hidden, shared, styles, ref cells);
+                (List<IReadOnlyList<SheetCell>> rows, SheetLayout layout) = XlsxCells.Read(package, relation.Target, hidden, shared, styles, ref cells, ref characters);
                 sheets.Add(new SheetData(shownName, name, DecimalSign.IsComma(rows), rows) { Layout = layout });
             }
         }
