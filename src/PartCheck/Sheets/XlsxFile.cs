@@ -9,6 +9,8 @@ namespace PartCheck.Sheets;
 /// </remarks>
 internal static class XlsxFile
 {
+    private const int MostSheets = 1000;
+
     /// <summary>Every worksheet in order, empty ones too; an empty list with a fatal complaint where the workbook cannot be read.</summary>
     internal static IReadOnlyList<SheetData> Read(Stream stream, string shownName, ComplaintList complaints)
     {
@@ -89,6 +91,10 @@ internal static class XlsxFile
                 }
 
                 sheets.Add((name, id, hidden));
+                if (sheets.Count > MostSheets)
+                {
+                    throw new InvalidDataException("it has more than 1000 sheets.");
+                }
             }
         }
 

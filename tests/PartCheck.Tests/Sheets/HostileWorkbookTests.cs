@@ -121,6 +121,18 @@ public class HostileWorkbookTests : SheetsFixture
         Assert.Equal("The workbook is damaged: it has a tag or a text of more than one million characters.", Refusal(path));
     }
 
+    [Fact]
+    public void OneSheetListedOverAThousandTimesIsRefused()
+    {
+        string path = HandMadeWorkbook.Write(At("sheets.xlsx"), HandMadeWorkbook.Texts("a"), spoil: parts =>
+        {
+            string book = parts["xl/workbook.xml"];
+            string sheet = book[book.IndexOf("<sheet ", StringComparison.Ordinal)..book.IndexOf("</sheets>", StringComparison.Ordinal)];
+            parts["xl/workbook.xml"] = book.Replace(sheet, string.Concat(Enumerable.Repeat(sheet, 1001)), StringComparison.Ordinal);
+        });
+        Assert.Equal("The workbook is damaged: it has more than 1000 sheets.", Refusal(path));
+    }
+
     // 20 000 cells of 7 000 characters are 140 million: the file is small, what has to be read is not.
     [Fact]
     public void OneLongTextInManyCellsCountsInEachOfThem()
