@@ -34,6 +34,33 @@ public class BillCommandTests
         Assert.All(run.Output.Split('\n'), line => Assert.True(line.Length <= 80, line));
     }
 
+    // M7 is a diode's type, though RKM code would read it as 700 kohm; 4040 is a counter.
+    [Fact]
+    public async Task OtherPartsHaveNoResistanceAndALineWithoutReferenceSaysSo()
+    {
+        using BoardFolder board = new();
+        string many = string.Join(' ', Enumerable.Range(1, 40).Select(i => $"R{2 * i}"));
+        board.Write("bill.csv", $"Ref;Qty;Value\nD1;1;M7\nIC1;1;4040\n,,,;3;1k\n{many};40;1k\n");
+        Run run = await Run.Of("bill", board.At("bill.csv"));
+        Assert.Contains("D1; 1 pcs; no part number; \"M7\"\n", run.Output, StringComparison.Ordinal);
+        Assert.Contains("IC1; 1 pcs; no part number; \"4040\"\n", run.Output, StringComparison.Ordinal);
+        Assert.Contains("no reference; 3 pcs;", run.Output, StringComparison.Ordinal);
+        Assert.Contains("R28 R30 R32 ...; 40 pcs;", run.Flat, StringComparison.Ordinal);
+        Run json = await Run.Of("bill", board.At("bill.csv"), "--format", "json");
+        using JsonDocument read = JsonDocument.Parse(json.Output);
+        Assert.Equal(JsonValueKind.Null, read.RootElement.GetProperty("lines")[0].GetProperty("resistance").ValueKind);
+    }
+
+    // A text in a far column of every row is left out row by row: 500 are shown, JSON has them all.
+    [Fact]
+    public async Task MoreThanFiveHundredRowsLeftOutAreCounted()
+    {
+        using BoardFolder board = new();
+        board.Write("bill.csv", "Ref,Qty,Value\nR1,1,1k\n" + string.Concat(Enumerable.Range(0, 600).Select(i => $"\n,,,x{i}\n")));
+        Run run = await Run.Of("bill", board.At("bill.csv"));
+        Assert.Contains("    ... and 100 more; --format json lists them all\n", run.Output, StringComparison.Ordinal);
+    }
+
     [Fact]
     public async Task ComplaintsEndWith65AndTheRestIsShown()
     {

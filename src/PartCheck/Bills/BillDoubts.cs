@@ -69,7 +69,7 @@ internal static partial class BillDoubts
 
     private static void Contradictions(BillLine line, string value, bool decimalComma, Action<string, string, string> doubt)
     {
-        if (line.Resistance is { } resistance && ResistanceText.SaysOhms(value))
+        if (line.ToldResistance is { } resistance && ResistanceText.SaysOhms(value))
         {
             string shown = EngineeringNotation.Format(resistance.Ohms, "ohm");
             if (line.Description is { } description && ResistanceText.OfDescription(description, decimalComma) is { } told

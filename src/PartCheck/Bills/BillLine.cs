@@ -21,6 +21,9 @@ public sealed record BillLine
     /// <summary>The value as a resistance, where it reads as one.</summary>
     public Resistance? Resistance { get; init; }
 
+    /// <summary>The resistance to tell a person of: null where every reference has the letters of another part.</summary>
+    public Resistance? ToldResistance => References.Count > 0 && References.All(ReferenceShape.IsOfAnotherPart) ? null : Resistance;
+
     /// <summary>Package name.</summary>
     public string? Package { get; init; }
 

@@ -57,8 +57,12 @@ public static partial class ReferenceList
                 return $"The range \"{item}\" runs from {stem} to {other}: a range keeps its letters.";
             }
 
-            long from = long.Parse(range.Groups["a"].Value, CultureInfo.InvariantCulture);
-            long to = long.Parse(range.Groups["b"].Value, CultureInfo.InvariantCulture);
+            if (!long.TryParse(range.Groups["a"].Value, NumberStyles.None, CultureInfo.InvariantCulture, out long from)
+                || !long.TryParse(range.Groups["b"].Value, NumberStyles.None, CultureInfo.InvariantCulture, out long to))
+            {
+                return $"The range \"{item}\" has a number that cannot be read.";
+            }
+
             if (to < from)
             {
                 return $"The range \"{item}\" runs backwards.";
@@ -116,7 +120,7 @@ public static partial class ReferenceList
     [GeneratedRegex(@"\s*-\s*")]
     private static partial Regex BlanksAroundDash();
 
-    [GeneratedRegex(@"^(?<p>[A-Za-z_]+(?:\d+\.)?)(?<a>\d{1,9})-(?<q>[A-Za-z_]*(?:\d+\.)?)(?<b>\d{1,9})$")]
+    [GeneratedRegex(@"^(?<p>[A-Za-z_]+(?:\d+\.)?)(?<a>\d+)-(?<q>[A-Za-z_]*(?:\d+\.)?)(?<b>\d+)$")]
     private static partial Regex Range();
 
     [GeneratedRegex("^[A-Za-z_]+")]

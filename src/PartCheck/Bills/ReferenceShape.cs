@@ -24,6 +24,15 @@ internal static partial class ReferenceShape
     internal static bool AreValues(IReadOnlyList<string> texts) =>
         texts.Count(t => Value().IsMatch(t)) >= Some * texts.Count && texts.Count(t => Reference().IsMatch(t)) < Most * texts.Count;
 
+    /// <summary>
+    /// True where a reference has the letters of another part than a resistor, so that a number beside it is no resistance: D1 with
+    /// <c>M7</c>, IC1 with <c>4040</c>. The letters are common practice, no source.
+    /// </summary>
+    internal static bool IsOfAnotherPart(string reference) => OtherPart().IsMatch(reference);
+
+    [GeneratedRegex(@"^(?:C|D|F|FB|IC|J|K|L|LED|P|Q|S|SW|T|TP|U|X|Y|Z)[0-9]", RegexOptions.CultureInvariant | RegexOptions.IgnoreCase)]
+    private static partial Regex OtherPart();
+
     [GeneratedRegex(@"^[A-Za-z]{1,4}_?[0-9]{1,4}(?:[\s,;/.\u2013-].*)?$", RegexOptions.CultureInvariant | RegexOptions.Singleline)]
     private static partial Regex Reference();
 

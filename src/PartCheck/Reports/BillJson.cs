@@ -64,7 +64,7 @@ public static class BillJson
         json.Text("partNumber", line.PartNumber);
         json.Text("manufacturer", line.Manufacturer);
         json.Text("value", line.Value);
-        json.Real("resistance", line.Resistance?.Ohms);
+        json.Real("resistance", line.ToldResistance?.Ohms);
         json.Text("package", line.Package);
         json.WriteBoolean("fitted", line.Fitted);
         json.Texts("alternates", line.Alternates);

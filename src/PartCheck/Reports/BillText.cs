@@ -14,6 +14,7 @@ public static class BillText
     private const int ReferencesShown = 60;
     private const int TextShown = 40;
     private const int LinesShown = 5000;
+    private const int SkippedShown = 500;
 
     /// <summary>Writes what was read.</summary>
     public static string Write(BillReading reading)
@@ -79,10 +80,15 @@ public static class BillText
         if (table.Skipped.Count > 0)
         {
             text.Append("  Left out\n");
-            foreach (SkippedRows skipped in table.Skipped)
+            foreach (SkippedRows skipped in table.Skipped.Take(SkippedShown))
             {
                 string rows = skipped.Row == skipped.LastRow ? $"row {Whole(skipped.Row)}" : $"rows {Whole(skipped.Row)} to {Whole(skipped.LastRow)}";
                 Columns80.Wrap(text, "    ", $"{rows}: {skipped.Why}, \"{Cut(skipped.Text, TextShown)}\"", 6);
+            }
+
+            if (table.Skipped.Count > SkippedShown)
+            {
+                text.Append(CultureInfo.InvariantCulture, $"    ... and {table.Skipped.Count - SkippedShown} more; --format json lists them all\n");
             }
         }
 
@@ -91,7 +97,7 @@ public static class BillText
 
     private static void Line(StringBuilder text, BillLine line)
     {
-        List<string> said = [Cut(Ranges(line.References), ReferencesShown) + ";"];
+        List<string> said = [line.References.Count == 0 ? "no reference;" : CutList(Ranges(line.References)) + ";"];
         said.Add(line.Quantity is { } quantity ? $"{quantity.ToString(CultureInfo.InvariantCulture)} pcs;" : $"{Whole(ReferenceList.Components(line.References))} counted;");
         said.Add(line.PartNumber is { } number ? Cut(number, TextShown) + ";" : "no part number;");
         if (line.Value is { } value && value != line.PartNumber)
@@ -99,7 +105,7 @@ public static class BillText
             said.Add($"\"{Cut(value, TextShown)}\"");
         }
 
-        if (line.Resistance is { } resistance)
+        if (line.ToldResistance is { } resistance)
         {
             said.Add("= " + EngineeringNotation.Format(resistance.Ohms, "ohm").Replace(' ', Columns80.Glue));
         }
@@ -144,6 +150,10 @@ public static class BillText
             && int.TryParse(next.AsSpan(letters.Length), NumberStyles.None, CultureInfo.InvariantCulture, out int b)
             && b == a + 1;
     }
+
+    /// <summary>A list of references cut between two of them.</summary>
+    private static string CutList(string list) =>
+        list.Length > ReferencesShown && list.LastIndexOf(' ', ReferencesShown) is > 0 and int blank ? list[..blank] + " ..." : Cut(list, ReferencesShown);
 
     private static string Cut(string text, int most)
     {

@@ -13,6 +13,7 @@ public static class TemplateWorkbook
     private const string Folder = "partdata/template/";
     private const int RowsWithLists = 500;
     private const int LeastWidth = 9;
+    private const int MostWidth = 40;
     private const int MostColumnsOfAPage = 15;
 
     private static readonly DateTime Made = new(2000, 1, 1, 0, 0, 0, DateTimeKind.Utc);
@@ -58,6 +59,8 @@ public static class TemplateWorkbook
 
                 IXLCell cell = sheet.Cell(r + 2, c + 1);
                 cell.Style.Alignment.Horizontal = XLAlignmentHorizontalValues.Left;
+                cell.Style.Alignment.Vertical = XLAlignmentVerticalValues.Top;
+                cell.Style.Alignment.WrapText = value.Length > MostWidth;
                 if (column.Unit.Length > 0 && double.TryParse(value, NumberStyles.Float, CultureInfo.InvariantCulture, out double number))
                 {
                     cell.SetValue(number);
@@ -68,7 +71,7 @@ public static class TemplateWorkbook
                     cell.SetValue(value);
                 }
 
-                width = Math.Max(width, Math.Min(value.Length, 40));
+                width = Math.Max(width, Math.Min(value.Length, MostWidth));
             }
 
             sheet.Column(c + 1).Width = Math.Max(LeastWidth, width + 2);
@@ -85,8 +88,10 @@ public static class TemplateWorkbook
         // A wide sheet is printed over several pages, each with the name of the row.
         sheet.SheetView.Freeze(1, 1);
         sheet.PageSetup.PageOrientation = XLPageOrientation.Landscape;
-        sheet.PageSetup.SetRowsToRepeatAtTop(1, 1);
-        sheet.PageSetup.SetColumnsToRepeatAtLeft(1, 1);
+        sheet.PageSetup.PaperSize = XLPaperSize.A4Paper;
+
+        // The name by which a workbook keeps its print titles. PageSetup writes it without dollar signs, which programs do not follow.
+        sheet.NamedRanges.Add("_xlnm.Print_Titles", $"{sheet.Name}!$A:$A,{sheet.Name}!$1:$1");
         if (columns.Count <= MostColumnsOfAPage)
         {
             sheet.PageSetup.FitToPages(1, 0);

@@ -13,6 +13,9 @@ internal sealed partial class XlsxCells
     private const int MostCells = 2_000_000;
     private const int MostRanges = 100_000;
 
+    /// <summary>Characters of all cells of a workbook, a shared text counted in every cell: 2 million cells of 64.</summary>
+    private const long MostCharacters = 128L << 20;
+
     private readonly List<string> shared;
     private readonly XlsxStyles styles;
     private readonly List<SheetCell> found = [];
@@ -20,6 +23,7 @@ internal sealed partial class XlsxCells
     private readonly List<(int First, int Last)> hiddenColumns = [];
     private readonly List<MergedRange> merged = [];
     private bool inOrder = true;
+    private long characters;
 
     private XlsxCells(List<string> shared, XlsxStyles styles) => (this.shared, this.styles) = (shared, styles);
 
@@ -30,12 +34,14 @@ internal sealed partial class XlsxCells
     /// <param name="shared">The shared strings.</param>
     /// <param name="styles">The styles.</param>
     /// <param name="cells">Cells of the workbook read so far.</param>
+    /// <param name="characters">Characters of those cells.</param>
     internal static (List<IReadOnlyList<SheetCell>> Rows, SheetLayout Layout) Read(
-        XlsxPackage package, string part, bool hidden, List<string> shared, XlsxStyles styles, ref int cells)
+        XlsxPackage package, string part, bool hidden, List<string> shared, XlsxStyles styles, ref int cells, ref long characters)
     {
-        XlsxCells sheet = new(shared, styles);
+        XlsxCells sheet = new(shared, styles) { characters = characters };
         using XmlReader x = package.Open(part);
         sheet.Read(x, ref cells);
+        characters = sheet.characters;
         List<IReadOnlyList<SheetCell>> rows = sheet.ByRow();
         sheet.hiddenRows.IntersectWith(rows.Select(row => row[0].Row));
         return (rows, SheetLayout.Of(hidden, sheet.hiddenRows, sheet.hiddenColumns, sheet.merged));
@@ -94,6 +100,12 @@ internal sealed partial class XlsxCells
 
     private void Add(SheetCell cell)
     {
+        characters += cell.Text.Length;
+        if (characters > MostCharacters)
+        {
+            throw new InvalidDataException("its cells hold more than 128 million characters.");
+        }
+
         inOrder = inOrder && (found.Count == 0 || (found[^1].Row, found[^1].Column).CompareTo((cell.Row, cell.Column)) < 0);
         found.Add(cell);
     }
@@ -170,7 +182,7 @@ internal sealed partial class XlsxCells
         {
             if (x.NodeType is XmlNodeType.Text or XmlNodeType.CDATA or XmlNodeType.Whitespace or XmlNodeType.SignificantWhitespace)
             {
-                text.Append(x.Value);
+                XlsxStrings.Append(text, x);
             }
         }
 

@@ -9,6 +9,8 @@ namespace PartCheck.Sheets;
 /// </remarks>
 internal static class XlsxFile
 {
+    private const int MostSheets = 1000;
+
     /// <summary>Every worksheet in order, empty ones too; an empty list with a fatal complaint where the workbook cannot be read.</summary>
     internal static IReadOnlyList<SheetData> Read(Stream stream, string shownName, ComplaintList complaints)
     {
@@ -43,6 +45,7 @@ internal static class XlsxFile
         List<string> shared = XlsxStrings.Read(package, Target("/sharedStrings"));
         List<SheetData> sheets = [];
         int cells = 0;
+        long characters = 0;
         foreach ((string name, string id, bool hidden) in listed)
         {
             XlsxPackage.Relation relation = relations.Find(r => r.Id == id);
@@ -53,7 +56,7 @@ internal static class XlsxFile
 
             if (relation.Type.EndsWith("/worksheet", StringComparison.Ordinal))
             {
-                (List<IReadOnlyList<SheetCell>> rows, SheetLayout layout) = XlsxCells.Read(package, relation.Target, hidden, shared, styles, ref cells);
+                (List<IReadOnlyList<SheetCell>> rows, SheetLayout layout) = XlsxCells.Read(package, relation.Target, hidden, shared, styles, ref cells, ref characters);
                 sheets.Add(new SheetData(shownName, name, DecimalSign.IsComma(rows), rows) { Layout = layout });
             }
         }
@@ -88,6 +91,10 @@ internal static class XlsxFile
                 }
 
                 sheets.Add((name, id, hidden));
+                if (sheets.Count > MostSheets)
+                {
+                    throw new InvalidDataException("it has more than 1000 sheets.");
+                }
             }
         }
 

@@ -54,7 +54,7 @@ internal sealed class XlsxPackage : IDisposable
             CloseInput = true,
         };
         left -= entry.Length;
-        return XmlReader.Create(entry.Open(), settings);
+        return XmlReader.Create(new MarkupLimit(entry.Open()), settings);
     }
 
     /// <summary>The relations of a part (of the package itself: an empty name); none where it has none.</summary>

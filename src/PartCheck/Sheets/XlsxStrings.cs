@@ -1,3 +1,4 @@
+using System.Buffers;
 using System.Globalization;
 using System.Text;
 using System.Text.RegularExpressions;
@@ -9,6 +10,9 @@ namespace PartCheck.Sheets;
 internal static partial class XlsxStrings
 {
     private const long MostCharacters = 256L << 20;
+
+    /// <summary>Longest text that is read at all; a cell takes 32 767 characters.</summary>
+    private const int LongestText = 1 << 20;
 
     internal static List<string> Read(XlsxPackage package, string? part)
     {
@@ -70,7 +74,7 @@ internal static partial class XlsxStrings
                 case XmlNodeType.Text or XmlNodeType.CDATA or XmlNodeType.Whitespace or XmlNodeType.SignificantWhitespace:
                     if (inText && phonetic == 0)
                     {
-                        text.Append(x.Value);
+                        Append(text, x);
                     }
 
                     break;
@@ -80,6 +84,28 @@ internal static partial class XlsxStrings
         }
 
         return Unescaped(text.ToString());
+    }
+
+    /// <summary>Appends the text at which the reader stands, piece by piece: a giant one is never held whole.</summary>
+    /// <exception cref="InvalidDataException">The text is longer than one million characters.</exception>
+    internal static void Append(StringBuilder text, XmlReader x)
+    {
+        char[] piece = ArrayPool<char>.Shared.Rent(4096);
+        try
+        {
+            for (int count = x.ReadValueChunk(piece, 0, piece.Length); count > 0; count = x.ReadValueChunk(piece, 0, piece.Length))
+            {
+                text.Append(piece, 0, count);
+                if (text.Length > LongestText)
+                {
+                    throw new InvalidDataException("it has a tag or a text of more than one million characters.");
+                }
+            }
+        }
+        finally
+        {
+            ArrayPool<char>.Shared.Return(piece);
+        }
     }
 
     /// <summary>Undoes <c>_x000D_</c> escapes (ECMA-376 part 1, 22.9.2.19).</summary>

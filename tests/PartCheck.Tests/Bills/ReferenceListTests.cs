@@ -37,6 +37,9 @@ public class ReferenceListTests
     [InlineData("R1-C4", "keeps its letters")]
     [InlineData("R1-R20000", "longer than 10000")]
     [InlineData("R1-R10001", "longer than 10000")]
+    [InlineData("R1-R2000000000", "longer than 10000")]
+    [InlineData("R1-R99999999999999999999", "cannot be read")]
+    [InlineData("R\u0661-R\u0663", "cannot be read")]
     [InlineData("Q1.1-Q2.4", "keeps its letters")]
     public void RefusesWhatIsNoRange(string text, string reason) =>
         Assert.Contains(reason, ReferenceList.Read(text, out _), StringComparison.Ordinal);

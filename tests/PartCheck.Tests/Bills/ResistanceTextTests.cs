@@ -102,6 +102,21 @@ public sealed class ResistanceTextTests
         Assert.Equal(agrees ? 0 : 1, line.Doubts.Count);
     }
 
+    // A ferrite bead: 0.3 ohm of copper, and 600 ohm at 100 MHz in its part number.
+    [Fact]
+    public void ABeadsResistanceIsNotHeldToItsPartNumber() =>
+        Assert.Empty(Read("References|Value|MPN", "FB1|300m\u03A9|ZB0805E601R-10").Doubts);
+
+    // A diode, a counter and a capacitor in microfarad: none is a resistance; W1 may be a resistor, R1 is one.
+    [Theory]
+    [InlineData("D1", "M7", null)]
+    [InlineData("IC1", "4040", null)]
+    [InlineData("C1, C2", ".1", null)]
+    [InlineData("W1", "4k7", 4700.0)]
+    [InlineData("R1, Q1", "4k7", 4700.0)]
+    public void ANumberBesideAnotherPartIsNotToldAsAResistance(string references, string value, double? ohms) =>
+        Assert.Equal(ohms, Read("References|Value", $"{references}|{value}").ToldResistance?.Ohms);
+
     [Fact]
     public void AValueAndADescriptionThatDisagreeAreTold()
     {

@@ -1,3 +1,4 @@
+using System.IO.Compression;
 using ClosedXML.Excel;
 using PartCheck.Bills;
 using PartCheck.Channels;
@@ -62,6 +63,26 @@ public class TemplateTests
         int at = sheet.Row(1).CellsUsed().Single(c => c.GetString() == column).Address.ColumnNumber;
         IXLDataValidation list = sheet.DataValidations.Single(v => v.Ranges.Any(r => r.Contains(sheet.Cell(2, at).AsRange())));
         Assert.Equal($"\"{choices}\"", list.Value);
+    }
+
+    // ECMA-376 part 1, 18.2.5: print titles are a defined name; as LibreOffice 7.4 and spreadsheets write it, with dollar signs.
+    [Theory]
+    [MemberData(nameof(Sheets))]
+    public void EveryPrintedPageHasTheHeaderAndTheNamesOfItsRows(string name)
+    {
+        using ZipArchive zip = new(new MemoryStream(TemplateWorkbook.Write()));
+        using StreamReader text = new(zip.GetEntry("xl/workbook.xml")!.Open());
+        Assert.Contains($">{name}!$A:$A,{name}!$1:$1</", text.ReadToEnd(), StringComparison.Ordinal);
+    }
+
+    [Fact]
+    public void ATextLongerThanItsColumnIsWrapped()
+    {
+        using XLWorkbook book = Template();
+        IXLWorksheet sheet = book.Worksheet("Parts");
+        IXLCell points = sheet.CellsUsed(c => c.GetString().StartsWith("10uA:60..320", StringComparison.Ordinal)).Single();
+        Assert.True(points.GetString().Length > points.WorksheetColumn().Width);
+        Assert.True(points.Style.Alignment.WrapText);
     }
 
     private static XLWorkbook Template() => new(new MemoryStream(TemplateWorkbook.Write()));

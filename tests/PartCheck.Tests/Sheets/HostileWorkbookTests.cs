@@ -52,6 +52,7 @@ public class HostileWorkbookTests : SheetsFixture
                 part.Write("<x>"u8);
                 byte[] blanks = new byte[1 << 20];
                 Array.Fill(blanks, (byte)' ');
+                "<y/>"u8.CopyTo(blanks);
                 for (int i = 0; i < 100; i++)
                 {
                     part.Write(blanks);
@@ -104,6 +105,41 @@ public class HostileWorkbookTests : SheetsFixture
         Complaint complaint = Assert.Single(Complaints.Items);
         Assert.Equal("The cell holds more than 32 767 characters, more than a spreadsheet takes.", complaint.Text);
         Assert.True(complaint.Found!.Length < 100);
+    }
+
+    // A million is far over the 32 767 of a cell; each would be held whole by an XML reader, some in two copies.
+    [Theory]
+    [InlineData("<row><c t=\"inlineStr\"><is><t>", "x", "</t></is></c></row>")]
+    [InlineData("<row><c t=\"inlineStr\"><is><t><![CDATA[", "<", "]]></t></is></c></row>")]
+    [InlineData("<row><c t=\"inlineStr\"><is>", "<t>xx</t>", "</is></c></row>")]
+    [InlineData("<row><c t=\"str\"><v><![CDATA[", "<", "]]></v></c></row>")]
+    [InlineData("<row a=\"", "x", "\"/>")]
+    [InlineData("<", "x", "/>")]
+    public void ATextOrTagOfMoreThanAMillionCharactersIsRefused(string before, string piece, string after)
+    {
+        string path = HandMadeWorkbook.Write(At("long.xlsx"), before + string.Concat(Enumerable.Repeat(piece, 1_100_000)) + after);
+        Assert.Equal("The workbook is damaged: it has a tag or a text of more than one million characters.", Refusal(path));
+    }
+
+    [Fact]
+    public void OneSheetListedOverAThousandTimesIsRefused()
+    {
+        string path = HandMadeWorkbook.Write(At("sheets.xlsx"), HandMadeWorkbook.Texts("a"), spoil: parts =>
+        {
+            string book = parts["xl/workbook.xml"];
+            string sheet = book[book.IndexOf("<sheet ", StringComparison.Ordinal)..book.IndexOf("</sheets>", StringComparison.Ordinal)];
+            parts["xl/workbook.xml"] = book.Replace(sheet, string.Concat(Enumerable.Repeat(sheet, 1001)), StringComparison.Ordinal);
+        });
+        Assert.Equal("The workbook is damaged: it has more than 1000 sheets.", Refusal(path));
+    }
+
+    // 20 000 cells of 7 000 characters are 140 million: the file is small, what has to be read is not.
+    [Fact]
+    public void OneLongTextInManyCellsCountsInEachOfThem()
+    {
+        string cells = string.Concat(Enumerable.Repeat("<row><c t=\"s\"><v>0</v></c></row>", 20_000));
+        string path = HandMadeWorkbook.Write(At("shared.xlsx"), cells, strings: $"<si><t>{new string('x', 7_000)}</t></si>");
+        Assert.Equal("The workbook is damaged: its cells hold more than 128 million characters.", Refusal(path));
     }
 
     // 32 767 characters are what a spreadsheet's cell takes; that many are read.
