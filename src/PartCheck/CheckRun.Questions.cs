@@ -4,6 +4,7 @@ using PartCheck.Concessions;
 using PartCheck.Derating;
 using PartCheck.Parts;
 using PartCheck.Reports;
+using PartCheck.Rules;
 using PartCheck.Sheets;
 
 namespace PartCheck;
@@ -34,7 +35,7 @@ public static partial class CheckRun
             complaints = new ComplaintList();
             BoardReport before = Judged(bill, rows, parts, pins, derating, [], cancel);
             complaints = asked;
-            BoardReport after = Judged(BillChanges.Apply(bill, changes), rows, parts, pins, derating, changes, cancel);
+            BoardReport after = Judged(BillChanges.Apply(bill, changes), rows, parts, pins, derating, changes, cancel, before.Findings);
             double? Ohms(string? part) => part is not null && parts.Find(part) is [ResistorPart resistor, ..] ? resistor.Resistance.Value.Ohms : null;
             return after with
             {
@@ -99,10 +100,13 @@ public static partial class CheckRun
         }
 
         /// <summary>The board's concessions; those without a part number do not hold for parts put in another's place.</summary>
-        private ConcessionBook BookOf(IReadOnlyList<ChannelRow> rows, IReadOnlyList<LineChange> changes) => new(
+        private ConcessionBook BookOf(IReadOnlyList<ChannelRow> rows, IReadOnlyList<LineChange> changes, IReadOnlyList<Finding>? before) => new(
             ConcessionBook.Of(concessions ?? [], Names()), request.Date ?? default,
             changes.SelectMany(c => c.References).ToHashSet(StringComparer.OrdinalIgnoreCase),
-            rows.Where(r => changes.Any(c => Serves(r, c.References))).Select(r => r.Name).ToHashSet(StringComparer.Ordinal));
+            rows.Where(r => changes.Any(c => Serves(r, c.References))).Select(r => r.Name).ToHashSet(StringComparer.Ordinal))
+        {
+            Before = before,
+        };
 
         private IEnumerable<Advice> ConcessionAdvice(ConcessionBook book)
         {

@@ -199,13 +199,13 @@ public static partial class CheckRun
 
         private BoardReport Judged(
             Bill bill, IReadOnlyList<ChannelRow> rows, PartTable parts, IReadOnlyList<LogicPin> pins, DeratingTable derating,
-            IReadOnlyList<LineChange> changes, CancellationToken cancel)
+            IReadOnlyList<LineChange> changes, CancellationToken cancel, IReadOnlyList<Finding>? before = null)
         {
             IReadOnlyList<Channel> channels = ChannelBinder.Bind(rows, bill, parts, pins, complaints);
             IReadOnlyList<Finding> billFindings = BillRule.Judge(bill, parts, channels);
             IReadOnlyList<JudgedChannel> judged = JudgeChannels(channels, derating, cancel);
             IReadOnlyList<Finding> pinFindings = JudgePins(judged, derating);
-            ConcessionBook book = BookOf(rows, changes);
+            ConcessionBook book = BookOf(rows, changes, before);
             BoardReport report = Report(
                 derating, judged, [.. billFindings.Select(book.Apply)], [.. pinFindings.Select(book.Apply)], book.Apply, [.. advice, .. MistypedAdvice(bill, parts, channels), .. CircuitAdvice(channels), .. FaultAdvice(judged, cancel)]);
             return report with

@@ -8,7 +8,7 @@ namespace PartCheck.Concessions;
 /// The concessions of one board on one day. A nonconforming finding that one in force concerns becomes a concession; nothing else
 /// does, least of all what is not verified. Every reading of the bill is covered by itself, so that a concession for one alternate
 /// hides nothing of another. A concession that names no part number was accepted for the parts of the bill: it does not cover what
-/// other parts, asked for in their place, do.
+/// other parts, asked for in their place, do; and no concession covers what such parts make worse elsewhere.
 /// </summary>
 public sealed class ConcessionBook
 {
@@ -18,6 +18,7 @@ public sealed class ConcessionBook
     private readonly IReadOnlySet<string> changedChannels;
     private readonly HashSet<Concession> applied = new(ReferenceEqualityComparer.Instance);
     private readonly HashSet<Concession> refused = new(ReferenceEqualityComparer.Instance);
+    private readonly HashSet<Concession> outgrown = new(ReferenceEqualityComparer.Instance);
     private readonly Dictionary<Concession, Verdict> met = new(ReferenceEqualityComparer.Instance);
 
     /// <summary>Makes the book.</summary>
@@ -34,6 +35,9 @@ public sealed class ConcessionBook
         this.changed = changed;
         this.changedChannels = changedChannels;
     }
+
+    /// <summary>Findings of the board as the bill stands, where other parts are asked for; null: none are.</summary>
+    public IReadOnlyList<Finding>? Before { get; init; }
 
     /// <summary>Concessions that hold for a board.</summary>
     /// <param name="concessions">Concessions of any board.</param>
@@ -61,9 +65,15 @@ public sealed class ConcessionBook
                 continue;
             }
 
-            if (concession.PartNumber is null && OfOtherParts(finding))
+            if (concession.PartNumber is null && OfOtherParts(finding, byChannel: true))
             {
                 refused.Add(concession);
+                continue;
+            }
+
+            if (!OfOtherParts(finding, byChannel: false) && IsWorse(finding))
+            {
+                outgrown.Add(concession);
                 continue;
             }
 
@@ -95,14 +105,34 @@ public sealed class ConcessionBook
             return "accepted for the part of the bill, not for the one in its place: not applied.";
         }
 
+        if (outgrown.Contains(concession))
+        {
+            return "accepted for the board as its bill stands; with the change it is worse: not applied.";
+        }
+
         return met.TryGetValue(concession, out Verdict verdict)
             ? verdict == Verdict.NotVerified ? "what it concerns is not verified, which a concession never covers." : "not needed, what it concerns conforms."
             : "concerns no finding of this board.";
     }
 
-    private bool OfOtherParts(Finding finding) =>
+    /// <summary>True where the finding was no concession before the change, or its ratio has grown by it.</summary>
+    private bool IsWorse(Finding finding)
+    {
+        if (Before is null)
+        {
+            return false;
+        }
+
+        Finding? before = Before.FirstOrDefault(b =>
+            b.Verdict == Verdict.Concession && b.Rule == finding.Rule && b.Channel == finding.Channel && b.Reference == finding.Reference && b.Pin == finding.Pin
+            && (b.References ?? []).SequenceEqual(finding.References ?? []));
+        return before is null || (before.StressRatio is { } was && !(finding.StressRatio <= was * (1 + 1e-9)));
+    }
+
+    private bool OfOtherParts(Finding finding, bool byChannel) =>
         finding.Reference is { } reference ? IsChanged(reference)
         : finding.References is { } all ? all.Any(IsChanged)
+        : !byChannel ? false
         : finding.Channel is { } channel ? changedChannels.Contains(channel)
         : finding.Channels?.Any(changedChannels.Contains) == true;
 

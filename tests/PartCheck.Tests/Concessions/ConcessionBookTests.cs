@@ -65,6 +65,25 @@ public class ConcessionBookTests
         Assert.True((Hot with { Rule = "pin-current", Reference = "LAMP_A", References = ["LAMP_A"] }).Concerns(pin));
     }
 
+    // Another part elsewhere in the channel must not lean on what was accepted for the bill as it stands.
+    [Theory]
+    [InlineData(1.2, Verdict.Concession, 1.2, true)]
+    [InlineData(1.2, Verdict.Concession, 1.19, true)]
+    [InlineData(1.2, Verdict.Concession, 1.82, false)]
+    [InlineData(0.92, Verdict.Conforms, 1.36, false)]
+    [InlineData(1.2, Verdict.Concession, null, false)]
+    public void WithOtherPartsItCoversNoMoreThanItDid(double was, Verdict before, double? now, bool covered)
+    {
+        ConcessionBook book = new([Hot], new DateOnly(2026, 3, 1), new HashSet<string> { "R1" }, new HashSet<string> { "CH1" })
+        {
+            Before = [Power with { StressRatio = was, Verdict = before }],
+        };
+        Assert.Equal(covered ? Verdict.Concession : Verdict.Nonconforming, book.Apply(Power with { StressRatio = now }).Verdict);
+        Assert.Equal(
+            covered ? [] : ["Concession for power Q1 (c.csv!A2): accepted for the board as its bill stands; with the change it is worse: not applied."],
+            book.Remarks);
+    }
+
     [Theory]
     [InlineData(Verdict.NotVerified, "what it concerns is not verified, which a concession never covers.")]
     [InlineData(Verdict.Conforms, "not needed, what it concerns conforms.")]
