@@ -319,10 +319,10 @@ public static partial class CheckRun
 
             foreach (IGrouping<TransistorVariants, JudgedChannel> fault in judged.Where(j => j.CardFault is not null).GroupBy(j => j.CardFault!))
             {
-                string[] cite = fault.Key.Part.Card!.Cell.Split('!');
-                complaints.Add(new Complaint(
-                    cite[0], cite.Length > 2 ? cite[1] : null, null, "Model", cite[^1], fault.Key.Part.Card.Value.Name, "this part's own card",
-                    $"The model card of {fault.Key.Part.PartNumber} is another part's, or wrong: {fault.Key.CardFault}.")
+                Transistor part = fault.Key.Part;
+                complaints.Add(Complaint.At(
+                    part.Card!.Cell, "Model", part.Card.Value.Name, "this part's own card",
+                    $"The model card of {part.PartNumber} is another part's, or wrong: {fault.Key.CardFault}.") with
                 { Channel = fault.First().Channel.Name });
                 foreach (JudgedChannel channel in fault)
                 {
@@ -368,7 +368,7 @@ public static partial class CheckRun
         /// <summary>A reading's judgement with its test limits; what another bill of this run has in common with this one is judged once.</summary>
         private ReadingJudgement Measured(JudgedChannel channel, ChannelModel model, double others, CancellationToken cancel)
         {
-            string key = string.Create(CultureInfo.InvariantCulture, $"{others:R} {Identity(model.Channel)} {channel.Channel.Name}");
+            string key = string.Create(CultureInfo.InvariantCulture, $"{others:R} {Identity(model)} {channel.Channel.Name}");
             if (!judgements.TryGetValue(key, out ReadingJudgement? made))
             {
                 made = Judgement(channel, model, others, cancel) with
@@ -381,8 +381,8 @@ public static partial class CheckRun
             return made;
         }
 
-        /// <summary>The lines and part rows of a reading as one text.</summary>
-        private string Identity(BoundChannel channel)
+        /// <summary>The lines and part rows of a reading, and what other channels warm its packages with, as one text.</summary>
+        private string Identity(ChannelModel model)
         {
             int Of(object thing)
             {
@@ -390,9 +390,9 @@ public static partial class CheckRun
                 return identities[thing];
             }
 
-            return string.Join(',', channel.Legs.SelectMany(l => new[] { l.Pass, l.Sense, l.Averaging })
-                .Append(channel.Control).Append(channel.Feed).Append(channel.PullDown).Concat(channel.Leds)
-                .Select(p => p is null ? "-" : string.Create(CultureInfo.InvariantCulture, $"{Of(p.Line)}:{Of(p.Part)}")));
+            IEnumerable<string> parts = model.Channel.Placements.Select(p => string.Create(CultureInfo.InvariantCulture, $"{p.Role}{p.Leg}:{Of(p.Line)}:{Of(p.Part)}"));
+            IEnumerable<string> warmth = Enumerable.Range(0, model.Channel.Legs.Count + 1).Select(d => model.Package.NeighbourPower(d).ToString("R", CultureInfo.InvariantCulture));
+            return string.Join(',', parts.Concat(warmth));
         }
 
         private ReadingJudgement Judgement(JudgedChannel channel, ChannelModel model, double others, CancellationToken cancel) =>
@@ -410,10 +410,9 @@ public static partial class CheckRun
                 return table;
             }
 
-            string[] cite = channel.Cell.Split('!');
-            complaints.Add(new Complaint(
-                cite[0], cite.Length > 2 ? cite[1] : null, null, "Derating", cite[^1], name, "one of " + string.Join(", ", DeratingLibrary.Names.Concat(ownDerating.Select(t => t.Name))),
-                $"Channel {channel.Name} names the derating table \"{name}\", which there is not.")
+            complaints.Add(Complaint.At(
+                channel.Cell, "Derating", name, "one of " + string.Join(", ", DeratingLibrary.Names.Concat(ownDerating.Select(t => t.Name))),
+                $"Channel {channel.Name} names the derating table \"{name}\", which there is not.") with
             { Channel = channel.Name });
             return new DeratingTable(name, null, []) { Unknown = true };
         }
@@ -482,9 +481,8 @@ public static partial class CheckRun
                 }
             }
 
-            IEnumerable<Part> used = channels.SelectMany(c => c.Readings).SelectMany(r => r.Legs
-                .SelectMany(l => new[] { l.Pass, l.Sense, l.Averaging }).Append(r.Control).Append(r.Feed).Append(r.PullDown).Concat(r.Leds))
-                .OfType<Placement>().Select(p => p.Part).Distinct().OrderBy(p => p.PartNumber, StringComparer.Ordinal);
+            IEnumerable<Part> used = channels.SelectMany(c => c.Readings).SelectMany(r => r.Placements).Select(p => p.Part).Distinct()
+                .OrderBy(p => p.PartNumber, StringComparer.Ordinal);
             foreach (Part part in used)
             {
                 if (part.Lifecycle is { } lifecycle && !lifecycle.Equals("active", StringComparison.OrdinalIgnoreCase))

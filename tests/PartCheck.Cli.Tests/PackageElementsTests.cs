@@ -127,6 +127,24 @@ public class PackageElementsTests
         Assert.Contains("bill Q1 TQ-2: missing a bill line without complaints", run.Flat, StringComparison.Ordinal);
     }
 
+    // CH1 keeps its parts, and its neighbour Q1.2 takes more from another sense resistor in CH2: what --with says is what the changed bill says.
+    [Fact]
+    public async Task WithAnotherPartInOneChannelItsNeighbourInTheOtherIsJudgedAnew()
+    {
+        using BoardFolder board = Board("Q1.1", "Q1.2");
+        string parts = File.ReadAllText(board.At("parts.csv"));
+        string sense = parts.Split('\n').Single(l => l.StartsWith("RK-33,", StringComparison.Ordinal));
+        board.Write("parts.csv", parts + sense.Replace("RK-33,", "RK-27,", StringComparison.Ordinal).Replace(",33,1%", ",27,1%", StringComparison.Ordinal) + "\n");
+        string bill = File.ReadAllText(board.At("bom.csv")).Replace("\"R1, R3\",RK-33,2,0603\n", "R1,RK-33,1,0603\nR3,RK-33,1,0603\n", StringComparison.Ordinal);
+        board.Write("bom.csv", bill);
+        JsonElement before = await Finding(board, "junction", "Q1.1");
+        JsonElement asked = await Finding(board, "junction", "Q1.1", "--with", "R3=RK-27");
+        board.Write("bom.csv", bill.Replace("R3,RK-33", "R3,RK-27", StringComparison.Ordinal));
+        JsonElement changed = await Finding(board, "junction", "Q1.1");
+        Assert.Equal(changed.GetProperty("actual").GetDouble(), asked.GetProperty("actual").GetDouble());
+        Assert.InRange(changed.GetProperty("actual").GetDouble() - before.GetProperty("actual").GetDouble(), 1, 10);
+    }
+
     [Fact]
     public async Task AMistypedPackageIsSuggested()
     {
@@ -158,9 +176,9 @@ public class PackageElementsTests
                 + "\n" + dual + new string(',', blanks) + $",{both},{elements}\n");
     }
 
-    private static async Task<JsonElement> Finding(BoardFolder board, string rule, string reference)
+    private static async Task<JsonElement> Finding(BoardFolder board, string rule, string reference, params string[] more)
     {
-        Run run = await board.Check("--format", "json");
+        Run run = await board.Check(["--format", "json", .. more]);
         Assert.True(run.Error.Length == 0, run.Error);
         using JsonDocument document = JsonDocument.Parse(run.Output);
         return document.RootElement.GetProperty("boards")[0].GetProperty("findings").EnumerateArray()

@@ -165,6 +165,10 @@ public sealed record BoundChannel
     /// <summary>Transistors that share a package with one of this channel's and serve another channel; empty: none.</summary>
     public IReadOnlyList<ElementNeighbour> Neighbours { get; init; } = [];
 
+    /// <summary>Everything placed in the channel: leg by leg, then control, feed, pull-down and LEDs.</summary>
+    public IEnumerable<Placement> Placements => Legs.SelectMany(l => new[] { l.Pass, l.Sense, l.Averaging })
+        .Append(Control).Append(Feed).Append(PullDown).Concat(Leds).OfType<Placement>();
+
     /// <summary>The control transistor's row.</summary>
     public Transistor ControlPart => (Transistor)Control.Part;
 

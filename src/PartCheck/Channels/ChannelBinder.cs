@@ -103,9 +103,8 @@ public static class ChannelBinder
             long count = choices.Values.Aggregate(1L, (n, c) => Math.Min(n * c.Count, 1L << 40));
             if (count > MostReadings)
             {
-                string[] cite = row.Cell.Split('!');
                 string text = string.Create(CultureInfo.InvariantCulture, $"The part numbers and alternates on the bill have {count} combinations of rows in the part table for this channel, more than {MostReadings}: name the manufacturers on the bill, or ask for one alternate at a time (--with).");
-                complaints.Add(new Complaint(cite[0], cite.Length > 2 ? cite[1] : null, null, "Channel", cite[^1], row.Name, "manufacturers on the bill, or fewer alternates", text) { Channel = row.Name });
+                complaints.Add(Complaint.At(row.Cell, "Channel", row.Name, "manufacturers on the bill, or fewer alternates", text) with { Channel = row.Name });
                 missing.Add("manufacturers on the bill, or fewer alternates");
             }
             else

@@ -62,9 +62,8 @@ public static class PartTableReader
             else if (PartAgreement.FirstDifference(twin, part) is { } difference)
             {
                 contradicted.Add(twin);
-                string[] cite = part.Cell.Split('!');
-                complaints.Add(new Complaint(
-                    cite[0], cite.Length > 2 ? cite[1] : null, null, difference, cite[^1], part.PartNumber, "rows that agree, or one row",
+                complaints.Add(Complaint.At(
+                    part.Cell, difference, part.PartNumber, "rows that agree, or one row",
                     $"{part.PartNumber} stands in the table twice and the rows disagree in {difference}; the other row is {twin.Cell}."));
             }
         }

@@ -1,3 +1,5 @@
+using System.Globalization;
+
 namespace PartCheck.Sheets;
 
 /// <summary>
@@ -15,6 +17,8 @@ namespace PartCheck.Sheets;
 public sealed record Complaint(
     string File, string? Sheet, int? Row, string? Column, string? Cell, string? Found, string? Wanted, string Text)
 {
+    private const string Letters = "ABCDEFGHIJKLMNOPQRSTUVWXYZ";
+
     /// <summary>The channel that the complaint makes unjudgeable; null when it concerns more or less than one channel.</summary>
     public string? Channel { get; init; }
 
@@ -26,4 +30,18 @@ public sealed record Complaint(
 
     /// <summary>True when it is about a quantity that disagrees with its references, which a rule judges as well.</summary>
     public bool IsCount { get; init; }
+
+    /// <summary>A complaint about a place that something read earlier has cited.</summary>
+    /// <param name="place">File, sheet where there is one, and cell: <c>parts.csv!K12</c>, <c>board.xlsx!Parts!K12</c>.</param>
+    /// <param name="column">The column.</param>
+    /// <param name="found">What stands there.</param>
+    /// <param name="wanted">What is wanted.</param>
+    /// <param name="text">The sentence.</param>
+    public static Complaint At(string place, string column, string? found, string wanted, string text)
+    {
+        ArgumentNullException.ThrowIfNull(place);
+        string[] parts = place.Split('!');
+        int? row = int.TryParse(parts[^1].AsSpan().TrimStart(Letters), NumberStyles.None, CultureInfo.InvariantCulture, out int number) ? number : null;
+        return new Complaint(parts[0], parts.Length > 2 ? parts[1] : null, row, column, parts[^1], found, wanted, text);
+    }
 }
