@@ -1,4 +1,3 @@
-using System.Globalization;
 using PartCheck.Channels;
 using PartCheck.Derating;
 using PartCheck.OperatingPoints;
@@ -57,10 +56,10 @@ public sealed class ChannelJudge
     public ReadingJudgement Judge(PinSource pin, int threads, CancellationToken cancel)
     {
         double driveFactor = derating.For("drive").Limit ?? 1;
-        IReadOnlyList<Accumulator> chunks = WorstCase.Enumerate(
-            model, pin, driveFactor, threads, () => new Accumulator(rules.Count, model.Slots.Count + 1), Visit, cancel);
-        Accumulator total = new(rules.Count, model.Slots.Count + 1);
-        foreach (Accumulator chunk in chunks)
+        IReadOnlyList<ReadingWorst> chunks = WorstCase.Enumerate(
+            model, pin, driveFactor, threads, () => new ReadingWorst(rules.Count, model.Slots.Count + 1), Visit, cancel);
+        ReadingWorst total = new(rules.Count, model.Slots.Count + 1);
+        foreach (ReadingWorst chunk in chunks)
         {
             total.Merge(chunk);
         }
@@ -95,7 +94,7 @@ public sealed class ChannelJudge
     }
 
     /// <summary>From every worst corner to the knee that may be worse still.</summary>
-    private void Climb(Accumulator total, KneeSearch search, double driveFactor, int threads, CancellationToken cancel)
+    private void Climb(ReadingWorst total, KneeSearch search, double driveFactor, int threads, CancellationToken cancel)
     {
         List<(int Rule, int Slot)> keys = [];
         for (int r = 0; r < rules.Count; r++)
@@ -109,7 +108,7 @@ public sealed class ChannelJudge
             }
         }
 
-        List<SolvedState?> peaks = [.. Enumerable.Repeat<SolvedState?>(null, keys.Count + 4)];
+        List<SolvedState?> peaks = [.. Enumerable.Repeat<SolvedState?>(null, keys.Count)];
         ParallelOptions options = new() { CancellationToken = cancel, MaxDegreeOfParallelism = threads > 0 ? threads : -1 };
         Parallel.For(0, keys.Count, options, i =>
         {
@@ -117,24 +116,25 @@ public sealed class ChannelJudge
             double? edge = rules[r] is DriveRule ? Math.Max(driveFactor, 1.2) : null;
             peaks[i] = search.Climb(total.At(r, s).State!, edge, state => Measure(r, s, state));
         });
+        SolvedState?[] extremes =
+        [
+            total.LeastLoad is { } least ? search.Climb(least, null, s => -s.LoadCurrent) : null,
+            total.MostLoad is { } most ? search.Climb(most, null, s => s.LoadCurrent) : null,
+            total.MostPin is { } pin ? search.Climb(pin, null, s => s.PinCurrent) : null,
+            total.MostHeat is { } heat ? search.Climb(heat, null, ReadingWorst.Heat) : null,
+        ];
         for (int i = 0; i < keys.Count; i++)
         {
             if (peaks[i] is { } peak)
             {
                 Take(total.At(keys[i].Rule, keys[i].Slot), keys[i].Rule, keys[i].Slot, peak);
+                total.TakeExtremes(peak);
             }
         }
 
-        foreach (SolvedState? peak in (ReadOnlySpan<SolvedState?>)[
-            total.LeastLoad is { } least ? search.Climb(least, null, s => -s.LoadCurrent) : null,
-            total.MostLoad is { } most ? search.Climb(most, null, s => s.LoadCurrent) : null,
-            total.MostPin is { } pin ? search.Climb(pin, null, s => s.PinCurrent) : null,
-            total.MostHeat is { } heat ? search.Climb(heat, null, Heat) : null])
+        foreach (SolvedState peak in extremes.OfType<SolvedState>())
         {
-            if (peak is not null)
-            {
-                total.TakeExtremes(peak, Heat(peak));
-            }
+            total.TakeExtremes(peak);
         }
     }
 
@@ -151,24 +151,7 @@ public sealed class ChannelJudge
         return worst.State is null ? double.NaN : worst.Stress.Ratio ?? double.PositiveInfinity;
     }
 
-    /// <summary>Heat while on of everything on the board that belongs to the channel, the load left out [W].</summary>
-    private static double Heat(SolvedState state)
-    {
-        double sum = 0;
-        foreach (TransistorPoint point in (TransistorPoint[])state.Transistors)
-        {
-            sum += point.Power * (point.Role == Role.Pass ? point.Count : 1);
-        }
-
-        for (int i = 0; i < state.Resistors.Count; i++)
-        {
-            sum += state.Resistors[i].Power * state.Resistors[i].Count;
-        }
-
-        return sum;
-    }
-
-    private void Visit(Accumulator into, SolvedState state)
+    private void Visit(ReadingWorst into, SolvedState state)
     {
         into.Corners++;
         if (!state.Solved)
@@ -178,17 +161,7 @@ public sealed class ChannelJudge
             return;
         }
 
-        into.TakeExtremes(state, state.State == ChannelState.On ? Heat(state) : 0);
-        if (state.State == ChannelState.On)
-        {
-            into.ControlHeld |= !state.ControlGainGuaranteed;
-            foreach (TransistorPoint point in (TransistorPoint[])state.Transistors)
-            {
-                into.Hottest[point.Slot] = Math.Max(into.Hottest[point.Slot], point.Tj);
-                into.MostPower[point.Slot] = Math.Max(into.MostPower[point.Slot], point.Power * point.AveragedShare);
-            }
-        }
-
+        into.TakeExtremes(state);
         int channelSlot = model.Slots.Count;
         for (int r = 0; r < rules.Count; r++)
         {
@@ -267,7 +240,7 @@ public sealed class ChannelJudge
     }
 
     /// <summary>A corner without a solution: nothing that reads its state is verified.</summary>
-    private void Fail(Accumulator into, SolvedState state)
+    private void Fail(ReadingWorst into, SolvedState state)
     {
         Stress failed = Stress.NotVerified("a solution: the solver gave up in a corner (NotSolved)");
         for (int r = 0; r < rules.Count; r++)
@@ -282,7 +255,7 @@ public sealed class ChannelJudge
         }
     }
 
-    private List<Finding> Findings(Accumulator total, PinSource pin)
+    private List<Finding> Findings(ReadingWorst total, PinSource pin)
     {
         List<Finding> findings = [];
         for (int r = 0; r < rules.Count; r++)
@@ -311,22 +284,6 @@ public sealed class ChannelJudge
         return findings;
     }
 
-    private string Averaged(bool package, Placement? placement)
-    {
-        List<string> words = [];
-        if (package && placement is not null)
-        {
-            words.Add($"the whole package {placement.Package}, its elements together");
-        }
-
-        if (PulsedHeat.AveragedShare(model.Channel.Conditions) is < 1 and var duty)
-        {
-            words.Add(string.Create(CultureInfo.InvariantCulture, $"averaged over a duty of {duty * 100:0.###} %"));
-        }
-
-        return string.Join("; ", words);
-    }
-
     private Finding Make(int r, int s, Worst worst, Placement? placement, PinSource pin)
     {
         Rule rule = rules[r];
@@ -340,9 +297,6 @@ public sealed class ChannelJudge
             (ChannelRule t, _) => t.DecidingCell(model.Channel, stress),
             _ => null,
         };
-        string? text = rule is ResistorVoltageRule && placement?.Part is ResistorPart { WorkingVoltageMax: null, Resistance.Value.Ohms: > 0 }
-            ? "no limiting element voltage given: judged by sqrt(P R) alone"
-            : rule is PowerRule && Averaged(stress.Package, placement) is { Length: > 0 } words ? words : null;
         return new Finding
         {
             Channel = model.Channel.Name,
@@ -361,125 +315,9 @@ public sealed class ChannelJudge
             Corner = worst.State?.Corner,
             Source = rows[r, s].Own.Source,
             Cell = cell,
-            Text = text,
+            Text = placement is null ? null : rule.Remark(placement, model.Channel, stress),
             Missing = worst.Verdict == Verdict.NotVerified ? [.. worst.Missing.DefaultIfEmpty("a state to judge")] : [],
             Basis = worst.State is { } state ? new FindingBasis(model, pin, rule, rows[r, s], state, s, stress) : null,
         };
     }
-
-    private sealed class Accumulator(int rules, int slots)
-    {
-        private readonly Worst?[] worst = new Worst?[rules * slots];
-
-        public int Corners { get; set; }
-
-        public int NotSolved { get; set; }
-
-        public SolvedState? LeastLoad { get; private set; }
-
-        public SolvedState? MostLoad { get; private set; }
-
-        public SolvedState? MostPin { get; private set; }
-
-        public SolvedState? MostHeat { get; private set; }
-
-        public double LoadMin => LeastLoad?.LoadCurrent ?? double.PositiveInfinity;
-
-        public double LoadMax => MostLoad?.LoadCurrent ?? double.NegativeInfinity;
-
-        public double PinMax => Math.Max(0, MostPin?.PinCurrent ?? 0);
-
-        public double HeatMax { get; private set; }
-
-        public bool ControlHeld { get; set; }
-
-        public double[] Hottest { get; } = new double[slots];
-
-        public double[] MostPower { get; } = new double[slots];
-
-        /// <summary>Load current and heat of the states on, pin current of all.</summary>
-        public void TakeExtremes(SolvedState state, double heat)
-        {
-            MostPin = MostPin is null || state.PinCurrent > MostPin.PinCurrent ? state : MostPin;
-            if (state.State != ChannelState.On)
-            {
-                return;
-            }
-
-            LeastLoad = LeastLoad is null || state.LoadCurrent < LeastLoad.LoadCurrent ? state : LeastLoad;
-            MostLoad = MostLoad is null || state.LoadCurrent > MostLoad.LoadCurrent ? state : MostLoad;
-            if (MostHeat is null || heat > HeatMax)
-            {
-                MostHeat = state;
-                HeatMax = heat;
-            }
-        }
-
-        public Worst At(int rule, int slot) => worst[(rule * slots) + slot] ??= new Worst();
-
-        public void Merge(Accumulator later)
-        {
-            Corners += later.Corners;
-            NotSolved += later.NotSolved;
-            foreach (SolvedState? state in (ReadOnlySpan<SolvedState?>)[later.LeastLoad, later.MostLoad, later.MostPin])
-            {
-                if (state is not null)
-                {
-                    TakeExtremes(state, double.NegativeInfinity);
-                }
-            }
-
-            if (later.MostHeat is { } hot)
-            {
-                TakeExtremes(hot, later.HeatMax);
-            }
-
-            ControlHeld |= later.ControlHeld;
-            for (int s = 0; s < slots; s++)
-            {
-                Hottest[s] = Math.Max(Hottest[s], later.Hottest[s]);
-                MostPower[s] = Math.Max(MostPower[s], later.MostPower[s]);
-            }
-
-            for (int i = 0; i < worst.Length; i++)
-            {
-                if (later.worst[i] is { } other)
-                {
-                    (worst[i] ??= new Worst()).Merge(other);
-                }
-            }
-        }
-    }
-}
-
-/// <summary>One reading of a channel, judged.</summary>
-/// <param name="Channel">The reading.</param>
-/// <param name="Findings">Findings of all rules that read states.</param>
-/// <param name="Nominal">The nominal state; null: not solved.</param>
-/// <param name="LoadMin">Smallest load current, state on [A].</param>
-/// <param name="LoadMax">Largest load current, state on [A].</param>
-/// <param name="PinMax">Largest current out of the pin into this channel, on and unfed [A].</param>
-/// <param name="Corners">Corners solved.</param>
-/// <param name="NotSolved">Corners that the solver gave up on.</param>
-public sealed record ReadingJudgement(
-    BoundChannel Channel, IReadOnlyList<Finding> Findings, SolvedState? Nominal, double LoadMin, double LoadMax, double PinMax,
-    int Corners, int NotSolved)
-{
-    /// <summary>Largest heat of the channel's parts on the board while on, whatever the duty, the load left out [W].</summary>
-    public double HeatMax { get; init; }
-
-    /// <summary>The state of <see cref="PinMax"/>; null: the pin delivers nothing.</summary>
-    public SolvedState? PinState { get; init; }
-
-    /// <summary>Each transistor with its highest junction temperature [K].</summary>
-    public IReadOnlyList<(string Reference, double Tj)> Hottest { get; init; } = [];
-
-    /// <summary>Highest dissipation of each transistor, state on, averaged where <c>power</c> averages [W], by reference.</summary>
-    public IReadOnlyDictionary<string, double> MostPower { get; init; } = new Dictionary<string, double>();
-
-    /// <summary>What a good channel measures on the bench; null: not solved.</summary>
-    public TestLimits? TestLimits { get; init; }
-
-    /// <summary>What the solved corners turned out to assume.</summary>
-    public IReadOnlyList<Assumption> Assumed { get; init; } = [];
 }

@@ -1,3 +1,4 @@
+using System.Globalization;
 using PartCheck.Channels;
 using PartCheck.OperatingPoints;
 using PartCheck.Parts;
@@ -81,6 +82,23 @@ public sealed class PowerRule : TransistorRule
 
     /// <inheritdoc/>
     public override string? DecidingCell(Transistor part) => part.Power?.Cell;
+
+    /// <inheritdoc/>
+    public override string? Remark(Placement placement, BoundChannel channel, in Stress stress)
+    {
+        List<string> words = [];
+        if (stress.Package)
+        {
+            words.Add($"the whole package {placement.Package}, its elements together");
+        }
+
+        if (PulsedHeat.AveragedShare(channel.Conditions) is < 1 and var duty)
+        {
+            words.Add(string.Create(CultureInfo.InvariantCulture, $"averaged over a duty of {duty * 100:0.###} %"));
+        }
+
+        return words.Count == 0 ? null : string.Join("; ", words);
+    }
 
     private static Stress OfOne(
         Transistor part, double rated, double? slope, double? rth, double actual, SolvedState state, in RuleRows rows)

@@ -75,4 +75,8 @@ public sealed class ResistorVoltageRule : ResistorRule
 
     /// <inheritdoc/>
     public override string? DecidingCell(ResistorPart part) => part.WorkingVoltageMax?.Cell ?? part.Power?.Cell;
+
+    /// <inheritdoc/>
+    public override string? Remark(Placement placement, BoundChannel channel, in Stress stress) =>
+        placement.Part is ResistorPart { WorkingVoltageMax: null, Resistance.Value.Ohms: > 0 } ? "no limiting element voltage given: judged by sqrt(P R) alone" : null;
 }

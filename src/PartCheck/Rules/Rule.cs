@@ -34,6 +34,12 @@ public abstract class Rule
 
     /// <summary>True where the rule reads this state.</summary>
     public virtual bool Reads(SolvedState state) => state is { State: ChannelState.On };
+
+    /// <summary>What a finding says beside its numbers: which part of the rule was judged; null: nothing.</summary>
+    /// <param name="placement">What was judged.</param>
+    /// <param name="channel">Its channel.</param>
+    /// <param name="stress">The worst stress.</param>
+    public virtual string? Remark(Placement placement, BoundChannel channel, in Stress stress) => null;
 }
 
 /// <summary>A rule that judges transistors.</summary>
