@@ -19,7 +19,7 @@ public static partial class CheckRun
         private static IEnumerable<Advice> MistypedAdvice(Bill bill, PartTable parts, IReadOnlyList<Channel> channels)
         {
             HashSet<string> serving = ElementReference.WithPackages(channels.SelectMany(c => c.References));
-            foreach (BillLine line in bill.Lines.Where(l => l.PartNumber is { } number && parts.Find(number).Count == 0 && l.References.Any(serving.Contains)))
+            foreach (BillLine line in bill.Lines.Where(l => l.PartNumber is { } number && parts.Find(number).Count == 0 && !parts.Unread.Contains(number) && l.References.Any(serving.Contains)))
             {
                 if (NearMisses.Of(line.PartNumber!, parts.Parts.Select(p => p.PartNumber)) is { Count: > 0 } near)
                 {

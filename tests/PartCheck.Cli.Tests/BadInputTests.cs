@@ -223,6 +223,17 @@ public class BadInputTests
         Assert.Contains("CH1 not verified", run.Flat, StringComparison.Ordinal);
     }
 
+    // The part is in the table, and its complaint says what is wrong: nobody is asked whether another part was meant.
+    [Fact]
+    public async Task APartWhoseRowHasAComplaintIsNotCalledAbsent()
+    {
+        using BoardFolder board = new(parts: BoardFolder.Parts.Replace("TQ-31,npn,Tarnwood,SOT-23,45,", "TQ-31,npn,Tarnwood,SOT-23,lots,", StringComparison.Ordinal));
+        Run run = await board.Check();
+        Assert.Equal(65, run.Code);
+        Assert.Contains("\"lots\" in VCEO [V] cannot be read", run.Flat, StringComparison.Ordinal);
+        Assert.DoesNotContain("has no row", run.Flat, StringComparison.Ordinal);
+    }
+
     [Fact]
     public async Task AllComplaintsOfAllFilesComeAtOnce()
     {

@@ -39,6 +39,19 @@ public class WorkingTests
         Assert.Contains("NOT VERIFIED; missing VCEO of TQ-31", run.Flat, StringComparison.Ordinal);
     }
 
+    // One bill line serves both channels: a channel's references are its own.
+    [Fact]
+    public async Task TheReferencesOfferedAreTheChannelsOwn()
+    {
+        using BoardFolder board = new(
+            bill: "References,Part number,Quantity\n\"Q1, Q3\",TQ-31,2\n\"Q2, Q4\",TQ-30,2\n\"R1, R3\",RK-33,2\n\"R2, R4\",RK-4K7,2\n",
+            channels: BoardFolder.Channels + "\n" + BoardFolder.Channels.ReplaceLineEndings("\n").Split('\n')[1].Replace("CH1,", "CH2,", StringComparison.Ordinal)
+                .Replace("Q1,R1,Q2,R2", "Q3,R3,Q4,R4", StringComparison.Ordinal) + "\n");
+        Run run = await Working(board, "CH2", "--reference", "Q1X");
+        Assert.Equal(64, run.Code);
+        Assert.Contains("its references are Q3, Q4, R3, R4.", run.Error, StringComparison.Ordinal);
+    }
+
     [Theory]
     [InlineData("there is no channel \"CH9\"; the channels are CH1.", "CH9")]
     [InlineData("there is no finding of a rule \"soa\" in CH1; its rules are vce, vcb, ic, power,", "CH1", "--rule", "soa")]

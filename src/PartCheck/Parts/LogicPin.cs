@@ -23,6 +23,9 @@ public sealed record LogicPin(
 /// <summary>The part table and the logic pins of a run.</summary>
 public sealed record PartTable(IReadOnlyList<Part> Parts)
 {
+    /// <summary>Part numbers of rows that could not be read or that contradict each other: they stand in the table, and a complaint says what is wrong.</summary>
+    public IReadOnlySet<string> Unread { get; init; } = new HashSet<string>();
+
     /// <summary>Every row of a part number (compared without regard to case), in table order.</summary>
     public IReadOnlyList<Part> Find(string partNumber) =>
         byNumber.TryGetValue(partNumber, out List<Part>? found) ? found : [];

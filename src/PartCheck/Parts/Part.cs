@@ -196,6 +196,13 @@ public sealed record LedPart : Part
     public override Temperature FlatTo => ForwardCurrentFlatTo?.Value ?? Temperature.FromCelsius(25);
 }
 
+/// <summary>A row that has complaints: the part stands in the table, and nothing of it is known.</summary>
+public sealed record UnreadPart : Part
+{
+    /// <inheritdoc/>
+    public override Temperature FlatTo => Temperature.FromCelsius(25);
+}
+
 /// <summary>A part whose kind is known and refused, with the reason.</summary>
 public sealed record RefusedPart : Part
 {

@@ -20,7 +20,7 @@ public static class PartTableReader
     private static readonly TransistorValidator TransistorRules = new();
     private static readonly ResistorValidator ResistorRules = new();
 
-    /// <summary>Every part of a sheet; a row with a complaint is left out.</summary>
+    /// <summary>Every part of a sheet; a row with a complaint is an <see cref="UnreadPart"/>.</summary>
     /// <param name="sheet">The sheet.</param>
     /// <param name="folder">Folder that model files are relative to; null: no files.</param>
     /// <param name="spellings">Header spellings.</param>
@@ -34,6 +34,10 @@ public static class PartTableReader
             if (ReadRow(row, folder) is { } part && !row.HasComplaints)
             {
                 parts.Add(part);
+            }
+            else if (row.Text("Part number") is { } number)
+            {
+                parts.Add(new UnreadPart { PartNumber = number, Cell = row.Cite("Part number") });
             }
         }
 
@@ -51,7 +55,8 @@ public static class PartTableReader
         List<Part> kept = [];
         HashSet<Part> contradicted = new(ReferenceEqualityComparer.Instance);
         Dictionary<string, Part> byKey = new(StringComparer.OrdinalIgnoreCase);
-        foreach (Part part in parts)
+        List<Part> all = [.. parts];
+        foreach (Part part in all.Where(p => p is not UnreadPart))
         {
             string key = string.Join('\n', part.PartNumber, part.Manufacturer, part.Mounting);
             if (!byKey.TryGetValue(key, out Part? twin))
@@ -68,7 +73,10 @@ public static class PartTableReader
             }
         }
 
-        return new PartTable([.. kept.Where(p => !contradicted.Contains(p))]);
+        return new PartTable([.. kept.Where(p => !contradicted.Contains(p))])
+        {
+            Unread = all.OfType<UnreadPart>().Concat(contradicted).Select(p => p.PartNumber).ToHashSet(StringComparer.OrdinalIgnoreCase),
+        };
     }
 
     private static Part? ReadRow(TableRow row, string? folder)

@@ -1,3 +1,4 @@
+using System.Globalization;
 using PartCheck.Quantities;
 using PartCheck.Sheets;
 
@@ -33,6 +34,13 @@ internal static class PointText
     /// <summary><c>1ms:25; 10ms:60</c> K/W, rising in time, the thermal resistance never falling.</summary>
     public static IReadOnlyList<ZthPoint> Zth(TableRow row)
     {
+        if (row.Text("Zth points") is { } text && text.Split(';').FirstOrDefault(p => p.Split(':') is [var at, _] && double.TryParse(at, CultureInfo.InvariantCulture, out _)) is { } bare)
+        {
+            // A sheet gives pulses in milliseconds as often as in seconds, and a thousand times too long is a junction too cool.
+            row.Complain("Zth points", "points such as 1ms:25; 10ms:60", $"The time of the point \"{bare.Trim()}\" has no unit: ms, us or s.");
+            return [];
+        }
+
         List<(double At, double Value)> points = Points(
             row, "Zth points", "points such as 1ms:25; 10ms:60", ColumnKind.Time, LongestSeconds, ColumnKind.ThermalResistance, HighestKelvinsPerWatt) ?? [];
         if (points.Zip(points.Skip(1)).Any(p => p.Second.Value < p.First.Value))

@@ -5,12 +5,12 @@ namespace PartCheck.Quantities;
 /// <summary>Prints values with a prefix that keeps one to three digits before the decimal point: <c>10.86 mA</c>.</summary>
 public static class EngineeringNotation
 {
-    private const int SmallestExponent = -12;
+    private const int SmallestExponent = -21;
     private const int LargestExponent = 9;
 
     /// <summary>Prints a value, rounded to significant digits, without trailing zeros, in the invariant culture.</summary>
     /// <param name="si">The value in SI; finite.</param>
-    /// <param name="unit">The unit. V, A, W, ohm, Hz, s, W/K, V/K and A/K take the prefixes p n u m k M G; all others are printed plain.</param>
+    /// <param name="unit">The unit. V, A, W, ohm, Hz, s, W/K, V/K and A/K take the prefixes z a f p n u m k M G; all others are printed plain.</param>
     /// <param name="digits">Significant digits, 1 to 15.</param>
     /// <returns>Number, blank, prefix and unit; the number alone where the unit is empty.</returns>
     /// <exception cref="ArgumentOutOfRangeException">The value is not finite or the digits are out of range.</exception>
@@ -63,6 +63,9 @@ public static class EngineeringNotation
 
     private static string PrefixOf(int exponent) => exponent switch
     {
+        -21 => "z",
+        -18 => "a",
+        -15 => "f",
         -12 => "p",
         -9 => "n",
         -6 => "u",

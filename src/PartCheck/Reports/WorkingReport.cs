@@ -56,7 +56,10 @@ public sealed record WorkingSelection(string Channel, string? Rule, string? Refe
         }
 
         string rules = string.Join(", ", all.Select(f => f.Rule).Distinct().OrderBy(RuleBook.Position));
-        string references = string.Join(", ", all.SelectMany(References).Distinct(StringComparer.Ordinal).Order(NaturalOrder.Instance));
+
+        // A bill line serves other channels, too: what this one has is what its own findings are about.
+        List<string> own = [.. all.Select(f => f.Reference).OfType<string>()];
+        string references = string.Join(", ", (own.Count > 0 ? own : all.SelectMany(References)).Distinct(StringComparer.Ordinal).Order(NaturalOrder.Instance));
         fault = (Rule, Reference) switch
         {
             ({ } rule, _) when !all.Any(f => Same(f.Rule, rule)) => $"there is no finding of a rule \"{rule}\" in {channel}; its rules are {rules}.",

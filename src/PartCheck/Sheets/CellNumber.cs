@@ -65,7 +65,7 @@ internal readonly partial record struct CellNumber(double? Si, string Wanted, st
         }
 
         string range = ComplaintTexts.Range(kind, spec.Min, spec.Max);
-        bool unitMeant = bare && kind != QuantityKind.Number;
+        bool unitMeant = bare && kind != QuantityKind.Number && (si > 0 || spec.Min <= 0 || kind == QuantityKind.Temperature);
         return new CellNumber(null, range, ComplaintTexts.Implausible(
             column.Header, cell.Text, EngineeringNotation.FormatAs(kind, si), range, unitMeant));
     }

@@ -80,7 +80,7 @@ internal static class ComplaintTexts
     internal static string ShownUnit(string column, string found, string stored) =>
         $"\"{found}\" in {column} is shown for the stored number {stored}, and which is meant cannot be told: write number and unit as text.";
 
-    internal static string Implausible(string column, string found, string read, string range, bool bare) => bare
+    internal static string Implausible(string column, string found, string read, string range, bool guess) => guess
         ? $"\"{found}\" in {column} would be {read}, and {range} is wanted: it is most likely in another unit; write the unit with the number."
         : $"\"{found}\" in {column} is {read}, and {range} is wanted.";
 

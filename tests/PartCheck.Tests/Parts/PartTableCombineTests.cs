@@ -49,6 +49,16 @@ public sealed class PartTableCombineTests
         Assert.Contains("disagree in Kind", typed.Only(), StringComparison.Ordinal);
     }
 
+    // The part is in the table: nobody is asked whether another one was meant.
+    [Fact]
+    public void ARowWithAComplaintIsKnownByItsNumberAlone()
+    {
+        PartTable table = Combine("Part number|Kind|VCEO", "TQ-31|npn|lots", "TQ-30|npn|45");
+        Assert.Equal("TQ-30", Assert.Single(table.Parts).PartNumber);
+        Assert.Equal(["TQ-31"], table.Unread);
+        Assert.Empty(table.Find("TQ-31"));
+    }
+
     private PartTable Combine(params string[] lines) =>
         PartTableReader.Combine(PartTableReader.Read(TypedSheet.Of("p.csv", lines), null, typed.Spellings, typed.List), typed.List);
 }

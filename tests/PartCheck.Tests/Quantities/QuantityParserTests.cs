@@ -107,7 +107,9 @@ public class QuantityParserTests
     [InlineData(0.99996, "A", "1 A")]
     [InlineData(4700, "ohm", "4.7 kohm")]
     [InlineData(-0.002, "W", "-2 mW")]
-    [InlineData(3.2e-14, "A", "0.032 pA")]
+    [InlineData(3.2e-14, "A", "32 fA")]
+    [InlineData(1.40341e-19, "A", "140.3 zA")]
+    [InlineData(2.5e-23, "A", "0.025 zA")]
     public void PrintsEngineeringNotationInAnyCulture(double si, string unit, string text)
     {
         CultureInfo before = CultureInfo.CurrentCulture;

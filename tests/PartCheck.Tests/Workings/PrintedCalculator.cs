@@ -141,6 +141,9 @@ internal static partial class PrintedCalculator
             "degC" or "K" or "K/W" => value,
             var unit => value * unit[0] switch
             {
+                'z' => 1e-21,
+                'a' => 1e-18,
+                'f' => 1e-15,
                 'p' => 1e-12,
                 'n' => 1e-9,
                 'u' => 1e-6,
@@ -153,6 +156,6 @@ internal static partial class PrintedCalculator
         };
     }
 
-    [GeneratedRegex(@"[0-9]+(\.[0-9]+)?( (%|ppm/K|degC|K/W|K|[pnumkMG]?(V/K|W/K|A/K|Hz|V|A|W|s|ohm))(?![A-Za-z0-9]))?|[A-Za-z][A-Za-z0-9']*|[-+/^(),]")]
+    [GeneratedRegex(@"[0-9]+(\.[0-9]+)?( (%|ppm/K|degC|K/W|K|[zafpnumkMG]?(V/K|W/K|A/K|Hz|V|A|W|s|ohm))(?![A-Za-z0-9]))?|[A-Za-z][A-Za-z0-9']*|[-+/^(),]")]
     private static partial Regex Token();
 }

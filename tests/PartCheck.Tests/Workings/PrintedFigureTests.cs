@@ -12,7 +12,7 @@ public class PrintedFigureTests
     [InlineData(-0.2180245, "W", "-218.025 mW", -0.218025)]
     [InlineData(0.9999996, "A", "1 A", 1)]
     [InlineData(0, "V", "0 V", 0)]
-    [InlineData(1.23456789e-17, "A", "0.0000123457 pA", 1.23457e-17)]
+    [InlineData(1.23456789e-17, "A", "12.3457 aA", 1.23457e-17)]
     [InlineData(8.617333262e-5, "V/K", "86.1733 uV/K", 8.61733e-5)]
     [InlineData(0.01, "%", "1 %", 0.01)]
     [InlineData(1e-4, "ppm/K", "100 ppm/K", 1e-4)]

@@ -113,7 +113,7 @@ internal sealed partial class PrintedWorking
 
     private static bool StartsWithNumber(string text) => char.IsDigit(text.TrimStart('-')[0]) && !text.Contains('(', StringComparison.Ordinal);
 
-    [GeneratedRegex(@"^    ([A-Za-z][A-Za-z0-9']*) +(-?[0-9]+(?:\.[0-9]+)?(?: (?:%|ppm/K|degC|K/W|K|[pnumkMG]?(?:V/K|W/K|A/K|Hz|V|A|W|s|ohm)))?) ")]
+    [GeneratedRegex(@"^    ([A-Za-z][A-Za-z0-9']*) +(-?[0-9]+(?:\.[0-9]+)?(?: (?:%|ppm/K|degC|K/W|K|[zafpnumkMG]?(?:V/K|W/K|A/K|Hz|V|A|W|s|ohm)))?) ")]
     private static partial Regex Figure();
 
     [GeneratedRegex(@"[0-9.]+ [pnum]?A(?![A-Za-z0-9])")]
